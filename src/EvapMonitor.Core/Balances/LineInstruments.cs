@@ -1,0 +1,87 @@
+using EvapMonitor.Core.Plant;
+
+namespace EvapMonitor.Core.Balances;
+
+/// <summary>
+/// The instruments of a line in one row: each signal has one place, and each role (feed flow, chest pressure of N2, …) points to a place or to −1 for absent.
+/// A signal that serves two roles is one input with one error.
+/// </summary>
+public sealed class LineInstruments
+{
+    private readonly List<Instrument> _all = [];
+    private readonly Dictionary<string, int> _places = [];
+
+    /// <summary>Lays out the instruments of a line.</summary>
+    public LineInstruments(Line line)
+    {
+        Line = line;
+        Feed = Stream(line.Feed);
+        Product = Stream(line.Product);
+        SteamFlow = Place(line.Steam.Flow);
+        SteamPressure = Place(line.Steam.Pressure);
+        SteamTemperature = Place(line.Steam.Temperature);
+        LiquorSignal = Place(line.Liquor.Signal);
+        BleedFlows = [.. line.Bleeds.Select(bleed => Place(bleed.Flow))];
+        Effects = [.. line.Effects.Select(effect => new EffectPlaces(
+            Place(effect.Chest.Pressure), Place(effect.Chest.Temperature), Place(effect.Chest.CondensateFlow), Place(effect.Chest.CondensateTemperature),
+            Place(effect.Vapour.Pressure), Place(effect.Vapour.Temperature),
+            Place(effect.Leaving.Flow), Place(effect.Leaving.Solids), Place(effect.Leaving.Temperature), Place(effect.Level)))];
+    }
+
+    /// <summary>The line.</summary>
+    public Line Line { get; }
+
+    /// <summary>The instruments, one for each signal; a place is an index into this.</summary>
+    public IReadOnlyList<Instrument> All => _all;
+
+    /// <summary>Places on the feed.</summary>
+    public StreamPlaces Feed { get; }
+
+    /// <summary>Places on the product.</summary>
+    public StreamPlaces Product { get; }
+
+    /// <summary>Place of the steam flow.</summary>
+    public int SteamFlow { get; }
+
+    /// <summary>Place of the steam pressure.</summary>
+    public int SteamPressure { get; }
+
+    /// <summary>Place of the steam temperature.</summary>
+    public int SteamTemperature { get; }
+
+    /// <summary>Place of the signal that tells the product.</summary>
+    public int LiquorSignal { get; }
+
+    /// <summary>Places of the bleed flows, in the order of the line's bleeds.</summary>
+    public IReadOnlyList<int> BleedFlows { get; }
+
+    /// <summary>Places on the effects, in plant-file order.</summary>
+    public IReadOnlyList<EffectPlaces> Effects { get; }
+
+    private StreamPlaces Stream(LiquorStream stream) =>
+        new(Place(stream.Flow), Place(stream.Solids), Place(stream.Temperature), Place(stream.Laboratory));
+
+    private int Place(Instrument? instrument)
+    {
+        if (instrument is null) return -1;
+        if (_places.TryGetValue(instrument.Signal, out int place)) return place;
+        _all.Add(instrument);
+        return _places[instrument.Signal] = _all.Count - 1;
+    }
+}
+
+/// <summary>Places of the instruments of a liquor stream; −1 is absent.</summary>
+public readonly record struct StreamPlaces(int Flow, int Solids, int Temperature, int Laboratory);
+
+/// <summary>Places of the instruments of an effect; −1 is absent.</summary>
+public readonly record struct EffectPlaces(
+    int ChestPressure,
+    int ChestTemperature,
+    int CondensateFlow,
+    int CondensateTemperature,
+    int VapourPressure,
+    int VapourTemperature,
+    int LeavingFlow,
+    int LeavingSolids,
+    int LeavingTemperature,
+    int Level);

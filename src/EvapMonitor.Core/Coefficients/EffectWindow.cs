@@ -1,0 +1,71 @@
+using EvapMonitor.Core.Balances;
+
+namespace EvapMonitor.Core.Coefficients;
+
+/// <summary>What the line was doing in a window.</summary>
+public enum RunningState : byte
+{
+    /// <summary>It cannot be told.</summary>
+    Unknown,
+    /// <summary>No feed.</summary>
+    Idle,
+    /// <summary>Evaporating product.</summary>
+    Producing,
+    /// <summary>Evaporating water: a clean test of the surface.</summary>
+    WaterRun,
+    /// <summary>Being cleaned.</summary>
+    Cleaning,
+}
+
+/// <summary>What evaluation leaves of one effect and one window. Values are SI; an absent one is NaN and <see cref="Reason"/> says why there is no coefficient.</summary>
+public sealed record EffectWindow
+{
+    /// <summary>Start of the window, ms since 1970-01-01T00:00:00Z.</summary>
+    public required long At { get; init; }
+
+    /// <summary>What the line was doing.</summary>
+    public required RunningState State { get; init; }
+
+    /// <summary>Heating temperature, K.</summary>
+    public required Measured HeatingTemperature { get; init; }
+
+    /// <summary>Boiling temperature, K.</summary>
+    public required Measured BoilingTemperature { get; init; }
+
+    /// <summary>Boiling-point elevation, K.</summary>
+    public required Measured Elevation { get; init; }
+
+    /// <summary>Driving force, K.</summary>
+    public required Measured DrivingForce { get; init; }
+
+    /// <summary>Duty, W.</summary>
+    public required Measured Duty { get; init; }
+
+    /// <summary>Apparent coefficient, W/(m²·K).</summary>
+    public required Measured Coefficient { get; init; }
+
+    /// <summary>Dissolved solids of the leaving liquor, mass fraction.</summary>
+    public required double Solids { get; init; }
+
+    /// <summary>How the heating temperature was found.</summary>
+    public required HeatingTemperatureSource HeatingFrom { get; init; }
+
+    /// <summary>How the boiling temperature was found.</summary>
+    public required BoilingTemperatureSource BoilingFrom { get; init; }
+
+    /// <summary>How the duty was found.</summary>
+    public required DutySource DutyFrom { get; init; }
+
+    /// <summary>True when a property was used outside its published range.</summary>
+    public required bool Extrapolated { get; init; }
+
+    /// <summary>Why there is no coefficient; null when there is one.</summary>
+    public required string? Reason { get; init; }
+}
+
+/// <summary>What evaluation leaves of a line and one window.</summary>
+/// <param name="At">Start of the window, ms since 1970-01-01T00:00:00Z.</param>
+/// <param name="State">What the line was doing.</param>
+/// <param name="Evaporation">Water evaporated, kg/s; NaN when not known.</param>
+/// <param name="Effects">The effects in plant-file order.</param>
+public sealed record LineWindow(long At, RunningState State, double Evaporation, IReadOnlyList<EffectWindow> Effects);

@@ -1,0 +1,149 @@
+using EvapMonitor.Core.Balances;
+using EvapMonitor.Core.Coefficients;
+using EvapMonitor.Core.Conditioning;
+using EvapMonitor.Core.Plant;
+using EvapMonitor.Core.Properties;
+using EvapMonitor.Core.Readings;
+
+namespace EvapMonitor.Core;
+
+/// <summary>
+/// The journey of a reading through the stations, for one line: readings → conditioned windows → direct balance → apparent coefficients.
+/// The result for a UTC day is a pure function of the plant, the day's readings, those of the lead-in before it, and the logged cleanings.
+/// </summary>
+public sealed class LineEvaluation
+{
+    /// <summary>Raised when a change to the computation may move figures; stored with every result.</summary>
+    public const int ModelNumber = 1;
+
+    private readonly Site _site;
+    private readonly Line _line;
+    private readonly LineInstruments _instruments;
+    private readonly DirectBalance _balance;
+    private readonly ApparentCoefficients _coefficients;
+
+    /// <summary>Prepares the evaluation of a line. Not for use by two threads at a time.</summary>
+    public LineEvaluation(Site site, Line line)
+    {
+        _site = site;
+        _line = line;
+        _instruments = new LineInstruments(line);
+        _balance = new DirectBalance(_instruments);
+        _coefficients = new ApparentCoefficients(_instruments, _balance);
+        LeadIn = LeadInOf(line);
+    }
+
+    /// <summary>The signals that the line needs, the atmosphere's among them.</summary>
+    public IEnumerable<string> Signals =>
+        _instruments.All.Select(instrument => instrument.Signal).Concat(_site.Atmosphere.Measured is { } air ? [air.Signal] : []).Distinct();
+
+    /// <summary>How far before a day its readings reach: 6 h, or the longest time for which a laboratory value stands.</summary>
+    public TimeSpan LeadIn { get; }
+
+    /// <summary>Evaluates the windows of a span.</summary>
+    /// <param name="readings">Readings by signal, from <see cref="LeadIn"/> before the span on.</param>
+    /// <param name="from">Start of the span, ms since 1970-01-01T00:00:00Z; on the window grid.</param>
+    /// <param name="to">End of the span.</param>
+    /// <param name="cleanings">Logged cleanings by effect name: start and end, ms; the end is <see cref="long.MaxValue"/> while one goes on.</param>
+    public LineWindow[] Evaluate(
+        IReadOnlyDictionary<string, ReadingSeries> readings, long from, long to, ILookup<string, (long Start, long End)> cleanings)
+    {
+        // One hour of lead windows, so that the scatter of the first windows rests on a whole hour.
+        WindowGrid grid = WindowGrid.Between(from - Milliseconds.Hour, to, _site.Window);
+        (ConditionedSignal[] signals, Atmosphere air) = LineConditioning.Condition(_instruments.All, readings, _site.Atmosphere, grid);
+        foreach ((int place, TimeSpan validFor) in LaboratoryPlaces())
+        {
+            ReadingSeries samples = readings.TryGetValue(_instruments.All[place].Signal, out ReadingSeries? found) ? found : new ReadingSeries();
+            signals[place] = Laboratory.Condition(_instruments.All[place], samples, validFor, grid);
+        }
+
+        var inputs = new LineInputs(_instruments);
+        var systematic = new double[signals.Length];
+        var random = new double[signals.Length];
+        var windows = new List<LineWindow>(grid.Count);
+        for (int window = 0; window < grid.Count; window++)
+        {
+            long at = grid.StartOf(window);
+            if (at < from) continue;
+            for (int place = 0; place < signals.Length; place++)
+            {
+                inputs.Value[place] = signals[place].Mean[window];
+                systematic[place] = signals[place].Systematic[window];
+                random[place] = signals[place].Random[window];
+            }
+
+            // A window into which no signal reaches has no result, not an absent one.
+            if (Array.TrueForAll(inputs.Value, double.IsNaN)) continue;
+            int w = window;
+            Liquor? liquor = LiquorOf(inputs);
+            RunningState state = StateOf(inputs, liquor);
+            EffectWindow[] effects = liquor is null
+                ? [.. _line.Effects.Select(_ => Unknown(at, state))]
+                : _coefficients.Evaluate(at, state, liquor, inputs, systematic, random, (air.Systematic[w], air.Random[w]), place => signals[place].WhyAbsent(w));
+            MarkCleanings(effects, grid.Step, cleanings);
+            windows.Add(new LineWindow(at, state, liquor is null ? double.NaN : _balance.Evaporation(liquor, inputs), effects));
+        }
+
+        return [.. windows];
+    }
+
+    private IEnumerable<(int Place, TimeSpan ValidFor)> LaboratoryPlaces()
+    {
+        if (_instruments.Feed.Laboratory >= 0) yield return (_instruments.Feed.Laboratory, _line.Feed.LaboratoryValidFor);
+        if (_instruments.Product.Laboratory >= 0) yield return (_instruments.Product.Laboratory, _line.Product.LaboratoryValidFor);
+    }
+
+    private static TimeSpan LeadInOf(Line line)
+    {
+        TimeSpan longest = LineConditioning.Memory;
+        foreach (LiquorStream stream in (LiquorStream[])[line.Feed, line.Product])
+        {
+            if (stream.Laboratory is not null && stream.LaboratoryValidFor > longest) longest = stream.LaboratoryValidFor;
+        }
+
+        return longest;
+    }
+
+    private Liquor? LiquorOf(LineInputs inputs)
+    {
+        if (_line.Liquor.Always is { } always) return always;
+        double value = inputs.At(_instruments.LiquorSignal);
+        return double.IsFinite(value) && _line.Liquor.ByValue.TryGetValue((int)double.Round(value), out Liquor? found) ? found : null;
+    }
+
+    private RunningState StateOf(LineInputs inputs, Liquor? liquor)
+    {
+        double feed = inputs.At(_instruments.Feed.Flow);
+        if (double.IsNaN(feed)) return RunningState.Unknown;
+        if (feed <= (_line.ProducingAboveFeedFlow ?? 0)) return RunningState.Idle;
+        return liquor is Water ? RunningState.WaterRun : RunningState.Producing;
+    }
+
+    private void MarkCleanings(EffectWindow[] effects, long step, ILookup<string, (long Start, long End)> cleanings)
+    {
+        for (int i = 0; i < effects.Length; i++)
+        {
+            long at = effects[i].At;
+            if (cleanings[_line.Effects[i].Name].Any(cleaning => at < cleaning.End && at + step > cleaning.Start))
+                effects[i] = effects[i] with { State = RunningState.Cleaning };
+        }
+    }
+
+    private EffectWindow Unknown(long at, RunningState state) => new()
+    {
+        At = at,
+        State = state,
+        HeatingTemperature = Measured.Absent,
+        BoilingTemperature = Measured.Absent,
+        Elevation = Measured.Absent,
+        DrivingForce = Measured.Absent,
+        Duty = Measured.Absent,
+        Coefficient = Measured.Absent,
+        Solids = double.NaN,
+        HeatingFrom = HeatingTemperatureSource.None,
+        BoilingFrom = BoilingTemperatureSource.None,
+        DutyFrom = DutySource.None,
+        Extrapolated = false,
+        Reason = $"the product is not known: {_line.Liquor.Signal!.Signal} names none",
+    };
+}

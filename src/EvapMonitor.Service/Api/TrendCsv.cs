@@ -1,0 +1,31 @@
+using System.Globalization;
+using System.Text;
+using EvapMonitor.Service.Api.Wire;
+
+namespace EvapMonitor.Service.Api;
+
+/// <summary>A series as CSV, for those who ask for text/csv.</summary>
+internal static class TrendCsv
+{
+    public static string Of(TrendWire trend)
+    {
+        var text = new StringBuilder("time,line,effect,quantity,unit,value,u,u_random,mark,reason\r\n");
+        for (int i = 0; i < trend.Value.Count; i++)
+        {
+            string reason = trend.Reason[i] < 0 ? "" : trend.Reasons[trend.Reason[i]];
+            text.Append(CultureInfo.InvariantCulture, $"{trend.Start.AddSeconds(trend.OffsetS[i]):yyyy-MM-ddTHH:mm:ssZ},{Cell(trend.Line)},{Cell(trend.Effect)},{trend.Quantity},{trend.Unit},")
+                .Append(CultureInfo.InvariantCulture, $"{trend.Value[i]:R},{trend.U[i]:R},{trend.URandom[i]:R},{trend.Mark[i]},{Cell(reason)}\r\n");
+        }
+
+        return text.ToString();
+    }
+
+    /// <summary>
+    /// A text from outside as a cell: quoted where needed, and with a leading apostrophe where a spreadsheet would take it for a formula.
+    /// </summary>
+    public static string Cell(string text)
+    {
+        if (text is [('=' or '+' or '-' or '@' or '\t' or '\r'), ..]) text = "'" + text;
+        return text.AsSpan().IndexOfAny("\",\r\n") < 0 ? text : "\"" + text.Replace("\"", "\"\"", StringComparison.Ordinal) + "\"";
+    }
+}

@@ -1,0 +1,133 @@
+using EvapMonitor.Core.Coefficients;
+using EvapMonitor.Core.Fouling;
+using EvapMonitor.Core.Plant;
+using EvapMonitor.Core.Readings;
+using EvapMonitor.Service.Api.Wire;
+using EvapMonitor.Service.Store;
+
+namespace EvapMonitor.Service.Api;
+
+/// <summary>Makes a series for a chart: windows for short spans, hours for long ones, thinned so that the extremes stay.</summary>
+public sealed class Trends(TrendStore store)
+{
+    /// <summary>Spans over this come by the hour.</summary>
+    public static readonly TimeSpan LongestByWindow = TimeSpan.FromDays(40);
+
+    /// <summary>Longest span of one request.</summary>
+    public static readonly TimeSpan LongestSpan = TimeSpan.FromDays(3660);
+
+    /// <summary>Quantities with their units and how each is taken from a window and from the hours.</summary>
+    internal static readonly IReadOnlyDictionary<string, TrendQuantity> Quantities = new Dictionary<string, TrendQuantity>
+    {
+        ["coefficient"] = new("W/(m2.K)", HourQuantity.Coefficient, (value, _, _) => value),
+        ["clean_coefficient"] = new("W/(m2.K)", HourQuantity.Coefficient, (_, _, clean) => clean is null ? Measured.Absent : new Measured(clean.Coefficient, 0, 0)),
+        ["cleanliness"] = new("1", HourQuantity.Coefficient, (value, _, clean) => CleanComparison.Cleanliness(value, clean)),
+        ["fouling_resistance"] = new("m2.K/W", HourQuantity.Coefficient, (value, _, clean) => CleanComparison.Resistance(value, clean)),
+        ["driving_force"] = new("K", HourQuantity.DrivingForce, (value, _, _) => value),
+        ["duty"] = new("kW", HourQuantity.Duty, (value, _, _) => Scaled(value, 1e-3)),
+        ["heat_flux"] = new("kW/m2", HourQuantity.Duty, (value, effect, _) => Scaled(value, 1e-3 / effect.Area)),
+        ["heating_temperature"] = new("°C", HourQuantity.HeatingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
+        ["boiling_temperature"] = new("°C", HourQuantity.BoilingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
+        ["elevation"] = new("K", HourQuantity.Elevation, (value, _, _) => value),
+    };
+
+    /// <summary>One series.</summary>
+    internal TrendWire Of(LinePlace line, Effect effect, int effectId, string name, DateTimeOffset from, DateTimeOffset to, int points, TimeSpan window, long dataVersion)
+    {
+        TrendQuantity quantity = Quantities[name];
+        CleanExpectation? clean = CleanExpectation.Design(effect);
+        bool byHour = to - from > LongestByWindow;
+        List<Point> all = byHour
+            ? [.. store.Hours(line.LineId, effectId, quantity.Hours, from, to).Select(hour => new Point(hour.Hour, quantity.From(hour.Mean, effect, clean), "", null))]
+            : [.. store.Windows(line.LineId, effectId, from, to).Select(one => PointOf(one, quantity, effect, clean))];
+        long step = byHour ? Milliseconds.Hour : (long)window.TotalMilliseconds;
+        return Wire(line, effect, name, quantity.Unit, byHour, step, Thin(WithGaps(all, step), points), from, dataVersion);
+    }
+
+    private static Measured Scaled(Measured value, double factor) => new(value.Value * factor, value.Systematic * factor, value.Random * factor);
+
+    private static Point PointOf(EffectWindow window, TrendQuantity quantity, Effect effect, CleanExpectation? clean)
+    {
+        Measured value = quantity.From(EffectHour.Of(window, quantity.Hours), effect, clean);
+        bool producing = window.State is RunningState.Producing or RunningState.Unknown;
+        return new Point(window.At, value, producing ? window.Extrapolated ? "extrapolated" : "" : "not producing", value.IsPresent ? null : window.Reason);
+    }
+
+    /// <summary>Where steps are missing altogether, one absent point breaks the line.</summary>
+    private static List<Point> WithGaps(List<Point> points, long step)
+    {
+        var result = new List<Point>(points.Count);
+        foreach (Point point in points)
+        {
+            if (result.Count > 0 && point.At - result[^1].At > step) result.Add(new Point(result[^1].At + step, Measured.Absent, "", "no readings"));
+            result.Add(point);
+        }
+
+        return result;
+    }
+
+    /// <summary>
+    /// Thins to about the wanted number: from each stretch the lowest, the highest and the first absent point stay, so that a spike or a gap never vanishes.
+    /// </summary>
+    private static List<Point> Thin(List<Point> points, int wanted)
+    {
+        if (points.Count <= wanted) return points;
+        var result = new List<Point>(wanted + 8);
+        int stretches = int.Max(1, wanted / 3);
+        for (int stretch = 0; stretch < stretches; stretch++)
+        {
+            int first = (int)((long)points.Count * stretch / stretches), end = (int)((long)points.Count * (stretch + 1) / stretches);
+            int low = -1, high = -1, gap = -1;
+            for (int i = first; i < end; i++)
+            {
+                if (!points[i].Value.IsPresent)
+                {
+                    gap = gap < 0 ? i : gap;
+                    continue;
+                }
+
+                if (low < 0 || points[i].Value.Value < points[low].Value.Value) low = i;
+                if (high < 0 || points[i].Value.Value > points[high].Value.Value) high = i;
+            }
+
+            foreach (int i in new[] { low, high, gap }.Where(i => i >= 0).Distinct().Order()) result.Add(points[i]);
+        }
+
+        return result;
+    }
+
+    private static TrendWire Wire(
+        LinePlace line, Effect effect, string name, string unit, bool byHour, long step, List<Point> points, DateTimeOffset from, long dataVersion)
+    {
+        DateTimeOffset start = points.Count > 0 ? DateTimeOffset.FromUnixTimeMilliseconds(points[0].At) : from;
+        long zero = start.ToUnixTimeMilliseconds();
+        var reasons = new List<string>();
+        int IndexOf(string? reason)
+        {
+            if (reason is null) return -1;
+            if (!reasons.Contains(reason)) reasons.Add(reason);
+            return reasons.IndexOf(reason);
+        }
+
+        return new TrendWire(
+            line.Line.Name, effect.Name, name, unit, byHour ? "hour" : "window", (int)(step / 1000), start,
+            [.. points.Select(point => (point.At - zero) / 1000)],
+            [.. points.Select(point => Number(point.Value.Value))],
+            [.. points.Select(point => Number(point.Value.Standard))],
+            [.. points.Select(point => Number(point.Value.Random))],
+            [.. points.Select(point => point.Mark)],
+            reasons,
+            [.. points.Select(point => IndexOf(point.Reason))],
+            dataVersion);
+    }
+
+    private static double? Number(double value) => double.IsFinite(value) ? double.Round(value, 12) : null;
+
+    private readonly record struct Point(long At, Measured Value, string Mark, string? Reason);
+}
+
+/// <summary>A quantity that can be charted.</summary>
+/// <param name="Unit">Unit in which it goes out.</param>
+/// <param name="Hours">The stored quantity it rests on.</param>
+/// <param name="From">How it follows from that.</param>
+internal sealed record TrendQuantity(string Unit, HourQuantity Hours, Func<Measured, Effect, CleanExpectation?, Measured> From);

@@ -1,0 +1,142 @@
+using Dapper;
+using EvapMonitor.Core;
+using EvapMonitor.Core.Coefficients;
+using EvapMonitor.Core.Fouling;
+using Npgsql;
+using NpgsqlTypes;
+
+namespace EvapMonitor.Service.Store;
+
+/// <summary>Writes the results of a day: windows, hours and the day's mark in one transaction, so that a killed run never shows half a day.</summary>
+public sealed class ResultStore(NpgsqlDataSource database)
+{
+    /// <summary>Replaces the results of a day.</summary>
+    /// <returns>False when the day's readings changed meanwhile: the results stand, and the day stays marked.</returns>
+    public async Task<bool> WriteDayAsync(LinePlace line, WaitingDay day, int revisionId, IReadOnlyList<LineWindow> windows, CancellationToken stop)
+    {
+        await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
+        await using NpgsqlTransaction transaction = await connection.BeginTransactionAsync(stop);
+        DateTime from = day.Day.ToDateTime(TimeOnly.MinValue, DateTimeKind.Utc), to = from.AddDays(1);
+        var key = new { line = line.LineId, from, to, revision = revisionId };
+        await connection.ExecuteAsync(
+            """
+            SELECT ensure_month('effect_window', @from), ensure_month('line_window', @from);
+            DELETE FROM effect_window WHERE line_id = @line AND at >= @from AND at < @to AND revision_id = @revision;
+            DELETE FROM line_window WHERE line_id = @line AND at >= @from AND at < @to AND revision_id = @revision;
+            DELETE FROM effect_hour WHERE line_id = @line AND hour >= @from AND hour < @to AND revision_id = @revision
+            """, key);
+        WriteLine(connection, line.LineId, revisionId, windows);
+        WriteWindows(connection, line, revisionId, windows);
+        WriteHours(connection, line, revisionId, windows);
+        int cleared = await connection.ExecuteAsync(
+            """
+            UPDATE line_day SET shown_revision = @revision, evaluated_through = @through,
+                changed_from = CASE WHEN data_version = @version THEN NULL ELSE changed_from END
+            WHERE line_id = @line AND day = @day
+            """,
+            new
+            {
+                line = line.LineId,
+                day = day.Day,
+                revision = revisionId,
+                version = day.DataVersion,
+                through = windows.Count == 0 ? from : Instant.FromMilliseconds(windows[^1].At),
+            });
+        bool whole = await connection.ExecuteScalarAsync<bool>(
+            "SELECT changed_from IS NULL FROM line_day WHERE line_id = @line AND day = @day", new { line = line.LineId, day = day.Day });
+        await transaction.CommitAsync(stop);
+        return cleared == 1 && whole;
+    }
+
+    private static void WriteLine(NpgsqlConnection connection, int lineId, int revisionId, IReadOnlyList<LineWindow> windows)
+    {
+        using NpgsqlBinaryImporter copy = connection.BeginBinaryImport("COPY line_window (line_id, at, revision_id, state, evaporation_kg_s) FROM STDIN (FORMAT BINARY)");
+        foreach (LineWindow window in windows)
+        {
+            copy.StartRow();
+            copy.Write(lineId, NpgsqlDbType.Integer);
+            copy.Write(Instant.FromMilliseconds(window.At), NpgsqlDbType.TimestampTz);
+            copy.Write(revisionId, NpgsqlDbType.Integer);
+            copy.Write((short)window.State, NpgsqlDbType.Smallint);
+            WriteNumber(copy, window.Evaporation);
+        }
+
+        copy.Complete();
+    }
+
+    private static void WriteWindows(NpgsqlConnection connection, LinePlace line, int revisionId, IReadOnlyList<LineWindow> windows)
+    {
+        using NpgsqlBinaryImporter copy = connection.BeginBinaryImport(
+            """
+            COPY effect_window (line_id, effect_id, at, revision_id, model, state, heating_temperature_k, heating_temperature_u, boiling_temperature_k,
+                boiling_temperature_u, elevation_k, elevation_u, driving_force_k, driving_force_u, duty_w, duty_u, coefficient_w_m2k, coefficient_systematic,
+                coefficient_random, solids, heating_from, boiling_from, duty_from, extrapolated, reason) FROM STDIN (FORMAT BINARY)
+            """);
+        foreach (LineWindow window in windows)
+        {
+            for (int i = 0; i < window.Effects.Count; i++) WriteWindow(copy, line, i, revisionId, window.Effects[i]);
+        }
+
+        copy.Complete();
+    }
+
+    private static void WriteWindow(NpgsqlBinaryImporter copy, LinePlace line, int effect, int revisionId, EffectWindow window)
+    {
+        copy.StartRow();
+        copy.Write(line.LineId, NpgsqlDbType.Integer);
+        copy.Write(line.EffectIds[effect], NpgsqlDbType.Integer);
+        copy.Write(Instant.FromMilliseconds(window.At), NpgsqlDbType.TimestampTz);
+        copy.Write(revisionId, NpgsqlDbType.Integer);
+        copy.Write((short)LineEvaluation.ModelNumber, NpgsqlDbType.Smallint);
+        copy.Write((short)window.State, NpgsqlDbType.Smallint);
+        foreach (Measured quantity in (ReadOnlySpan<Measured>)[window.HeatingTemperature, window.BoilingTemperature, window.Elevation, window.DrivingForce, window.Duty])
+        {
+            WriteNumber(copy, quantity.Value);
+            WriteNumber(copy, quantity.Standard);
+        }
+
+        WriteNumber(copy, window.Coefficient.Value);
+        WriteNumber(copy, window.Coefficient.Systematic);
+        WriteNumber(copy, window.Coefficient.Random);
+        WriteNumber(copy, window.Solids);
+        copy.Write((short)window.HeatingFrom, NpgsqlDbType.Smallint);
+        copy.Write((short)window.BoilingFrom, NpgsqlDbType.Smallint);
+        copy.Write((short)window.DutyFrom, NpgsqlDbType.Smallint);
+        copy.Write(window.Extrapolated, NpgsqlDbType.Boolean);
+        if (window.Reason is null) copy.WriteNull();
+        else copy.Write(window.Reason, NpgsqlDbType.Text);
+    }
+
+    private static void WriteHours(NpgsqlConnection connection, LinePlace line, int revisionId, IReadOnlyList<LineWindow> windows)
+    {
+        using NpgsqlBinaryImporter copy = connection.BeginBinaryImport(
+            """
+            COPY effect_hour (line_id, effect_id, quantity, hour, revision_id, n, mean, lowest, highest, median, systematic, random)
+            FROM STDIN (FORMAT BINARY)
+            """);
+        for (int i = 0; i < line.EffectIds.Count; i++)
+        {
+            int effect = i;
+            foreach (EffectHour hour in EffectHour.Summarise(windows.Select(window => window.Effects[effect])))
+            {
+                copy.StartRow();
+                copy.Write(line.LineId, NpgsqlDbType.Integer);
+                copy.Write(line.EffectIds[effect], NpgsqlDbType.Integer);
+                copy.Write((short)hour.Quantity, NpgsqlDbType.Smallint);
+                copy.Write(Instant.FromMilliseconds(hour.Hour), NpgsqlDbType.TimestampTz);
+                copy.Write(revisionId, NpgsqlDbType.Integer);
+                copy.Write(hour.Count, NpgsqlDbType.Integer);
+                foreach (double value in (ReadOnlySpan<double>)[hour.Mean.Value, hour.Lowest, hour.Highest, hour.Median, hour.Mean.Systematic, hour.Mean.Random])
+                    copy.Write(value, NpgsqlDbType.Double);
+            }
+        }
+
+        copy.Complete();
+    }
+
+    private static void WriteNumber(NpgsqlBinaryImporter copy, double value)
+    {
+        if (double.IsFinite(value)) copy.Write(value, NpgsqlDbType.Double);
+        else copy.WriteNull();
+    }
+}

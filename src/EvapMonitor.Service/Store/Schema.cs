@@ -1,0 +1,27 @@
+using System.Reflection;
+using DbUp;
+using DbUp.Engine;
+using DbUp.Engine.Output;
+
+namespace EvapMonitor.Service.Store;
+
+/// <summary>Brings a database to the schema of this program: numbered scripts, each in its own transaction, forward only.</summary>
+public static class Schema
+{
+    /// <summary>Applies the scripts that the database lacks.</summary>
+    /// <returns>Names of the scripts applied now.</returns>
+    /// <exception cref="InvalidOperationException">A script failed; the database is as the last whole script left it.</exception>
+    public static IReadOnlyList<string> Upgrade(string connection)
+    {
+        UpgradeEngine engine = DeployChanges.To
+            .PostgresqlDatabase(connection)
+            .WithScriptsEmbeddedInAssembly(Assembly.GetExecutingAssembly(), name => name.Contains(".Store.Migrations.", StringComparison.Ordinal))
+            .WithTransactionPerScript()
+            .LogTo(new NoOpUpgradeLog())
+            .Build();
+        DatabaseUpgradeResult result = engine.PerformUpgrade();
+        return result.Successful
+            ? [.. result.Scripts.Select(script => script.Name)]
+            : throw new InvalidOperationException($"The database could not be brought up to date: script {result.ErrorScript?.Name} failed: {result.Error.Message}", result.Error);
+    }
+}
