@@ -22,6 +22,9 @@ public sealed record Site
 
     /// <summary>The lines in plant-file order.</summary>
     public required IReadOnlyList<Line> Lines { get; init; }
+
+    /// <summary>What the plant allows when cleanings are planned; null when not given.</summary>
+    public CleaningRules? CleaningRules { get; init; }
 }
 
 /// <summary>Which liquor a line boils: always the same, or told by a signal.</summary>
@@ -68,6 +71,9 @@ public sealed record Line
 
     /// <summary>Evaporation that the plant needs from the line, kg/s; null when not given.</summary>
     public double? RequiredEvaporation { get; init; }
+
+    /// <summary>Costs; null when not given, in which case nothing is said about money.</summary>
+    public Money? Money { get; init; }
 }
 
 /// <summary>Instruments on a liquor stream; each may be absent.</summary>
@@ -125,4 +131,8 @@ public sealed record Bleed(string From, string To, Instrument? Flow);
 /// <param name="Effects">Names of the effects.</param>
 /// <param name="Duration">How long a cleaning takes; null when not given.</param>
 /// <param name="Cost">Cost of one cleaning in the plant's currency; null when not given.</param>
-public sealed record CleaningGroup(string Name, IReadOnlyList<string> Effects, TimeSpan? Duration, double? Cost);
+public sealed record CleaningGroup(string Name, IReadOnlyList<string> Effects, TimeSpan? Duration, double? Cost)
+{
+    /// <summary>The signal that tells that a cleaning is going on; null when there is none.</summary>
+    public ActiveSignal? Signal { get; init; }
+}

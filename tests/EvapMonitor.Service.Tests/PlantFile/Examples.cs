@@ -1,0 +1,52 @@
+using EvapMonitor.Core.Plant;
+using EvapMonitor.Service.PlantFile;
+
+namespace EvapMonitor.Service.Tests.PlantFile;
+
+internal static class Examples
+{
+    public static IReadOnlyList<string> Files { get; } = Directory.GetFiles(Path.Combine(AppContext.BaseDirectory, "examples"), "*.yaml");
+
+    public static string Text(string name) => File.ReadAllText(Path.Combine(AppContext.BaseDirectory, "examples", name));
+
+    /// <summary>The smallest sound file; tests change a piece of it.</summary>
+    public const string Small = """
+        site: Lyngdal
+        time-zone: UTC
+        atmosphere: 1013 mbar
+        history-from: 2026-01-01
+        lines:
+          one:
+            liquor: water
+            feed:
+              flow: {signal: F, unit: t/h, accuracy: 1 %}
+              solids: {signal: X, unit: "%", accuracy: 0.3 abs}
+            effects:
+            - name: E1
+              heating: steam
+              liquor: feed
+              area: 610 m2
+            - name: E2
+              heating: vapour of E1
+              liquor: E1
+              area: 610 m2
+        """;
+
+    public static string With(string old, string changed) =>
+        Small.Contains(old, StringComparison.Ordinal) ? Small.Replace(old, changed, StringComparison.Ordinal) : throw new ArgumentException("not in the file: " + old);
+
+    public static Site Sound(string text)
+    {
+        PlantFileResult result = PlantFileReader.Read(text);
+        Assert.Empty(result.Problems.Select(p => p.ToLine("plant.yaml")));
+        return Assert.IsType<Site>(result.Site);
+    }
+
+    public static PlantFileProblem OnlyProblem(string text)
+    {
+        PlantFileResult result = PlantFileReader.Read(text);
+        Assert.Null(result.Site);
+        Assert.True(result.Problems.Count == 1, string.Join('\n', result.Problems.Select(p => p.ToLine("plant.yaml"))));
+        return result.Problems[0];
+    }
+}
