@@ -7,7 +7,7 @@ namespace EvapMonitor.Core.Balances;
 /// Finds temperatures and duties of each effect straight from what is measured there, without balancing one instrument against another.
 /// A pure function of <see cref="LineInputs"/>: absent inputs are NaN and leave NaN behind, and nothing throws on a plant's odd reading.
 /// </summary>
-public sealed class DirectBalance
+internal sealed class DirectBalance
 {
     private readonly LineInstruments _at;
     private readonly LineRoutes _routes;

@@ -3,7 +3,7 @@ using EvapMonitor.Core.Plant;
 namespace EvapMonitor.Core.Balances;
 
 /// <summary>What a balance reads in one window: the conditioned means and the shares and model errors that nobody measures.</summary>
-public sealed class LineInputs
+internal sealed class LineInputs
 {
     /// <summary>Makes inputs for a line, with the pseudo-measurements at their stated values.</summary>
     public LineInputs(LineInstruments instruments)
@@ -73,7 +73,7 @@ public enum DutySource : byte
 }
 
 /// <summary>The quantities of one effect that the direct way finds from one set of inputs, SI units; NaN is absent.</summary>
-public struct EffectState
+internal struct EffectState
 {
     /// <summary>Heating temperature: saturation temperature in the chest, K.</summary>
     public double HeatingTemperature;
@@ -105,7 +105,7 @@ public struct EffectState
 
 /// <summary>A duty for each <see cref="DutySource"/>.</summary>
 [System.Runtime.CompilerServices.InlineArray(4)]
-public struct DutyBySource
+internal struct DutyBySource
 {
     private double _first;
 }

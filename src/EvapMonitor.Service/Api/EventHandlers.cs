@@ -1,0 +1,78 @@
+using System.Net.ServerSentEvents;
+using System.Runtime.CompilerServices;
+using System.Text.Json;
+using EvapMonitor.Service.Api.Wire;
+using EvapMonitor.Service.Evaluation;
+using EvapMonitor.Service.Ingest.Files;
+using EvapMonitor.Service.Live;
+using Microsoft.AspNetCore.Http.HttpResults;
+using Microsoft.Extensions.Options;
+
+namespace EvapMonitor.Service.Api;
+
+/// <summary>The stream of server-sent events for open pages.</summary>
+internal static class EventHandlers
+{
+    private static readonly TimeSpan SiteEvery = TimeSpan.FromSeconds(15);
+
+    public static Results<ServerSentEventsResult<string>, ProblemHttpResult> Stream(
+        LiveEvents events, SiteStates states, TimeProvider clock, IOptions<Microsoft.AspNetCore.Http.Json.JsonOptions> json, IHostApplicationLifetime host, CancellationToken stop)
+    {
+        LiveEvents.Listening? listening = events.Listen();
+        if (listening is null) return TypedResults.Problem($"{LiveEvents.MostListeners} pages listen already.", statusCode: StatusCodes.Status503ServiceUnavailable);
+        return TypedResults.ServerSentEvents(Items(listening, states, clock, json.Value.SerializerOptions, host.ApplicationStopping, stop));
+    }
+
+    private static async IAsyncEnumerable<SseItem<string>> Items(
+        LiveEvents.Listening listening, SiteStates states, TimeProvider clock, JsonSerializerOptions json, CancellationToken stopping, [EnumeratorCancellation] CancellationToken stop)
+    {
+        using LiveEvents.Listening hold = listening;
+        using var end = CancellationTokenSource.CreateLinkedTokenSource(stop, stopping);
+        while (!end.IsCancellationRequested)
+        {
+            string? site = await SiteAsync(states, json, end.Token);
+            if (site is null) yield break;
+            yield return new SseItem<string>(site, "site");
+            using var period = new CancellationTokenSource(SiteEvery, clock);
+            using var wait = CancellationTokenSource.CreateLinkedTokenSource(end.Token, period.Token);
+            while (await NextAsync(listening, wait.Token) is { } happened)
+            {
+                yield return new SseItem<string>(JsonSerializer.Serialize(WireOf(happened.Body), json), happened.Kind)
+                {
+                    EventId = happened.Id.ToString(System.Globalization.CultureInfo.InvariantCulture),
+                };
+            }
+        }
+    }
+
+    private static async Task<string?> SiteAsync(SiteStates states, JsonSerializerOptions json, CancellationToken stop)
+    {
+        try
+        {
+            return JsonSerializer.Serialize(await states.SiteAsync(stop), json);
+        }
+        catch (Exception error) when (error is OperationCanceledException or Npgsql.NpgsqlException)
+        {
+            return null;
+        }
+    }
+
+    private static async Task<LiveEvent?> NextAsync(LiveEvents.Listening listening, CancellationToken stop)
+    {
+        try
+        {
+            return await listening.Reader.ReadAsync(stop);
+        }
+        catch (OperationCanceledException)
+        {
+            return null;
+        }
+    }
+
+    private static object WireOf(object body) => body switch
+    {
+        ImportPace pace => ImportHandlers.WireOf(pace),
+        WindowsChanged changed => new WindowsChangedWire(changed.Line, changed.From, changed.To),
+        _ => body,
+    };
+}

@@ -1,0 +1,21 @@
+using Microsoft.AspNetCore.OpenApi;
+
+namespace EvapMonitor.Service.Api;
+
+/// <summary>What stands at the head of the interface's description.</summary>
+internal static class OpenApiText
+{
+    public static void Describe(OpenApiOptions options) => options.AddDocumentTransformer((document, _, _) =>
+    {
+        document.Info = new()
+        {
+            Title = "EvapMonitor",
+            Version = "v1",
+            Description = "Apparent heat-transfer coefficients of evaporator effects: history in, results out, cleanings and what is due. "
+                + "Times are RFC 3339 in UTC; a number carries its unit in its name; an absent number is null with its reason beside it.",
+        };
+        // The address differs from machine to machine and says nothing.
+        document.Servers?.Clear();
+        return Task.CompletedTask;
+    });
+}

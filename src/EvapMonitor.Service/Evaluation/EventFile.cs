@@ -1,0 +1,75 @@
+using System.Text;
+using EvapMonitor.Core.Plant;
+using EvapMonitor.Service.Ingest.Files;
+using NodaTime;
+
+namespace EvapMonitor.Service.Evaluation;
+
+/// <summary>A logged event of a file.</summary>
+/// <param name="Start">When, ms.</param>
+/// <param name="End">End of an interval, ms; null without one.</param>
+/// <param name="Line">The line.</param>
+/// <param name="Effect">The effect; null for the whole line.</param>
+/// <param name="Kind">cleaning, …</param>
+internal sealed record LoggedEvent(long Start, long? End, string Line, string? Effect, string Kind);
+
+/// <summary>Reads a file of logged events: time,end,line,effect,signal,kind,note. Every mistake ends it: a wrong log would move results in silence.</summary>
+internal static class EventFile
+{
+    private static readonly string[] Kinds = ["cleaning"];
+
+    public static List<LoggedEvent> Read(string path, Site site)
+    {
+        var problems = new List<string>();
+        var events = new List<LoggedEvent>();
+        var times = new TimeReader(DateTimeZoneProviders.Tzdb[site.TimeZone]);
+        using FileStream stream = File.OpenRead(path);
+        var lines = new LineReader(stream);
+        string name = Path.GetFileName(path);
+        var clock = default(ClockState);
+        while (lines.TryRead(out ReadOnlySpan<byte> line))
+        {
+            List<string> cells = Cells(line);
+            if (lines.Number == 1)
+            {
+                if (!cells.SequenceEqual(["time", "end", "line", "effect", "signal", "kind", "note"])) throw new StartException([$"{name}:1: the header must be time,end,line,effect,signal,kind,note."]);
+                continue;
+            }
+
+            if (line.IsEmpty) continue;
+            if (WhyWrong(cells, site, times, ref clock, out LoggedEvent? logged) is { } wrong) problems.Add($"{name}:{lines.Number}: {wrong}");
+            else events.Add(logged!);
+        }
+
+        return problems.Count == 0 ? events : throw new StartException(problems);
+    }
+
+    private static string? WhyWrong(List<string> cells, Site site, TimeReader times, ref ClockState clock, out LoggedEvent? logged)
+    {
+        logged = null;
+        if (cells.Count != 7) return $"{cells.Count} columns; the header has 7";
+        if (times.Read(Encoding.UTF8.GetBytes(cells[0]), ref clock, out long start) is { } wrong) return $"time '{cells[0]}' {wrong}";
+        long? end = null;
+        if (cells[1].Length > 0)
+        {
+            if (times.Read(Encoding.UTF8.GetBytes(cells[1]), ref clock, out long read) is { } wrongEnd) return $"end '{cells[1]}' {wrongEnd}";
+            if (read <= start) return "end is not after time";
+            end = read;
+        }
+
+        if (site.Lines.FirstOrDefault(one => one.Name == cells[2]) is not { } line) return $"line '{cells[2]}' is not in the plant file";
+        if (cells[3].Length > 0 && line.Effects.All(effect => effect.Name != cells[3])) return $"line {line.Name} has no effect '{cells[3]}'";
+        if (!Kinds.Contains(cells[5])) return $"kind '{cells[5]}' is not supported yet; allowed: {string.Join(", ", Kinds)}";
+        if (cells[3].Length == 0) return "a cleaning needs its effect";
+        logged = new LoggedEvent(start, end, line.Name, cells[3], cells[5]);
+        return null;
+    }
+
+    private static List<string> Cells(ReadOnlySpan<byte> line)
+    {
+        var cells = new List<string>();
+        var fields = new Fields(line, (byte)',');
+        while (fields.TryTake(out ReadOnlySpan<byte> field)) cells.Add(Encoding.UTF8.GetString(field));
+        return cells;
+    }
+}

@@ -1,0 +1,107 @@
+using System.Globalization;
+using EvapMonitor.Core;
+using EvapMonitor.Core.Coefficients;
+using EvapMonitor.Core.Plant;
+using EvapMonitor.Core.Readings;
+using EvapMonitor.Service.Ingest.Files;
+using NodaTime;
+
+namespace EvapMonitor.Service.Evaluation;
+
+/// <summary>
+/// Evaluates readings of files without a database. The days are computed one by one with the same lead-in as in the service, so that both give the same numbers.
+/// </summary>
+internal sealed class FileEvaluation(Site site, CancellationToken stop) : IReadingSink
+{
+    private const int MostTold = 100;
+
+    private readonly Dictionary<string, int> _keys = Store.PlantInForce.SignalsOf(site).Select((signal, i) => (signal.Signal, i)).ToDictionary(pair => pair.Signal, pair => pair.i);
+    private readonly Dictionary<string, ReadingSeries> _series = Store.PlantInForce.SignalsOf(site).ToDictionary(signal => signal.Signal, _ => new ReadingSeries());
+    private readonly List<string> _told = [];
+    private readonly Dictionary<string, long> _unknown = [];
+    private ReadingSeries[] _byKey = [];
+    private string _file = "";
+    private List<LoggedEvent> _events = [];
+    private long _accepted;
+    private long _repeated;
+
+    /// <summary>Rows or cells that could not be used.</summary>
+    public long Rejected { get; private set; }
+
+    /// <summary>The first hundred problems, each in one line, and the signals that the plant does not name.</summary>
+    public IEnumerable<string> Told => _told.Concat(_unknown.OrderByDescending(pair => pair.Value).Take(20).Select(pair => $"{pair.Key}: {pair.Value} readings, but the plant file names no such signal"));
+
+    /// <summary>What was read and written, in one line.</summary>
+    public string Summary { get; private set; } = "";
+
+    /// <summary>Reads one file.</summary>
+    public void Read(string path)
+    {
+        _byKey = [.. _series.Values];
+        _file = Path.GetFileName(path);
+        using FileStream stream = File.OpenRead(path);
+        long earliest = site.HistoryFrom.ToUnixTimeMilliseconds();
+        new ReadingFile(stream, DateTimeZoneProviders.Tzdb[site.TimeZone], earliest, long.MaxValue, this).Read();
+    }
+
+    /// <summary>Reads logged events.</summary>
+    public void ReadEvents(string path) => _events = EventFile.Read(path, site);
+
+    /// <summary>Evaluates and writes a row for each window and effect.</summary>
+    public void WriteCoefficients(string path)
+    {
+        using var writer = new CoefficientFile(path);
+        foreach (Line line in site.Lines)
+        {
+            var evaluation = new LineEvaluation(site, line);
+            var own = evaluation.Signals.Select(signal => _series[signal]).Where(series => series.Count > 0).ToList();
+            if (own.Count == 0) continue;
+            ILookup<string, (long, long)> cleanings = _events.Where(one => one.Line == line.Name && one.Kind == "cleaning" && one.Effect is not null)
+                .ToLookup(one => one.Effect!, one => (one.Start, one.End ?? long.MaxValue));
+            long last = own.Max(series => series.At[^1]);
+            for (long day = Milliseconds.DayOf(own.Min(series => series.At[0])); day <= last; day += Milliseconds.Day)
+            {
+                stop.ThrowIfCancellationRequested();
+                foreach (LineWindow window in evaluation.Evaluate(_series, day, long.Min(day + Milliseconds.Day, EndOfWindow(last)), cleanings)) writer.Write(line, window);
+            }
+        }
+
+        Summary = string.Create(CultureInfo.InvariantCulture, $"{_accepted} readings used, {_repeated} repeated, {Rejected} rejected, {_unknown.Values.Sum()} of unknown signals; {writer.Rows} rows in {path}");
+    }
+
+    /// <inheritdoc/>
+    public int KeyOf(string signal) => _keys.GetValueOrDefault(signal, -1);
+
+    /// <inheritdoc/>
+    public void Take(int key, in Reading reading)
+    {
+        if (_byKey[key].Add(reading)) _accepted++;
+        else _repeated++;
+    }
+
+    /// <inheritdoc/>
+    public void TakeUnknown(string signal)
+    {
+        if (_unknown.Count < 10_000 || _unknown.ContainsKey(signal)) _unknown[signal] = _unknown.GetValueOrDefault(signal) + 1;
+    }
+
+    /// <inheritdoc/>
+    public void Reject(long line, string reason)
+    {
+        Rejected++;
+        if (_told.Count < MostTold) _told.Add($"{_file}:{line}: {reason}");
+    }
+
+    /// <inheritdoc/>
+    public bool RowDone(long line)
+    {
+        stop.ThrowIfCancellationRequested();
+        return true;
+    }
+
+    private long EndOfWindow(long at)
+    {
+        long step = (long)site.Window.TotalMilliseconds;
+        return at - Milliseconds.Modulo(at, step) + step;
+    }
+}

@@ -1,0 +1,43 @@
+using System.Text.Json;
+using System.Text.Json.Serialization;
+using EvapMonitor.Service.Api;
+using EvapMonitor.Service.Evaluation;
+using EvapMonitor.Service.Ingest.Files;
+using EvapMonitor.Service.Live;
+using EvapMonitor.Service.Security;
+using EvapMonitor.Service.Store;
+using Microsoft.AspNetCore.Authentication;
+
+namespace EvapMonitor.Service;
+
+/// <summary>Which parts the service is made of.</summary>
+internal static class ServiceParts
+{
+    public static IServiceCollection AddStore(this IServiceCollection services) => services
+        .AddSingleton<PlantHolder>().AddSingleton<PlantStore>().AddSingleton<ReadingStore>().AddSingleton<DayStore>().AddSingleton<ResultStore>()
+        .AddSingleton<TrendStore>().AddSingleton<CleaningStore>().AddSingleton<ImportStore>();
+
+    public static IServiceCollection AddEvaluation(this IServiceCollection services) => services
+        .AddSingleton<LiveEvents>().AddSingleton<EvaluationSignal>()
+        .AddSingleton<ImportWorker>().AddHostedService(provider => provider.GetRequiredService<ImportWorker>())
+        .AddHostedService<EvaluationWorker>();
+
+    public static IServiceCollection AddApi(this IServiceCollection services)
+    {
+        services.AddSingleton<EffectStates>().AddSingleton<SiteStates>().AddSingleton<Trends>();
+        services.AddProblemDetails();
+        services.ConfigureHttpJsonOptions(json =>
+        {
+            json.SerializerOptions.PropertyNamingPolicy = JsonNamingPolicy.SnakeCaseLower;
+            json.SerializerOptions.MaxDepth = 16;
+            json.SerializerOptions.NumberHandling = JsonNumberHandling.Strict;
+            json.SerializerOptions.UnmappedMemberHandling = JsonUnmappedMemberHandling.Disallow;
+        });
+        services.AddOpenApi("v1", OpenApiText.Describe);
+        services.AddAuthentication(LoopbackAuthentication.SchemeName)
+            .AddScheme<AuthenticationSchemeOptions, LoopbackAuthentication>(LoopbackAuthentication.SchemeName, null);
+        var authorization = services.AddAuthorizationBuilder();
+        foreach (string policy in Policies.All) authorization.AddPolicy(policy, one => one.RequireAuthenticatedUser());
+        return services;
+    }
+}
