@@ -8,7 +8,7 @@ import { useEffect } from 'preact/hooks';
 import { calmNow } from '../site/clock';
 import { resultsChanged, zone } from '../site/state';
 import { duration } from '../words/duration';
-import { count, significant } from '../words/number';
+import { count, raw } from '../words/number';
 import { prettyUnit } from '../words/quantity';
 import { moment } from '../words/time';
 
@@ -38,7 +38,7 @@ export function Instruments() {
                   const at = s.latest_at === null ? null : Date.parse(s.latest_at);
                   return <tr key={s.name}>
                     <th scope="row" class="signal">{s.name}</th><td>{s.line ?? ''}</td>
-                    <td class="number">{s.latest_value === null ? 'none' : significant(s.latest_value, 5)}</td><td>{prettyUnit(s.unit ?? '')}</td>
+                    <td class="number">{s.latest_value === null ? 'none' : raw(s.latest_value)}</td><td>{prettyUnit(s.unit ?? '')}</td>
                     <td>{s.latest_quality ?? ''}</td>
                     <td>{at === null ? 'never read' : now - at > old ? <b title={moment(at, zone.value, now)}>{duration(now - at)}</b> : duration(now - at)}</td>
                   </tr>;

@@ -33,8 +33,15 @@ export function measured(value: number, uncertainty: number | null): string {
 
 /** A number to so many significant figures, never in powers of ten. */
 export function significant(value: number, figures: number): string {
-  if (value === 0) return '0';
-  return rounded(value, figures - 1 - Math.floor(Math.log10(Math.abs(value))));
+  // Rounding may carry into another place: 9.99 to two figures is 10, not 10.0.
+  const carried = Math.abs(Number(value.toPrecision(figures)));
+  return carried === 0 ? '0' : rounded(value, figures - 1 - Math.floor(Math.log10(carried)));
+}
+
+/** A raw value as it came, to six figures, without zeros behind it. */
+export function raw(value: number): string {
+  const text = String(Number(value.toPrecision(6)));
+  return text.includes('e') ? text.replace('-', minus) : fixed(Number(text), text.split('.')[1]?.length ?? 0);
 }
 
 /** A whole count of things: "1 line", "7 lines". */
