@@ -29,8 +29,11 @@ internal sealed class ScalarNode(PlantNode? parent, string segment, int line, in
     /// <summary>The text without the white space around it.</summary>
     public string Text { get; } = text.Trim();
 
+    /// <summary>True for text without quotes.</summary>
+    public bool Plain { get; } = plain;
+
     /// <summary>True for <c>key:</c> with nothing after it, and for YAML's words for nothing.</summary>
-    public bool IsNothing => plain && Text is "" or "~" or "null";
+    public bool IsNothing => Plain && Text is "" or "~" or "null";
 }
 
 /// <summary>A list.</summary>

@@ -5,9 +5,12 @@ using UnitsNet.Units;
 
 namespace EvapMonitor.Service.PlantFile;
 
-/// <summary>The units as plants write them. Conversion factors come from UnitsNet; a test holds them against NIST SP 811.</summary>
+/// <summary>The units as plants write them. Conversion factors come from UnitsNet where it has them to seven digits; a test holds all against NIST SP 811.</summary>
 internal static class Units
 {
+    /// <summary>550 ft·lbf/s exactly; the library rounds it to 745.69 W.</summary>
+    private const double HorsePower = 550 * 0.3048 * 0.45359237 * 9.80665;
+
     private static readonly FrozenDictionary<string, UnitOfMeasure> BySpelling = All().ToFrozenDictionary(u => u.Written, StringComparer.Ordinal);
 
     /// <summary>Every spelling that is known, after <see cref="Normalised"/>.</summary>
@@ -56,13 +59,11 @@ internal static class Units
     private static IEnumerable<UnitOfMeasure> All() =>
     [
         .. UnitsOfPressure.All(),
-        .. Of(Dimension.MassFlow, MassFlow.BaseUnit, [
+        .. Of(Dimension.MassFlow, MassFlowUnit.KilogramPerSecond, [
             ("t/h", MassFlowUnit.TonnePerHour), ("kg/h", MassFlowUnit.KilogramPerHour), ("kg/s", MassFlowUnit.KilogramPerSecond),
-            ("kg/min", MassFlowUnit.KilogramPerMinute), ("t/d", MassFlowUnit.TonnePerDay), ("g/s", MassFlowUnit.GramPerSecond),
-            ("lb/h", MassFlowUnit.PoundPerHour), ("lb/hr", MassFlowUnit.PoundPerHour),
-            ("lb/s", MassFlowUnit.PoundPerSecond), ("lb/min", MassFlowUnit.PoundPerMinute)]),
-        new("klb/h", Dimension.MassFlow, MassFlow.From(1000, MassFlowUnit.PoundPerHour).KilogramsPerSecond),
-        .. Of(Dimension.VolumeFlow, VolumeFlow.BaseUnit, [
+            ("kg/min", MassFlowUnit.KilogramPerMinute), ("t/d", MassFlowUnit.TonnePerDay), ("g/s", MassFlowUnit.GramPerSecond)]),
+        .. Pounds(),
+        .. Of(Dimension.VolumeFlow, VolumeFlowUnit.CubicMeterPerSecond, [
             ("m3/h", VolumeFlowUnit.CubicMeterPerHour), ("m3/s", VolumeFlowUnit.CubicMeterPerSecond), ("m3/min", VolumeFlowUnit.CubicMeterPerMinute),
             ("m3/d", VolumeFlowUnit.CubicMeterPerDay), ("l/h", VolumeFlowUnit.LiterPerHour), ("l/min", VolumeFlowUnit.LiterPerMinute),
             ("l/s", VolumeFlowUnit.LiterPerSecond), ("L/h", VolumeFlowUnit.LiterPerHour), ("L/min", VolumeFlowUnit.LiterPerMinute),
@@ -73,14 +74,15 @@ internal static class Units
         .. Temperatures(TemperatureUnit.Kelvin, TemperatureDeltaUnit.Kelvin, "K"),
         new("%", Dimension.Fraction, 0.01), new("°Bx", Dimension.Fraction, 0.01), new("degBx", Dimension.Fraction, 0.01), new("°Brix", Dimension.Fraction, 0.01),
         new("kg/kg", Dimension.Fraction, 1), new("g/kg", Dimension.Fraction, 0.001), new("g/g", Dimension.Fraction, 1),
-        .. Of(Dimension.Length, Length.BaseUnit, [
+        .. Of(Dimension.Length, LengthUnit.Meter, [
             ("m", LengthUnit.Meter), ("cm", LengthUnit.Centimeter), ("mm", LengthUnit.Millimeter), ("ft", LengthUnit.Foot), ("in", LengthUnit.Inch)]),
-        .. Of(Dimension.Area, Area.BaseUnit, [("m2", AreaUnit.SquareMeter), ("ft2", AreaUnit.SquareFoot), ("sqft", AreaUnit.SquareFoot)]),
-        .. Of(Dimension.Mass, Mass.BaseUnit, [("kg", MassUnit.Kilogram), ("t", MassUnit.Tonne), ("lb", MassUnit.Pound)]),
-        .. Of(Dimension.Power, Power.BaseUnit, [
-            ("W", PowerUnit.Watt), ("kW", PowerUnit.Kilowatt), ("MW", PowerUnit.Megawatt), ("hp", PowerUnit.MechanicalHorsepower)]),
+        .. Of(Dimension.Area, AreaUnit.SquareMeter, [("m2", AreaUnit.SquareMeter), ("ft2", AreaUnit.SquareFoot), ("sqft", AreaUnit.SquareFoot)]),
+        .. Of(Dimension.Mass, MassUnit.Kilogram, [("kg", MassUnit.Kilogram), ("t", MassUnit.Tonne), ("lb", MassUnit.Pound)]),
+        .. Of(Dimension.Power, PowerUnit.Watt, [
+            ("W", PowerUnit.Watt), ("kW", PowerUnit.Kilowatt), ("MW", PowerUnit.Megawatt)]),
+        new("hp", Dimension.Power, HorsePower),
         .. Coefficients(),
-        .. Of(Dimension.Duration, Duration.BaseUnit, [
+        .. Of(Dimension.Duration, DurationUnit.Second, [
             ("s", DurationUnit.Second), ("min", DurationUnit.Minute), ("h", DurationUnit.Hour), ("d", DurationUnit.Day)]),
     ];
 
@@ -91,6 +93,14 @@ internal static class Units
     private static IEnumerable<UnitOfMeasure> Temperatures(TemperatureUnit unit, TemperatureDeltaUnit step, params string[] spellings) =>
         spellings.Select(s => new UnitOfMeasure(
             s, Dimension.Temperature, TemperatureDelta.From(1, step).Kelvins, Temperature.From(0, unit).Kelvins));
+
+    /// <summary>Built from the pound, because the library's own flows of pounds are rounded to six digits.</summary>
+    private static IEnumerable<UnitOfMeasure> Pounds()
+    {
+        double pound = Mass.From(1, MassUnit.Pound).Kilograms;
+        return new[] { ("lb/s", pound), ("lb/min", pound / 60), ("lb/h", pound / 3600), ("lb/hr", pound / 3600), ("klb/h", pound / 3.6) }
+            .Select(u => new UnitOfMeasure(u.Item1, Dimension.MassFlow, u.Item2));
+    }
 
     private static IEnumerable<UnitOfMeasure> Coefficients()
     {

@@ -11,10 +11,13 @@ internal static class UnitsOfPressure
     [
         ("Pa", PressureUnit.Pascal), ("hPa", PressureUnit.Hectopascal), ("kPa", PressureUnit.Kilopascal), ("MPa", PressureUnit.Megapascal),
         ("bar", PressureUnit.Bar), ("mbar", PressureUnit.Millibar), ("psi", PressureUnit.PoundForcePerSquareInch), ("atm", PressureUnit.Atmosphere),
-        ("mmHg", PressureUnit.MillimeterOfMercury), ("inHg", PressureUnit.InchOfMercury), ("torr", PressureUnit.Torr),
+        ("mmHg", PressureUnit.MillimeterOfMercury), ("inHg", PressureUnit.InchOfMercury),
         ("kgf/cm2", PressureUnit.KilogramForcePerSquareCentimeter), ("kg/cm2", PressureUnit.KilogramForcePerSquareCentimeter),
         ("mmH2O", PressureUnit.MillimeterOfWaterColumn), ("mH2O", PressureUnit.MeterOfWaterColumn),
     ];
+
+    /// <summary>1/760 of an atmosphere; the library rounds it.</summary>
+    private const double Torr = 101_325.0 / 760;
 
     private static readonly (string Suffix, PressureReference Reference)[] Suffixes =
     [
@@ -25,6 +28,9 @@ internal static class UnitsOfPressure
         (" vacuum", PressureReference.Vacuum), (" vac", PressureReference.Vacuum), ("(vacuum)", PressureReference.Vacuum), ("(vac)", PressureReference.Vacuum),
     ];
 
-    public static IEnumerable<UnitOfMeasure> All() => Scales.SelectMany(scale => Suffixes.Select(suffix => new UnitOfMeasure(
-        scale.Written + suffix.Suffix, Dimension.Pressure, Pressure.From(1, scale.Unit).Pascals, 0, suffix.Reference)));
+    public static IEnumerable<UnitOfMeasure> All() => Scales
+        .Select(scale => (scale.Written, Pascals: Pressure.From(1, scale.Unit).Pascals))
+        .Append((Written: "torr", Pascals: Torr))
+        .SelectMany(scale => Suffixes.Select(suffix =>
+            new UnitOfMeasure(scale.Written + suffix.Suffix, Dimension.Pressure, scale.Pascals, 0, suffix.Reference)));
 }

@@ -15,9 +15,9 @@ internal static class YamlText
     /// <summary>The root of the only document; null when the text is not readable, in which case the findings say where.</summary>
     public static PlantNode? Read(string text, Findings findings)
     {
+        var parser = new Parser(new StringReader(text));
         try
         {
-            var parser = new Parser(new StringReader(text));
             Expect<StreamStart>(parser);
             if (!parser.MoveNext() || parser.Current is not DocumentStart)
             {
@@ -40,9 +40,33 @@ internal static class YamlText
         }
         catch (YamlException broken)
         {
-            findings.At(broken.Start.Line, broken.Start.Column, "text that is not YAML: " + Shown.Clean(OneLine(broken)), Hint(text, broken.Start));
+            Broken(text, broken.Start.Line, broken.Start.Column, broken.End.Line, ": " + Shown.Clean(broken.Message.ReplaceLineEndings(" ")), findings);
             return null;
         }
+        catch (Exception lost) when (lost is InvalidOperationException or ArgumentException or IndexOutOfRangeException or NullReferenceException)
+        {
+            // The scanner answers some broken texts, such as a list that is never closed, with exceptions that are not its own.
+            Mark last = parser.Current?.End ?? Mark.Empty;
+            Broken(text, last.Line, last.Column, last.Line + 1, " after this place, such as a bracket or quote that is never closed", findings);
+            return null;
+        }
+    }
+
+    private static void Broken(string text, long line, long column, long lastLine, string how, Findings findings)
+    {
+        const string What = "text that is not YAML";
+        string[] lines = text.Split('\n');
+        for (long i = Math.Max(1, line); i <= Math.Min(lastLine, lines.Length); i++)
+        {
+            string row = lines[i - 1];
+            int tab = row.IndexOf('\t', StringComparison.Ordinal);
+            if (tab < 0 || row[..tab].Trim().Length > 0) continue;
+            findings.At(i, tab + 1, What + how, "YAML, indented with spaces, no tabs");
+            return;
+        }
+
+        bool percent = line >= 1 && line <= lines.Length && lines[line - 1].Contains(": %", StringComparison.Ordinal);
+        findings.At(line, column, What + how, percent ? "YAML; a text that starts with % stands in quotes: \"%\"" : "YAML");
     }
 
     private static PlantNode? Node(Parser parser, PlantNode? parent, string segment, int depth, Findings findings)
@@ -124,17 +148,5 @@ internal static class YamlText
     {
         if (parser.Current is null) parser.MoveNext();
         if (parser.Current is not T) throw new SyntaxErrorException(parser.Current?.Start ?? Mark.Empty, parser.Current?.End ?? Mark.Empty, "unexpected end");
-    }
-
-    private static string OneLine(YamlException broken) => broken.Message.ReplaceLineEndings(" ");
-
-    /// <summary>The two mistakes that people make most.</summary>
-    private static string Hint(string text, Mark at)
-    {
-        string[] lines = text.Split('\n');
-        string line = at.Line >= 1 && at.Line <= lines.Length ? lines[at.Line - 1] : "";
-        return line.Contains('\t', StringComparison.Ordinal) ? "YAML, indented with spaces, no tabs"
-            : line.Contains(": %", StringComparison.Ordinal) ? "YAML; a text that starts with % stands in quotes: \"%\""
-            : "YAML";
     }
 }

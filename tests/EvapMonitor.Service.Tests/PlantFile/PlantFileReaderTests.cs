@@ -40,7 +40,8 @@ public sealed class PlantFileReaderTests
         Assert.Equal((1450, 2900), (first.Area, first.CleanCoefficient));
         Assert.Equal(0.01 / double.Sqrt(3), first.HeatLoss.Standard, 1e-12);
         Assert.True(first.Leaving.TemperatureSeesFlashedLiquor);
-        Assert.Equal(new DueLimits(1700, 0.7, 600), first.DueWhen);
+        Assert.Equal((1700, 600), (first.DueWhen!.CoefficientBelow, first.DueWhen.HoursSinceCleaning));
+        Assert.Equal(0.7, first.DueWhen.CleanlinessBelow!.Value, 1e-12);
         Assert.Equal(new HeatSource("W1"), Assert.Single(line.Effects[1].Heating));
         Assert.Equal(new LiquorSource("W1"), Assert.Single(line.Effects[1].Liquor));
         Assert.Equal(PressureReference.Vacuum, line.Effects[3].Vapour.Pressure!.Unit.Reference);
@@ -97,7 +98,7 @@ public sealed class PlantFileReaderTests
     }
 
     [Fact]
-    public void TenMistakes_AreAllToldWithTheirPlaces()
+    public void ElevenMistakes_AreAllToldWithTheirPlaces()
     {
         const string Text = """
             site: Lyngdal
@@ -134,7 +135,7 @@ public sealed class PlantFileReaderTests
                 "plant.yaml:8:13 lines.one.liquor: found \"syrup\"; allowed: the name of a liquor: water or {signal: N.PRODUCT, values: {1: juice, 0: water}}",
                 "plant.yaml:9:5 lines.one.feeed: found the unknown key \"feeed\"; allowed: feed (of formerly, liquor, settling-time, producing-when, feed, product, steam, effects, bleeds, heaters, condensate, tanks, bodies, recompressors, cleaning-groups, required-evaporation, money)",
                 "plant.yaml:11:31 lines.one.feed.flow.unit: found \"degC\" (degC is the unit of a temperature); allowed: a unit of a mass flow such as 30 t/h (t/h, kg/h, kg/s, t/d, lb/h) or of a volume flow such as 30 m3/h (m3/h, m³/h, l/min, l/s)",
-                "plant.yaml:12:55 lines.one.feed.temperature.accuracy: found \"1 %\", a share of a temperature whose zero is arbitrary; allowed: an accuracy in degC such as 0.3 abs, or 1 % of range",
+                "plant.yaml:12:54 lines.one.feed.temperature.accuracy: found \"1 %\", a share of a temperature whose zero is arbitrary; allowed: an accuracy in degC such as 0.3 abs, or 1 % of range",
                 "plant.yaml:17:13 lines.one.effects[0].area: found \"1450 bars\" (unknown unit \"bars\"); allowed: an area such as 1450 m2 (m2, m², ft2), more than 0",
                 "plant.yaml:19:16 lines.one.effects[1].heating: found \"vapour of E7\"; allowed: vapour of E1, vapour of E2",
                 "plant.yaml:22:7 lines.one.effects[1].area: found the key \"area\" a second time; allowed: each key once (the first is in line 21)",

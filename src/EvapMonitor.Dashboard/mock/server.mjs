@@ -1,0 +1,102 @@
+// The REST interface with invented data, for work on the dashboard alone. `--built` serves dist under the service's content security policy;
+// `--empty` has no readings; `--down-after N` stops answering after N seconds.
+import { createReadStream, existsSync, statSync } from 'node:fs';
+import { createServer } from 'node:http';
+import { extname, join, normalize } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { effectOf, lineOf, signals } from './answers.mjs';
+import { cleanings, plant, plantText, start } from './plant.mjs';
+import { trend } from './series.mjs';
+
+const root = fileURLToPath(new URL('..', import.meta.url));
+const option = name => process.argv.includes(name);
+const port = Number(process.env.PORT ?? 5180), begun = Date.now(), empty = option('--empty');
+const downAfter = option('--down-after') ? Number(process.argv[process.argv.indexOf('--down-after') + 1]) * 1000 : Infinity;
+const now = () => start + Date.now() - begun;
+const iso = t => new Date(t).toISOString();
+const total = 18_423_100, rate = 41_000;
+let cancelled = false, listeners = [];
+const keys = new Map();
+
+function running() {
+  const read = Math.min(total, 0.43 * total + (Date.now() - begun) * 5);
+  const state = cancelled ? 'cancelled' : read >= total ? 'done' : 'running';
+  return { id: 'sha256-1', name: 'north-2025.csv.gz', state, bytes_total: total, bytes_read: read, rows: 12_000, accepted: 2_704_113, repeated: 40, differing: 1, rejected: 3, not_in_plant: 20,
+    rows_per_s: rate, seconds_left: (total - read) / 5000, started_at: iso(start - 90_000), ended_at: state === 'running' ? null : iso(now()), error: null,
+    problems: [{ line: 17, reason: "value 'n/a' is not a number" }, { line: 90, reason: 'time 2026-03-29 02:30 did not exist in Europe/Copenhagen' }], unknown_signals: [{ name: 'X.1', count: 20 }] };
+}
+const failed = { ...running(), id: 'sha256-0', name: 'south.csv', state: 'failed', bytes_total: 9400, bytes_read: 120, accepted: 0, rejected: 0, error: 'line 1: the header has no column time', problems: [], unknown_signals: [], ended_at: iso(start - 86_000_000), started_at: iso(start - 86_010_000) };
+const site = () => ({ name: 'Fennholm', time_zone: 'Europe/Copenhagen', now: iso(now()), latest_reading_at: empty ? null : iso(now() - 3000), readings: empty ? 'none' : 'live', plant_revision: 3, window_s: 300,
+  imports_running: empty || cancelled ? 0 : 1, days_waiting: empty ? 0 : Math.max(0, 12 - Math.floor((Date.now() - begun) / 20_000)) });
+
+const json = (response, status, body, type = 'application/json') => { response.writeHead(status, { 'content-type': type }); response.end(JSON.stringify(body)); };
+const problem = (response, status, title, detail) => json(response, status, { status, title, detail }, 'application/problem+json');
+const body = request => new Promise(resolve => { let text = ''; request.on('data', d => { if (text.length < 1e6) text += d; }); request.on('end', () => resolve(text)); });
+
+async function answer(request, response, url) {
+  const path = url.pathname.replace('/api/v1', '').split('/').filter(Boolean).map(decodeURIComponent), q = url.searchParams;
+  const line = plant.find(l => l.name === path[1]), effect = line?.effects.find(e => e.name === path[3]);
+  switch (path[0]) {
+    case 'site': return json(response, 200, site());
+    case 'lines':
+      if (path.length === 1) return json(response, 200, { lines: empty ? [] : plant.map(l => lineOf(l, now())) });
+      if (!line) return problem(response, 404, 'Not found', `There is no line ${path[1]}.`);
+      if (path.length === 2) return json(response, 200, lineOf(line, now()));
+      if (!effect) return problem(response, 404, 'Not found', `Line ${line.name} has no effect ${path[3]}.`);
+      if (path.length === 4) return json(response, 200, effectOf(line, effect));
+      return answerTrend(request, response, trend(line, effect, q.get('quantity'), Date.parse(q.get('from')), Date.parse(q.get('to')), Number(q.get('points') ?? 2000)));
+    case 'cleanings': return answerCleanings(request, response, path, q);
+    case 'signals': return json(response, 200, empty ? { signals: [], unknown: [] } : signals);
+    case 'plant': return json(response, 200, { revision: 3, accepted_at: '2026-10-02T08:11:00Z', in_force_from: '2026-10-01T00:00:00Z', author: 'k.olm', text: plantText });
+    case 'imports':
+      if (path[2] === 'cancel') { cancelled = true; return json(response, 202, running()); }
+      if (request.method === 'POST') { await body(request); return json(response, 202, { ...running(), id: `sha256-${Date.now()}`, name: q.get('name'), state: 'done' }); }
+      return json(response, 200, { imports: empty ? [] : [running(), failed] });
+    case 'events':
+      response.writeHead(200, { 'content-type': 'text/event-stream', 'cache-control': 'no-cache' });
+      response.write(`event: site\ndata: ${JSON.stringify(site())}\n\n`);
+      listeners.push(response);
+      return request.on('close', () => { listeners = listeners.filter(l => l !== response); });
+    default: return problem(response, 404, 'Not found', 'No such resource.');
+  }
+}
+
+function answerTrend(request, response, t) {
+  if (!request.headers.accept?.includes('text/csv')) return json(response, 200, t);
+  response.writeHead(200, { 'content-type': 'text/csv' });
+  response.end(`time,value,u\n${t.offset_s.map((o, i) => `${iso(Date.parse(t.start) + o * 1000)},${t.value[i] ?? ''},${t.u[i] ?? ''}`).join('\n')}\n`);
+}
+
+async function answerCleanings(request, response, path, q) {
+  if (request.method === 'DELETE') { cleanings.splice(cleanings.findIndex(c => c.id === path[1]), 1); response.writeHead(204); return response.end(); }
+  if (request.method === 'POST') {
+    const wanted = JSON.parse(await body(request)), key = request.headers['idempotency-key'];
+    if (keys.has(key)) return json(response, 200, keys.get(key));
+    const other = cleanings.find(c => c.effect === wanted.effect && c.start < (wanted.end ?? '9') && (c.end ?? '9') > wanted.start);
+    if (other) return problem(response, 409, 'Overlap', `${wanted.effect} was being cleaned from ${other.start} to ${other.end ?? 'now'}`);
+    const made = { ...wanted, id: `c-${cleanings.length}`, logged_at: iso(now()) };
+    cleanings.push(made);
+    keys.set(key, made);
+    return json(response, 201, made);
+  }
+  return json(response, 200, { cleanings: empty ? [] : cleanings.filter(c => (!q.get('line') || c.line === q.get('line')) && (!q.get('effect') || c.effect === q.get('effect'))) });
+}
+
+setInterval(() => { for (const l of listeners) l.write(`event: import\ndata: ${JSON.stringify(running())}\n\nevent: site\ndata: ${JSON.stringify(site())}\n\n`); }, 2000);
+
+const types = { '.html': 'text/html; charset=utf-8', '.js': 'text/javascript', '.css': 'text/css', '.svg': 'image/svg+xml', '.woff2': 'font/woff2' };
+function built(request, response, url) {
+  const asked = join(root, 'dist', normalize(url.pathname));
+  const file = existsSync(asked) && statSync(asked).isFile() ? asked : join(root, 'dist', 'index.html');
+  response.writeHead(200, { 'content-type': types[extname(file)] ?? 'application/octet-stream', 'content-security-policy': "default-src 'self'; frame-ancestors 'none'; base-uri 'none'" });
+  createReadStream(file).pipe(response);
+}
+
+const vite = option('--built') ? null : await (await import('vite')).createServer({ root, appType: 'spa', server: { middlewareMode: true } });
+createServer((request, response) => {
+  const url = new URL(request.url, 'http://localhost');
+  if (Date.now() - begun > downAfter && url.pathname.startsWith('/api')) { listeners.forEach(l => l.destroy()); return request.destroy(); }
+  if (url.pathname.startsWith('/api/')) return void answer(request, response, url);
+  return vite ? vite.middlewares(request, response) : built(request, response, url);
+}).listen(port, '127.0.0.1', () => console.log(`http://127.0.0.1:${port}/ with invented data${vite ? '' : ', built'}`));
+setInterval(() => { if (Date.now() - begun > downAfter) { listeners.forEach(l => l.destroy()); listeners = []; } }, 500);

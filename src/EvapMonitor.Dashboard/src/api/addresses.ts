@@ -1,0 +1,35 @@
+import type { Quantity } from './types';
+
+const base = '/api/v1';
+const part = encodeURIComponent;
+
+/** Addresses of the REST interface. Names come from outside, so every one is percent-encoded here and nowhere else. */
+export const addresses = {
+  site: `${base}/site`,
+  lines: `${base}/lines`,
+  signals: `${base}/signals`,
+  plant: `${base}/plant`,
+  imports: `${base}/imports`,
+  events: `${base}/events`,
+  effect: (line: string, effect: string) => `${base}/lines/${part(line)}/effects/${part(effect)}`,
+  trend: (line: string, effect: string, quantity: Quantity, from: number, to: number, points: number) =>
+    `${addresses.effect(line, effect)}/trend?quantity=${quantity}&from=${part(new Date(from).toISOString())}` +
+    `&to=${part(new Date(to).toISOString())}&points=${points}`,
+  cleanings: (line?: string, effect?: string) => {
+    const filter = [line && `line=${part(line)}`, effect && `effect=${part(effect)}`].filter(Boolean).join('&');
+    return `${base}/cleanings${filter && `?${filter}`}`;
+  },
+  cleaning: (id: string) => `${base}/cleanings/${part(id)}`,
+  upload: (name: string) => `${base}/imports?name=${part(name)}`,
+  cancelImport: (id: string) => `${base}/imports/${part(id)}/cancel`,
+};
+
+/** Addresses of the pages. */
+export const pages = {
+  today: '/',
+  lines: '/lines',
+  cleanings: '/cleanings',
+  instruments: '/instruments',
+  plant: '/plant',
+  effect: (line: string, effect: string) => `/lines/${part(line)}/effects/${part(effect)}`,
+};

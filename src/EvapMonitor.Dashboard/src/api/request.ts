@@ -1,0 +1,44 @@
+import type { Problem } from './types';
+
+/** A request that did not succeed, with words for the reader. `answered`: the service did answer, so repeating it changes nothing. */
+export class RequestFailure extends Error {
+  constructor(message: string, readonly answered: boolean, readonly status: number | null) {
+    super(message);
+  }
+}
+
+const patience = 30_000;
+
+/** Sends a request and returns the answer; every way to fail becomes a RequestFailure in words. */
+export async function send(address: string, options: RequestInit = {}): Promise<Response> {
+  let answer: Response;
+  const signals = [AbortSignal.timeout(patience), ...(options.signal ? [options.signal] : [])];
+  try {
+    answer = await fetch(address, { ...options, signal: AbortSignal.any(signals) });
+  } catch (error) {
+    if (options.signal?.aborted) throw error;
+    throw new RequestFailure(
+      error instanceof DOMException && error.name === 'TimeoutError' ? 'the service did not answer within 30 s' : 'the service does not answer',
+      false, null);
+  }
+  if (answer.ok) return answer;
+  const problem = await answer.json().catch(() => null) as Problem | null;
+  throw new RequestFailure(describe(problem, answer.status), answer.status < 500, answer.status);
+}
+
+/** Fetches JSON. */
+export async function fetchJson<T>(address: string, signal?: AbortSignal): Promise<T> {
+  const answer = await send(address, { signal: signal ?? null, headers: { accept: 'application/json' } });
+  try {
+    return await answer.json() as T;
+  } catch {
+    throw new RequestFailure('the answer of the service could not be read', true, answer.status);
+  }
+}
+
+/** The words of a problem: its detail, else its title; then what each member got wrong. */
+export function describe(problem: Problem | null, status: number): string {
+  const errors = Object.values(problem?.errors ?? {}).flat().join('; ');
+  const words = [problem?.detail ?? problem?.title, errors].filter(Boolean).join(': ');
+  return words || `the service answered with status ${status}`;
+}

@@ -1,0 +1,207 @@
+/** What the REST interface answers, member by member as docs/api.md writes it. Times are RFC 3339 in UTC; units are in the names. */
+
+export type Instant = string;
+
+/** Youngest reading under 15 minutes old, older, or none at all. */
+export type ReadingsState = 'live' | 'stale' | 'none';
+
+export interface Site {
+  name: string;
+  time_zone: string;
+  now: Instant;
+  latest_reading_at: Instant | null;
+  readings: ReadingsState;
+  plant_revision: number | null;
+  window_s: number;
+  imports_running: number;
+  /** Days of readings that wait for evaluation, all lines together. */
+  days_waiting: number;
+}
+
+export interface Line {
+  name: string;
+  liquor: string;
+  state: 'producing' | 'idle' | 'unknown';
+  as_of: Instant | null;
+  latest_reading_at: Instant | null;
+  readings: ReadingsState;
+  evaporation_kg_s: number | null;
+  required_evaporation_kg_s: number | null;
+  effects: Effect[];
+}
+
+export interface Effect {
+  name: string;
+  line: string;
+  area_m2: number;
+  clean_coefficient_w_m2k: number | null;
+  now: HourResult | null;
+  limits: Limits;
+  due: Due;
+  last_cleaning: { id: string; start: Instant; end: Instant | null; kind: string } | null;
+  cleaning_since: Instant | null;
+  /** Fouling resistance that the last cleaning left, m²·K/W; absent when not known. */
+  residual_m2k_w?: number | null;
+  /** Fouling resistance at the end of each week since the last cleaning, oldest first, m²·K/W. */
+  growth: number[];
+}
+
+/** The latest hour with a result. A number that could not be computed is null and `reason` says why. */
+export interface HourResult {
+  at: Instant;
+  hours: number;
+  coefficient_w_m2k: number | null;
+  coefficient_u: number | null;
+  coefficient_u_random: number | null;
+  heating_temperature_c: number | null;
+  boiling_temperature_c: number | null;
+  elevation_k: number | null;
+  driving_force_k: number | null;
+  driving_force_u: number | null;
+  duty_kw: number | null;
+  duty_u: number | null;
+  heat_flux_kw_m2: number | null;
+  cleanliness: number | null;
+  cleanliness_u: number | null;
+  /** May be negative: never clipped. */
+  fouling_resistance_m2k_w: number | null;
+  fouling_resistance_u: number | null;
+  clean_from: string | null;
+  duty_from: string | null;
+  heating_temperature_from: string | null;
+  boiling_temperature_from: string | null;
+  reason: string | null;
+}
+
+export interface Limits {
+  coefficient_w_m2k: number | null;
+  cleanliness: number | null;
+  hours_since_cleaning: number | null;
+  /** The resistance at which the first of the coefficient and cleanliness limits is reached. */
+  resistance_m2k_w: number | null;
+}
+
+export type DueState = 'due' | 'not due' | 'no limit' | 'unknown';
+
+export interface Due {
+  state: DueState;
+  limit: string | null;
+  since: Instant | null;
+  sentence: string | null;
+  evidence: Evidence[];
+}
+
+export interface Evidence {
+  limit: string;
+  value: number | null;
+  bound: number | null;
+  unit: string;
+  state: DueState;
+  since: Instant | null;
+}
+
+export const quantities = [
+  'coefficient', 'clean_coefficient', 'cleanliness', 'fouling_resistance', 'driving_force', 'duty',
+  'heating_temperature', 'boiling_temperature', 'elevation', 'heat_flux',
+] as const;
+export type Quantity = (typeof quantities)[number];
+
+export type Mark = '' | 'extrapolated' | 'not producing';
+
+/** A series as columns. A null value is a gap; `reason` indexes `reasons`, −1 for none. */
+export interface Trend {
+  line: string;
+  effect: string;
+  quantity: Quantity;
+  unit: string;
+  resolution: 'window' | 'hour';
+  step_s: number;
+  start: Instant;
+  offset_s: number[];
+  value: (number | null)[];
+  u: (number | null)[];
+  u_random: (number | null)[];
+  mark: Mark[];
+  reasons: string[];
+  reason: number[];
+  data_version: number;
+}
+
+export interface Cleaning {
+  id: string;
+  line: string;
+  effect: string;
+  start: Instant;
+  end: Instant | null;
+  kind: string;
+  note: string | null;
+  logged_at: Instant;
+}
+
+export interface NewCleaning {
+  line: string;
+  effect: string;
+  start: Instant;
+  end: Instant | null;
+  kind: string;
+  note: string;
+}
+
+export interface SignalRow {
+  name: string;
+  line: string | null;
+  unit: string | null;
+  latest_at: Instant | null;
+  latest_value: number | null;
+  latest_quality: string | null;
+}
+
+export interface UnknownSignal {
+  name: string;
+  count: number;
+  last_seen: Instant | null;
+}
+
+export interface Signals {
+  signals: SignalRow[];
+  unknown: UnknownSignal[];
+}
+
+export type ImportState = 'waiting' | 'running' | 'done' | 'failed' | 'cancelled';
+
+export interface Import {
+  id: string;
+  name: string;
+  state: ImportState;
+  bytes_total: number;
+  bytes_read: number;
+  rows: number;
+  accepted: number;
+  repeated: number;
+  differing: number;
+  rejected: number;
+  not_in_plant: number;
+  rows_per_s: number | null;
+  seconds_left: number | null;
+  started_at: Instant | null;
+  ended_at: Instant | null;
+  error: string | null;
+  problems: { line: number; reason: string }[];
+  unknown_signals: { name: string; count: number }[];
+}
+
+export interface PlantRevision {
+  revision: number;
+  accepted_at: Instant;
+  in_force_from: Instant | null;
+  author: string | null;
+  text: string;
+}
+
+/** Problem details, RFC 9457. */
+export interface Problem {
+  title?: string;
+  detail?: string;
+  status?: number;
+  errors?: Record<string, string[]>;
+}

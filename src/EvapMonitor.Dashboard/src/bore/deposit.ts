@@ -1,0 +1,42 @@
+import type { Effect } from '../api/types';
+import type { Deposit } from './geometry';
+
+/** How many weeks one stratum stands for, the same for a page: one, or four once any campaign on it is longer than twelve weeks. */
+export function weeksPerStratum(effects: readonly Effect[]): 1 | 4 {
+  return effects.some(e => e.growth.length > 12) ? 4 : 1;
+}
+
+/** What the limit circle stands for. */
+export type Scale = 'limit' | 'half clean';
+
+/** The deposit of an effect, and what its circle stands for. Without a limit the circle is where the coefficient is half the clean one. Null: no scale can be given. */
+export function depositOf(effect: Effect, weeks: 1 | 4): { deposit: Deposit; scale: Scale } | null {
+  const set = effect.limits.resistance_m2k_w;
+  const clean = cleanCoefficient(effect);
+  const limit = set !== null && set > 0 ? set : clean === null ? null : 1 / clean;
+  if (limit === null) return null;
+  return {
+    scale: limit === set ? 'limit' : 'half clean',
+    deposit: {
+      resistance: effect.now?.fouling_resistance_m2k_w ?? null,
+      uncertainty: effect.now?.fouling_resistance_u ?? null,
+      limit,
+      residual: effect.residual_m2k_w ?? null,
+      growth: effect.growth.filter((_, i) => (i + 1) % weeks === 0),
+    },
+  };
+}
+
+/** The clean coefficient in use: the one behind the present cleanliness, else the design value. */
+function cleanCoefficient(effect: Effect): number | null {
+  const { coefficient_w_m2k: u, cleanliness } = effect.now ?? { coefficient_w_m2k: null, cleanliness: null };
+  if (u !== null && cleanliness !== null && cleanliness > 0) return u / cleanliness;
+  return effect.clean_coefficient_w_m2k;
+}
+
+/** Share of the hours allowed since the last cleaning; null without such a limit or without a known cleaning. */
+export function hoursShare(effect: Effect, now: number): number | null {
+  const allowed = effect.limits.hours_since_cleaning;
+  const end = effect.last_cleaning?.end ?? null;
+  return allowed === null || end === null ? null : (now - Date.parse(end)) / 3_600_000 / allowed;
+}

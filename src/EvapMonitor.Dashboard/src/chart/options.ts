@@ -1,0 +1,96 @@
+import type uPlot from 'uplot';
+import { fixed } from '../words/number';
+import { splits, stepDecimals, valueAxis } from './axis';
+import { drawOver, laneHeight } from './draw';
+import type { ChartModel } from './model';
+import { timeTicks } from './ticks';
+import { extent } from './trend';
+
+/** What the chart tells the page. */
+export interface ChartEvents {
+  cursor(index: number | null): void;
+  selected(from: number, to: number): void;
+  drawn(axisStart: string): void;
+}
+
+const axisFont = '13px "Atkinson Hyperlegible Next Variable", system-ui, sans-serif';
+export const gutter = (narrow: boolean) => (narrow ? 84 : 128);
+
+/** uPlot's options for a model; the model may change afterwards, what is drawn follows it. */
+export function chartOptions(m: ChartModel, width: number, height: number, events: ChartEvents): uPlot.Options {
+  const ticksNow = (u: uPlot) => timeTicks(m.span.from, m.span.to, m.zone, Math.max(2, Math.floor((u.width - 60 - gutter(m.narrow)) / 66)));
+  return {
+    width, height,
+    padding: [m.lane ? laneHeight : 10, gutter(m.narrow), 0, 0],
+    legend: { show: false },
+    cursor: {
+      y: false,
+      drag: { x: true, y: false, setScale: false, dist: 6 },
+      points: { size: 8, width: 1.5, stroke: () => m.palette.ink, fill: () => m.palette.card },
+    },
+    scales: {
+      x: { time: false, range: () => [m.span.from / 1000, m.span.to / 1000] },
+      y: { range: () => { layAxis(m); return [m.axis.from, m.axis.to]; } },
+    },
+    axes: [
+      {
+        font: axisFont, size: 44, gap: 6, stroke: () => m.palette.soft, grid: { show: false },
+        ticks: { stroke: () => m.palette.faint, width: 1, size: 5 },
+        splits: u => ticksNow(u).map(t => t.at / 1000),
+        values: u => ticksNow(u).map(t => t.label),
+      },
+      {
+        font: axisFont, size: 52, gap: 6, stroke: () => m.palette.soft,
+        grid: { stroke: () => m.palette.hair, width: 1 }, ticks: { show: false },
+        splits: () => splits(m.axis),
+        values: () => splits(m.axis).map(v => fixed(v, stepDecimals(m.axis.step))),
+      },
+    ],
+    series: [
+      {},
+      // The band comes first, so that the line lies on it.
+      { stroke: () => m.palette.water, width: 0.7, points: { show: false } },
+      { stroke: () => m.palette.water, width: 0.7, points: { show: false } },
+      { stroke: () => m.palette.water, width: 2, points: { show: false } },
+      dots(() => m.palette.water, 4),
+      dots(() => m.palette.faint, 3),
+    ],
+    bands: [{ series: [1, 2], fill: () => m.palette.wash }],
+    hooks: {
+      draw: [u => { drawOver(u, m); events.drawn(m.axis.from === 0 ? '' : fixed(m.axis.from, stepDecimals(m.axis.step))); }],
+      setCursor: [u => events.cursor(u.cursor.idx ?? null)],
+      setSelect: [u => {
+        if (u.select.width < 6) return;
+        const from = u.posToVal(u.select.left, 'x') * 1000, to = u.posToVal(u.select.left + u.select.width, 'x') * 1000;
+        u.setSelect({ left: 0, top: 0, width: 0, height: 0 }, false);
+        events.selected(from, to);
+      }],
+    },
+  };
+}
+
+function dots(colour: () => string, size: number): uPlot.Series {
+  return { paths: () => null, points: { show: true, size, width: 0, stroke: colour, fill: colour } };
+}
+
+/** Columns in the order of the series. */
+export function chartData(m: ChartModel): uPlot.AlignedData {
+  const c = m.columns;
+  return [c.x, c.upper, c.lower, c.value, c.alone, c.idle];
+}
+
+/** Lays the value axis over everything drawn in the span. */
+function layAxis(m: ChartModel): void {
+  const [from, to] = [m.span.from / 1000, m.span.to / 1000];
+  const seen: number[] = [];
+  const c = m.columns;
+  c.x.forEach((x, i) => {
+    if (x < from || x > to) return;
+    for (const v of [c.lower[i], c.upper[i], c.value[i], c.idle[i]]) if (v !== null && v !== undefined) seen.push(v);
+  });
+  const clean = m.clean && extent(m.clean, from, to);
+  if (clean) seen.push(clean.lowest, clean.highest);
+  if (m.limit) seen.push(m.limit.value);
+  const lowest = seen.reduce((a, b) => Math.min(a, b), Infinity), highest = seen.reduce((a, b) => Math.max(a, b), -Infinity);
+  m.axis = seen.length > 0 ? valueAxis(lowest, highest) : { from: 0, to: 1, step: 0.5 };
+}

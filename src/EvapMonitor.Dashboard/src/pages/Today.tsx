@@ -1,0 +1,65 @@
+import type { Line } from '../api/types';
+import { weeksPerStratum } from '../bore/deposit';
+import { EffectCell } from '../parts/EffectCell';
+import { Evaporation } from '../parts/Evaporation';
+import { Shown } from '../parts/Waiting';
+import { Words } from '../parts/Words';
+import { useNarrow } from '../parts/use-narrow';
+import { useTitle } from '../parts/use-title';
+import { calmNow } from '../site/clock';
+import { lines, site, zone } from '../site/state';
+import { lineWords } from '../words/line';
+import { NoReadings } from './NoReadings';
+
+/** How is the site, what must I do? */
+export function Today() {
+  useTitle('Today');
+  const none = site.state.value.value?.readings === 'none';
+  return (
+    <>
+      <h1 class="unseen">Today</h1>
+      {none && <NoReadings />}
+      <Shown of={lines} what="The lines">
+        {({ lines: all }) => <>
+          {all.length === 0 && !none && <p class="empty">No plant file names a line yet. The Plant page shows what is in force.</p>}
+          {!none && all.map(line => <LineToday key={line.name} line={line} alone={all.length === 1} weeks={weeksPerStratum(all.flatMap(l => l.effects))} />)}
+          {!none && all.length > 0 && <Legend lines={all} />}
+        </>}
+      </Shown>
+    </>
+  );
+}
+
+function LineToday({ line, alone, weeks }: { line: Line; alone: boolean; weeks: 1 | 4 }) {
+  const narrow = useNarrow();
+  const now = calmNow.value, stale = line.readings !== 'live';
+  const radius = narrow ? 22 : alone ? 64 : 52;
+  return (
+    <section class="line" id={line.name} aria-labelledby={`line-${line.name}`}>
+      <h2 id={`line-${line.name}`} class="line-name">{line.name}</h2>
+      <div>
+        <Words pieces={lineWords(line, now, zone.value)} />
+        <div class="line-row">
+          <ul class="effects">
+            {line.effects.map(e => <li key={e.name}><EffectCell effect={e} now={now} zone={zone.value} stale={stale} weeks={weeks} radius={radius} /></li>)}
+          </ul>
+          <Evaporation line={line} stale={stale} />
+        </div>
+      </div>
+    </section>
+  );
+}
+
+/** What the drawing stands for, once per page. */
+function Legend({ lines: all }: { lines: Line[] }) {
+  const effects = all.flatMap(l => l.effects);
+  const weeks = weeksPerStratum(effects);
+  return (
+    <p class="legend">
+      Ring thickness stands for fouling resistance; not to scale, not a flow restriction. One stratum is {weeks === 1 ? 'one week' : 'four weeks'}. Dashed circle: the
+      limit. The bar at three o'clock: ± one standard uncertainty.
+      {effects.some(e => e.limits.hours_since_cleaning !== null) && ' Arc outside: hours since the cleaning, full at the limit.'}
+      {effects.some(e => e.limits.resistance_m2k_w === null) && ' Dotted circle, where no limit is set: half the clean coefficient.'}
+    </p>
+  );
+}

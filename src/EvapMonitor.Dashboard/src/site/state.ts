@@ -1,0 +1,64 @@
+import { computed, effect, signal } from '@preact/signals';
+import { addresses } from '../api/addresses';
+import { Resource } from '../api/resource';
+import type { Import, Line, Site } from '../api/types';
+import { connect } from '../live/connection';
+import { throttle } from '../live/throttle';
+import { learnTime } from './clock';
+import { observeWaiting } from './waiting';
+
+/** What every page shares: the site, its lines, its imports, kept fresh by the stream of events. */
+export const site = new Resource<Site>(addresses.site);
+export const lines = new Resource<{ lines: Line[] }>(addresses.lines);
+export const imports = new Resource<{ imports: Import[] }>(addresses.imports);
+
+/** Civil time of the site; UTC until the site is known. */
+export const zone = computed(() => usableZone(site.state.value.value?.time_zone));
+
+/** Grows when results of the line changed; at most every two seconds. */
+export const resultsChanged = signal<Readonly<Record<string, number>>>({});
+/** Grows when cleanings were logged or taken back. */
+export const cleaningsChanged = signal(0);
+
+function usableZone(name: string | undefined): string {
+  if (!name) return 'UTC';
+  try { new Intl.DateTimeFormat('en', { timeZone: name }); return name; } catch { return 'UTC'; }
+}
+
+const changedLines = new Set<string>();
+const publish = throttle(() => {
+  const grown = { ...resultsChanged.peek() };
+  for (const line of changedLines) grown[line] = (grown[line] ?? 0) + 1;
+  changedLines.clear();
+  resultsChanged.value = grown;
+  void lines.load();
+}, 2000);
+
+function mergeImport(one: Import): void {
+  const known = imports.state.peek().value?.imports ?? [];
+  const at = known.findIndex(i => i.id === one.id);
+  imports.put({ imports: at < 0 ? [one, ...known] : known.with(at, one) });
+}
+
+/** Loads what every page shares and keeps it fresh. */
+export function startState(): () => void {
+  const all = () => void Promise.all([site.load(), lines.load(), imports.load()]);
+  const everything = () => {
+    all();
+    for (const line of lines.state.peek().value?.lines ?? []) changedLines.add(line.name);
+    publish();
+    cleaningsChanged.value++;
+  };
+  all();
+  const forget = effect(() => {
+    const known = site.state.value.value;
+    if (known) { learnTime(known.now); observeWaiting(known.days_waiting, Date.parse(known.now)); }
+  });
+  const close = connect(addresses.events, {
+    site: data => site.put(data as Site),
+    windows: data => { changedLines.add((data as { line: string }).line); publish(); },
+    import: data => mergeImport(data as Import),
+    cleanings: () => { cleaningsChanged.value++; void lines.load(); },
+  }, everything);
+  return () => { forget(); close(); };
+}
