@@ -5,7 +5,7 @@ const day = 86_400_000, iso = t => new Date(t).toISOString();
 
 /** An effect as the interface answers it. */
 export function effectOf(line, e) {
-  const t = start - Math.max(line.stale, 300_000) - (e.unknown ? 0 : 0);
+  const t = start - Math.max(line.stale, 300_000);
   const known = !e.unknown && !e.cleaning;
   const s = at(line, e, t - 1);
   const coefficient = s.coefficient, clean = s.clean;

@@ -18,15 +18,15 @@ export function at(line, effect, t) {
   const clean = effect.clean * (1 + 0.014 * Math.sin(t / day / 3) + 0.004 * Math.sin(t / day * 6.28));
   const own = cleanings.filter(c => c.effect === effect.name);
   const during = own.find(c => t >= Date.parse(c.start) && (c.end === null || t < Date.parse(c.end)));
-  const last = Math.max(...own.map(c => (c.end === null ? -Infinity : Date.parse(c.end))).filter(e => e <= t), start - 90 * day);
-  const age = (t - last) / day;
+  const last = Math.max(...own.map(c => (c.end === null ? -Infinity : Date.parse(c.end))).filter(e => e <= t), -Infinity);
+  const age = last === -Infinity ? (((t / day) % 28) + 28) % 28 : (t - last) / day;
   const fouling = (effect.residual + effect.rate * age * (age < 18 || effect.name !== 'N3' ? 1 : 18 / age)) / effect.clean;
   const coefficient = 1 / (1 / clean + fouling) * (1 + 0.012 * (noise(seed, i) - 0.5) + 0.01 * (noise(seed + 1, Math.floor(i / 60)) - 0.5));
   const dayNumber = Math.floor(t / day);
   const stop = noise(99, dayNumber) > 0.93 && t % day < day / 4;
   const missing = noise(seed + 2, dayNumber) > 0.95 && t % day > day * 0.6;
   const reason = during ? 'cleaning' : missing ? 'no driving force: chest pressure is absent' : effect.unknown && t > start - 1.5 * day ? effect.unknown : t > start - line.stale ? 'no reading' : null;
-  return { clean, coefficient: reason ? null : stop ? coefficient * (0.7 + 0.3 * noise(seed, i + 9)) : coefficient, fouling, u: coefficient * 0.023, mark: stop ? 'not producing' : noise(5, Math.floor(t / day * 2)) > 0.97 ? 'extrapolated' : '', reason };
+  return { clean, coefficient: reason ? null : stop ? coefficient * (0.7 + 0.3 * noise(seed, i + 9)) : noise(seed, i) > 0.9998 ? coefficient * 30 : coefficient, fouling, u: coefficient * 0.023, mark: stop ? 'not producing' : noise(5, Math.floor(t / day * 2)) > 0.97 ? 'extrapolated' : '', reason };
 }
 
 const units = { coefficient: 'W/(m2.K)', clean_coefficient: 'W/(m2.K)', cleanliness: '1', fouling_resistance: 'm2.K/W', driving_force: 'K', duty: 'kW', heating_temperature: 'degC', boiling_temperature: 'degC', elevation: 'K', heat_flux: 'kW/m2' };

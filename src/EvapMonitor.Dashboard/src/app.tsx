@@ -1,5 +1,7 @@
 import { Route, Switch } from 'wouter-preact';
 import { pages } from './api/addresses';
+import { Boundary } from './parts/Boundary';
+import { useArrival } from './parts/use-arrival';
 import { Announcer } from './parts/Announcer';
 import { BottomBar, Header } from './parts/Header';
 import { ConnectionLost } from './parts/ConnectionLost';
@@ -14,6 +16,7 @@ import { Today } from './pages/Today';
 
 /** The frame of every page and the page that the address names. */
 export function App() {
+  useArrival();
   return (
     <>
       <a class="skip" href="#content">Skip to the content</a>
@@ -21,7 +24,7 @@ export function App() {
       <ConnectionLost />
       <ImportProgress />
       <main id="content" tabIndex={-1}>
-        <Switch>
+        <Boundary><Switch>
           <Route path={pages.today} component={Today} />
           <Route path={pages.lines} component={Lines} />
           <Route path="/lines/:line/effects/:effect">
@@ -31,7 +34,7 @@ export function App() {
           <Route path={pages.instruments} component={Instruments} />
           <Route path={pages.plant} component={Plant} />
           <Route component={NotHere} />
-        </Switch>
+        </Switch></Boundary>
       </main>
       <BottomBar />
       <Announcer />

@@ -18,6 +18,7 @@ internal static partial class AccuracyReader
             return null;
         }
 
+        if (number == 0) findings.Note(node, "an instrument without any error: no instrument is, and its readings will outweigh all others");
         AccuracyMeaning meaning = match.Groups["meaning"].Value switch
         {
             "" => AccuracyMeaning.HalfWidth,

@@ -81,6 +81,16 @@ public sealed class AccuracyTests
         Assert.Equal((ofReading, absolute, true), (accuracy.OfReading, accuracy.Absolute, accuracy.Assumed));
     }
 
+    [Theory]
+    [InlineData("0 abs")]
+    [InlineData("0 %")]
+    public void AccuracyOfZero_IsTakenButNoted(string stated)
+    {
+        string text = Examples.With(Flow, $"flow: {{signal: F, unit: t/h, accuracy: {stated}}}");
+        Assert.Equal(0, Examples.Sound(text).Lines[0].Feed.Flow!.Accuracy.Standard(100));
+        Assert.Contains("without any error", Assert.Single(PlantFileReader.Read(text).Notes).Text, StringComparison.Ordinal);
+    }
+
     [Fact]
     public void ShareOnSolidsInPercent_IsNotedAsShareOfReading()
     {

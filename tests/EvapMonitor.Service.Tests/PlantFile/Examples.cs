@@ -9,6 +9,8 @@ internal static class Examples
 
     public static string Text(string name) => File.ReadAllText(Path.Combine(AppContext.BaseDirectory, "examples", name));
 
+    public static string Own(string name) => File.ReadAllText(Path.Combine(AppContext.BaseDirectory, "PlantFile", name));
+
     /// <summary>The smallest sound file; tests change a piece of it.</summary>
     public const string Small = """
         site: Lyngdal

@@ -117,7 +117,7 @@ public sealed class HostileTextTests
     {
         var random = new Random(1954);
         int sites = 0, refused = 0;
-        string[] originals = [.. Examples.Files.Select(File.ReadAllText), File.ReadAllText(Path.Combine(AppContext.BaseDirectory, "PlantFile", "every-key.yaml"))];
+        string[] originals = [.. Examples.Files.Select(File.ReadAllText), Examples.Own("every-key.yaml"), Examples.Own("block-style.yaml")];
         const string Signs = " \n:-[]{},#&*!|>'\"%@?a09~±²°\t.E";
         for (int i = 0; i < 3000; i++)
         {

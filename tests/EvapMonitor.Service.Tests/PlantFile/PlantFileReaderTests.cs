@@ -91,6 +91,20 @@ public sealed class PlantFileReaderTests
     }
 
     [Fact]
+    public void BlockStyleAsProgramsWriteIt_IsSoundAndComplete()
+    {
+        Site site = Examples.Sound(Examples.Own("block-style.yaml"));
+        Line line = Assert.Single(site.Lines);
+        Assert.Equal(new DateTimeOffset(2026, 1, 1, 0, 0, 0, TimeSpan.Zero), site.HistoryFrom);
+        Assert.Equal("mixture", line.Liquor.Always!.Name);
+        Assert.All(EffectCheck.Of(line), check => Assert.True(check.IsComplete));
+        Assert.Equal(new UncertainShare(0, 0), line.Effects[0].HeatLoss);
+        Assert.Equal((0.01, 0.005), (line.Effects[1].HeatLoss.Value, line.Effects[1].Vent.Value));
+        Assert.Equal("heater", Assert.Single(line.Bleeds).To);
+        Assert.Equal(["B1", "B2"], Assert.Single(line.CleaningGroups).Effects);
+    }
+
+    [Fact]
     public void BlockStyleWithQuotes_ReadsAsFlowStyle()
     {
         string text = Examples.With("""{signal: X, unit: "%", accuracy: 0.3 abs}""", "\n        signal: 'X'\n        unit: '%'\n        accuracy: \"0.3 abs\"");

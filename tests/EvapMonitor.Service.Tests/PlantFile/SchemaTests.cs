@@ -9,7 +9,7 @@ namespace EvapMonitor.Service.Tests.PlantFile;
 
 public sealed class SchemaTests
 {
-    private static readonly string Text = Embedded();
+    private static readonly string Text = PlantFileSchema.Text();
     private static readonly JsonSchema Schema = JsonSchema.FromText(Text);
 
     [Fact]
@@ -22,6 +22,7 @@ public sealed class SchemaTests
         foreach (string file in Examples.Files) Assert.Empty(Flaws(File.ReadAllText(file)));
         Assert.Empty(Flaws(Examples.Small));
         Assert.Empty(Flaws(EveryKey()));
+        Assert.Empty(Flaws(Examples.Own("block-style.yaml")));
     }
 
     [Theory]
@@ -72,7 +73,7 @@ public sealed class SchemaTests
         Assert.Empty(PlantFileKeys.All.SelectMany(k => k.Keys).Except(seen));
     }
 
-    private static string EveryKey() => File.ReadAllText(Path.Combine(AppContext.BaseDirectory, "PlantFile", "every-key.yaml"));
+    private static string EveryKey() => Examples.Own("every-key.yaml");
 
     private static void Visit(PlantNode node, HashSet<string> seen)
     {
@@ -128,11 +129,4 @@ public sealed class SchemaTests
         ScalarNode scalar => scalar.Text,
         _ => null,
     };
-
-    private static string Embedded()
-    {
-        using Stream stream = typeof(PlantFileReader).Assembly.GetManifestResourceStream("plant-file.schema.json")!;
-        using var reader = new StreamReader(stream);
-        return reader.ReadToEnd();
-    }
 }

@@ -18,7 +18,7 @@ import { zoomed, type Span } from './view';
 export interface TrendChartProps {
   title: string;
   name: string;
-  model: Omit<ChartModel, 'palette' | 'axis'>;
+  model: Omit<ChartModel, 'palette' | 'axis' | 'outside'>;
   height: number;
   busy: boolean;
   /** A new span; `settled` false while fingers or keys still move it. */
@@ -31,15 +31,15 @@ const noPalette = { card: '', ink: '', soft: '', faint: '', hair: '', water: '',
 
 /** A series with its band, limit, cleanings and labels; by mouse, finger and key. */
 export function TrendChart({ title, name, model: given, height, busy, show, reset, csv }: TrendChartProps) {
-  const table = useSignal(false), axisStart = useSignal(''), index = useSignal<number | null>(null);
-  const { host, plot, model } = usePlot({ ...given, palette: noPalette, axis: { from: 0, to: 1, step: 1 } }, height, {
+  const table = useSignal(false), axisStart = useSignal(''), outside = useSignal(0), index = useSignal<number | null>(null);
+  const { host, plot, model } = usePlot({ ...given, palette: noPalette, axis: { from: 0, to: 1, step: 1 }, outside: 0 }, height, {
     cursor: i => {
       index.value = i;
       const x = i === null ? null : model.columns.x[i] ?? null;
       if (cursorAt.peek() !== x) cursorAt.value = x;
     },
     selected: (from, to) => show({ from, to }, true),
-    drawn: start => { axisStart.value = start; },
+    drawn: (start, left) => { axisStart.value = start; outside.value = left; },
   });
 
   const shared = cursorAt.value;
@@ -87,7 +87,10 @@ export function TrendChart({ title, name, model: given, height, busy, show, rese
   const at = valueWords(columns, given.clean, index.value, zone);
   const empty = extent(columns, span.from / 1000, span.to / 1000) === null;
   const why = empty ? reasonsIn(columns, span.from / 1000, span.to / 1000).slice(0, 2) : [];
-  const foot = axisStart.value !== '' && !empty ? `axis starts at ${axisStart.value}` : '';
+  const foot = empty ? '' : [
+    axisStart.value !== '' && `axis starts at ${axisStart.value}`,
+    outside.value > 0 && `${outside.value} far-off ${outside.value === 1 ? 'point lies' : 'points lie'} outside it; the table and the CSV have them`,
+  ].filter(Boolean).join('; ');
   return (
     <figure class="chart" aria-label={title}>
       <figcaption>{title}</figcaption>

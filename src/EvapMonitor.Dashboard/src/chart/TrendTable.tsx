@@ -14,7 +14,7 @@ export function TrendTable({ columns: c, span, zone, what }: { columns: Columns;
   return (
     <Scroller label={`${what} as a table`}>
       <table class="trend-table">
-        <caption>{what}, {c.unit}, ± one standard uncertainty; youngest first{every > 1 && `; one of every ${fixed(every)} points (the CSV has all)`}</caption>
+        <caption>{what}, ± one standard uncertainty; youngest first{every > 1 && `; one of every ${fixed(every)} points (the CSV has all)`}</caption>
         <thead><tr><th scope="col">time</th><th scope="col">value</th><th scope="col">remark</th></tr></thead>
         <tbody>{rows.map(i => {
           const v = c.value[i] ?? c.idle[i] ?? null;

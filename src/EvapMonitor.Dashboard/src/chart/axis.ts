@@ -21,6 +21,17 @@ export function valueAxis(lowest: number, highest: number, most = 5): Axis {
   return { from: lowest >= 0 ? Math.max(0, from) : from, to, step };
 }
 
+/** The range that an axis should hold: all values, but for the few that lie further from the middle 98 % than twice its width; those would flatten the rest. Null for none. */
+export function bodyOf(values: readonly number[]): { lowest: number; highest: number } | null {
+  if (values.length === 0) return null;
+  const sorted = Float64Array.from(values).sort();
+  const at = (share: number) => sorted[Math.round(share * (sorted.length - 1))]!;
+  const low = at(0.01), high = at(0.99), reach = 2 * (high - low);
+  if (reach === 0) return { lowest: sorted[0]!, highest: sorted.at(-1)! };
+  const inside = sorted.filter(v => v >= low - reach && v <= high + reach);
+  return { lowest: inside[0]!, highest: inside.at(-1)! };
+}
+
 /** The round numbers of an axis. */
 export function splits({ from, to, step }: Axis): number[] {
   return Array.from({ length: Math.round((to - from) / step) + 1 }, (_, i) => from + i * step);

@@ -17,6 +17,8 @@ export interface ChartModel {
   palette: Palette;
   /** Laid out at drawing. */
   axis: Axis;
+  /** How many values the axis leaves out, as far from all others. */
+  outside: number;
   /** The lane of cleanings on top. */
   lane: boolean;
   /** The latest value's label, when the span holds it. */

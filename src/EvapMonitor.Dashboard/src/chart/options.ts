@@ -1,6 +1,6 @@
 import type uPlot from 'uplot';
 import { fixed } from '../words/number';
-import { splits, stepDecimals, valueAxis } from './axis';
+import { bodyOf, splits, stepDecimals, valueAxis } from './axis';
 import { drawOver, laneHeight } from './draw';
 import type { ChartModel } from './model';
 import { timeTicks } from './ticks';
@@ -10,7 +10,7 @@ import { extent } from './trend';
 export interface ChartEvents {
   cursor(index: number | null): void;
   selected(from: number, to: number): void;
-  drawn(axisStart: string): void;
+  drawn(axisStart: string, outside: number): void;
 }
 
 const axisFont = '13px "Atkinson Hyperlegible Next Variable", system-ui, sans-serif';
@@ -26,7 +26,8 @@ export function chartOptions(m: ChartModel, width: number, height: number, event
     cursor: {
       y: false,
       drag: { x: true, y: false, setScale: false, dist: 6 },
-      points: { size: 8, width: 1.5, stroke: () => m.palette.ink, fill: () => m.palette.card },
+      // Only the value's own series shows where the cursor stands, not the edges of the band.
+      points: { size: (_, i) => (i < 3 ? 0 : 8), width: (_, i) => (i < 3 ? 0 : 1.5), stroke: () => m.palette.ink, fill: () => m.palette.card },
     },
     scales: {
       x: { time: false, range: () => [m.span.from / 1000, m.span.to / 1000] },
@@ -40,7 +41,7 @@ export function chartOptions(m: ChartModel, width: number, height: number, event
         values: u => ticksNow(u).map(t => t.label),
       },
       {
-        font: axisFont, size: 52, gap: 6, stroke: () => m.palette.soft,
+        font: axisFont, size: (_, values) => Math.max(52, 18 + 7.5 * Math.max(0, ...(values ?? []).map(v => v.length))), gap: 6, stroke: () => m.palette.soft,
         grid: { stroke: () => m.palette.hair, width: 1 }, ticks: { show: false },
         splits: () => splits(m.axis),
         values: () => splits(m.axis).map(v => fixed(v, stepDecimals(m.axis.step))),
@@ -57,7 +58,7 @@ export function chartOptions(m: ChartModel, width: number, height: number, event
     ],
     bands: [{ series: [1, 2], fill: () => m.palette.wash }],
     hooks: {
-      draw: [u => { drawOver(u, m); events.drawn(m.axis.from === 0 ? '' : fixed(m.axis.from, stepDecimals(m.axis.step))); }],
+      draw: [u => { drawOver(u, m); events.drawn(m.axis.from === 0 ? '' : fixed(m.axis.from, stepDecimals(m.axis.step)), m.outside); }],
       setCursor: [u => events.cursor(u.cursor.idx ?? null)],
       setSelect: [u => {
         if (u.select.width < 6) return;
@@ -88,9 +89,10 @@ function layAxis(m: ChartModel): void {
     if (x < from || x > to) return;
     for (const v of [c.lower[i], c.upper[i], c.value[i], c.idle[i]]) if (v !== null && v !== undefined) seen.push(v);
   });
+  const body = bodyOf(seen);
+  m.outside = body === null ? 0 : seen.filter(v => v < body.lowest || v > body.highest).length;
+  const marks = [...(body ? [body.lowest, body.highest] : []), ...(m.limit ? [m.limit.value] : [])];
   const clean = m.clean && extent(m.clean, from, to);
-  if (clean) seen.push(clean.lowest, clean.highest);
-  if (m.limit) seen.push(m.limit.value);
-  const lowest = seen.reduce((a, b) => Math.min(a, b), Infinity), highest = seen.reduce((a, b) => Math.max(a, b), -Infinity);
-  m.axis = seen.length > 0 ? valueAxis(lowest, highest) : { from: 0, to: 1, step: 0.5 };
+  if (clean) marks.push(clean.lowest, clean.highest);
+  m.axis = marks.length > 0 ? valueAxis(Math.min(...marks), Math.max(...marks)) : { from: 0, to: 1, step: 0.5 };
 }

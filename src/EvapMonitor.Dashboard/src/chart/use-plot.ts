@@ -10,14 +10,14 @@ export function usePlot(model: ChartModel, height: number, events: ChartEvents) 
   const plot = useRef<uPlot | null>(null);
   // One model and one set of events live as long as the plot; each render pours its own into them.
   const live = useRef({ model, events }).current;
-  Object.assign(live.model, model, { palette: live.model.palette, axis: live.model.axis });
+  Object.assign(live.model, model, { palette: live.model.palette, axis: live.model.axis, outside: live.model.outside });
   live.events = events;
 
   useLayoutEffect(() => {
     const element = host.current!;
     live.model.palette = readPalette(element);
     const made = plot.current = new uPlot(chartOptions(live.model, Math.max(200, element.clientWidth), height, {
-      cursor: i => live.events.cursor(i), selected: (a, b) => live.events.selected(a, b), drawn: s => live.events.drawn(s),
+      cursor: i => live.events.cursor(i), selected: (a, b) => live.events.selected(a, b), drawn: (start, outside) => live.events.drawn(start, outside),
     }), chartData(live.model), element);
     let width = element.clientWidth;
     const resize = new ResizeObserver(() => {

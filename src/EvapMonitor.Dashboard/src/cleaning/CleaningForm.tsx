@@ -39,7 +39,7 @@ export function CleaningForm({ lines, chosen }: { lines: Line[]; chosen: { line:
   // Another content is another cleaning, so it gets another key; the same content keeps its key for a retry.
   const change = (part: Partial<Draft>) => {
     form.value = { draft: { ...form.peek().draft, ...part }, key: freshKey() };
-    keep(form.peek());
+    if (failure.peek() !== null) keep(form.peek());
   };
   useEffect(() => { if (errors.value) element.current?.querySelector<HTMLElement>('[aria-invalid="true"]')?.focus(); }, [errors.value]);
 

@@ -14,6 +14,7 @@ import { Words } from '../parts/Words';
 import { useTitle } from '../parts/use-title';
 import { calmNow } from '../site/clock';
 import { cleaningsChanged, lines, resultsChanged, zone } from '../site/state';
+import { aged } from '../words/aged';
 import { effectWords } from '../words/effect';
 import { EffectTrends } from './EffectTrends';
 import { NotHere } from './NotHere';
@@ -51,15 +52,16 @@ export function EffectPage({ line, effect }: { line: string; effect: string }) {
 }
 
 function Head({ effect }: { effect: Effect }) {
-  const line = lines.state.value.value?.lines.find(l => l.name === effect.line);
   const now = calmNow.value;
+  const found = lines.state.value.value?.lines.find(l => l.name === effect.line);
+  const line = found && aged(found, now);
   const readings = line?.readings ?? 'live';
   const latest = line?.latest_reading_at ? Date.parse(line.latest_reading_at) : null;
   return (
     <section class="line head">
       <div>
         <h1 class="line-name">{effect.name}</h1>
-        <p class="quiet"><Link href={`${pages.lines}#${encodeURIComponent(effect.line)}`}>{effect.line}</Link></p>
+        <p class="quiet"><Link href={`${pages.lines}#line.${encodeURIComponent(effect.line)}`}>{effect.line}</Link></p>
       </div>
       <div>
         <Words pieces={effectWords(effect, readings, latest, now, zone.value)} />

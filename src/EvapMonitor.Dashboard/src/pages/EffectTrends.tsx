@@ -44,7 +44,7 @@ export function EffectTrends({ effect, cleanings, version }: { effect: Effect; c
     return <TrendChart title={`${capital(quantityWords[quantity].name)} of ${effect.name}, ${shown.unit}`} name={name} height={main ? (narrow ? 290 : 350) : (narrow ? 190 : 210)} busy={busy}
       model={{
         columns: shown, clean: main ? clean.columns : null, limit: limitOf(quantity, effect), cleanings, span, zone: zone.value,
-        lane: main, latest: latestLabel(shown, span, narrow), narrow,
+        lane: main, latest: latestLabel(shown, span, narrow, calmNow.peek()), narrow,
       }}
       show={show} reset={reset} csv={() => {
         failure.value = null;

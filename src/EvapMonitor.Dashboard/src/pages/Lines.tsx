@@ -1,3 +1,4 @@
+import { useEffect } from 'preact/hooks';
 import { Link } from 'wouter-preact';
 import { pages } from '../api/addresses';
 import type { Effect, Line } from '../api/types';
@@ -5,9 +6,11 @@ import { Slice } from '../bore/Slice';
 import { DueLabel } from '../parts/DueLabel';
 import { Scroller } from '../parts/Scroller';
 import { Shown } from '../parts/Waiting';
+import { scrollToHash } from '../parts/use-arrival';
 import { useTitle } from '../parts/use-title';
 import { calmNow } from '../site/clock';
 import { lines, zone } from '../site/state';
+import { aged } from '../words/aged';
 import { dueWords } from '../words/due';
 import { duration } from '../words/duration';
 import { measured } from '../words/number';
@@ -16,6 +19,8 @@ import { moment } from '../words/time';
 /** Every line's numbers in a ledger, a row per effect. */
 export function Lines() {
   useTitle('Lines');
+  const known = lines.state.value.value !== null;
+  useEffect(() => { if (known) scrollToHash(); }, [known]);
   return (
     <>
       <h1 class="page-name">Lines</h1>
@@ -26,12 +31,12 @@ export function Lines() {
   );
 }
 
-function Ledger({ line }: { line: Line }) {
-  const now = calmNow.value;
+function Ledger({ line: given }: { line: Line }) {
+  const now = calmNow.value, line = aged(given, now);
   const stale = line.readings !== 'live';
   return (
-    <section class="line" id={line.name} aria-labelledby={`ledger-${line.name}`}>
-      <h2 class="line-name" id={`ledger-${line.name}`}>{line.name}</h2>
+    <section class="line" id={`line.${line.name}`} aria-labelledby={`line-name.${line.name}`}>
+      <h2 class="line-name" id={`line-name.${line.name}`}>{line.name}</h2>
       <div>
         <p class="quiet">
           {line.liquor}; {line.state === 'unknown' ? 'running state not known' : line.state}
@@ -39,9 +44,9 @@ function Ledger({ line }: { line: Line }) {
           {stale && line.latest_reading_at && <b>; last reading {duration(now - Date.parse(line.latest_reading_at))} ago</b>}
         </p>
         <Scroller label={`Effects of ${line.name}`}>
-          <table>
+          <table class="ledger">
             <thead><tr>
-              <th scope="col">effect</th><th scope="col">resistance, to 2 × limit</th><th scope="col">coefficient, W/(m²·K)</th><th scope="col">if clean</th>
+              <th scope="col">effect</th><th scope="col">of the limit</th><th scope="col">coefficient, W/(m²·K)</th><th scope="col">if clean</th>
               <th scope="col">cleanliness, %</th><th scope="col">driving force, K</th><th scope="col">cleaned</th><th scope="col">due</th>
             </tr></thead>
             <tbody>{line.effects.map(e => <Row key={e.name} effect={e} now={now} fresh={!stale} />)}</tbody>

@@ -42,7 +42,7 @@ const stateWords: Record<Import['state'], string> = { waiting: 'waits', running:
 function Imports({ all }: { all: Import[] }) {
   const now = calmNow.value;
   return (
-    <Scroller label="Imports">
+    <Scroller label="Table of imports">
       <table>
         <thead><tr><th scope="col">file</th><th scope="col">state</th><th scope="col" class="number">readings accepted</th><th scope="col" class="number">repeated</th>
           <th scope="col" class="number">differing</th><th scope="col" class="number">rejected rows</th><th scope="col" class="number">not in plant</th><th scope="col">begun</th></tr></thead>
@@ -51,7 +51,7 @@ function Imports({ all }: { all: Import[] }) {
             <th scope="row" class="signal">{i.name}<span class="quiet"> {bytes(i.bytes_total)}</span></th><td>{stateWords[i.state]}</td>
             <td class="number">{fixed(i.accepted)}</td><td class="number">{fixed(i.repeated)}</td><td class="number">{fixed(i.differing)}</td>
             <td class="number">{fixed(i.rejected)}</td><td class="number">{fixed(i.not_in_plant)}</td>
-            <td>{i.started_at === null ? '' : moment(Date.parse(i.started_at), zone.value, now)}</td>
+            <td class="time">{i.started_at === null ? '' : moment(Date.parse(i.started_at), zone.value, now)}</td>
           </tr>
           {(i.error !== null || i.problems.length > 0 || i.unknown_signals.length > 0) && <tr key={`${i.id} problems`} class="more"><td colSpan={8}><Problems of={i} /></td></tr>}
         </>)}</tbody>

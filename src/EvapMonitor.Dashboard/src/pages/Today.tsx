@@ -1,5 +1,7 @@
+import { useEffect, useRef } from 'preact/hooks';
 import type { Line } from '../api/types';
 import { weeksPerStratum } from '../bore/deposit';
+import { announce } from '../parts/Announcer';
 import { EffectCell } from '../parts/EffectCell';
 import { Evaporation } from '../parts/Evaporation';
 import { Shown } from '../parts/Waiting';
@@ -8,6 +10,7 @@ import { useNarrow } from '../parts/use-narrow';
 import { useTitle } from '../parts/use-title';
 import { calmNow } from '../site/clock';
 import { lines, site, zone } from '../site/state';
+import { aged } from '../words/aged';
 import { lineWords } from '../words/line';
 import { NoReadings } from './NoReadings';
 
@@ -30,18 +33,27 @@ export function Today() {
   );
 }
 
-function LineToday({ line, alone, weeks }: { line: Line; alone: boolean; weeks: 1 | 4 }) {
+function LineToday({ line: given, alone, weeks }: { line: Line; alone: boolean; weeks: 1 | 4 }) {
   const narrow = useNarrow();
-  const now = calmNow.value, stale = line.readings !== 'live';
+  const now = calmNow.value, line = aged(given, now), stale = line.readings !== 'live';
+  const pieces = lineWords(line, now, zone.value);
+  // A new state is said aloud; that a duration in it grows is not.
+  const state = pieces.map(p => p.text).join('').replace(/\d+/g, '');
+  const before = useRef(state);
+  useEffect(() => {
+    if (before.current !== state) announce(`${line.name}: ${pieces.map(p => p.text).join('')}`);
+    before.current = state;
+  }, [state]);
   const radius = narrow ? 22 : alone ? 64 : 52;
   return (
-    <section class="line" id={line.name} aria-labelledby={`line-${line.name}`}>
-      <h2 id={`line-${line.name}`} class="line-name">{line.name}</h2>
+    <section class="line" id={`line.${line.name}`} aria-labelledby={`line-name.${line.name}`}>
+      <h2 id={`line-name.${line.name}`} class="line-name">{line.name}</h2>
       <div>
-        <Words pieces={lineWords(line, now, zone.value)} />
+        <Words pieces={pieces} />
         <div class="line-row">
           <ul class="effects">
-            {line.effects.map(e => <li key={e.name}><EffectCell effect={e} now={now} zone={zone.value} stale={stale} weeks={weeks} radius={radius} /></li>)}
+            {line.effects.map(e => <li key={e.name}><EffectCell effect={e} now={now} zone={zone.value} stale={stale} weeks={weeks} radius={radius}
+              asOf={line.as_of === null ? null : Date.parse(line.as_of)} /></li>)}
           </ul>
           <Evaporation line={line} stale={stale} />
         </div>

@@ -13,7 +13,7 @@ export function CleaningsTable({ all, now, everywhere }: { all: Cleaning[]; now:
   const sorted = all.toSorted((a, b) => Date.parse(b.start) - Date.parse(a.start));
   return (
     <>
-      <Scroller label="Cleanings">
+      <Scroller label="Table of cleanings">
         <table>
           <thead><tr>{everywhere && <><th scope="col">line</th><th scope="col">effect</th></>}<th scope="col">from</th><th scope="col">to</th><th scope="col">lasted</th>
             <th scope="col">kind</th><th scope="col">note</th></tr></thead>
@@ -21,8 +21,8 @@ export function CleaningsTable({ all, now, everywhere }: { all: Cleaning[]; now:
             const start = Date.parse(c.start), end = c.end === null ? null : Date.parse(c.end);
             return <tr key={c.id}>
               {everywhere && <><td>{c.line}</td><th scope="row"><Link href={pages.effect(c.line, c.effect)}>{c.effect}</Link></th></>}
-              <td>{moment(start, zone.value, now)}</td><td>{end === null ? <b>goes on</b> : moment(end, zone.value, now)}</td>
-              <td>{duration((end ?? now) - start)}</td><td>{c.kind}</td><td class="note">{c.note}</td>
+              <td class="time">{moment(start, zone.value, now)}</td><td class="time">{end === null ? <b>goes on</b> : moment(end, zone.value, now)}</td>
+              <td class="time">{duration((end ?? now) - start)}</td><td>{c.kind}</td><td class="note">{c.note}</td>
             </tr>;
           })}</tbody>
         </table>

@@ -8,10 +8,10 @@ import { significant } from '../words/number';
 import { moment } from '../words/time';
 import { DueLabel } from './DueLabel';
 
-export interface EffectCellProps { effect: Effect; now: number; zone: string; stale: boolean; weeks: 1 | 4; radius: number }
+export interface EffectCellProps { effect: Effect; now: number; zone: string; stale: boolean; weeks: 1 | 4; radius: number; asOf: number | null }
 
 /** An effect as a bore with its words; the whole of it leads to the effect's page. */
-export function EffectCell({ effect, now, zone, stale, weeks, radius }: EffectCellProps) {
+export function EffectCell({ effect, now, zone, stale, weeks, radius, asOf }: EffectCellProps) {
   const due = dueWords(effect, now, !stale);
   const found = depositOf(effect, weeks);
   const share = found === null || found.deposit.resistance === null ? null : found.deposit.resistance / found.deposit.limit;
@@ -21,7 +21,7 @@ export function EffectCell({ effect, now, zone, stale, weeks, radius }: EffectCe
       <span class="effect-name">{effect.name}</span>
       <Bore effect={effect} radius={radius} now={now} stale={stale} weeks={weeks} />
       <span class="effect-words">
-        {stale && effect.now && <span class="effect-asof">as of {moment(Date.parse(effect.now.at), zone, now)}</span>}
+        {stale && asOf !== null && <span class="effect-asof">as of {moment(asOf, zone, now)}</span>}
         {!unknown && effect.cleaning_since === null && <span>{cleanlinessWords(effect)}</span>}
         {!unknown && effect.cleaning_since === null && share !== null && share > 2 && <span>{significant(share, 2)} × limit</span>}
         <DueLabel due={due} />

@@ -9,11 +9,11 @@ export function LimitsTable({ effect, now }: { effect: Effect; now: number }) {
   if (effect.due.evidence.length === 0) return <p class="quiet">The plant file sets no limit for {effect.name}.</p>;
   return (
     <table class="limits">
-      <thead><tr><th scope="col">limit</th><th scope="col" class="number">now</th><th scope="col" class="number">bound</th><th scope="col">unit</th><th scope="col">state</th></tr></thead>
+      <thead><tr><th scope="col">limit</th><th scope="col">now, and where it is reached</th><th scope="col">state</th></tr></thead>
       <tbody>{effect.due.evidence.map(e => {
         const words = against(e.value, e.bound, e.unit);
         return <tr key={e.limit}>
-          <th scope="row">{limitName(e.limit)}</th><td class="number">{words.value}</td><td class="number">{words.bound}</td><td>{words.unit}</td>
+          <th scope="row">{limitName(e.limit)}</th><td><b>{words.value}</b> of {words.bound} {words.unit}</td>
           <td>{e.state === 'due' ? <b>due{e.since && ` since ${moment(Date.parse(e.since), zone.value, now)}`}</b> : e.state}</td>
         </tr>;
       })}</tbody>

@@ -2,7 +2,7 @@ import { computed, effect, signal } from '@preact/signals';
 import { addresses } from '../api/addresses';
 import { Resource } from '../api/resource';
 import type { Import, Line, Site } from '../api/types';
-import { connect } from '../live/connection';
+import { connect, connection } from '../live/connection';
 import { throttle } from '../live/throttle';
 import { learnTime } from './clock';
 import { observeWaiting } from './waiting';
@@ -54,11 +54,13 @@ export function startState(): () => void {
     const known = site.state.value.value;
     if (known) { learnTime(known.now); observeWaiting(known.days_waiting, Date.parse(known.now)); }
   });
+  // Ages and running hours move without any event.
+  const regular = setInterval(() => { if (connection.peek().state === 'open' && !document.hidden) void lines.load(); }, 60_000);
   const close = connect(addresses.events, {
     site: data => site.put(data as Site),
     windows: data => { changedLines.add((data as { line: string }).line); publish(); },
     import: data => mergeImport(data as Import),
     cleanings: () => { cleaningsChanged.value++; void lines.load(); },
   }, everything);
-  return () => { forget(); close(); };
+  return () => { forget(); clearInterval(regular); close(); };
 }

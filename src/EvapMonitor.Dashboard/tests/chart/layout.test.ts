@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { splits, valueAxis } from '../../src/chart/axis';
+import { bodyOf, splits, valueAxis } from '../../src/chart/axis';
 import { place } from '../../src/chart/gutter';
 import { keyAct } from '../../src/chart/keys';
 import { readView, spanOf, viewOf, writeView, zoomed } from '../../src/chart/view';
@@ -49,3 +49,11 @@ describe('view', () => {
 });
 
 test('Keys_OnlyTheCharts', () => expect([keyAct('ArrowLeft', false), keyAct('T', false), keyAct('Tab', false)]).toEqual([{ move: -1 }, { table: true }, null]));
+
+describe('body of the values', () => {
+  const calm = Array.from({ length: 500 }, (_, i) => 700 + (i % 50));
+  test('OneFarOffValue_IsLeftOut', () => expect(bodyOf([...calm, 400_000])).toEqual({ lowest: 700, highest: 749 }));
+  test('NothingFarOff_AllIsIn', () => expect(bodyOf([...calm, 800])).toEqual({ lowest: 700, highest: 800 }));
+  test('FewValues_AllAreIn', () => expect(bodyOf([1, 5, 90])).toEqual({ lowest: 1, highest: 90 }));
+  test('AllTheSameButOne_AllAreIn', () => expect(bodyOf([...Array.from({ length: 300 }, () => 5), 9])).toEqual({ lowest: 5, highest: 9 }));
+});

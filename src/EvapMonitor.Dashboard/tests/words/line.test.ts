@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import type { Line } from '../../src/api/types';
+import { aged } from '../../src/words/aged';
 import { cleanlinessWords, dueWords } from '../../src/words/due';
 import { effectWords } from '../../src/words/effect';
 import { lineWords } from '../../src/words/line';
@@ -49,4 +50,9 @@ test('DueEffect_NamesLimitAndSince', () => {
 test('ResistanceUnderItsUncertainty_CannotBeToldFromClean', () => {
   const e = effect();
   expect(cleanlinessWords({ ...e, now: { ...e.now!, fouling_resistance_m2k_w: 0.00001, fouling_resistance_u: 0.00003 } })).toBe('cannot be told from clean');
+});
+test('LiveWhenFetchedButGrownOldOnThePage_ReadsAsStale', () => {
+  expect(aged(cases.calm!, now).readings).toBe('live');
+  const later = now + 20 * 60_000;
+  expect(lineWords(aged(cases.calm!, later), later, zone).map(p => p.text).join('')).toMatch(/^No reading has come for 20 min/);
 });
