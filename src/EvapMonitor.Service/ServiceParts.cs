@@ -7,6 +7,7 @@ using EvapMonitor.Service.Live;
 using EvapMonitor.Service.Security;
 using EvapMonitor.Service.Store;
 using Microsoft.AspNetCore.Authentication;
+using Microsoft.AspNetCore.DataProtection;
 
 namespace EvapMonitor.Service;
 
@@ -34,6 +35,8 @@ internal static class ServiceParts
             json.SerializerOptions.UnmappedMemberHandling = JsonUnmappedMemberHandling.Disallow;
         });
         services.AddOpenApi("v1", OpenApiText.Describe);
+        // Nothing is signed or kept in cookies, so no keys are to be written to anybody's home.
+        services.AddDataProtection().UseEphemeralDataProtectionProvider();
         services.AddAuthentication(LoopbackAuthentication.SchemeName)
             .AddScheme<AuthenticationSchemeOptions, LoopbackAuthentication>(LoopbackAuthentication.SchemeName, null);
         var authorization = services.AddAuthorizationBuilder();

@@ -27,13 +27,13 @@ public static class DemoPlant
     public const int Days = 28;
 
     /// <summary>The plant file, with the instant from which history is accepted.</summary>
-    public static string PlantFile(DateTimeOffset start) => $$"""
+    public static string PlantFile(DateTimeOffset start) => $$$"""
         # An invented plant. The program's documentation explains every member.
         site: Fennholm
         time-zone: Europe/Copenhagen
         atmosphere: 1013 mbar
         window: 5 min
-        history-from: {{start.UtcDateTime.AddDays(-1).ToString("yyyy-MM-dd", CultureInfo.InvariantCulture)}}
+        history-from: {{{start.UtcDateTime.AddDays(-1).ToString("yyyy-MM-dd", CultureInfo.InvariantCulture)}}}
         liquors:
           juice:
             kind: custom
@@ -56,7 +56,7 @@ public static class DemoPlant
               flow:     {signal: N.FT-01, unit: t/h, accuracy: 1.5 %}
               pressure: {signal: N.PT-01, unit: bar(g), accuracy: 0.01 abs, at: chest}
             effects:
-        {{string.Join("\n", Effects.Select((_, i) => EffectText(i)))}}
+        {{{string.Join("\n", Effects.Select((_, i) => EffectText(i)))}}}
             bleeds:
               - {from: N1, to: heater, flow: {signal: N1.FT-4, unit: t/h, accuracy: 3 %}}
               - {from: N2, to: pans, flow: {signal: N2.FT-4, unit: t/h, accuracy: 3 %}}
@@ -108,7 +108,7 @@ public static class DemoPlant
         double Grow(double from, double days) => level == 0 ? from + (rate * days) : level - ((level - from) * double.Exp(-rate * days / level));
     }
 
-    private static CustomLiquor Juice() => new(
+    private static CustomLiquor Juice() => CustomLiquor.Create(
         "juice", new SolidsPolynomial([0, 0.0178, 0.000622]), new SolidsPolynomial([4190, -23.5]), new SolidsPolynomial([998, 3.9, 0.013]));
 
     private static bool IsStopped(double day) => Cleanings.Any(cleaning => day >= cleaning.Day && day < cleaning.Day + (8 / 24.0));
@@ -156,22 +156,22 @@ public static class DemoPlant
     {
         string name = Effects[i].Name, heating = i == 0 ? "steam" : $"vapour of {Effects[i - 1].Name}", from = i == 0 ? "feed" : Effects[i - 1].Name;
         string limit = i == 3 ? "{coefficient-below: 720 W/(m2.K), cleanliness-below: 70 %, hours-since-cleaning: 900}" : "{cleanliness-below: 75 %}";
-        return string.Create(CultureInfo.InvariantCulture, $$"""
-                  - name: {{name}}
-                    heating: {{heating}}
-                    liquor: {{from}}
-                    area: {{Effects[i].Area}} m2
-                    clean-coefficient: {{Effects[i].Clean}} W/(m2.K)
+        return string.Create(CultureInfo.InvariantCulture, $$$"""
+                  - name: {{{name}}}
+                    heating: {{{heating}}}
+                    liquor: {{{from}}}
+                    area: {{{Effects[i].Area}}} m2
+                    clean-coefficient: {{{Effects[i].Clean}}} W/(m2.K)
                     heat-loss: 0 %
                     vent: 0 %
-                    vapour: {pressure: {signal: {{name}}.PT-2, unit: bar, accuracy: 0.003 abs, range: [0, 4]}}
+                    vapour: {pressure: {signal: {{{name}}}.PT-2, unit: bar, accuracy: 0.003 abs, range: [0, 4]}}
                     chest:
-                      temperature: {signal: {{name}}.TT-1, unit: degC, accuracy: 0.3 abs, sees: saturation}
-                      condensate-flow: {signal: {{name}}.FT-3, unit: t/h, accuracy: 2 %}
+                      temperature: {signal: {{{name}}}.TT-1, unit: degC, accuracy: 0.3 abs, sees: saturation}
+                      condensate-flow: {signal: {{{name}}}.FT-3, unit: t/h, accuracy: 2 %}
                     leaving:
-                      temperature: {signal: {{name}}.TT-2, unit: degC, accuracy: 0.3 abs, sees: flashed-liquor}
-                      solids: {signal: {{name}}.DT-2, unit: "%", accuracy: 0.3 abs}
-                    due-when: {{limit}}
+                      temperature: {signal: {{{name}}}.TT-2, unit: degC, accuracy: 0.3 abs, sees: flashed-liquor}
+                      solids: {signal: {{{name}}}.DT-2, unit: "%", accuracy: 0.3 abs}
+                    due-when: {{{limit}}}
             """);
     }
 }

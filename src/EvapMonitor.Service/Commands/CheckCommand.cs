@@ -14,7 +14,7 @@ internal sealed class CheckCommand : AsyncCommand<CheckCommand.Settings>
         public required string Plant { get; init; }
     }
 
-    protected override async Task<int> ExecuteAsync(CommandContext context, Settings settings, CancellationToken cancellationToken)
+    public override async Task<int> ExecuteAsync(CommandContext context, Settings settings, CancellationToken cancellationToken)
     {
         PlantFileResult result = PlantFileReader.Read(await File.ReadAllTextAsync(settings.Plant, cancellationToken));
         foreach (PlantFileProblem problem in result.Problems) await Console.Error.WriteLineAsync(problem.ToLine(settings.Plant));

@@ -11,7 +11,7 @@ namespace EvapMonitor.Service.Commands;
 /// <summary>Runs the service with an invented plant. Its history is made and imported once, while the page already works.</summary>
 internal sealed class DemoCommand : AsyncCommand<ServiceSettings>
 {
-    protected override async Task<int> ExecuteAsync(CommandContext context, ServiceSettings settings, CancellationToken cancellationToken)
+    public override async Task<int> ExecuteAsync(CommandContext context, ServiceSettings settings, CancellationToken cancellationToken)
     {
         ServiceOptions options = settings.ToOptions(null, Path.Combine(ServiceOptions.DefaultData, "demo"), connection: null);
         Directory.CreateDirectory(options.Data);

@@ -27,7 +27,7 @@ internal sealed class EvaluateCommand : AsyncCommand<EvaluateCommand.Settings>
         public string? Events { get; init; }
     }
 
-    protected override async Task<int> ExecuteAsync(CommandContext context, Settings settings, CancellationToken cancellationToken)
+    public override async Task<int> ExecuteAsync(CommandContext context, Settings settings, CancellationToken cancellationToken)
     {
         PlantFileResult result = PlantFileReader.Read(await File.ReadAllTextAsync(settings.Plant, cancellationToken));
         foreach (PlantFileProblem problem in result.Problems) await Console.Error.WriteLineAsync(problem.ToLine(settings.Plant));

@@ -27,7 +27,7 @@ internal sealed class ImportCommand : AsyncCommand<ImportCommand.Settings>
         public bool Replace { get; init; }
     }
 
-    protected override async Task<int> ExecuteAsync(CommandContext context, Settings settings, CancellationToken cancellationToken)
+    public override async Task<int> ExecuteAsync(CommandContext context, Settings settings, CancellationToken cancellationToken)
     {
         string address = settings.Service ?? Environment.GetEnvironmentVariable("EVAPMONITOR_LISTEN") ?? ServiceOptions.DefaultListen;
         using var http = new HttpClient { BaseAddress = new Uri(address), Timeout = TimeSpan.FromHours(1) };

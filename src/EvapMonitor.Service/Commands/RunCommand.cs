@@ -33,7 +33,7 @@ internal sealed class RunCommand : AsyncCommand<RunCommand.Settings>
         public string? Plant { get; init; }
     }
 
-    protected override async Task<int> ExecuteAsync(CommandContext context, Settings settings, CancellationToken cancellationToken)
+    public override async Task<int> ExecuteAsync(CommandContext context, Settings settings, CancellationToken cancellationToken)
     {
         // The connection string may hold a password: it comes by the environment alone, never by an argument that others can list.
         string? connection = Environment.GetEnvironmentVariable("EVAPMONITOR_CONNECTION");

@@ -39,10 +39,10 @@ public sealed record CleaningsWire(IReadOnlyList<CleaningWire> Cleanings);
 /// <param name="Line">Name of the line.</param>
 /// <param name="Effect">Name of the effect.</param>
 /// <param name="Start">When it began.</param>
-/// <param name="End">When it ended; null or absent while it goes on.</param>
 /// <param name="Kind">The plant's word for it, up to 60 letters.</param>
+/// <param name="End">When it ended; null or absent while it goes on.</param>
 /// <param name="Note">Free text, up to 2,000 letters.</param>
-public sealed record NewCleaningWire(string? Line, string? Effect, DateTimeOffset? Start, DateTimeOffset? End, string? Kind, string? Note);
+public sealed record NewCleaningWire(string? Line, string? Effect, DateTimeOffset? Start, string? Kind, DateTimeOffset? End = null, string? Note = null);
 
 /// <summary>Signals and what arrives that no plant file names.</summary>
 /// <param name="Signals">Signals of the plant file.</param>

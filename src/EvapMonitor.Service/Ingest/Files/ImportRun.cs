@@ -10,14 +10,14 @@ namespace EvapMonitor.Service.Ingest.Files;
 /// Takes one file into the store. One thread reads and makes batches, the other writes them; between them at most two batches wait, so that memory does not
 /// grow with the file. Each batch is one transaction: readings, day marks, and how far the file has come.
 /// </summary>
-internal sealed class ImportRun(NpgsqlDataSource database, PlantInForce plant, ImportFile import, TimeProvider clock)
+internal sealed class ImportRun(NpgsqlDataSource database, PlantInForce plant, ImportFile start, TimeProvider clock)
 {
     private const int BatchSize = 50_000;
     private const int MostProblems = 100;
     private const int MostUnknown = 10_000;
     private static readonly TimeSpan AheadLimit = TimeSpan.FromMinutes(10);
 
-    private ImportFile _progress = import;
+    private ImportFile _progress = start;
 
     /// <summary>Where the run is, as committed.</summary>
     public ImportFile Progress => Volatile.Read(ref _progress);
@@ -49,10 +49,10 @@ internal sealed class ImportRun(NpgsqlDataSource database, PlantInForce plant, I
     {
         try
         {
-            using FileStream file = File.OpenRead(import.StoredAs ?? throw new ReadingFileException("The upload is gone; send the file again."));
+            using FileStream file = File.OpenRead(Progress.StoredAs ?? throw new ReadingFileException("The upload is gone; send the file again."));
             using var counted = new CountedStream(file);
             DateTimeZone zone = DateTimeZoneProviders.Tzdb[plant.Site.TimeZone];
-            var sink = new BatchSink(plant, import, counted, writer, stop);
+            var sink = new BatchSink(plant, Progress, counted, writer, stop);
             long latest = (clock.GetUtcNow() + AheadLimit).ToUnixTimeMilliseconds();
             new ReadingFile(counted, zone, plant.Site.HistoryFrom.ToUnixTimeMilliseconds(), latest, sink).Read();
             sink.Flush();
@@ -68,7 +68,7 @@ internal sealed class ImportRun(NpgsqlDataSource database, PlantInForce plant, I
     {
         await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
         await using NpgsqlTransaction transaction = await connection.BeginTransactionAsync(stop);
-        InsertCount count = await ReadingStore.InsertAsync(connection, transaction, batch.Readings, import.Replace, Core.Conditioning.LineConditioning.Memory, stop);
+        InsertCount count = await ReadingStore.InsertAsync(connection, transaction, batch.Readings, _progress.Replace, Core.Conditioning.LineConditioning.Memory, stop);
         ImportFile now = _progress;
         now = now with
         {

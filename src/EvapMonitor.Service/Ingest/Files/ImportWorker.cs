@@ -19,15 +19,12 @@ public sealed class ImportWorker(
 {
     private static readonly TimeSpan Pause = TimeSpan.FromSeconds(2);
 
-    private readonly SemaphoreSlim _wake = new(0, 1);
+    private readonly WakeUp _bell = new();
     private readonly ConcurrentDictionary<string, CancellationTokenSource> _running = new();
     private readonly ConcurrentDictionary<string, ImportPace> _paces = new();
 
     /// <summary>Tells the worker that a file waits.</summary>
-    public void Wake()
-    {
-        if (_wake.CurrentCount == 0) _wake.Release();
-    }
+    public void Wake() => _bell.Wake();
 
     /// <summary>The pace of a running import; null when it does not run.</summary>
     public ImportPace? PaceOf(string sha256) => _paces.GetValueOrDefault(sha256);
@@ -47,7 +44,7 @@ public sealed class ImportWorker(
             try
             {
                 if (await imports.NextAsync(stoppingToken) is { } next) await RunAsync(next, stoppingToken);
-                else await _wake.WaitAsync(Pause, stoppingToken);
+                else await _bell.WaitAsync(Pause, stoppingToken);
             }
             catch (NpgsqlException error)
             {

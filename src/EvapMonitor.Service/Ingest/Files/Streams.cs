@@ -60,7 +60,7 @@ internal sealed class LimitedStream(Stream inner, long limit) : ForwardStream(in
     {
         int read = Inner.Read(buffer, offset, count);
         _left -= read;
-        return _left >= 0 ? read : throw new ReadingFileException($"The file unfolds to more than {limit >> 30} GiB.");
+        return _left >= 0 ? read : throw new ReadingFileException($"The file unfolds to more than is allowed ({ReadingFile.LargestUnfolded >> 30} GiB).");
     }
 }
 
