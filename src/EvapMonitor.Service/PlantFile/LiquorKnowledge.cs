@@ -1,4 +1,5 @@
 using EvapMonitor.Core.Plant;
+using EvapMonitor.Core.Properties;
 
 namespace EvapMonitor.Service.PlantFile;
 
@@ -8,7 +9,7 @@ internal static class LiquorKnowledge
     /// <summary>Where the solids leaving an effect come from.</summary>
     public static string? SolidsLeaving(Line line, Effect effect)
     {
-        if (line.Liquor.Always is { Name: LiquorReader.Water }) return "no solids (water)";
+        if (line.Liquor.Always is Water) return "no solids (water)";
         if (MeasuredSolidsLeaving(line, effect) is { } measured) return measured;
         return FlowLeaving(line, effect) is { } leaving && FlowEntering(line, effect) is { } entering && SolidsEntering(line, effect) is { } solids
             ? $"solids from {entering}, {solids} and {leaving}"
