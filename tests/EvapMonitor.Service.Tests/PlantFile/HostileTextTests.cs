@@ -6,7 +6,7 @@ namespace EvapMonitor.Service.Tests.PlantFile;
 
 public sealed class HostileTextTests
 {
-    private static readonly TimeSpan Patience = TimeSpan.FromSeconds(20);
+    private static readonly TimeSpan Patience = TimeSpan.FromSeconds(60);
 
     [Theory]
     [InlineData("", 1, 1)]
