@@ -58,7 +58,8 @@ internal sealed class CurveReader(Findings findings)
         double before = 0;
         foreach (MappingEntry entry in mapping.Entries)
         {
-            if (Texts.Number(entry.Key, "solids in %, above 0 to 100, ascending", s => s > before && s <= 100, findings) is not { } solids) continue;
+            if (Texts.Number(entry.Key, "solids in %, above 0 to 100, ascending", s => s > before && s <= 100, findings) is not { } solids)
+                continue;
             before = solids;
             if (Points(entry.Value) is { } points && points.TrueForAll(p => p.Y >= p.X)) lines.Add(new(solids, points));
             else findings.Wrong(entry.Value, LineAllowed);

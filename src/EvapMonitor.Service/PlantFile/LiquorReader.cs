@@ -45,7 +45,8 @@ internal static class LiquorReader
 
         if (name == Water && kind != Water) findings.Wrong(key, "another name: water is always water");
         OnlyOwnKeys(mapping, kind, findings);
-        return kind == Custom ? OfPlant(name, mapping, findings) : Liquors.Create(kind, name, kind == "sucrose" ? Purity(mapping.Take("purity"), findings) : null);
+        if (kind == Custom) return OfPlant(name, mapping, findings);
+        return Liquors.Create(kind, name, kind == "sucrose" ? Purity(mapping.Take("purity"), findings) : null);
     }
 
     private static void OnlyOwnKeys(MappingReader mapping, string kind, Findings findings)
@@ -59,7 +60,8 @@ internal static class LiquorReader
         foreach (string other in PlantFileKeys.Liquor.Keys.Except([.. own, "kind"]))
         {
             if (mapping.TakeKey(other) is { } stray)
-                findings.Wrong(stray, $"{other} for the kind {kind}", own.Length == 0 ? "no further keys for this kind" : string.Join(", ", own));
+                findings.Wrong(
+                    stray, $"{other} for the kind {kind}", own.Length == 0 ? "no further keys for this kind" : string.Join(", ", own));
         }
     }
 
@@ -75,19 +77,33 @@ internal static class LiquorReader
         (SolidsCurve? elevation, DuhringTable? duhring) = curves.Elevation(elevationNode);
         SolidsCurve? heat = curves.Curve(heatNode);
         SolidsCurve? density = curves.Curve(densityNode);
-        if (densityNode is null) findings.Note(mapping.Node, $"{name} has no density: it is made from the volumes of water and solids, with a standard uncertainty of 5 %");
+        if (densityNode is null)
+            findings.Note(
+                mapping.Node, $"{name} has no density: it is made from the volumes of water and solids, with a standard uncertainty of 5 %");
 
-        bool sound = Sound(elevationNode, elevation, "0 K at 0 % solids, nowhere negative, at most 10 K; above that {duhring: …}", e => CustomLiquor.Problems(e, AnyPositive), findings)
-            & Sound(heatNode, heat, "more than 0 J/(kg.K) at all solids given (a polynomial: from 0 to 100 %)", h => CustomLiquor.Problems(NoElevation, h), findings)
-            & Sound(densityNode, density, "more than 0 kg/m3 at all solids given (a polynomial: from 0 to 100 %)", d => CustomLiquor.Problems(NoElevation, AnyPositive, d), findings);
+        bool sound = Sound(
+            elevationNode, elevation, "0 K at 0 % solids, nowhere negative, at most 10 K; above that {duhring: …}",
+            e => CustomLiquor.Problems(e, AnyPositive), findings)
+            & Sound(
+                heatNode, heat, "more than 0 J/(kg.K) at all solids given (a polynomial: from 0 to 100 %)",
+                h => CustomLiquor.Problems(NoElevation, h), findings)
+            & Sound(
+                densityNode, density, "more than 0 kg/m3 at all solids given (a polynomial: from 0 to 100 %)",
+                d => CustomLiquor.Problems(NoElevation, AnyPositive, d), findings);
         if (!sound || heat is null || (elevation is null && duhring is null)) return null;
-        CustomLiquor liquor = duhring is null ? CustomLiquor.Create(name, elevation!, heat, density) : CustomLiquor.Create(name, duhring, heat, density);
+        CustomLiquor liquor = duhring is null
+            ? CustomLiquor.Create(name, elevation!, heat, density)
+            : CustomLiquor.Create(name, duhring, heat, density);
         if (liquor.ElevationRuleExceededAt() is { } from)
-            findings.Note(elevationNode!, Invariant($"above {from * 100:0.#} % solids the elevation of {name} exceeds 10 K and cannot be carried to other pressures; give {{duhring: …}} where the line goes beyond"));
+            findings.Note(
+                elevationNode!,
+                Invariant($"above {from * 100:0.#} % solids the elevation of {name} exceeds 10 K and cannot be carried to other pressures; ")
+                    + "give {duhring: …} where the line goes beyond");
         return liquor;
     }
 
-    private static bool Sound(PlantNode? node, SolidsCurve? curve, string allowed, Func<SolidsCurve, IReadOnlyList<string>> judge, Findings findings)
+    private static bool Sound(
+        PlantNode? node, SolidsCurve? curve, string allowed, Func<SolidsCurve, IReadOnlyList<string>> judge, Findings findings)
     {
         if (node is null || curve is null) return true;
         IReadOnlyList<string> problems = judge(curve);

@@ -52,10 +52,10 @@ public sealed class LiquorTests
     [InlineData("boiling-point-elevation: {table: [[0, 0], [50, 25]]}, ", "boiling-point-elevation", "passes 10 K at 20.0 % solids")]
     [InlineData("boiling-point-elevation: {polynomial: [0.5, 0.01]}, ", "boiling-point-elevation", "at 0 % solids must be 0 K")]
     [InlineData("boiling-point-elevation: {table: [[0, 0], [20, -1]]}, ", "boiling-point-elevation", "must not be negative")]
-    [InlineData("boiling-point-elevation: {table: [[20, 1], [10, 2]]}, ", "boiling-point-elevation.table", "a list")]
-    [InlineData("boiling-point-elevation: {polynomial: []}, ", "boiling-point-elevation.polynomial", "a list")]
+    [InlineData("boiling-point-elevation: {table: [[20, 1], [10, 2]]}, ", "boiling-point-elevation.table", "[[20, 1], [10, 2]]")]
+    [InlineData("boiling-point-elevation: {polynomial: []}, ", "boiling-point-elevation.polynomial", "[]")]
     [InlineData("boiling-point-elevation: {polynomial: [0], table: [[0, 0], [40, 1]]}, ", "boiling-point-elevation", "a mapping with 2 keys")]
-    [InlineData("boiling-point-elevation: {duhring: {40: [[60, 50], [100, 104]]}}, ", "boiling-point-elevation.duhring.40", "a list")]
+    [InlineData("boiling-point-elevation: {duhring: {40: [[60, 50], [100, 104]]}}, ", "boiling-point-elevation.duhring.40", "[[60, 50], [100, 104]]")]
     [InlineData("boiling-point-elevation: {duhring: {50: [[60, 70], [100, 114]], 40: [[60, 63], [100, 104]]}}, ", "boiling-point-elevation.duhring.40", "\"40\"")]
     [InlineData("", "boiling-point-elevation", "nothing")]
     public void WrongElevation_IsOneProblemAtItsPlace(string elevation, string path, string found)
