@@ -79,3 +79,16 @@ test('AnotherAddress_SupersedesTheFetchThatRuns', async () => {
   await second;
   expect(r.state.value).toMatchObject({ value: { n: 2 }, failure: null, loadingSince: null });
 });
+
+test('ServiceThatNeverAnswers_GivenUpAfter30s', async () => {
+  vi.stubGlobal('fetch', vi.fn((_: string, options: RequestInit) => new Promise<Response>((_resolve, reject) => {
+    options.signal!.addEventListener('abort', () => reject(new DOMException('aborted', 'AbortError')));
+  })));
+  const r = new Resource('/x');
+  void r.load();
+  await vi.advanceTimersByTimeAsync(29_999);
+  expect(r.state.value.failure).toBeNull();
+  await vi.advanceTimersByTimeAsync(1);
+  expect(r.state.value.failure!.words).toBe('the service did not answer within 30 s');
+  r.release();
+});
