@@ -21,6 +21,7 @@ const rows = (n: HourResult): Row[] => [
 export function NowTable({ effect, now }: { effect: Effect; now: number }) {
   const n = effect.now;
   if (n === null) return <p class="quiet">No hour has a result yet. Results follow as soon as readings of this effect are evaluated.</p>;
+  const firstAbsent = rows(n).find(r => r.value === null)?.name;
   return (
     <table class="now">
       <caption>Mean of {n.hours === 1 ? 'the hour' : `${n.hours} hours`} from {moment(Date.parse(n.at), zone.value, now)}; ± one standard uncertainty; area {effect.area_m2} m²</caption>
@@ -30,7 +31,7 @@ export function NowTable({ effect, now }: { effect: Effect; now: number }) {
         return <tr key={r.name}>
           <th scope="row">{r.name}</th>
           {r.value === null
-            ? <td colSpan={3} class="absent">none: {n.reason ?? 'the reason was not given'}</td>
+            ? <td colSpan={3} class="absent">{r.name === firstAbsent ? `none: ${n.reason ?? 'the reason was not given'}` : 'none, for the same reason'}</td>
             : <><td class="number"><b>{r.decimals !== undefined ? fixed(r.value, r.decimals) : measured(r.value * factor, r.u === null ? null : r.u * factor)}</b></td><td>{r.unit}</td><td class="quiet">{r.from && (r.from.startsWith('against') ? r.from : `from ${r.from}`)}</td></>}
         </tr>;
       })}</tbody>
