@@ -26,10 +26,12 @@ internal static class ServiceParts
     public static IServiceCollection AddApi(this IServiceCollection services)
     {
         services.AddSingleton<EffectStates>().AddSingleton<SiteStates>().AddSingleton<Trends>();
-        services.AddProblemDetails();
+        services.AddProblemDetails().AddExceptionHandler<Refusals>();
+        services.Configure<RouteHandlerOptions>(routes => routes.ThrowOnBadRequest = true);
         services.ConfigureHttpJsonOptions(json =>
         {
             json.SerializerOptions.PropertyNamingPolicy = JsonNamingPolicy.SnakeCaseLower;
+            json.SerializerOptions.Converters.Add(new Rfc3339Converter());
             json.SerializerOptions.MaxDepth = 16;
             json.SerializerOptions.NumberHandling = JsonNumberHandling.Strict;
             json.SerializerOptions.UnmappedMemberHandling = JsonUnmappedMemberHandling.Disallow;
