@@ -111,7 +111,7 @@ public sealed class ServiceHost : IAsyncDisposable
         builder.WebHost.UseUrls(options.Listen).UseKestrelHttpsConfiguration().ConfigureKestrel(kestrel =>
         {
             kestrel.AddServerHeader = false;
-            kestrel.Limits.MaxRequestBodySize = 1 << 20;
+            kestrel.Limits.MaxRequestBodySize = ServiceParts.LargestBody;
         });
         builder.Services.AddSingleton(clock);
         builder.Services.AddSingleton(database);
