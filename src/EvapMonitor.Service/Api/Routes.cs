@@ -1,3 +1,4 @@
+using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Security;
 
 namespace EvapMonitor.Service.Api;
@@ -21,6 +22,8 @@ internal static class Routes
         api.MapDelete("/cleanings/{id:guid}", CleaningHandlers.Withdraw).Named("withdrawCleaning", "Withdraw a logged cleaning", Policies.Write);
 
         api.MapGet("/signals", SignalHandlers.List).Named("getSignals", "Signals with their last readings", Policies.Read);
+        api.MapPost("/readings", ReadingHandlers.Add).Named("addReadings", "Readings in batches, plain or gzip; answered once they are durable", Policies.Write)
+            .Accepts<NewReadingsWire>("application/json").ProducesProblem(StatusCodes.Status503ServiceUnavailable);
         api.MapGet("/imports", ImportHandlers.List).Named("getImports", "Imports, newest first", Policies.Read);
         api.MapGet("/imports/{id}", ImportHandlers.Find).Named("getImport", "One import", Policies.Read);
         api.MapPost("/imports", ImportHandlers.Upload).Named("uploadHistory", "Upload a CSV of history, plain or gzip", Policies.Write);
@@ -33,6 +36,6 @@ internal static class Routes
         app.MapOpenApi("/openapi/{documentName}.json").RequireAuthorization(Policies.Read);
     }
 
-    private static void Named(this RouteHandlerBuilder route, string name, string summary, string policy) =>
+    private static RouteHandlerBuilder Named(this RouteHandlerBuilder route, string name, string summary, string policy) =>
         route.WithName(name).WithSummary(summary).RequireAuthorization(policy).ProducesProblem(StatusCodes.Status400BadRequest);
 }
