@@ -1,15 +1,3 @@
 using EvapMonitor.Service.Commands;
-using Spectre.Console.Cli;
 
-var app = new CommandApp();
-app.Configure(commands =>
-{
-    commands.SetApplicationName("evapmonitor");
-    commands.AddCommand<RunCommand>("run").WithDescription("Run the service, with the plant file given or the revision last accepted.");
-    commands.AddCommand<DemoCommand>("demo").WithDescription("Run the service with an invented plant and its history.");
-    commands.AddCommand<CheckCommand>("check").WithDescription("Check a plant file; say per effect what can be computed and from which instruments.");
-    commands.AddCommand<EvaluateCommand>("evaluate").WithDescription("The whole computation on files alone, without a database.");
-    commands.AddCommand<ImportCommand>("import").WithDescription("Send history files to a running service and follow their import.");
-    commands.SetExceptionHandler(Failure.Tell);
-});
-return await app.RunAsync(args, ShutdownSignals.Token);
+return await CommandLine.RunAsync(args, ShutdownSignals.Token);

@@ -98,7 +98,7 @@ internal sealed class DirectBalance
         _leaving[i] = new Stream(flow, solids, enthalpy);
         state.Evaporation = flowIn - flow;
         state.Duty[(int)DutySource.Liquor] =
-            (state.Evaporation * Physical.VapourEnthalpy(_vapourPressure[i], state.BoilingTemperature)) + (flow * enthalpy) - heatIn;
+            HeatBalance.LiquorDuty(heatIn, flow, enthalpy, state.Evaporation, Physical.VapourEnthalpy(_vapourPressure[i], state.BoilingTemperature));
     }
 
     private void BoilingTemperature(int i, Liquor liquor, LineInputs inputs, ref EffectState state)
@@ -160,13 +160,13 @@ internal sealed class DirectBalance
 
         state.HeatingFrom = double.IsNaN(state.HeatingTemperature) ? HeatingTemperatureSource.None : source;
         double condensate = Physical.CondensateEnthalpy(pressure, inputs.At(at.CondensateTemperature));
-        double released = HeatingEnthalpy(i, pressure, inputs, effects) - condensate;
-        double kept = 1 - inputs.HeatLoss[i];
+        double entering = HeatingEnthalpy(i, pressure, inputs, effects), loss = inputs.HeatLoss[i];
         double condensateFlow = Physical.WaterMassFlow(inputs.At(at.CondensateFlow), at.CondensateFlow < 0 ? null : _at.All[at.CondensateFlow].Unit, state.HeatingTemperature);
-        state.Duty[(int)DutySource.Condensate] = condensateFlow * released * kept;
+        state.Duty[(int)DutySource.Condensate] = HeatBalance.ChestDuty(condensateFlow, entering, condensate, loss);
         bool ownsMain = _routes.SteamHeatsOnlyOne && _routes.Heating[i] is [LineRoutes.Steam] && _at.SteamFlow >= 0
             && _at.All[_at.SteamFlow].Unit.Dimension == Dimension.MassFlow;
-        state.Duty[(int)DutySource.Steam] = ownsMain ? inputs.At(_at.SteamFlow) * (1 - inputs.Vent[i]) * released * kept : double.NaN;
+        double condensed = ownsMain ? inputs.At(_at.SteamFlow) * (1 - inputs.Vent[i]) : double.NaN;
+        state.Duty[(int)DutySource.Steam] = HeatBalance.ChestDuty(condensed, entering, condensate, loss);
     }
 
     private (double Pressure, HeatingTemperatureSource Source) ChestPressure(int i, LineInputs inputs)

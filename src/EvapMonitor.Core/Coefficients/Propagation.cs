@@ -118,7 +118,7 @@ internal sealed class Propagation
             for (int source = 1; source < 4; source++)
             {
                 row[DutyFirst + source] = state.Duty[source];
-                row[CoefficientFirst + source] = state.Duty[source] / (_instruments.Line.Effects[i].Area * force);
+                row[CoefficientFirst + source] = HeatBalance.Coefficient(state.Duty[source], _instruments.Line.Effects[i].Area, force);
             }
         }
     }

@@ -119,21 +119,8 @@ internal sealed class SignalConditioning
 
     private void Close()
     {
-        int hour = _grid.PerHour;
-        double squares = 0;
-        int pairs = 0;
         for (int window = 0; window < _grid.Count; window++)
         {
-            squares += _squares[window];
-            pairs += _pairs[window];
-            if (window >= hour)
-            {
-                pairs -= _pairs[window - hour];
-                // Subtracting a running sum would carry rounding of all earlier windows along: sum the hour anew.
-                squares = 0;
-                for (int back = window - hour + 1; back <= window; back++) squares += _squares[back];
-            }
-
             double share = _goodTime[window] / _grid.Step;
             _result.GoodShare[window] = (float)share;
             if (share < MinimumGoodShare)
@@ -145,18 +132,34 @@ internal sealed class SignalConditioning
             double mean = _weighted[window] / _goodTime[window];
             _result.Mean[window] = mean;
             _result.Systematic[window] = _instrument.Accuracy.Standard(mean);
-            _result.Random[window] = Scatter(squares, pairs, mean)
+            _result.Random[window] = Scatter(window, mean)
                 / double.Sqrt(int.Max(1, _result.Samples[window]))
                 * (1 + (2 * _uncertainTime[window] / _goodTime[window]));
         }
     }
 
     /// <summary>
-    /// Scatter of single readings over the trailing hour from the mean square successive difference (von Neumann 1941): a slow drift of the process does not
-    /// enter it, and an hour's readings make it steadier than one window's. With too few readings the accuracy stands in.
+    /// Scatter of single readings from the mean square successive difference (von Neumann 1941), which a slow drift of the process does not enter. The median
+    /// over the windows of the trailing hour is taken, so that one step of the process (a start, a change of load) does not count as an hour of noise; its
+    /// known distance from the mean for few pairs is made good (Wilson and Hilferty 1931). With too few readings the accuracy stands in.
     /// </summary>
-    private double Scatter(double squares, int pairs, double mean) =>
-        pairs >= 3 ? double.Sqrt(squares / (2.0 * pairs)) : _instrument.Accuracy.Standard(mean);
+    private double Scatter(int window, double mean)
+    {
+        Span<double> variances = stackalloc double[_grid.PerHour];
+        int count = 0;
+        for (int back = int.Max(0, window - _grid.PerHour + 1); back <= window; back++)
+        {
+            int pairs = _pairs[back];
+            if (pairs == 0) continue;
+            double toMedian = 1 - (2.0 / (9 * pairs));
+            variances[count++] = _squares[back] / (2 * pairs * toMedian * toMedian * toMedian);
+        }
+
+        if (count < 3) return _instrument.Accuracy.Standard(mean);
+        variances = variances[..count];
+        variances.Sort();
+        return double.Sqrt(count % 2 == 1 ? variances[count / 2] : (variances[(count / 2) - 1] + variances[count / 2]) / 2);
+    }
 
     private int WindowOf(long at) => at < _grid.Start ? -1 : (int)((at - _grid.Start) / _grid.Step);
 }

@@ -14,7 +14,7 @@ public static class SiteInstruments
     public static IReadOnlyList<InstrumentAtPlace> Of(Site site)
     {
         ArgumentNullException.ThrowIfNull(site);
-        IEnumerable<InstrumentAtPlace> atmosphere = Present((null, "atmosphere", site.Atmosphere.Measured)).Select(i => i with { Line = null });
+        IEnumerable<InstrumentAtPlace> atmosphere = Present((null, "atmosphere", site.Atmosphere.Measured));
         return [.. atmosphere, .. site.Lines.SelectMany(Of)];
     }
 
@@ -27,7 +27,9 @@ public static class SiteInstruments
             .. Present((null, "liquor", line.Liquor.Signal)),
             .. Stream("feed", line.Feed),
             .. Stream("product", line.Product),
-            .. Present((null, "steam.flow", line.Steam.Flow), (null, "steam.pressure", line.Steam.Pressure), (null, "steam.temperature", line.Steam.Temperature)),
+            .. Present(
+                (null, "steam.flow", line.Steam.Flow), (null, "steam.pressure", line.Steam.Pressure),
+                (null, "steam.temperature", line.Steam.Temperature)),
             .. line.Effects.SelectMany(Of),
             .. line.Bleeds.SelectMany(b => Present((null, $"bleed from {b.From} to {b.To}", b.Flow))),
             .. line.CleaningGroups.SelectMany(g => Present((null, $"cleaning-groups.{g.Name}", g.Signal?.Instrument))),
@@ -37,7 +39,8 @@ public static class SiteInstruments
 
     private static IEnumerable<InstrumentAtPlace> Of(Effect effect) => Present(
         (effect.Name, "chest.pressure", effect.Chest.Pressure), (effect.Name, "chest.temperature", effect.Chest.Temperature),
-        (effect.Name, "chest.condensate-flow", effect.Chest.CondensateFlow), (effect.Name, "chest.condensate-temperature", effect.Chest.CondensateTemperature),
+        (effect.Name, "chest.condensate-flow", effect.Chest.CondensateFlow),
+        (effect.Name, "chest.condensate-temperature", effect.Chest.CondensateTemperature),
         (effect.Name, "vapour.pressure", effect.Vapour.Pressure), (effect.Name, "vapour.temperature", effect.Vapour.Temperature),
         (effect.Name, "leaving.flow", effect.Leaving.Flow), (effect.Name, "leaving.solids", effect.Leaving.Solids),
         (effect.Name, "leaving.temperature", effect.Leaving.Temperature), (effect.Name, "level", effect.Level));

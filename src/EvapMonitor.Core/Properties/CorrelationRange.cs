@@ -13,7 +13,8 @@ internal readonly record struct CorrelationRange(double LowestSolids, double Hig
     // Readings converted to kelvin and back must not fall off the edge of a range that they touch.
     private const double Slack = 1e-9;
 
-    /// <summary>The value with its standard uncertainty, doubled and flagged outside the range. No solids are water, of which more is known: never outside on their account.</summary>
+    /// <summary>The value with its standard uncertainty, doubled and flagged outside the range. No solids are water, of which more is known: never
+    /// outside on their account.</summary>
     public PropertyValue Answer(double value, double standard, double solids, double temperature)
     {
         var celsius = temperature - IcePoint;

@@ -6,7 +6,8 @@ namespace EvapMonitor.Core.Properties;
 public sealed record DuhringLine(double SolidsPercent, IReadOnlyList<(double WaterCelsius, double SolutionCelsius)> Points);
 
 /// <summary>
-/// Measured boiling points at two or more pressures: what a liquor needs whose elevation passes 10 K. Straight along each line (Dühring's rule) and straight in solids
+/// Measured boiling points at two or more pressures: what a liquor needs whose elevation passes 10 K. Straight along each line (Dühring's rule) and
+/// straight in solids
 /// between lines; below the first line straight to water, which has no elevation; above the last the last two lines continue.
 /// </summary>
 public sealed class DuhringTable
@@ -26,7 +27,8 @@ public sealed class DuhringTable
         {
             var lowest = k == 0 ? 0 : lines[k - 1].SolidsPercent;
             if (!(lines[k].SolidsPercent > lowest && lines[k].SolidsPercent <= 100))
-                throw new ArgumentException(FormattableString.Invariant($"Solids of Dühring line {k + 1}, {lines[k].SolidsPercent} %, must lie above {lowest} % and at most at 100 %."), nameof(lines));
+                throw new ArgumentException(
+                    FormattableString.Invariant($"Solids of Dühring line {k + 1}, {lines[k].SolidsPercent} %, must lie above {lowest} % and at most at 100 %."), nameof(lines));
             RequirePoints(lines[k]);
         }
         Lines = [.. lines];
@@ -53,14 +55,17 @@ public sealed class DuhringTable
     private static void RequirePoints(DuhringLine line)
     {
         if (line.Points.Count < 2)
-            throw new ArgumentException(FormattableString.Invariant($"The Dühring line at {line.SolidsPercent} % solids needs at least two points, that is two pressures, not {line.Points.Count}."), nameof(line));
+            throw new ArgumentException(
+                FormattableString.Invariant($"The Dühring line at {line.SolidsPercent} % solids needs at least two points, that is two pressures, not {line.Points.Count}."), nameof(line));
         for (var k = 0; k < line.Points.Count; k++)
         {
             var (water, solution) = line.Points[k];
             if (!double.IsFinite(water) || !double.IsFinite(solution) || solution < water)
-                throw new ArgumentException(FormattableString.Invariant($"Point {k + 1} of the Dühring line at {line.SolidsPercent} % solids, ({water}, {solution}) °C: the solution must boil no lower than water."), nameof(line));
+                throw new ArgumentException(
+                    FormattableString.Invariant($"Point {k + 1} of the Dühring line at {line.SolidsPercent} % solids, ({water}, {solution}) °C: the solution must boil no lower than water."), nameof(line));
             if (k > 0 && !(water > line.Points[k - 1].WaterCelsius))
-                throw new ArgumentException(FormattableString.Invariant($"Boiling points of water on the Dühring line at {line.SolidsPercent} % solids must rise: {water} °C follows {line.Points[k - 1].WaterCelsius} °C."), nameof(line));
+                throw new ArgumentException(
+                    FormattableString.Invariant($"Boiling points of water on the Dühring line at {line.SolidsPercent} % solids must rise: {water} °C follows {line.Points[k - 1].WaterCelsius} °C."), nameof(line));
         }
     }
 

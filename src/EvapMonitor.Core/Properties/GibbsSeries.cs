@@ -10,7 +10,8 @@ internal readonly record struct GibbsEnergy(double Value, double ByPressure, dou
 
 /// <summary>
 /// Σ n·aᴵ·bᴶ and its derivatives, term by term from a table: the form in which the release prints its basic equations.
-/// Enthalpies, of which a balance needs many, have a faster form of their own in <see cref="Region1"/> and <see cref="Region2"/>; tests hold the two together.
+/// Enthalpies, of which a balance needs many, have a faster form of their own in <see cref="Region1"/> and <see cref="Region2"/>; tests hold both to the
+/// same figures.
 /// </summary>
 internal static class GibbsSeries
 {

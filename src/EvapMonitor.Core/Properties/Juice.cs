@@ -1,8 +1,10 @@
 namespace EvapMonitor.Core.Properties;
 
 /// <summary>
-/// Fruit juice, with the constants of apple juice. Elevation: Crapiste and Lozano, "Effect of concentration and pressure on the boiling point rise of apple juice and
-/// related sugar solutions", Journal of Food Science 53 (1988) 865 to 868: solids 17 to 72 %, 72 to 700 mbar. The four constants are from memory, hence the wide uncertainty.
+/// Fruit juice, with the constants of apple juice. Elevation: Crapiste and Lozano, "Effect of concentration and pressure on the boiling point rise of
+/// apple juice and
+/// related sugar solutions", Journal of Food Science 53 (1988) 865 to 868: solids 17 to 72 %, 72 to 700 mbar. The four constants are from memory, hence
+/// the wide uncertainty.
 /// Heat capacity and density by composition (Choi and Okos 1986), for solids of 97 % carbohydrate, 1 % protein, 2 % ash.
 /// </summary>
 public sealed class Juice : Liquor

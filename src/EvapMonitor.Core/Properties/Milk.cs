@@ -1,7 +1,8 @@
 namespace EvapMonitor.Core.Properties;
 
 /// <summary>
-/// Whole milk. Elevation from the table in Hui, Encyclopedia of Food Science and Technology; heat capacity and density by composition (Choi and Okos 1986), for solids
+/// Whole milk. Elevation from the table in Hui, Encyclopedia of Food Science and Technology; heat capacity and density by composition (Choi and Okos
+/// 1986), for solids
 /// of 27 % protein, 29 % fat, 38 % carbohydrate, 6 % ash. Range: solids 16 to 73 % for the elevation; to 60 % and 150 °C otherwise.
 /// </summary>
 public sealed class Milk : Liquor

@@ -4,7 +4,8 @@ using static EvapMonitor.Core.Properties.Region1Table;
 namespace EvapMonitor.Core.Properties;
 
 /// <summary>
-/// Liquid water, IAPWS-IF97 region 1: R7-97(2012), section 5.1, equation 7 and table 3. Arguments are taken as they come; <see cref="Steam"/> guards the range.
+/// Liquid water, IAPWS-IF97 region 1: R7-97(2012), section 5.1, equation 7 and table 3. Arguments are taken as they come; <see cref="Steam"/> guards the
+/// range.
 /// </summary>
 internal static class Region1
 {

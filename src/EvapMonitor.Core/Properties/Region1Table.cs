@@ -39,20 +39,20 @@ internal static class Region1Table
     public const double N34 = -9.3537087292458e-26; // I = 32, J = -41
 
     /// <summary>Exponents of the pressure factor, in the order of the table.</summary>
-    public static ReadOnlySpan<int> I =>
+    public static readonly int[] I =
     [
         0, 0, 0, 0, 0, 0, 0, 0, 1, 1, 1, 1, 1, 1, 2, 2, 2, 2, 2, 3, 3, 3, 4, 4, 4, 5, 8, 8, 21, 23, 29, 30, 31, 32
     ];
 
     /// <summary>Exponents of the temperature factor, in the order of the table.</summary>
-    public static ReadOnlySpan<int> J =>
+    public static readonly int[] J =
     [
         -2, -1, 0, 1, 2, 3, 4, 5, -9, -7, -1, 0, 1, 3, -3, 0, 1, 3, 17, -4, 0, 6, -5, -2, 10, -8, -11, -6, -29, -31, -38, -39, -40,
         -41
     ];
 
     /// <summary>The coefficients as a list, in the order of the table.</summary>
-    public static ReadOnlySpan<double> N =>
+    public static readonly double[] N =
     [
         N1, N2, N3, N4, N5, N6, N7, N8, N9, N10, N11, N12, N13, N14, N15, N16, N17, N18, N19, N20, N21, N22, N23, N24, N25, N26, N27,
         N28, N29, N30, N31, N32, N33, N34

@@ -1,6 +1,7 @@
 namespace EvapMonitor.Core.Properties;
 
-/// <summary>Coefficients of IAPWS-IF97 region 2, residual part: R7-97(2012), table 11, for equation 17. Term k is Nk · π-factor^I[k] · τ-factor^J[k].</summary>
+/// <summary>Coefficients of IAPWS-IF97 region 2, residual part: R7-97(2012), table 11, for equation 17. Term k is Nk · π-factor^I[k] ·
+/// τ-factor^J[k].</summary>
 internal static class Region2Table
 {
     public const double N1 = -1.7731742473213e-3; // I = 1, J = 0
@@ -48,21 +49,21 @@ internal static class Region2Table
     public const double N43 = -9.436970724121e-7; // I = 24, J = 58
 
     /// <summary>Exponents of the pressure factor, in the order of the table.</summary>
-    public static ReadOnlySpan<int> I =>
+    public static readonly int[] I =
     [
         1, 1, 1, 1, 1, 2, 2, 2, 2, 2, 3, 3, 3, 3, 3, 4, 4, 4, 5, 6, 6, 6, 7, 7, 7, 8, 8, 9, 10, 10, 10, 16, 16, 18, 20, 20, 20, 21, 22,
         23, 24, 24, 24
     ];
 
     /// <summary>Exponents of the temperature factor, in the order of the table.</summary>
-    public static ReadOnlySpan<int> J =>
+    public static readonly int[] J =
     [
         0, 1, 2, 3, 6, 1, 2, 4, 7, 36, 0, 1, 3, 6, 35, 1, 2, 3, 7, 3, 16, 35, 0, 11, 25, 8, 36, 13, 4, 10, 14, 29, 50, 57, 20, 35, 48,
         21, 53, 39, 26, 40, 58
     ];
 
     /// <summary>The coefficients as a list, in the order of the table.</summary>
-    public static ReadOnlySpan<double> N =>
+    public static readonly double[] N =
     [
         N1, N2, N3, N4, N5, N6, N7, N8, N9, N10, N11, N12, N13, N14, N15, N16, N17, N18, N19, N20, N21, N22, N23, N24, N25, N26, N27,
         N28, N29, N30, N31, N32, N33, N34, N35, N36, N37, N38, N39, N40, N41, N42, N43

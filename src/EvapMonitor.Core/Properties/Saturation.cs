@@ -1,5 +1,4 @@
 using System.Runtime.CompilerServices;
-using System.Runtime.Intrinsics;
 
 namespace EvapMonitor.Core.Properties;
 
@@ -24,15 +23,15 @@ internal static class Saturation
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static double Temperature(double pressure)
     {
-        var betaSquared = Root(pressure * 1e-6);
-        var beta = Root(betaSquared);
+        var betaSquared = double.Sqrt(pressure * 1e-6);
+        var beta = double.Sqrt(betaSquared);
         var e = betaSquared + double.MultiplyAddEstimate(N3, beta, N6);
         var f = double.MultiplyAddEstimate(N1, betaSquared, double.MultiplyAddEstimate(N4, beta, N7));
         var g = double.MultiplyAddEstimate(N2, betaSquared, double.MultiplyAddEstimate(N5, beta, N8));
-        var d = -2 * g / (f + Root(double.MultiplyAddEstimate(f, f, -4 * e * g)));
+        var d = -2 * g / (f + double.Sqrt(double.MultiplyAddEstimate(f, f, -4 * e * g)));
         // (n10 + D)² - 4 (n9 + n10 D) of the release, multiplied out
         var apart = d - N10;
-        return 0.5 * (N10 + d - Root(double.MultiplyAddEstimate(apart, apart, -4 * N9)));
+        return 0.5 * (N10 + d - double.Sqrt(double.MultiplyAddEstimate(apart, apart, -4 * N9)));
     }
 
     /// <summary>Saturation pressure, Pa, of a temperature in K: equation 30.</summary>
@@ -42,7 +41,7 @@ internal static class Saturation
         var a = double.MultiplyAddEstimate(theta + N1, theta, N2);
         var b = double.MultiplyAddEstimate(double.MultiplyAddEstimate(N3, theta, N4), theta, N5);
         var c = double.MultiplyAddEstimate(double.MultiplyAddEstimate(N6, theta, N7), theta, N8);
-        var beta = 2 * c / (Root(double.MultiplyAddEstimate(b, b, -4 * a * c)) - b);
+        var beta = 2 * c / (double.Sqrt(double.MultiplyAddEstimate(b, b, -4 * a * c)) - b);
         var betaSquared = beta * beta;
         return betaSquared * betaSquared * 1e6;
     }
@@ -50,7 +49,7 @@ internal static class Saturation
     /// <summary>Slope of the saturation temperature, K/Pa, at a pressure in Pa: equation 29 differentiated.</summary>
     public static double TemperatureSlope(double pressure)
     {
-        var beta = Root(Root(pressure * 1e-6));
+        var beta = double.Sqrt(double.Sqrt(pressure * 1e-6));
         var temperature = Temperature(pressure);
         var theta = temperature + N9 / (temperature - N10);
         var byBeta = 2 * beta * (theta * (theta + N1) + N2) + theta * (N3 * theta + N4) + N5;
@@ -58,8 +57,4 @@ internal static class Saturation
         var thetaByTemperature = 1 - N9 / ((temperature - N10) * (temperature - N10));
         return -byBeta / byTheta / thetaByTemperature * beta / (4 * pressure);
     }
-
-    // Math.Sqrt carries a dependency on the register it writes to; a one-lane vector does not, and the line is three roots deep.
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static double Root(double value) => Vector128.Sqrt(Vector128.CreateScalarUnsafe(value)).ToScalar();
 }

@@ -24,7 +24,8 @@ public sealed class SeaWater : Liquor
     /// <inheritdoc/>
     /// <remarks>
     /// Equation 9, Jamieson et al. 1969, for 0 to 180 °C and 0 to 180 g/kg; accuracy 0.28 %, taken as two standard uncertainties.
-    /// Its temperatures are those of the scale of 1968, 1.00024 times today's. Above 180 g/kg the value at 180 g/kg is answered: the quadratic turns upward there.
+    /// Its temperatures are those of the scale of 1968, 1.00024 times today's. Above 180 g/kg the value at 180 g/kg is answered: the quadratic turns
+    /// upward there.
     /// </remarks>
     public override PropertyValue HeatCapacity(double solids, double temperature)
     {
@@ -45,7 +46,8 @@ public sealed class SeaWater : Liquor
     }
 
     /// <inheritdoc/>
-    /// <remarks>Equation 8, the part that salt adds, on the steam tables' water; 0 to 180 °C and 0 to 160 g/kg; accuracy 0.1 %, taken as two standard uncertainties. Above that salinity S in the small quadratic term stays at its border.</remarks>
+    /// <remarks>Equation 8, the part that salt adds, on the steam tables' water; 0 to 180 °C and 0 to 160 g/kg; accuracy 0.1 %, taken as two standard
+    /// uncertainties. Above that salinity S in the small quadratic term stays at its border.</remarks>
     public override PropertyValue Density(double solids, double temperature)
     {
         var s = CorrelationRange.Solids(solids);

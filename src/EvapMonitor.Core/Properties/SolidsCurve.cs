@@ -25,7 +25,8 @@ public sealed record SolidsPolynomial : SolidsCurve
         for (var k = 0; k < coefficients.Count; k++)
         {
             if (!double.IsFinite(coefficients[k]))
-                throw new ArgumentException(FormattableString.Invariant($"Coefficient {k} of the polynomial, {coefficients[k]}, is not a finite number."), nameof(coefficients));
+                throw new ArgumentException(
+                    FormattableString.Invariant($"Coefficient {k} of the polynomial, {coefficients[k]}, is not a finite number."), nameof(coefficients));
         }
         Coefficients = [.. coefficients];
     }
@@ -69,9 +70,11 @@ public sealed record SolidsTable : SolidsCurve
         {
             var (solids, value) = points[k];
             if (!(solids >= 0 && solids <= 100) || !double.IsFinite(value))
-                throw new ArgumentException(FormattableString.Invariant($"Point {k + 1} of the table, ({solids}, {value}), needs solids from 0 to 100 % and a finite value."), nameof(points));
+                throw new ArgumentException(
+                    FormattableString.Invariant($"Point {k + 1} of the table, ({solids}, {value}), needs solids from 0 to 100 % and a finite value."), nameof(points));
             if (k > 0 && !(solids > points[k - 1].SolidsPercent))
-                throw new ArgumentException(FormattableString.Invariant($"Solids of the table must rise: {solids} % follows {points[k - 1].SolidsPercent} %."), nameof(points));
+                throw new ArgumentException(
+                    FormattableString.Invariant($"Solids of the table must rise: {solids} % follows {points[k - 1].SolidsPercent} %."), nameof(points));
         }
         Points = [.. points];
         _solids = [.. points.Select(point => point.SolidsPercent)];

@@ -84,7 +84,8 @@ public static partial class Steam
     /// <param name="temperature">K, from <see cref="LowestTemperature"/> to <see cref="HighestSaturatedStateTemperature"/>.</param>
     public static double SaturatedLiquidVolumeAt(double temperature) => Region1.Volume(SaturatedPressure(temperature), temperature);
 
-    /// <summary>Isobaric heat capacity of saturated liquid, J/(kg·K). The slope dh′/dT along the line is larger, by 0.06 % at 373 K and 0.3 % at 473 K.</summary>
+    /// <summary>Isobaric heat capacity of saturated liquid, J/(kg·K). The slope dh′/dT along the line is larger, by 0.06 % at 373 K and 0.3 % at 473
+    /// K.</summary>
     /// <param name="temperature">K, from <see cref="LowestTemperature"/> to <see cref="HighestSaturatedStateTemperature"/>.</param>
     public static double SaturatedLiquidHeatCapacityAt(double temperature) => Region1.HeatCapacity(SaturatedPressure(temperature), temperature);
 

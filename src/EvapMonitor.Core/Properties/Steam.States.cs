@@ -47,8 +47,10 @@ public static partial class Steam
     }
 
     /// <summary>Specific enthalpy of vapour, J/kg: equations 15 to 17.</summary>
-    /// <param name="pressure">Pa, above 0 to the saturation pressure (and <see cref="PhaseTolerance"/> beyond), at most <see cref="HighestPressure"/>.</param>
-    /// <param name="temperature">K, from <see cref="LowestTemperature"/> to <see cref="HighestVapourTemperature"/>; above 623.15 K only below the saturation pressure at 623.15 K or above 863.15 K (region 3 lies between).</param>
+    /// <param name="pressure">Pa, above 0 to the saturation pressure (and <see cref="PhaseTolerance"/> beyond), at most <see
+    /// cref="HighestPressure"/>.</param>
+    /// <param name="temperature">K, from <see cref="LowestTemperature"/> to <see cref="HighestVapourTemperature"/>; above 623.15 K only below the
+    /// saturation pressure at 623.15 K or above 863.15 K (region 3 lies between).</param>
     public static double VapourEnthalpy(double pressure, double temperature)
     {
         RequireVapour(pressure, temperature);

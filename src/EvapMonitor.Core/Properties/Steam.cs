@@ -4,12 +4,13 @@ using System.Runtime.CompilerServices;
 namespace EvapMonitor.Core.Properties;
 
 /// <summary>
-/// Water and steam after IAPWS-IF97, "Revised Release on the IAPWS Industrial Formulation 1997", R7-97(2012): regions 1 (liquid), 2 (vapour) and 4 (saturation).
+/// Water and steam after IAPWS-IF97, "Revised Release on the IAPWS Industrial Formulation 1997", R7-97(2012): regions 1 (liquid), 2 (vapour) and 4
+/// (saturation).
 /// SI units throughout: Pa absolute, K, J/kg, m³/kg, J/(kg·K). Enthalpy and entropy are zero in the saturated liquid at the triple point.
 /// No method allocates. Every method throws <see cref="ArgumentOutOfRangeException"/>, naming value, unit and bound, outside the range that it states.
 /// </summary>
 /// <remarks>
-/// Uncertainty of the formulation (R7-97(2012), section 10 and figures there): saturation pressure 0.025 %; liquid volume 0.001 % near ambient to 0.01 %;
+/// Uncertainty of the formulation (R7-97(2012), section 12; the figures from memory): saturation pressure 0.025 %; liquid volume up to 0.01 %;
 /// vapour volume 0.05 %; heat capacity 0.2 to 0.3 %. Against plant instruments all of these are nothing.
 /// The phase of a (p, T) state is the caller's word: both equations continue smoothly a little past the saturation line, which iterations need.
 /// Further than <see cref="PhaseTolerance"/> past it the state is refused.

@@ -1,7 +1,8 @@
 namespace EvapMonitor.Core.Properties;
 
 /// <summary>
-/// Technical sugar solutions of a given purity. Elevation and heat capacity: Bubník, Kadlec, Urban and Bruhns, Sugar Technologists Manual, 8th edition, Bartens 1995.
+/// Technical sugar solutions of a given purity. Elevation and heat capacity: Bubník, Kadlec, Urban and Bruhns, Sugar Technologists Manual, 8th edition,
+/// Bartens 1995.
 /// Range, from memory: solids to 92 %, purity 60 to 100 %, 0 to 130 °C.
 /// </summary>
 public sealed class Sucrose : Liquor
@@ -17,7 +18,8 @@ public sealed class Sucrose : Liquor
     public Sucrose(double purity = 1)
     {
         if (!(purity > 0 && purity <= 1))
-            throw new ArgumentOutOfRangeException(nameof(purity), purity, FormattableString.Invariant($"Purity {purity} is not a mass fraction above 0 and at most 1."));
+            throw new ArgumentOutOfRangeException(
+                nameof(purity), purity, FormattableString.Invariant($"Purity {purity} is not a mass fraction above 0 and at most 1."));
         Purity = purity;
         var q = 100 * purity;
         _thin = new Branch(40,
@@ -32,7 +34,8 @@ public sealed class Sucrose : Liquor
 
     /// <inheritdoc/>
     /// <remarks>
-    /// A·w²·(273.15 + t)²/(374.3 - t)^0.38·[B(w - k)² + C], w solids in %, t boiling point of water in °C, one set of coefficients below 60 % and one from there.
+    /// A·w²·(273.15 + t)²/(374.3 - t)^0.38·[B(w - k)² + C], w solids in %, t boiling point of water in °C, one set of coefficients below 60 % and one
+    /// from there.
     /// The two sets stand 0.085 K apart at 60 % (purity 100 %, 1 atm), a step that would show in every trend that crosses it: between 55 and 60 % they are
     /// blended, so that the published values hold below 55 % and from 60 %.
     /// Standard uncertainty 0.5 K·(solids/0.6)^1.5: the published forms for sugar differ by half a kelvin at 60 %.
@@ -49,7 +52,8 @@ public sealed class Sucrose : Liquor
     }
 
     /// <inheritdoc/>
-    /// <remarks>4.1868 - w(0.0297 - 4.6e-5 q) + 7.5e-5 w t kJ/(kg·K), w solids and q purity in %, t in °C. Standard uncertainty 1.5 % (judged from the spread between published forms).</remarks>
+    /// <remarks>4.1868 - w(0.0297 - 4.6e-5 q) + 7.5e-5 w t kJ/(kg·K), w solids and q purity in %, t in °C. Standard uncertainty 1.5 % (judged from the
+    /// spread between published forms).</remarks>
     public override PropertyValue HeatCapacity(double solids, double temperature)
     {
         var x = CorrelationRange.Solids(solids);
@@ -66,7 +70,8 @@ public sealed class Sucrose : Liquor
     }
 
     /// <inheritdoc/>
-    /// <remarks>Stated rule, no publication: water and solids keep their volumes, solids at 1,600 kg/m³, which meets the sugar tables at 20 °C within 0.5 % (from memory). Standard uncertainty 1 %.</remarks>
+    /// <remarks>Stated rule, no publication: water and solids keep their volumes, solids at 1,600 kg/m³, which meets the sugar tables at 20 °C within 0.5
+    /// % (from memory). Standard uncertainty 1 %.</remarks>
     public override PropertyValue Density(double solids, double temperature)
     {
         var x = CorrelationRange.Solids(solids);

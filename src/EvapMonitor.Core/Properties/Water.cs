@@ -7,7 +7,7 @@ public sealed class Water : Liquor
     public override PropertyValue BoilingPointElevation(double solids, double waterBoilingPoint) => new(0, 0, false);
 
     /// <inheritdoc/>
-    /// <remarks>Standard uncertainty 0.1 % (R7-97(2012), figure 4).</remarks>
+    /// <remarks>Standard uncertainty 0.1 % (R7-97(2012), section 12; figure from memory).</remarks>
     public override PropertyValue HeatCapacity(double solids, double temperature)
     {
         var value = WaterReference.HeatCapacity(temperature);
@@ -18,7 +18,7 @@ public sealed class Water : Liquor
     public override double Enthalpy(double solids, double temperature) => WaterReference.Enthalpy(temperature);
 
     /// <inheritdoc/>
-    /// <remarks>Standard uncertainty 0.01 % (R7-97(2012), figure 3).</remarks>
+    /// <remarks>Standard uncertainty 0.01 % (R7-97(2012), section 12; figure from memory).</remarks>
     public override PropertyValue Density(double solids, double temperature)
     {
         var value = WaterReference.Density(temperature);

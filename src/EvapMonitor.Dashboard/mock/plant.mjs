@@ -28,6 +28,14 @@ export const plant = [
   },
 ];
 
+if (process.argv.includes('--many')) {
+  // Forty lines, some silent, few that ask.
+  for (let i = 4; i <= 40; i++) {
+    const like = plant[1];
+    plant.push({ ...like, name: `L${i}`, stale: i % 13 === 0 ? like.stale : 0, effects: like.effects.map((e, k) => ({ ...e, name: `L${i}-${k + 1}`, floor: i % 9 === 0 && k === 1 ? 1950 : e.floor })) });
+  }
+}
+
 export const cleanings = plant.flatMap(l => l.effects.flatMap(e => [0, 28, 57].map((back, i) => ({
   id: `c-${e.name}-${i}`, line: l.name, effect: e.name,
   start: new Date(start - (e.cleaned + back) * day - 9 * 3_600_000).toISOString(), end: new Date(start - (e.cleaned + back) * day).toISOString(),

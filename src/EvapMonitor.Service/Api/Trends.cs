@@ -26,8 +26,8 @@ public sealed class Trends(TrendStore store)
         ["driving_force"] = new("K", HourQuantity.DrivingForce, (value, _, _) => value),
         ["duty"] = new("kW", HourQuantity.Duty, (value, _, _) => Scaled(value, 1e-3)),
         ["heat_flux"] = new("kW/m2", HourQuantity.Duty, (value, effect, _) => Scaled(value, 1e-3 / effect.Area)),
-        ["heating_temperature"] = new("°C", HourQuantity.HeatingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
-        ["boiling_temperature"] = new("°C", HourQuantity.BoilingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
+        ["heating_temperature"] = new("degC", HourQuantity.HeatingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
+        ["boiling_temperature"] = new("degC", HourQuantity.BoilingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
         ["elevation"] = new("K", HourQuantity.Elevation, (value, _, _) => value),
     };
 

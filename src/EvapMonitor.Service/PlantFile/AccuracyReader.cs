@@ -3,7 +3,9 @@ using EvapMonitor.Core.Plant;
 
 namespace EvapMonitor.Service.PlantFile;
 
-/// <summary>The ways to state an accuracy: <c>1 %</c>, <c>1 % of range</c>, <c>0.3 abs</c>, each with <c>95 %</c> or <c>standard</c> after it.</summary>
+/// <summary>
+/// The ways to state an accuracy: <c>1 %</c>, <c>1 % of range</c>, <c>0.3 abs</c>, each with <c>95 %</c> or <c>standard</c> after it.
+/// </summary>
 internal static partial class AccuracyReader
 {
     private const string Allowed = "1 % (of the reading), 1 % of range or 0.3 abs (in the instrument's unit), each with 95 % or standard after it";
@@ -38,10 +40,12 @@ internal static partial class AccuracyReader
             : OfReading(node, number / 100, meaning, unit, findings);
     }
 
-    private static Accuracy? OfRange(PlantNode node, double share, AccuracyMeaning meaning, (double Low, double High)? range, Findings findings)
+    private static Accuracy? OfRange(
+        PlantNode node, double share, AccuracyMeaning meaning, (double Low, double High)? range, Findings findings)
     {
         if (range is { } r) return new(0, share * (r.High - r.Low), meaning);
-        findings.Wrong(node, $"{Shown.Node(node)} without a range", "the same with range: [lowest, highest] beside it, or an accuracy such as 0.3 abs");
+        findings.Wrong(
+            node, $"{Shown.Node(node)} without a range", "the same with range: [lowest, highest] beside it, or an accuracy such as 0.3 abs");
         return null;
     }
 
@@ -49,12 +53,16 @@ internal static partial class AccuracyReader
     {
         if (unit.Dimension == Dimension.Temperature)
         {
-            findings.Wrong(node, $"{Shown.Node(node)}, a share of a temperature whose zero is arbitrary", $"an accuracy in {unit.Written} such as 0.3 abs, or 1 % of range");
+            findings.Wrong(
+                node, $"{Shown.Node(node)}, a share of a temperature whose zero is arbitrary",
+                $"an accuracy in {unit.Written} such as 0.3 abs, or 1 % of range");
             return null;
         }
 
         if (unit.Dimension == Dimension.Fraction && share > 0)
-            findings.Note(node, $"{Shown.Node(node)} is a share of the reading, not points of {unit.Written}; write abs instead of % where points are meant");
+            findings.Note(
+                node,
+                $"{Shown.Node(node)} is a share of the reading, not points of {unit.Written}; write abs instead of % where points are meant");
         return new(share, 0, meaning);
     }
 

@@ -7,7 +7,8 @@ namespace EvapMonitor.Service.PlantFile;
 /// <summary>Cleaning groups of a line and the cleaning rules of the site.</summary>
 internal sealed partial class CleaningReader(Findings findings, InstrumentReader instruments)
 {
-    private const string HoursAllowed = "days and hours of the site's time zone, such as Mon-Fri 06:00-22:00 (Mon to Sun; 00:00 to 24:00), or a list of such";
+    private const string HoursAllowed =
+        "days and hours of the site's time zone, such as Mon-Fri 06:00-22:00 (Mon to Sun; 00:00 to 24:00), or a list of such";
     private static readonly string[] Days = ["Mon", "Tue", "Wed", "Thu", "Fri", "Sat", "Sun"];
 
     private static readonly Dictionary<string, Comparison> Comparisons = new(StringComparer.Ordinal)
@@ -56,7 +57,8 @@ internal sealed partial class CleaningReader(Findings findings, InstrumentReader
     public CleaningRules? Rules(PlantNode? node, IReadOnlyList<Line> lines)
     {
         if (MappingReader.Open(node, PlantFileKeys.CleaningRules, findings) is not { } mapping) return null;
-        double? atOnce = Texts.Number(mapping.Take("at-once"), "a whole number from 1 to 100", n => n is >= 1 and <= 100 && n == double.Truncate(n), findings);
+        double? atOnce = Texts.Number(
+            mapping.Take("at-once"), "a whole number from 1 to 100", n => n is >= 1 and <= 100 && n == double.Truncate(n), findings);
         PlantNode? allowed = mapping.Take("allowed");
         IReadOnlyList<PlantNode> hours = allowed is ScalarNode ? [allowed] : MappingReader.Items(allowed, HoursAllowed, findings);
         IReadOnlyList<PlantNode> sets = MappingReader.Items(mapping.Take("not-together"), "a list of lists such as [[N1, N2]]", findings);
@@ -82,12 +84,14 @@ internal sealed partial class CleaningReader(Findings findings, InstrumentReader
             if (meant.Count == 1) return meant[0];
             if (meant.Count > 1)
             {
-                findings.Wrong(node, $"{Shown.Quoted(scalar.Text)}, which is in several lines", "one of " + Shown.Names(meant.Select(e => e.Line + "." + e.Effect)));
+                string choice = "one of " + Shown.Names(meant.Select(e => e.Line + "." + e.Effect));
+                findings.Wrong(node, $"{Shown.Quoted(scalar.Text)}, which is in several lines", choice);
                 return null;
             }
         }
 
-        findings.Wrong(node, "the name of an effect, with its line where several lines have it: " + Shown.Names(effects.Select(g => g.Key).Where(name => name.Contains('.', StringComparison.Ordinal))));
+        IEnumerable<string> all = effects.Select(g => g.Key).Where(name => name.Contains('.', StringComparison.Ordinal));
+        findings.Wrong(node, "the name of an effect, with its line where several lines have it: " + Shown.Names(all));
         return null;
     }
 
@@ -117,7 +121,8 @@ internal sealed partial class CleaningReader(Findings findings, InstrumentReader
     private static partial Regex ComparisonForm();
 
     [GeneratedRegex(
-        "^(?<first>Mon|Tue|Wed|Thu|Fri|Sat|Sun)(-(?<last>Mon|Tue|Wed|Thu|Fri|Sat|Sun))?\\s+(?<fromHour>[0-9]{2}):(?<fromMinute>[0-9]{2})-(?<toHour>[0-9]{2}):(?<toMinute>[0-9]{2})\\z",
+        "^(?<first>Mon|Tue|Wed|Thu|Fri|Sat|Sun)(-(?<last>Mon|Tue|Wed|Thu|Fri|Sat|Sun))?\\s+"
+        + "(?<fromHour>[0-9]{2}):(?<fromMinute>[0-9]{2})-(?<toHour>[0-9]{2}):(?<toMinute>[0-9]{2})\\z",
         RegexOptions.CultureInvariant | RegexOptions.ExplicitCapture)]
     private static partial Regex HoursForm();
 }

@@ -30,13 +30,18 @@ public sealed record EffectCheck(Effect Effect, Sourced Heating, Sourced Boiling
         if (effect.Chest.Pressure is { } chest) ways.Add("chest pressure " + chest.Signal);
         foreach (HeatSource source in effect.Heating.Where(s => s.VapourOf is not null))
         {
-            if (EffectOf(line, source.VapourOf!).Vapour.Pressure is { } vapour) ways.Add($"vapour pressure {vapour.Signal} of {source.VapourOf}");
+            if (EffectOf(line, source.VapourOf!).Vapour.Pressure is { } vapour)
+                ways.Add($"vapour pressure {vapour.Signal} of {source.VapourOf}");
         }
 
         bool bySteam = effect.Heating.Contains(HeatSource.Steam);
-        if (bySteam && line.Steam is { Pressure: { } main, PressureAt: SteamGaugePlace.Chest }) ways.Add($"steam main gauge {main.Signal} at the chest");
-        if (effect.Chest is { Temperature: { } thermometer, TemperatureSeesSaturation: true }) ways.Add($"chest thermometer {thermometer.Signal} that sees saturation");
-        string others = bySteam ? ", or a steam gauge at the chest" : ", or a vapour pressure of " + string.Join(" or ", effect.Heating.Select(h => h.VapourOf));
+        if (bySteam && line.Steam is { Pressure: { } main, PressureAt: SteamGaugePlace.Chest })
+            ways.Add($"steam main gauge {main.Signal} at the chest");
+        if (effect.Chest is { Temperature: { } thermometer, TemperatureSeesSaturation: true })
+            ways.Add($"chest thermometer {thermometer.Signal} that sees saturation");
+        string others = bySteam
+            ? ", or a steam gauge at the chest"
+            : ", or a vapour pressure of " + string.Join(" or ", effect.Heating.Select(h => h.VapourOf));
         return Of(ways, $"a chest pressure of {effect.Name}{others}, or a chest thermometer that sees saturation");
     }
 
@@ -44,8 +49,10 @@ public sealed record EffectCheck(Effect Effect, Sourced Heating, Sourced Boiling
     {
         var ways = new List<string>();
         string? solids = LiquorKnowledge.SolidsLeaving(line, effect);
-        if (effect.Vapour.Pressure is { } pressure && solids is not null) ways.Add($"vapour pressure {pressure.Signal} and elevation at {solids}");
-        if (effect.Leaving is { Temperature: { } thermometer, TemperatureSeesFlashedLiquor: true }) ways.Add($"thermometer {thermometer.Signal} that sees flashed liquor");
+        if (effect.Vapour.Pressure is { } pressure && solids is not null)
+            ways.Add($"vapour pressure {pressure.Signal} and elevation at {solids}");
+        if (effect.Leaving is { Temperature: { } thermometer, TemperatureSeesFlashedLiquor: true })
+            ways.Add($"thermometer {thermometer.Signal} that sees flashed liquor");
         string missing = effect.Vapour.Pressure is null
             ? $"a vapour pressure of {effect.Name}" + (solids is null ? $" and the solids leaving {effect.Name}" : "")
             : $"the solids leaving {effect.Name} (for the elevation)";
@@ -62,7 +69,8 @@ public sealed record EffectCheck(Effect Effect, Sourced Heating, Sourced Boiling
         return Of(ways, $"a condensate flow of {effect.Name}, or on the liquor side {LiquorKnowledge.MissingForEvaporation(line, effect)}");
     }
 
-    private static Sourced Of(List<string> ways, string missing) => ways.Count > 0 ? new(string.Join("; also ", ways), null) : new(null, missing);
+    private static Sourced Of(List<string> ways, string missing) =>
+        ways.Count > 0 ? new(string.Join("; also ", ways), null) : new(null, missing);
 
     private static Effect EffectOf(Line line, string name) => line.Effects.First(e => e.Name == name);
 }

@@ -4,12 +4,13 @@ namespace EvapMonitor.Service.PlantFile;
 
 /// <summary>An effect with the places of its references, for the checks of the whole line.</summary>
 internal sealed record EffectEntry(
-    Effect Effect, PlantNode Name, PlantNode? FormerlyNode, PlantNode? HeatingNode, PlantNode? LiquorNode, IReadOnlyList<PlantNode> SourceNodes);
+    Effect Effect, PlantNode Name, PlantNode? FormerlyNode, PlantNode? HeatingNode, PlantNode? LiquorNode,
+    IReadOnlyList<PlantNode> SourceNodes);
 
 /// <summary>One effect of a line.</summary>
 internal sealed class EffectReader(Findings findings, InstrumentReader instruments, LineNames names)
 {
-    private static readonly string[] Reserved = ["feed", "steam", "product"];
+    private static readonly string[] Reserved = ["feed", "steam"];
     private readonly RouteReader _routes = new(findings, names);
 
     public EffectEntry? Read(PlantNode node)
@@ -17,7 +18,8 @@ internal sealed class EffectReader(Findings findings, InstrumentReader instrumen
         if (MappingReader.Open(node, PlantFileKeys.Effect, findings) is not { } mapping) return null;
         PlantNode? nameNode = mapping.Require("name", Texts.NameAllowed);
         string? name = Texts.Name(nameNode, findings);
-        if (Reserved.Contains(name)) findings.Wrong(nameNode!, $"a name other than {string.Join(", ", Reserved)}, which have their own meaning");
+        if (Reserved.Contains(name))
+            findings.Wrong(nameNode!, $"a name other than {string.Join(", ", Reserved)}, which have their own meaning");
 
         PlantNode? heatingNode = mapping.Require("heating", _routes.HeatingAllowed);
         PlantNode? liquorNode = mapping.Require("liquor", _routes.LiquorAllowed);
@@ -104,7 +106,8 @@ internal sealed class EffectReader(Findings findings, InstrumentReader instrumen
     private DueLimits? Due(PlantNode? node)
     {
         if (MappingReader.Open(node, PlantFileKeys.DueWhen, findings) is not { } mapping) return null;
-        if (mapping.Node.Entries.Count == 0) findings.Wrong(node!, "an empty mapping", "at least one of " + string.Join(", ", PlantFileKeys.DueWhen.Keys));
+        if (mapping.Node.Entries.Count == 0)
+            findings.Wrong(node!, "an empty mapping", "at least one of " + string.Join(", ", PlantFileKeys.DueWhen.Keys));
         return new(
             Quantities.Read(mapping.Take("coefficient-below"), Dimension.HeatTransferCoefficient, c => c > 0, "more than 0", findings),
             Shares.Exact(mapping.Take("cleanliness-below"), findings),

@@ -13,13 +13,21 @@ internal sealed class Findings
 
     public bool Any => _problems.Count > 0;
 
+    /// <summary>True when further problems are only counted: a hostile file must not buy time with messages that nobody sees.</summary>
+    public bool IsFull => _problems.Count >= Most;
+
+    /// <summary>Counts a problem that is not told.</summary>
+    public void OneMore() => _left++;
+
     /// <summary>What stands at the node is wrong. The first word about a node stands; what follows from it is not told.</summary>
     public void Wrong(PlantNode node, string allowed) => Wrong(node, Shown.Node(node), allowed);
 
     /// <summary>What stands at the node is wrong, described in other words than its text.</summary>
     public void Wrong(PlantNode node, string found, string allowed)
     {
-        if (_told.Add(node)) Add(new(node.Line, node.Column, node.Path, found, allowed));
+        if (!_told.Add(node)) return;
+        if (IsFull) OneMore();
+        else Add(new(node.Line, node.Column, node.Path, found, allowed));
     }
 
     /// <summary>A required key is absent.</summary>
@@ -45,7 +53,8 @@ internal sealed class Findings
     public IReadOnlyList<PlantFileProblem> Problems()
     {
         List<PlantFileProblem> sorted = [.. _problems.OrderBy(p => p.Line).ThenBy(p => p.Column)];
-        if (_left > 0) sorted.Add(new(sorted[^1].Line, sorted[^1].Column, "", Invariant($"{_left} more problems"), "a plant file without problems"));
+        if (_left > 0)
+            sorted.Add(new(sorted[^1].Line, sorted[^1].Column, "", Invariant($"{_left} more problems"), "a plant file without problems"));
         return sorted;
     }
 
@@ -53,7 +62,7 @@ internal sealed class Findings
 
     private void Add(PlantFileProblem problem)
     {
-        if (_problems.Count < Most) _problems.Add(problem);
-        else _left++;
+        if (IsFull) OneMore();
+        else _problems.Add(problem);
     }
 }

@@ -85,8 +85,7 @@ internal sealed class InstrumentReader(Findings findings, SignalUse signals)
         if (node is ListNode { Items: [ScalarNode first, ScalarNode last] } && Texts.TryNumber(first.Text, out double low)
             && Texts.TryNumber(last.Text, out double high) && low < high)
             return (unit.ToSi(low), unit.ToSi(high));
-        findings.Wrong(node, node is ListNode { Items: var items } ? $"[{Shown.Names(items.Select(Shown.Node))}]" : Shown.Node(node),
-            $"[lowest, highest], two numbers in {unit.Written}, the lower one first");
+        findings.Wrong(node, $"[lowest, highest], two numbers in {unit.Written}, the lower one first");
         return null;
     }
 }

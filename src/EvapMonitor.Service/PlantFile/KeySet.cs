@@ -1,6 +1,8 @@
 namespace EvapMonitor.Service.PlantFile;
 
-/// <summary>The keys that one kind of mapping may have. The JSON Schema has a definition of the same name with the same keys; a test holds that.</summary>
+/// <summary>
+/// The keys that one kind of mapping may have. The JSON Schema has a definition of the same name with the same keys; a test holds that.
+/// </summary>
 /// <param name="Name">Name of the kind, as in the schema.</param>
 /// <param name="Keys">The keys.</param>
 internal sealed record KeySet(string Name, params IReadOnlyList<string> Keys)
@@ -10,12 +12,14 @@ internal sealed record KeySet(string Name, params IReadOnlyList<string> Keys)
     /// <summary>The known key that an unknown one was probably meant to be; null when none is near.</summary>
     public string? Nearest(string unknown) => NearestOf(unknown, Keys);
 
-    /// <summary>The word that is nearest to another, at most a third of its letters away; null when none is.</summary>
+    /// <summary>
+    /// The word that is nearest to another, at most a third of its letters away (in short words only the case may differ); null when none is.
+    /// </summary>
     public static string? NearestOf(string unknown, IEnumerable<string> words)
     {
         if (unknown.Length > LongestKeyCompared) return null;
         string? nearest = null;
-        int least = Math.Max(1, unknown.Length / 3) + 1;
+        int least = (unknown.Length / 3) + 1;
         foreach (string word in words)
         {
             int distance = Distance(unknown, word);

@@ -17,7 +17,9 @@ internal sealed class LaterSections(Findings findings, InstrumentReader instrume
         Section(line, "condensate", "flashing condensate", "condensate that leaves each chest (no section)", "an effect", Flash);
         Section(line, "tanks", "a section of tanks", "liquor straight from the effect before", "a tank's name", Tank);
         Section(line, "bodies", "a section of bodies", "an area for each effect as a whole", "a body's name", Body);
-        Section(line, "recompressors", "a section of recompressors", "effects heated by steam or by vapour of another effect", "a recompressor's name", Recompressor);
+        Section(
+            line, "recompressors", "a section of recompressors", "effects heated by steam or by vapour of another effect",
+            "a recompressor's name", Recompressor);
     }
 
     private void Section(MappingReader line, string key, string what, string instead, string names, Action<PlantNode, PlantNode> check)
@@ -69,7 +71,8 @@ internal sealed class LaterSections(Findings findings, InstrumentReader instrume
         bool? thermal = Texts.Choice(mapping.Require("kind", string.Join(", ", Kinds.Keys)), Kinds, findings);
         _routes.VapourAt(mapping.Require("suction", "vapour of an effect"));
         MappingReader? motive = MappingReader.Open(
-            thermal == true ? mapping.Require("motive", "flow, pressure and temperature of the motive steam") : mapping.Take("motive"), PlantFileKeys.Motive, findings);
+            thermal == true ? mapping.Require("motive", "flow, pressure and temperature of the motive steam") : mapping.Take("motive"),
+            PlantFileKeys.Motive, findings);
         if (motive is not null)
         {
             instruments.Read(motive.Take("flow"), Dimension.MassFlow);
@@ -77,7 +80,8 @@ internal sealed class LaterSections(Findings findings, InstrumentReader instrume
             instruments.Read(motive.Take("temperature"), Dimension.Temperature);
         }
 
-        instruments.Read(thermal == false ? mapping.Require("power", "an instrument for the power drawn") : mapping.Take("power"), Dimension.Power);
+        instruments.Read(
+            thermal == false ? mapping.Require("power", "an instrument for the power drawn") : mapping.Take("power"), Dimension.Power);
         Shares.Uncertain(mapping.Take("efficiency"), findings);
         instruments.Read(mapping.Take("spray"), Dimension.MassFlow, Dimension.VolumeFlow);
         if (mapping.Take("curve") is { } curve and not MappingNode) findings.Wrong(curve, "a mapping");

@@ -21,14 +21,16 @@ internal static class LineChecks
     }
 
     /// <summary>Names and former names, each at one place only.</summary>
-    public static void NamesOnce(IEnumerable<(string Name, PlantNode Node, IReadOnlyList<string> Formerly, PlantNode? FormerlyNode)> all, Findings findings)
+    public static void NamesOnce(
+        IEnumerable<(string Name, PlantNode Node, IReadOnlyList<string> Formerly, PlantNode? FormerlyNode)> all, Findings findings)
     {
         var taken = new Dictionary<string, int>(StringComparer.Ordinal);
         var entries = all.ToList();
         foreach ((string name, PlantNode node, _, _) in entries)
         {
             if (!taken.TryAdd(name, node.Line))
-                findings.Wrong(node, $"the name {Shown.Quoted(name)} a second time", Invariant($"each name once (the first is in line {taken[name]})"));
+                findings.Wrong(
+                    node, $"the name {Shown.Quoted(name)} a second time", Invariant($"each name once (the first is in line {taken[name]})"));
         }
 
         foreach ((_, _, IReadOnlyList<string> formerly, PlantNode? node) in entries)
@@ -36,7 +38,9 @@ internal static class LineChecks
             foreach (string name in formerly)
             {
                 if (!taken.TryAdd(name, node!.Line))
-                    findings.Wrong(node, $"the former name {Shown.Quoted(name)}, which is taken", Invariant($"a former name that nothing else has or had (see line {taken[name]})"));
+                    findings.Wrong(
+                        node, $"the former name {Shown.Quoted(name)}, which is taken",
+                        Invariant($"a former name that nothing else has or had (see line {taken[name]})"));
             }
         }
     }
@@ -44,12 +48,15 @@ internal static class LineChecks
     private static void NamesOnce(IReadOnlyList<EffectEntry> entries, Findings findings) =>
         NamesOnce(entries.Select(e => (e.Effect.Name, e.Name, e.Effect.Formerly, e.FormerlyNode)), findings);
 
-    /// <summary>Takes away, again and again, what depends on nothing left or on which nothing left depends; what stays goes in circles.</summary>
+    /// <summary>
+    /// Takes away, again and again, what depends on nothing left or on which nothing left depends; what stays goes in circles.
+    /// </summary>
     private static void Circle(
         Dictionary<string, EffectEntry> entries, Func<EffectEntry, IEnumerable<string?>> sources, Func<EffectEntry, PlantNode?> place,
         string found, string allowed, Findings findings)
     {
-        var left = entries.ToDictionary(e => e.Key, e => sources(e.Value).OfType<string>().Where(entries.ContainsKey).ToHashSet(StringComparer.Ordinal));
+        var left = entries.ToDictionary(
+            e => e.Key, e => sources(e.Value).OfType<string>().Where(entries.ContainsKey).ToHashSet(StringComparer.Ordinal));
         while (true)
         {
             var needed = left.Values.SelectMany(s => s).ToHashSet(StringComparer.Ordinal);
@@ -79,9 +86,14 @@ internal static class LineChecks
                     $"a share such as {{from: {group.Key ?? "feed"}, share: 50 % ± 10 %}} for all but one");
             }
 
-            if (sum > 1 + Rounding) findings.Wrong(group.Last(t => t.source.Share is not null).node, Invariant($"shares of {from} that add up to {sum * 100:0.##} %"), "at most 100 %");
+            if (sum > 1 + Rounding)
+                findings.Wrong(
+                    group.Last(t => t.source.Share is not null).node, Invariant($"shares of {from} that add up to {sum * 100:0.##} %"),
+                    "at most 100 %");
             if (group.Key is null && rest.Count == 0 && sum < 1 - Rounding)
-                findings.Wrong(group.Last().node, Invariant($"shares of the feed that add up to {sum * 100:0.##} %"), "100 %, or one effect without a share, which takes the rest");
+                findings.Wrong(
+                    group.Last().node, Invariant($"shares of the feed that add up to {sum * 100:0.##} %"),
+                    "100 %, or one effect without a share, which takes the rest");
         }
     }
 }

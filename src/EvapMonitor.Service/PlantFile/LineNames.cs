@@ -6,7 +6,8 @@ internal sealed record LineNames(
 {
     public static LineNames Of(MappingNode line) => new(
         line.Find("effects") is ListNode list
-            ? [.. list.Items.OfType<MappingNode>().Select(e => e.Find("name")).OfType<ScalarNode>().Select(n => n.Text).Where(Texts.IsName).Distinct().Take(LineReader.MostEffects)]
+            ? [.. list.Items.OfType<MappingNode>().Select(e => e.Find("name")).OfType<ScalarNode>().Select(n => n.Text)
+                .Where(Texts.IsName).Distinct().Take(LineReader.MostEffects)]
             : [],
         KeysOf(line.Find("tanks")),
         KeysOf(line.Find("recompressors")),

@@ -4,7 +4,8 @@ using EvapMonitor.Core.Properties;
 namespace EvapMonitor.Service.PlantFile;
 
 /// <summary>One line of the site.</summary>
-internal sealed class LineReader(Findings findings, InstrumentReader instruments, IReadOnlyDictionary<string, Liquor> liquors, IReadOnlySet<string> liquorNames)
+internal sealed class LineReader(
+    Findings findings, InstrumentReader instruments, IReadOnlyDictionary<string, Liquor> liquors, IReadOnlySet<string> liquorNames)
 {
     /// <summary>More effects than any line has; a bound for what comes after.</summary>
     public const int MostEffects = 50;
@@ -21,7 +22,8 @@ internal sealed class LineReader(Findings findings, InstrumentReader instruments
     {
         if (MappingReader.Open(node, PlantFileKeys.Line, findings) is not { } mapping) return null;
         LineNames names = LineNames.Of(mapping.Node);
-        LiquorChoice? liquor = new LiquorChoiceReader(findings, instruments, liquors, liquorNames).Read(mapping.Require("liquor", "the name of a liquor"));
+        LiquorChoice? liquor = new LiquorChoiceReader(findings, instruments, liquors, liquorNames).Read(
+            mapping.Require("liquor", "the name of a liquor"));
         var defaults = new Line { Name = name, Liquor = new(null, null, new Dictionary<int, Liquor>()), Effects = [] };
         new LaterSections(findings, instruments, names, liquorNames).Refuse(mapping);
         return defaults with
@@ -36,7 +38,8 @@ internal sealed class LineReader(Findings findings, InstrumentReader instruments
             Effects = Effects(mapping, names),
             Bleeds = Bleeds(mapping.Take("bleeds"), names),
             CleaningGroups = new CleaningReader(findings, instruments).Groups(mapping.Take("cleaning-groups"), names),
-            RequiredEvaporation = Quantities.Read(mapping.Take("required-evaporation"), Dimension.MassFlow, f => f > 0, "more than 0", findings),
+            RequiredEvaporation = Quantities.Read(
+                mapping.Take("required-evaporation"), Dimension.MassFlow, f => f > 0, "more than 0", findings),
             Money = MoneyReader.Read(mapping.Take("money"), findings),
         };
     }
@@ -90,7 +93,10 @@ internal sealed class LineReader(Findings findings, InstrumentReader instruments
         };
         if (MappingReader.Open(mapping.Take("pressure"), PlantFileKeys.SteamPressure, findings) is not { } pressure) return steam;
         PlantNode? at = pressure.Take("at");
-        if (at is null) findings.Note(pressure.Node, "nothing says where the gauge of the steam main sits: before-valve is assumed, so that it never stands for the chest pressure");
+        if (at is null)
+            findings.Note(
+                pressure.Node,
+                "nothing says where the gauge of the steam main sits: before-valve is assumed, so that it never stands for the chest pressure");
         return steam with
         {
             Pressure = instruments.Read(pressure, Dimension.Pressure),
@@ -106,10 +112,12 @@ internal sealed class LineReader(Findings findings, InstrumentReader instruments
         {
             if (MappingReader.Open(item, PlantFileKeys.Bleed, findings) is not { } mapping) continue;
             PlantNode? toNode = mapping.Require("to", "the name of the user of the vapour");
-            string? from = names.Effect(mapping.Require("from", "the name of an effect of this line: " + Shown.Names(names.Effects)), findings);
+            string? from = names.Effect(
+                mapping.Require("from", "the name of an effect of this line: " + Shown.Names(names.Effects)), findings);
             string? to = Texts.Name(toNode, findings);
             Instrument? flow = instruments.Read(mapping.Take("flow"), Dimension.MassFlow);
-            if (to is not null && names.Effects.Contains(to)) findings.Wrong(toNode!, $"a user that is not an effect; an effect says heating: vapour of {from ?? "N1"}");
+            if (to is not null && names.Effects.Contains(to))
+                findings.Wrong(toNode!, $"a user that is not an effect; an effect says heating: vapour of {from ?? "N1"}");
             if (from is null || to is null) continue;
             if (!seen.Add((from, to))) findings.Wrong(item, $"a second bleed from {from} to {to}", "each bleed once");
             else bleeds.Add(new(from, to, flow));

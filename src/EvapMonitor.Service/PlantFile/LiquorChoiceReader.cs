@@ -31,8 +31,10 @@ internal sealed class LiquorChoiceReader(
         var byValue = new Dictionary<int, Liquor>();
         foreach (MappingEntry entry in table.Entries)
         {
-            if (!int.TryParse(entry.Key.Text, NumberStyles.AllowLeadingSign, CultureInfo.InvariantCulture, out int value)) findings.Wrong(entry.Key, "a whole number");
-            else if (CheckName(entry.Value, liquorNames, "", findings) && liquors.TryGetValue(((ScalarNode)entry.Value).Text, out Liquor? liquor) && !byValue.TryAdd(value, liquor))
+            if (!int.TryParse(entry.Key.Text, NumberStyles.AllowLeadingSign, CultureInfo.InvariantCulture, out int value))
+                findings.Wrong(entry.Key, "a whole number");
+            else if (CheckName(entry.Value, liquorNames, "", findings)
+                && liquors.TryGetValue(((ScalarNode)entry.Value).Text, out Liquor? liquor) && !byValue.TryAdd(value, liquor))
                 findings.Wrong(entry.Key, Invariant($"the value {value} a second time"), "each value once");
         }
 

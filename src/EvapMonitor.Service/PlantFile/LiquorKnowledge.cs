@@ -1,4 +1,5 @@
 using EvapMonitor.Core.Plant;
+using EvapMonitor.Core.Properties;
 
 namespace EvapMonitor.Service.PlantFile;
 
@@ -8,7 +9,7 @@ internal static class LiquorKnowledge
     /// <summary>Where the solids leaving an effect come from.</summary>
     public static string? SolidsLeaving(Line line, Effect effect)
     {
-        if (line.Liquor.Always is { Name: LiquorReader.Water }) return "no solids (water)";
+        if (line.Liquor.Always is Water) return "no solids (water)";
         if (MeasuredSolidsLeaving(line, effect) is { } measured) return measured;
         return FlowLeaving(line, effect) is { } leaving && FlowEntering(line, effect) is { } entering && SolidsEntering(line, effect) is { } solids
             ? $"solids from {entering}, {solids} and {leaving}"
@@ -21,7 +22,8 @@ internal static class LiquorKnowledge
         string? entering = FlowEntering(line, effect);
         if (entering is null) return null;
         string? solids = SolidsEntering(line, effect);
-        if (solids is not null && MeasuredSolidsLeaving(line, effect) is { } leavingSolids) return $"{entering} and {solids} with {leavingSolids}";
+        if (solids is not null && MeasuredSolidsLeaving(line, effect) is { } leavingSolids)
+            return $"{entering} and {solids} with {leavingSolids}";
         return FlowLeaving(line, effect) is { } leaving ? $"{entering} with {leaving}" : null;
     }
 
@@ -30,7 +32,8 @@ internal static class LiquorKnowledge
     {
         var missing = new List<string>();
         if (FlowEntering(line, effect) is null) missing.Add($"the flow entering {effect.Name}");
-        if (MeasuredSolidsLeaving(line, effect) is null && FlowLeaving(line, effect) is null) missing.Add($"the flow or the solids leaving {effect.Name}");
+        if (MeasuredSolidsLeaving(line, effect) is null && FlowLeaving(line, effect) is null)
+            missing.Add($"the flow or the solids leaving {effect.Name}");
         else if (FlowLeaving(line, effect) is null && SolidsEntering(line, effect) is null) missing.Add($"the solids entering {effect.Name}");
         return string.Join(" and ", missing);
     }
@@ -58,19 +61,25 @@ internal static class LiquorKnowledge
     private static string? SolidsEntering(Line line, Effect effect)
     {
         if (effect.Liquor is not [var source]) return null;
-        if (source.From is null) return line.Feed.Solids is { } feed ? "feed solids " + feed.Signal : line.Feed.Laboratory is { } laboratory ? "laboratory value " + laboratory.Signal : null;
+        if (source.From is null)
+            return line.Feed.Solids is { } feed ? "feed solids " + feed.Signal
+                : line.Feed.Laboratory is { } laboratory ? "laboratory value " + laboratory.Signal
+                : null;
         return SolidsLeaving(line, line.Effects.First(e => e.Name == source.From));
     }
 
     /// <summary>The source of an effect that takes all of one source and nothing else.</summary>
     private static LiquorSource? OnlySource(Line line, Effect effect) =>
-        effect.Liquor is [{ Share: null } source] && line.Effects.SelectMany(e => e.Liquor).Count(s => s.From == source.From) == 1 ? source : null;
+        effect.Liquor is [{ Share: null } source] && line.Effects.SelectMany(e => e.Liquor).Count(s => s.From == source.From) == 1
+            ? source
+            : null;
 
     /// <summary>True when the product is what leaves this effect and nothing else.</summary>
     private static bool IsLast(Line line, Effect effect)
     {
         List<Effect> last = [.. line.Effects.Where(e => !line.Effects.SelectMany(o => o.Liquor).Any(s => s.From == e.Name))];
-        bool wholly = line.Effects.SelectMany(o => o.Liquor).Where(s => s.From is not null).GroupBy(s => s.From).All(g => g.Any(s => s.Share is null));
+        bool wholly = line.Effects.SelectMany(o => o.Liquor).Where(s => s.From is not null)
+            .GroupBy(s => s.From).All(g => g.Any(s => s.Share is null));
         return wholly && last is [var only] && only.Name == effect.Name;
     }
 }

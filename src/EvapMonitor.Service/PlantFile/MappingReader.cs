@@ -28,6 +28,12 @@ internal sealed class MappingReader
         foreach (MappingEntry entry in mapping.Entries)
         {
             if (keys.Keys.Contains(entry.Key.Text)) continue;
+            if (findings.IsFull)
+            {
+                findings.OneMore();
+                continue;
+            }
+
             string? nearest = keys.Nearest(entry.Key.Text);
             string all = string.Join(", ", keys.Keys);
             findings.Wrong(entry.Key, $"the unknown key {Shown.Quoted(entry.Key.Text)}", nearest is null ? all : $"{nearest} (of {all})");

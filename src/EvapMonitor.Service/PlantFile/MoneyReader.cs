@@ -19,7 +19,8 @@ internal static class MoneyReader
         const string CurrencyAllowed = "a currency of three letters such as EUR";
         PlantNode? currencyNode = mapping.Require("currency", CurrencyAllowed);
         string? currency = Texts.Text(currencyNode, CurrencyAllowed, findings);
-        if (currency is not null && (currency.Length != 3 || !currency.All(char.IsAsciiLetterUpper))) findings.Wrong(currencyNode!, CurrencyAllowed);
+        if (currency is not null && (currency.Length != 3 || !currency.All(char.IsAsciiLetterUpper)))
+            findings.Wrong(currencyNode!, CurrencyAllowed);
         return new(
             currency ?? "",
             Cost(mapping.Take("steam"), findings),

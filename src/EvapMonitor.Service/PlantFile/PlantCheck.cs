@@ -2,7 +2,9 @@ using EvapMonitor.Core.Plant;
 
 namespace EvapMonitor.Service.PlantFile;
 
-/// <summary>What <c>evapmonitor check</c> says of a sound plant file: per effect what can be computed, from which instruments, and what is missing.</summary>
+/// <summary>
+/// What <c>evapmonitor check</c> says of a sound plant file: per effect what can be computed, from which instruments, and what is missing.
+/// </summary>
 public static class PlantCheck
 {
     /// <summary>The report, line by line.</summary>
@@ -11,7 +13,8 @@ public static class PlantCheck
         ArgumentNullException.ThrowIfNull(site);
         var report = new List<string>
         {
-            $"Site {site.Name} ({site.TimeZone}), windows of {Invariant($"{site.Window.TotalMinutes:0.##}")} min, history from {Invariant($"{site.HistoryFrom.UtcDateTime:yyyy-MM-dd HH:mm}")} UTC",
+            Invariant($"Site {site.Name} ({site.TimeZone}), windows of {site.Window.TotalMinutes:0.##} min, ")
+                + Invariant($"history from {site.HistoryFrom.UtcDateTime:yyyy-MM-dd HH:mm} UTC"),
         };
         foreach (Line line in site.Lines) Report(line, report);
         Assumed("Site: accuracy assumed", SiteInstruments.Of(site).Where(i => i.Line is null), report);
@@ -25,12 +28,12 @@ public static class PlantCheck
         IReadOnlyList<EffectCheck> checks = EffectCheck.Of(line);
         foreach (EffectCheck check in checks)
         {
-            Effect effect = check.Effect;
-            report.Add($"  {effect.Name}: {Invariant($"{effect.Area:0.##}")} m2, heated by {Names(effect.Heating.Select(h => h.VapourOf is null ? "steam" : "vapour of " + h.VapourOf))}, liquor from {Names(effect.Liquor.Select(l => l.From ?? "the feed"))}");
+            report.Add(Head(check.Effect));
             report.Add("    heating temperature: " + Words(check.Heating));
             report.Add("    boiling temperature: " + Words(check.Boiling));
             report.Add("    duty:                " + Words(check.Duty));
-            report.Add("    coefficient:         " + (check.IsComplete ? "from these" : "not from these alone; the balance of the line may still give it"));
+            string coefficient = check.IsComplete ? "from these" : "not from these alone; the balance of the line may still give it";
+            report.Add("    coefficient:         " + coefficient);
         }
 
         Assumed("  accuracy assumed", SiteInstruments.Of(line), report);
@@ -44,9 +47,19 @@ public static class PlantCheck
         if (assumed.Count > 0) report.Add($"{begin}: {string.Join(", ", assumed)}");
     }
 
-    private static string Liquor(LiquorChoice choice) => choice.Always is { } always
-        ? "liquor " + always.Name
-        : $"liquor told by {choice.Signal!.Signal} ({string.Join(", ", choice.ByValue.OrderBy(v => v.Key).Select(v => Invariant($"{v.Key} {v.Value.Name}")))})";
+    private static string Liquor(LiquorChoice choice)
+    {
+        if (choice.Always is { } always) return "liquor " + always.Name;
+        IEnumerable<string> values = choice.ByValue.OrderBy(v => v.Key).Select(v => Invariant($"{v.Key} {v.Value.Name}"));
+        return $"liquor told by {choice.Signal!.Signal} ({string.Join(", ", values)})";
+    }
+
+    private static string Head(Effect effect)
+    {
+        string heating = Names(effect.Heating.Select(h => h.VapourOf is null ? "steam" : "vapour of " + h.VapourOf));
+        string liquor = Names(effect.Liquor.Select(l => l.From ?? "the feed"));
+        return Invariant($"  {effect.Name}: {effect.Area:0.##} m2, heated by {heating}, liquor from {liquor}");
+    }
 
     private static string Words(Sourced sourced) => sourced.From ?? "missing: " + sourced.Missing;
 

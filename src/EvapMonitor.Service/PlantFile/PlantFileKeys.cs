@@ -21,8 +21,8 @@ internal static class PlantFileKeys
     public static readonly KeySet LiquorChoice = new("liquor-choice", "signal", "values", "stale-after", "frozen-after");
 
     public static readonly KeySet Line = new(
-        "line", "formerly", "liquor", "settling-time", "producing-when", "feed", "product", "steam", "effects", "bleeds", "heaters", "condensate",
-        "tanks", "bodies", "recompressors", "cleaning-groups", "required-evaporation", "money");
+        "line", "formerly", "liquor", "settling-time", "producing-when", "feed", "product", "steam", "effects", "bleeds", "heaters",
+        "condensate", "tanks", "bodies", "recompressors", "cleaning-groups", "required-evaporation", "money");
 
     public static readonly KeySet ProducingWhen = new("producing-when", "feed-flow-above");
     public static readonly KeySet LiquorStream = new("liquor-stream", "flow", "solids", "temperature", "laboratory");
@@ -30,8 +30,8 @@ internal static class PlantFileKeys
     public static readonly KeySet Motive = new("motive", "flow", "pressure", "temperature");
 
     public static readonly KeySet Effect = new(
-        "effect", "name", "formerly", "heating", "liquor", "area", "bodies", "clean-coefficient", "heat-loss", "vent", "chest", "vapour", "leaving",
-        "level", "due-when");
+        "effect", "name", "formerly", "heating", "liquor", "area", "bodies", "clean-coefficient", "heat-loss", "vent", "chest", "vapour",
+        "leaving", "level", "due-when");
 
     public static readonly KeySet LiquorSource = new("liquor-source", "from", "share");
     public static readonly KeySet Chest = new("chest", "pressure", "temperature", "condensate-flow", "condensate-temperature");
@@ -52,8 +52,8 @@ internal static class PlantFileKeys
 
     public static readonly IReadOnlyList<KeySet> All =
     [
-        Site, Instrument, SteamPressure, SeeingThermometer, Laboratory, ActiveSignal, Liquor, Curve, ElevationCurve, LiquorChoice, Line, ProducingWhen,
-        LiquorStream, Steam, Effect, LiquorSource, Chest, Vapour, Leaving, DueWhen, Bleed, Heater, CondensateFlash, Tank, Body, Recompressor, Motive,
-        CleaningGroup, CleaningRules, Money,
+        Site, Instrument, SteamPressure, SeeingThermometer, Laboratory, ActiveSignal, Liquor, Curve, ElevationCurve, LiquorChoice, Line,
+        ProducingWhen, LiquorStream, Steam, Effect, LiquorSource, Chest, Vapour, Leaving, DueWhen, Bleed, Heater, CondensateFlash, Tank, Body, Recompressor,
+        Motive, CleaningGroup, CleaningRules, Money,
     ];
 }

@@ -47,7 +47,9 @@ public static class PlantFileReader
         }
     }
 
-    /// <summary>Control characters are refused here: the YAML scanner takes a zero character for the end and would drop what follows.</summary>
+    /// <summary>
+    /// Control characters are refused here: the YAML scanner takes a zero character for the end and would drop what follows.
+    /// </summary>
     private static bool IsText(string text, Findings findings)
     {
         int line = 1;

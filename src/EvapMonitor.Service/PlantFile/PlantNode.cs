@@ -9,7 +9,9 @@ internal abstract class PlantNode(PlantNode? parent, string segment, int line, i
 
     public int Column { get; } = column;
 
-    /// <summary>Such as <c>lines.north.effects[0].area</c>. Built on demand: a hostile file could make stored paths larger than memory.</summary>
+    /// <summary>
+    /// Such as <c>lines.north.effects[0].area</c>. Built on demand: a hostile file could make stored paths larger than memory.
+    /// </summary>
     public string Path
     {
         get

@@ -10,7 +10,7 @@ internal sealed class RouteReader(Findings findings, LineNames names)
     public string HeatingAllowed => "steam, " + Shown.Names(names.Effects.Select(e => VapourOf + e)) + ", or a list of these";
 
     public string LiquorAllowed =>
-        "feed, " + Shown.Names(names.Effects) + ", or a list such as [{from: feed, share: 60 % ± 5 %}, {from: " + (names.Effects.Count > 0 ? names.Effects[^1] : "N2") + "}]";
+        $"feed, {Shown.Names(names.Effects)}, or a list such as [{{from: feed, share: 60 % ± 5 %}}, {{from: {names.Effects.LastOrDefault("N2")}}}]";
 
     public IReadOnlyList<HeatSource> Heating(PlantNode node)
     {
@@ -33,7 +33,8 @@ internal sealed class RouteReader(Findings findings, LineNames names)
         foreach (PlantNode item in MappingReader.Items(node, LiquorAllowed, findings))
         {
             if (LiquorSourceAt(item) is not { } source) continue;
-            if (sources.Exists(s => s.Source.From == source.From)) findings.Wrong(item, $"{source.From ?? "feed"} a second time", "each source of liquor once");
+            if (sources.Exists(s => s.Source.From == source.From))
+                findings.Wrong(item, $"{source.From ?? "feed"} a second time", "each source of liquor once");
             else sources.Add((source, item));
         }
 
@@ -44,8 +45,12 @@ internal sealed class RouteReader(Findings findings, LineNames names)
     public string? VapourAt(PlantNode? node)
     {
         if (node is null) return null;
-        if (node is ScalarNode scalar && scalar.Text.StartsWith(VapourOf, StringComparison.Ordinal) && names.Effects.Contains(scalar.Text[VapourOf.Length..].Trim()))
-            return scalar.Text[VapourOf.Length..].Trim();
+        if (node is ScalarNode scalar && scalar.Text.StartsWith(VapourOf, StringComparison.Ordinal))
+        {
+            string effect = scalar.Text[VapourOf.Length..].Trim();
+            if (names.Effects.Contains(effect)) return effect;
+        }
+
         findings.Wrong(node, Shown.Names(names.Effects.Select(e => VapourOf + e)));
         return null;
     }
@@ -78,7 +83,8 @@ internal sealed class RouteReader(Findings findings, LineNames names)
     {
         if (node is ScalarNode { Text: "feed" }) return new(null, share);
         if (node is ScalarNode scalar && names.Effects.Contains(scalar.Text)) return new(scalar.Text, share);
-        if (node is ScalarNode tank && names.Tanks.Contains(tank.Text)) findings.NotSupportedYet(node, $"liquor from the tank {Shown.Quoted(tank.Text)}", LiquorAllowed);
+        if (node is ScalarNode tank && names.Tanks.Contains(tank.Text))
+            findings.NotSupportedYet(node, $"liquor from the tank {Shown.Quoted(tank.Text)}", LiquorAllowed);
         else findings.Wrong(node, LiquorAllowed);
         return null;
     }

@@ -14,7 +14,9 @@ internal static class Shares
     public static double? Exact(PlantNode? node, Findings findings) =>
         Quantities.Read(node, Dimension.Fraction, share => share is >= 0 and <= 1, "from 0 % to 100 %", findings);
 
-    /// <summary>A share with its uncertainty: half-width of a rectangular distribution, so that the standard is it over √3 (JCGM 100, 4.3.7).</summary>
+    /// <summary>
+    /// A share with its uncertainty: half-width of a rectangular distribution, so that the standard is it over √3 (JCGM 100, 4.3.7).
+    /// </summary>
     public static UncertainShare? Uncertain(PlantNode? node, Findings findings)
     {
         if (node is null) return null;

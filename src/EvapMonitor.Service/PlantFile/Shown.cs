@@ -12,9 +12,24 @@ internal static class Shown
     {
         ScalarNode { IsNothing: true } => "nothing",
         ScalarNode scalar => Quoted(scalar.Text),
-        ListNode => "a list",
+        ListNode list => List(list, Longest) ?? "a list",
         _ => "a mapping",
     };
+
+    /// <summary>A short list as it would stand in one line; null when it is long or holds mappings.</summary>
+    private static string? List(ListNode list, int room)
+    {
+        var items = new List<string>();
+        foreach (PlantNode item in list.Items)
+        {
+            string? text = item is ScalarNode scalar ? Clean(scalar.Text) : item is ListNode inner ? List(inner, room) : null;
+            room -= (text?.Length ?? 0) + 2;
+            if (text is null || room < 0) return null;
+            items.Add(text);
+        }
+
+        return $"[{string.Join(", ", items)}]";
+    }
 
     /// <summary>The text in quotes.</summary>
     public static string Quoted(string text) =>

@@ -58,10 +58,12 @@ internal sealed class SiteReader
             return instrument is null ? null : new(null, instrument);
         }
 
-        if (node is ScalarNode scalar && Quantities.TrySplit(scalar.Text, out _, out string written) && Units.Find(written) is { Reference: not PressureReference.Absolute })
+        if (node is ScalarNode scalar && Quantities.TrySplit(scalar.Text, out _, out string written)
+            && Units.Find(written) is { Reference: not PressureReference.Absolute })
             _findings.Wrong(node, "an absolute pressure such as 1008 mbar, from 500 to 1100 mbar, or an instrument {signal: …, unit: mbar}");
         double? pascals = Quantities.Read(
-            node, Dimension.Pressure, p => p is >= 50_000 and <= 110_000, "from 500 to 1100 mbar, or an instrument {signal: …, unit: mbar}", _findings);
+            node, Dimension.Pressure, p => p is >= 50_000 and <= 110_000, "from 500 to 1100 mbar, or an instrument {signal: …, unit: mbar}",
+            _findings);
         return pascals is null ? null : new(pascals, null);
     }
 

@@ -5,13 +5,17 @@ using UnitsNet.Units;
 
 namespace EvapMonitor.Service.PlantFile;
 
-/// <summary>The units as plants write them. Conversion factors come from UnitsNet where it has them to seven digits; a test holds all against NIST SP 811.</summary>
+/// <summary>
+/// The units as plants write them. Conversion factors come from UnitsNet where it has them to seven digits; a test holds all against
+/// NIST SP 811.
+/// </summary>
 internal static class Units
 {
     /// <summary>550 ft·lbf/s exactly; the library rounds it to 745.69 W.</summary>
     private const double HorsePower = 550 * 0.3048 * 0.45359237 * 9.80665;
 
-    private static readonly FrozenDictionary<string, UnitOfMeasure> BySpelling = All().ToFrozenDictionary(u => u.Written, StringComparer.Ordinal);
+    private static readonly FrozenDictionary<string, UnitOfMeasure> BySpelling = All().ToFrozenDictionary(
+        u => u.Written, StringComparer.Ordinal);
 
     /// <summary>Every spelling that is known, after <see cref="Normalised"/>.</summary>
     public static IEnumerable<UnitOfMeasure> Known => BySpelling.Values;
@@ -27,7 +31,8 @@ internal static class Units
             .Replace('²', '2').Replace('³', '3').Replace('·', '.').Replace('⋅', '.').Replace('*', '.').Replace('º', '°').Replace('˚', '°')
             .Replace("℃", "°C", StringComparison.Ordinal).Replace("℉", "°F", StringComparison.Ordinal);
         return text.Replace("^", "", StringComparison.Ordinal).Replace("° ", "°", StringComparison.Ordinal)
-            .Replace(" (", "(", StringComparison.Ordinal).Replace(" /", "/", StringComparison.Ordinal).Replace("/ ", "/", StringComparison.Ordinal);
+            .Replace(" (", "(", StringComparison.Ordinal).Replace(" /", "/", StringComparison.Ordinal).Replace(
+                "/ ", "/", StringComparison.Ordinal);
     }
 
     /// <summary>What a person may write for a dimension, with an example.</summary>
@@ -60,30 +65,37 @@ internal static class Units
     [
         .. UnitsOfPressure.All(),
         .. Of(Dimension.MassFlow, MassFlowUnit.KilogramPerSecond, [
-            ("t/h", MassFlowUnit.TonnePerHour), ("kg/h", MassFlowUnit.KilogramPerHour), ("kg/s", MassFlowUnit.KilogramPerSecond),
+            ("t/h", MassFlowUnit.TonnePerHour), ("t/hr", MassFlowUnit.TonnePerHour), ("kg/h", MassFlowUnit.KilogramPerHour),
+            ("kg/hr", MassFlowUnit.KilogramPerHour), ("kg/s", MassFlowUnit.KilogramPerSecond),
             ("kg/min", MassFlowUnit.KilogramPerMinute), ("t/d", MassFlowUnit.TonnePerDay), ("g/s", MassFlowUnit.GramPerSecond)]),
         .. Pounds(),
         .. Of(Dimension.VolumeFlow, VolumeFlowUnit.CubicMeterPerSecond, [
-            ("m3/h", VolumeFlowUnit.CubicMeterPerHour), ("m3/s", VolumeFlowUnit.CubicMeterPerSecond), ("m3/min", VolumeFlowUnit.CubicMeterPerMinute),
+            ("m3/h", VolumeFlowUnit.CubicMeterPerHour), ("m3/hr", VolumeFlowUnit.CubicMeterPerHour),
+            ("m3/s", VolumeFlowUnit.CubicMeterPerSecond), ("m3/min", VolumeFlowUnit.CubicMeterPerMinute),
             ("m3/d", VolumeFlowUnit.CubicMeterPerDay), ("l/h", VolumeFlowUnit.LiterPerHour), ("l/min", VolumeFlowUnit.LiterPerMinute),
             ("l/s", VolumeFlowUnit.LiterPerSecond), ("L/h", VolumeFlowUnit.LiterPerHour), ("L/min", VolumeFlowUnit.LiterPerMinute),
-            ("L/s", VolumeFlowUnit.LiterPerSecond), ("ft3/h", VolumeFlowUnit.CubicFootPerHour), ("ft3/min", VolumeFlowUnit.CubicFootPerMinute),
-            ("gpm(US)", VolumeFlowUnit.UsGallonPerMinute)]),
-        .. Temperatures(TemperatureUnit.DegreeCelsius, TemperatureDeltaUnit.DegreeCelsius, "degC", "°C"),
-        .. Temperatures(TemperatureUnit.DegreeFahrenheit, TemperatureDeltaUnit.DegreeFahrenheit, "degF", "°F"),
+            ("L/s", VolumeFlowUnit.LiterPerSecond), ("ft3/h", VolumeFlowUnit.CubicFootPerHour),
+            ("ft3/min", VolumeFlowUnit.CubicFootPerMinute), ("gpm(US)", VolumeFlowUnit.UsGallonPerMinute)]),
+        .. Temperatures(TemperatureUnit.DegreeCelsius, TemperatureDeltaUnit.DegreeCelsius, "degC", "deg C", "°C"),
+        .. Temperatures(TemperatureUnit.DegreeFahrenheit, TemperatureDeltaUnit.DegreeFahrenheit, "degF", "deg F", "°F"),
         .. Temperatures(TemperatureUnit.Kelvin, TemperatureDeltaUnit.Kelvin, "K"),
-        new("%", Dimension.Fraction, 0.01), new("°Bx", Dimension.Fraction, 0.01), new("degBx", Dimension.Fraction, 0.01), new("°Brix", Dimension.Fraction, 0.01),
+        new("%", Dimension.Fraction, 0.01), new("°Bx", Dimension.Fraction, 0.01), new("degBx", Dimension.Fraction, 0.01),
+        new("°Brix", Dimension.Fraction, 0.01),
         new("kg/kg", Dimension.Fraction, 1), new("g/kg", Dimension.Fraction, 0.001), new("g/g", Dimension.Fraction, 1),
         .. Of(Dimension.Length, LengthUnit.Meter, [
-            ("m", LengthUnit.Meter), ("cm", LengthUnit.Centimeter), ("mm", LengthUnit.Millimeter), ("ft", LengthUnit.Foot), ("in", LengthUnit.Inch)]),
-        .. Of(Dimension.Area, AreaUnit.SquareMeter, [("m2", AreaUnit.SquareMeter), ("ft2", AreaUnit.SquareFoot), ("sqft", AreaUnit.SquareFoot)]),
+            ("m", LengthUnit.Meter), ("cm", LengthUnit.Centimeter), ("mm", LengthUnit.Millimeter), ("ft", LengthUnit.Foot),
+            ("in", LengthUnit.Inch)]),
+        .. Of(
+            Dimension.Area, AreaUnit.SquareMeter,
+            [("m2", AreaUnit.SquareMeter), ("ft2", AreaUnit.SquareFoot), ("sqft", AreaUnit.SquareFoot)]),
         .. Of(Dimension.Mass, MassUnit.Kilogram, [("kg", MassUnit.Kilogram), ("t", MassUnit.Tonne), ("lb", MassUnit.Pound)]),
         .. Of(Dimension.Power, PowerUnit.Watt, [
             ("W", PowerUnit.Watt), ("kW", PowerUnit.Kilowatt), ("MW", PowerUnit.Megawatt)]),
         new("hp", Dimension.Power, HorsePower),
         .. Coefficients(),
         .. Of(Dimension.Duration, DurationUnit.Second, [
-            ("s", DurationUnit.Second), ("min", DurationUnit.Minute), ("h", DurationUnit.Hour), ("d", DurationUnit.Day)]),
+            ("s", DurationUnit.Second), ("min", DurationUnit.Minute), ("h", DurationUnit.Hour), ("hr", DurationUnit.Hour),
+            ("d", DurationUnit.Day)]),
     ];
 
     private static IEnumerable<UnitOfMeasure> Of<T>(Dimension dimension, T si, IEnumerable<(string Written, T Unit)> units)

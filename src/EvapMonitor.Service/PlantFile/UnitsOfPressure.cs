@@ -10,7 +10,8 @@ internal static class UnitsOfPressure
     private static readonly (string Written, PressureUnit Unit)[] Scales =
     [
         ("Pa", PressureUnit.Pascal), ("hPa", PressureUnit.Hectopascal), ("kPa", PressureUnit.Kilopascal), ("MPa", PressureUnit.Megapascal),
-        ("bar", PressureUnit.Bar), ("mbar", PressureUnit.Millibar), ("psi", PressureUnit.PoundForcePerSquareInch), ("atm", PressureUnit.Atmosphere),
+        ("bar", PressureUnit.Bar), ("mbar", PressureUnit.Millibar), ("psi", PressureUnit.PoundForcePerSquareInch),
+        ("atm", PressureUnit.Atmosphere),
         ("mmHg", PressureUnit.MillimeterOfMercury), ("inHg", PressureUnit.InchOfMercury),
         ("kgf/cm2", PressureUnit.KilogramForcePerSquareCentimeter), ("kg/cm2", PressureUnit.KilogramForcePerSquareCentimeter),
         ("mmH2O", PressureUnit.MillimeterOfWaterColumn), ("mH2O", PressureUnit.MeterOfWaterColumn),
@@ -25,7 +26,8 @@ internal static class UnitsOfPressure
         (" a", PressureReference.Absolute), (" abs", PressureReference.Absolute), ("(abs)", PressureReference.Absolute),
         ("(g)", PressureReference.Gauge), ("g", PressureReference.Gauge), (" g", PressureReference.Gauge),
         (" gauge", PressureReference.Gauge), ("(gauge)", PressureReference.Gauge),
-        (" vacuum", PressureReference.Vacuum), (" vac", PressureReference.Vacuum), ("(vacuum)", PressureReference.Vacuum), ("(vac)", PressureReference.Vacuum),
+        (" vacuum", PressureReference.Vacuum), (" vac", PressureReference.Vacuum), ("(vacuum)", PressureReference.Vacuum),
+        ("(vac)", PressureReference.Vacuum),
     ];
 
     public static IEnumerable<UnitOfMeasure> All() => Scales

@@ -40,14 +40,18 @@ internal static class YamlText
         }
         catch (YamlException broken)
         {
-            Broken(text, broken.Start.Line, broken.Start.Column, broken.End.Line, ": " + Shown.Clean(broken.Message.ReplaceLineEndings(" ")), findings);
+            Broken(
+                text, broken.Start.Line, broken.Start.Column, broken.End.Line, ": " + Shown.Clean(broken.Message.ReplaceLineEndings(" ")),
+                findings);
             return null;
         }
-        catch (Exception lost) when (lost is InvalidOperationException or ArgumentException or IndexOutOfRangeException or NullReferenceException)
+        catch (Exception lost) when (
+            lost is InvalidOperationException or ArgumentException or IndexOutOfRangeException or NullReferenceException)
         {
             // The scanner answers some broken texts, such as a list that is never closed, with exceptions that are not its own.
             Mark last = parser.Current?.End ?? Mark.Empty;
-            Broken(text, last.Line, last.Column, last.Line + 1, " after this place, such as a bracket or quote that is never closed", findings);
+            Broken(
+                text, last.Line, last.Column, last.Line + 1, " after this place, such as a bracket or quote that is never closed", findings);
             return null;
         }
     }
@@ -125,7 +129,8 @@ internal static class YamlText
             if (value is null) return null;
             if (keys.TryGetValue(key.Text, out ScalarNode? first))
             {
-                findings.Wrong(key, $"the key {Shown.Quoted(key.Text)} a second time", Invariant($"each key once (the first is in line {first.Line})"));
+                findings.Wrong(
+                    key, $"the key {Shown.Quoted(key.Text)} a second time", Invariant($"each key once (the first is in line {first.Line})"));
                 continue;
             }
 
@@ -147,6 +152,7 @@ internal static class YamlText
         where T : ParsingEvent
     {
         if (parser.Current is null) parser.MoveNext();
-        if (parser.Current is not T) throw new SyntaxErrorException(parser.Current?.Start ?? Mark.Empty, parser.Current?.End ?? Mark.Empty, "unexpected end");
+        if (parser.Current is not T)
+            throw new SyntaxErrorException(parser.Current?.Start ?? Mark.Empty, parser.Current?.End ?? Mark.Empty, "unexpected end");
     }
 }

@@ -46,14 +46,12 @@ public class SteamTests
     }
 
     [Fact]
-    public void EnthalpyScheduledByHand_AgreesWithTheTableTermByTerm()
+    public void SaturatedLiquidAndVapour_HaveTheSameGibbsEnergy()
     {
-        var random = new Random(3);
-        for (var k = 0; k < 2000; k++)
+        // Phase equilibrium. Regions 1, 2 and 4 are fitted apart and meet only within the tolerance of the formulation: 50 J/kg is under 0.006 % of the latent heat.
+        for (var temperature = 273.15; temperature < 623.15; temperature += 0.7)
         {
-            var temperature = 273.15 + 350 * random.NextDouble();
             var pressure = Steam.SaturationPressure(temperature);
-            // h = T·s + g, where s and g come from the table's series: h - T·s must be the same Gibbs energy in both phases, to the 0.01 % to which IF97 closes
             var liquid = Steam.LiquidEnthalpy(pressure, temperature) - temperature * Steam.LiquidEntropy(pressure, temperature);
             var vapour = Steam.VapourEnthalpy(pressure, temperature) - temperature * Steam.VapourEntropy(pressure, temperature);
             Assert.Equal(liquid, vapour, 50.0);

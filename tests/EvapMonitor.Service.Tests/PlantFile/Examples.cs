@@ -1,3 +1,4 @@
+using System.Text;
 using EvapMonitor.Core.Plant;
 using EvapMonitor.Service.PlantFile;
 
@@ -36,6 +37,31 @@ internal static class Examples
 
     public static string With(string old, string changed) =>
         Small.Contains(old, StringComparison.Ordinal) ? Small.Replace(old, changed, StringComparison.Ordinal) : throw new ArgumentException("not in the file: " + old);
+
+    /// <summary>Files with a few small changes each: a sign in place of another, a piece left out, put in, or repeated elsewhere.</summary>
+    public static IEnumerable<string> Mutations(IReadOnlyList<string> originals, int seed, int count, int mostChanges)
+    {
+        const string Signs = " \n:-[]{},#&*!|>'\"%@?a09~±²°\t.E";
+        var random = new Random(seed);
+        for (int i = 0; i < count; i++)
+        {
+            var text = new StringBuilder(originals[i % originals.Count]);
+            for (int changes = random.Next(1, mostChanges + 1); changes > 0; changes--)
+            {
+                int at = random.Next(text.Length);
+                int length = Math.Min(random.Next(1, 30), text.Length - at);
+                switch (random.Next(4))
+                {
+                    case 0: text[at] = Signs[random.Next(Signs.Length)]; break;
+                    case 1: text.Remove(at, length); break;
+                    case 2: text.Insert(at, Signs[random.Next(Signs.Length)]); break;
+                    default: text.Insert(random.Next(text.Length), text.ToString(at, length)); break;
+                }
+            }
+
+            yield return text.ToString();
+        }
+    }
 
     public static Site Sound(string text)
     {

@@ -86,6 +86,16 @@ public sealed class ReferenceTests
     public void WrongValueInTheSite_IsOneProblemAtItsPlace(string old, string changed, string path) =>
         Assert.Equal(path, Examples.OnlyProblem(Examples.With(old, changed)).Path);
 
+    [Theory]
+    [InlineData("unit: t/h", "unit: T/H", "perhaps t/h")]
+    [InlineData("unit: t/h", "unit: t/hh", "perhaps t/h")]
+    [InlineData("unit: \"%\"", "unit: C", "(unknown unit \"C\")")]
+    [InlineData("unit: \"%\"", "unit: bar", "(bar is the unit of a pressure)")]
+    [InlineData("area: 610 m2", "area: 610", "(without a unit)")]
+    [InlineData("area: 610 m2", "area: 1,450 m2", "\"1,450 m2\"")]
+    public void WrongUnit_SaysWhatItIsOrMayHaveMeant(string old, string changed, string found) =>
+        Assert.Contains(found, PlantFileReader.Read(Examples.With(old, changed)).Problems[0].Found, StringComparison.Ordinal);
+
     [Fact]
     public void GaugeWithoutAtmosphere_AsksForIt()
     {

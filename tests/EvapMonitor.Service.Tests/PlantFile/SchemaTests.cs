@@ -39,6 +39,42 @@ public sealed class SchemaTests
         Assert.NotEmpty(PlantFileReader.Read(text).Problems);
     }
 
+    [Theory]
+    [InlineData("liquor: E1", "liquor: [E1]")]
+    [InlineData("liquor: E1", "liquor: {from: E1}")]
+    [InlineData("liquor: E1", "liquor: [{from: E1, share: 60 °Bx +/- 5 g/kg}]")]
+    [InlineData("heating: steam", "heating: [steam]")]
+    [InlineData("area: 610 m2", "area: 6.1e2 m²\n      vent: 0 %\n      heat-loss: 1%±1%")]
+    [InlineData("accuracy: 1 %", "accuracy: .5 % of reading standard")]
+    [InlineData("name: E2", "name: 2")]
+    [InlineData("site: Lyngdal", "site: 12.5")]
+    [InlineData("atmosphere: 1013 mbar", "atmosphere: {signal: 17, unit: hPa}")]
+    [InlineData("atmosphere: 1013 mbar", "cleaning-rules: {allowed: ['Sat 22:00-06:00', Mon-Fri 00:00-24:00], not-together: [[one.E1, E2]]}")]
+    [InlineData("history-from: 2026-01-01", "history-from: 2026-01-01T06:00:00+01:00")]
+    public void OtherWaysOfWriting_AreValidForSchemaAndReader(string old, string changed)
+    {
+        string text = Examples.With(old, changed);
+        Examples.Sound(text);
+        Assert.Empty(Flaws(text));
+    }
+
+    /// <summary>An editor must not mark as wrong what the program takes.</summary>
+    [Fact]
+    public void FilesThatTheReaderTakes_AreValid()
+    {
+        var wronged = new List<string>();
+        int taken = 0;
+        foreach (string text in Examples.Mutations([.. Examples.Files.Select(File.ReadAllText), Examples.Small], 1871, 1200, 1))
+        {
+            if (PlantFileReader.Read(text).Site is null) continue;
+            taken++;
+            wronged.AddRange(Flaws(text));
+        }
+
+        Assert.Empty(wronged);
+        Assert.True(taken > 100, $"only {taken} files were taken: this proves nothing");
+    }
+
     [Fact]
     public void SchemaAndReader_KnowTheSameKeys()
     {

@@ -11,15 +11,18 @@ const patience = 30_000;
 
 /** Sends a request and returns the answer; every way to fail becomes a RequestFailure in words. */
 export async function send(address: string, options: RequestInit = {}): Promise<Response> {
-  let answer: Response;
-  const signals = [AbortSignal.timeout(patience), ...(options.signal ? [options.signal] : [])];
+  let answer: Response, late = false;
+  const abort = new AbortController();
+  const stop = () => abort.abort();
+  const timer = setTimeout(() => { late = true; stop(); }, patience);
+  options.signal?.addEventListener('abort', stop);
   try {
-    answer = await fetch(address, { ...options, signal: AbortSignal.any(signals) });
+    answer = await fetch(address, { ...options, signal: abort.signal });
   } catch (error) {
     if (options.signal?.aborted) throw error;
-    throw new RequestFailure(
-      error instanceof DOMException && error.name === 'TimeoutError' ? 'the service did not answer within 30 s' : 'the service does not answer',
-      false, null);
+    throw new RequestFailure(late ? 'the service did not answer within 30 s' : 'the service does not answer', false, null);
+  } finally {
+    clearTimeout(timer);
   }
   if (answer.ok) return answer;
   const problem = await answer.json().catch(() => null) as Problem | null;

@@ -19,15 +19,18 @@ export class Resource<T> {
   #abort: AbortController | null = null;
   #retry: ReturnType<typeof setTimeout> | undefined;
   #failures = 0;
+  #again = false;
 
   constructor(address: string) {
     this.#address = address;
   }
 
-  /** Fetches; `address` replaces the one before and supersedes a fetch that is still running. */
+  /** Fetches. Another address supersedes a fetch that is still running; the same one waits for it and then fetches once more, so that many wishes never starve it. */
   async load(address = this.#address): Promise<void> {
+    if (this.#abort && address === this.#address) { this.#again = true; return; }
     this.#address = address;
     this.#abort?.abort();
+    this.#again = false;
     clearTimeout(this.#retry);
     const abort = this.#abort = new AbortController();
     this.state.value = { ...this.state.value, loadingSince: this.state.value.loadingSince ?? Date.now() };
@@ -45,7 +48,10 @@ export class Resource<T> {
         failure: { words: failure.message, since: this.state.value.failure?.since ?? Date.now(), status: failure.status },
       };
       this.#retry = setTimeout(() => void this.load(), retryDelay(this.#failures, failure.answered));
+    } finally {
+      if (this.#abort === abort) this.#abort = null;
     }
+    if (this.#again && this.state.peek().failure === null) await this.load();
   }
 
   /** Puts a value that came another way, as by an event. */
@@ -56,6 +62,8 @@ export class Resource<T> {
   /** Stops fetching and trying again. */
   release(): void {
     this.#abort?.abort();
+    this.#abort = null;
+    this.#again = false;
     clearTimeout(this.#retry);
   }
 }

@@ -18,7 +18,7 @@ export const gutter = (narrow: boolean) => (narrow ? 84 : 128);
 
 /** uPlot's options for a model; the model may change afterwards, what is drawn follows it. */
 export function chartOptions(m: ChartModel, width: number, height: number, events: ChartEvents): uPlot.Options {
-  const ticksNow = (u: uPlot) => timeTicks(m.span.from, m.span.to, m.zone, Math.max(2, Math.floor((u.width - 60 - gutter(m.narrow)) / 66)));
+  const ticksNow = (u: uPlot) => timeTicks(m.span.from, m.span.to, m.zone, Math.max(3, Math.floor((u.width - 60 - gutter(m.narrow)) / 66)));
   return {
     width, height,
     padding: [m.lane ? laneHeight : 10, gutter(m.narrow), 0, 0],
@@ -94,5 +94,9 @@ function layAxis(m: ChartModel): void {
   const marks = [...(body ? [body.lowest, body.highest] : []), ...(m.limit ? [m.limit.value] : [])];
   const clean = m.clean && extent(m.clean, from, to);
   if (clean) marks.push(clean.lowest, clean.highest);
-  m.axis = marks.length > 0 ? valueAxis(Math.min(...marks), Math.max(...marks)) : { from: 0, to: 1, step: 0.5 };
+  if (marks.length === 0) { m.axis = { from: 0, to: 1, step: 0.5 }; return; }
+  const [lowest, highest] = [Math.min(...marks), Math.max(...marks)];
+  // A limit at the very edge would be taken for the axis itself.
+  const room = m.limit ? 0.04 * (highest - lowest) : 0;
+  m.axis = valueAxis(m.limit?.value === lowest ? lowest - room : lowest, m.limit?.value === highest ? highest + room : highest);
 }

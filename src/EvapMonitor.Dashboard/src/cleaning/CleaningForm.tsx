@@ -1,12 +1,12 @@
 import { useSignal } from '@preact/signals';
-import { useEffect, useRef } from 'preact/hooks';
+import { useRef } from 'preact/hooks';
 import { addresses } from '../api/addresses';
 import { RequestFailure, send } from '../api/request';
 import type { Cleaning, Line } from '../api/types';
 import { announce } from '../parts/Announcer';
 import { now } from '../site/clock';
 import { cleaningsChanged, zone } from '../site/state';
-import { toInput } from '../words/time';
+import { inSiteTime, toInput } from '../words/time';
 import { Cautions } from './Cautions';
 import { check, type Draft } from './draft';
 import { Field, TimeField } from './Field';
@@ -40,8 +40,10 @@ export function CleaningForm({ lines, chosen }: { lines: Line[]; chosen: { line:
   const change = (part: Partial<Draft>) => {
     form.value = { draft: { ...form.peek().draft, ...part }, key: freshKey() };
     if (failure.peek() !== null) keep(form.peek());
+    // What has been put right stops being called wrong; nothing new is called wrong while it is typed.
+    const wrong = check(form.peek().draft, zone.peek(), now.peek()).errors;
+    if (errors.peek()) errors.value = Object.fromEntries(Object.entries(errors.peek()!).filter(([field]) => wrong?.[field as keyof typeof wrong]));
   };
-  useEffect(() => { if (errors.value) element.current?.querySelector<HTMLElement>('[aria-invalid="true"]')?.focus(); }, [errors.value]);
 
   const submit = async (event: Event) => {
     event.preventDefault();
@@ -49,7 +51,10 @@ export function CleaningForm({ lines, chosen }: { lines: Line[]; chosen: { line:
     failure.value = null;
     const checked = check(form.peek().draft, zone.peek(), now.peek());
     errors.value = checked.errors;
-    if (checked.cleaning === null) return;
+    if (checked.cleaning === null) {
+      setTimeout(() => element.current?.querySelector<HTMLElement>('[aria-invalid="true"]')?.focus());
+      return;
+    }
     sending.value = true;
     keep(form.peek());
     try {
@@ -64,7 +69,7 @@ export function CleaningForm({ lines, chosen }: { lines: Line[]; chosen: { line:
     } catch (error) {
       const known = error instanceof RequestFailure ? error : null;
       failure.value = known?.answered
-        ? `${known.status === 409 ? 'It overlaps a cleaning already in the log' : 'It was not taken'}: ${known.message}.`
+        ? `${known.status === 409 ? 'It overlaps a cleaning already in the log' : 'It was not taken'}: ${inSiteTime(known.message.replace(/\.$/, ''), zone.peek(), now.peek())}.`
         : `It was not sent: ${known?.message ?? 'the answer could not be read'}. It is kept here; send it again when the service answers. A repeat is never counted twice.`;
     } finally { sending.value = false; }
   };

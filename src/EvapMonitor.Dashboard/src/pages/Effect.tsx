@@ -67,7 +67,7 @@ function Head({ effect }: { effect: Effect }) {
         <Words pieces={effectWords(effect, readings, latest, now, zone.value)} />
         <div class="head-row">
           <Bore effect={effect} radius={64} now={now} stale={readings !== 'live'} weeks={weeksPerStratum([effect])} />
-          <LimitsTable effect={effect} now={now} />
+          <LimitsTable effect={effect} now={now} fresh={readings === 'live'} />
         </div>
         <p class="legend-small">Ring thickness stands for fouling resistance; not to scale, not a flow restriction.</p>
       </div>

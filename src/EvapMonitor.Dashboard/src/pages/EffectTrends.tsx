@@ -1,5 +1,5 @@
 import { useSignal } from '@preact/signals';
-import { useEffect, useMemo } from 'preact/hooks';
+import { useEffect, useMemo, useRef } from 'preact/hooks';
 import { useLocation, useSearch } from 'wouter-preact';
 import { addresses } from '../api/addresses';
 import { RequestFailure } from '../api/request';
@@ -26,12 +26,23 @@ export function EffectTrends({ effect, cleanings, version }: { effect: Effect; c
   const search = useSearch();
   const [path, navigate] = useLocation();
   const view = readView(search);
-  const span = spanOf(view, calmNow.value);
+  const moving = useSignal<Span | null>(null);
+  useEffect(() => { moving.value = null; }, [search]);
+  const span = moving.value ?? spanOf(view, calmNow.value);
   const narrow = useNarrow();
   const failure = useSignal<string | null>(null);
 
-  const show = (next: Span, settled: boolean) => navigate(path + writeView(viewOf(next, view.quantity, calmNow.peek())), { replace: !settled });
-  const reset = () => navigate(path + writeView({ from: null, to: null, quantity: view.quantity }));
+  const write = (next: Span, replace: boolean) => navigate(path + writeView(viewOf(next, view.quantity, calmNow.peek())), { replace });
+  // Fingers and keys move faster than browsers let the address change; it follows when they rest.
+  const rest = useRef<ReturnType<typeof setTimeout> | undefined>(undefined);
+  useEffect(() => () => clearTimeout(rest.current), []);
+  const show = (next: Span, settled: boolean) => {
+    clearTimeout(rest.current);
+    moving.value = settled ? null : next;
+    if (settled) write(next, false);
+    else rest.current = setTimeout(() => write(next, true), 300);
+  };
+  const reset = () => { clearTimeout(rest.current); moving.value = null; navigate(path + writeView({ from: null, to: null, quantity: view.quantity })); };
   const settled = useSettled(`${span.from} ${span.to}`, 250).split(' ').map(Number) as [number, number];
   const address = (q: Quantity) => addresses.trend(effect.line, effect.name, q, settled[0], settled[1], points);
 
@@ -59,6 +70,7 @@ export function EffectTrends({ effect, cleanings, version }: { effect: Effect; c
         <ViewButtons span={span} now={calmNow.value} show={show} reset={reset} />
         {failure.value && <p class="wrong" role="alert">The CSV could not be made: {failure.value}.</p>}
         <Shown of={coefficient.resource} what="The coefficient">{() => chart('coefficient', coefficient.columns!, coefficient.busy, true)}</Shown>
+        {clean.resource.state.value.failure && <p class="quiet">The clean expectation is not drawn: {clean.resource.state.value.failure.words}. It is tried again by itself.</p>}
         <label class="picker">Below it <select value={view.quantity}
           onChange={e => navigate(path + writeView({ ...view, quantity: e.currentTarget.value as Quantity }), { replace: true })}>
           {quantities.filter(q => q !== 'coefficient').map(q => <option key={q} value={q}>{quantityWords[q].name}</option>)}

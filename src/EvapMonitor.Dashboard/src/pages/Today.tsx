@@ -1,7 +1,9 @@
+import { useSignal } from '@preact/signals';
 import { useEffect, useRef } from 'preact/hooks';
 import type { Line } from '../api/types';
 import { weeksPerStratum } from '../bore/deposit';
 import { announce } from '../parts/Announcer';
+import { DenseLine } from '../parts/DenseLine';
 import { EffectCell } from '../parts/EffectCell';
 import { Evaporation } from '../parts/Evaporation';
 import { Shown } from '../parts/Waiting';
@@ -12,7 +14,11 @@ import { calmNow } from '../site/clock';
 import { lines, site, zone } from '../site/state';
 import { aged } from '../words/aged';
 import { lineWords } from '../words/line';
+import { asks, siteWords } from '../words/site';
 import { NoReadings } from './NoReadings';
+
+/** More lines than these are not all drawn large. */
+const many = 12;
 
 /** How is the site, what must I do? */
 export function Today() {
@@ -25,7 +31,8 @@ export function Today() {
       <Shown of={lines} what="The lines">
         {({ lines: all }) => <>
           {all.length === 0 && !none && <p class="empty">No plant file names a line yet. The Plant page shows what is in force.</p>}
-          {!none && all.map(line => <LineToday key={line.name} line={line} alone={all.length === 1} weeks={weeksPerStratum(all.flatMap(l => l.effects))} />)}
+          {!none && all.length > many && <ManyLines all={all} />}
+          {!none && all.length <= many && all.map(line => <LineToday key={line.name} line={line} alone={all.length === 1} weeks={weeksPerStratum(all.flatMap(l => l.effects))} />)}
           {!none && all.length > 0 && <Legend lines={all} />}
         </>}
       </Shown>
@@ -59,6 +66,24 @@ function LineToday({ line: given, alone, weeks }: { line: Line; alone: boolean; 
         </div>
       </div>
     </section>
+  );
+}
+
+/** Lines that ask for something are opened where they stand in the plant file, the others are rows; silent ones are counted apart. */
+function ManyLines({ all }: { all: Line[] }) {
+  const wanted = useSignal('');
+  const now = calmNow.value, weeks = weeksPerStratum(all.flatMap(l => l.effects));
+  const lines = all.map(l => aged(l, now));
+  const shown = lines.filter(l => l.name.toLowerCase().includes(wanted.value.trim().toLowerCase()));
+  return (
+    <>
+      <div class="many">
+        <Words pieces={siteWords(lines)} />
+        <label>Show lines named <input type="search" value={wanted.value} onInput={e => { wanted.value = e.currentTarget.value; }} /></label>
+        {shown.length === 0 && <p class="quiet" role="status">No line has this in its name.</p>}
+      </div>
+      {shown.map(l => (asks(l) ? <LineToday key={l.name} line={l} alone={false} weeks={weeks} /> : <DenseLine key={l.name} line={l} now={now} />))}
+    </>
   );
 }
 

@@ -10,7 +10,7 @@ import { Scroller } from './Scroller';
 /** Cleanings, the youngest first. `everywhere`: name line and effect too. */
 export function CleaningsTable({ all, now, everywhere }: { all: Cleaning[]; now: number; everywhere: boolean }) {
   const most = useSignal(50);
-  const sorted = all.toSorted((a, b) => Date.parse(b.start) - Date.parse(a.start));
+  const sorted = [...all].sort((a, b) => Date.parse(b.start) - Date.parse(a.start));
   return (
     <>
       <Scroller label="Table of cleanings">

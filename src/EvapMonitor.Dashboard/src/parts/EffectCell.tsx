@@ -18,14 +18,14 @@ export function EffectCell({ effect, now, zone, stale, weeks, radius, asOf }: Ef
   const unknown = effect.cleaning_since === null && (effect.due.state === 'unknown' || (effect.now?.fouling_resistance_m2k_w ?? null) === null);
   return (
     <Link class="effect" href={pages.effect(effect.line, effect.name)}>
-      <span class="effect-name">{effect.name}</span>
+      <span class="effect-name">{effect.name}</span>{' '}
       <Bore effect={effect} radius={radius} now={now} stale={stale} weeks={weeks} />
       <span class="effect-words">
-        {stale && asOf !== null && <span class="effect-asof">as of {moment(asOf, zone, now)}</span>}
-        {!unknown && effect.cleaning_since === null && <span>{cleanlinessWords(effect)}</span>}
-        {!unknown && effect.cleaning_since === null && share !== null && share > 2 && <span>{significant(share, 2)} × limit</span>}
+        {stale && asOf !== null && <span class="effect-asof">as of {moment(asOf, zone, now)} </span>}
+        {!unknown && effect.cleaning_since === null && <span>{cleanlinessWords(effect)} </span>}
+        {!unknown && effect.cleaning_since === null && share !== null && share > 2 && <span>{significant(share, 2)} × limit </span>}
         <DueLabel due={due} />
-        {unknown && <span class="effect-reason">{unknownReason(effect)}</span>}
+        {unknown && ' '}{unknown && <span class="effect-reason">{unknownReason(effect)}</span>}
       </span>
     </Link>
   );

@@ -1,9 +1,9 @@
 import type { Effect, HourResult } from '../api/types';
 import { zone } from '../site/state';
-import { measured } from '../words/number';
+import { fixed, measured } from '../words/number';
 import { moment } from '../words/time';
 
-interface Row { name: string; value: number | null; u: number | null; unit: string; factor?: number; from?: string | null }
+interface Row { name: string; value: number | null; u: number | null; unit: string; factor?: number; decimals?: number; from?: string | null }
 
 const rows = (n: HourResult): Row[] => [
   { name: 'apparent coefficient', value: n.coefficient_w_m2k, u: n.coefficient_u, unit: 'W/(m²·K)' },
@@ -11,16 +11,17 @@ const rows = (n: HourResult): Row[] => [
   { name: 'fouling resistance', value: n.fouling_resistance_m2k_w, u: n.fouling_resistance_u, unit: 'm²·K/kW', factor: 1000 },
   { name: 'driving force', value: n.driving_force_k, u: n.driving_force_u, unit: 'K' },
   { name: 'duty', value: n.duty_kw, u: n.duty_u, unit: 'kW', from: n.duty_from },
-  { name: 'heat flux', value: n.heat_flux_kw_m2, u: null, unit: 'kW/m²' },
-  { name: 'heating temperature', value: n.heating_temperature_c, u: null, unit: '°C', from: n.heating_temperature_from },
-  { name: 'boiling temperature', value: n.boiling_temperature_c, u: null, unit: '°C', from: n.boiling_temperature_from },
-  { name: 'boiling-point elevation', value: n.elevation_k, u: null, unit: 'K' },
+  { name: 'heat flux', value: n.heat_flux_kw_m2, u: null, unit: 'kW/m²', decimals: 1 },
+  { name: 'heating temperature', value: n.heating_temperature_c, u: null, unit: '°C', decimals: 1, from: n.heating_temperature_from },
+  { name: 'boiling temperature', value: n.boiling_temperature_c, u: null, unit: '°C', decimals: 1, from: n.boiling_temperature_from },
+  { name: 'boiling-point elevation', value: n.elevation_k, u: null, unit: 'K', decimals: 1 },
 ];
 
 /** The latest hour's numbers with uncertainty and origin; where one is absent, why. */
 export function NowTable({ effect, now }: { effect: Effect; now: number }) {
   const n = effect.now;
   if (n === null) return <p class="quiet">No hour has a result yet. Results follow as soon as readings of this effect are evaluated.</p>;
+  const firstAbsent = rows(n).find(r => r.value === null)?.name;
   return (
     <table class="now">
       <caption>Mean of {n.hours === 1 ? 'the hour' : `${n.hours} hours`} from {moment(Date.parse(n.at), zone.value, now)}; ± one standard uncertainty; area {effect.area_m2} m²</caption>
@@ -30,8 +31,8 @@ export function NowTable({ effect, now }: { effect: Effect; now: number }) {
         return <tr key={r.name}>
           <th scope="row">{r.name}</th>
           {r.value === null
-            ? <td colSpan={3} class="absent">none: {n.reason ?? 'the reason was not given'}</td>
-            : <><td class="number"><b>{measured(r.value * factor, r.u === null ? null : r.u * factor)}</b></td><td>{r.unit}</td><td class="quiet">{r.from && (r.from.startsWith('against') ? r.from : `from ${r.from}`)}</td></>}
+            ? <td colSpan={3} class="absent">{r.name === firstAbsent ? `none: ${n.reason ?? 'the reason was not given'}` : 'none, for the same reason'}</td>
+            : <><td class="number"><b>{r.decimals !== undefined ? fixed(r.value, r.decimals) : measured(r.value * factor, r.u === null ? null : r.u * factor)}</b></td><td>{r.unit}</td><td class="quiet">{r.from && (r.from.startsWith('against') ? r.from : `from ${r.from}`)}</td></>}
         </tr>;
       })}</tbody>
     </table>

@@ -37,7 +37,7 @@ const publish = throttle(() => {
 function mergeImport(one: Import): void {
   const known = imports.state.peek().value?.imports ?? [];
   const at = known.findIndex(i => i.id === one.id);
-  imports.put({ imports: at < 0 ? [one, ...known] : known.with(at, one) });
+  imports.put({ imports: at < 0 ? [one, ...known] : known.map(i => (i.id === one.id ? one : i)) });
 }
 
 /** Loads what every page shares and keeps it fresh. */

@@ -2,7 +2,7 @@ import type { Effect, ReadingsState } from '../api/types';
 import { limitName, unknownReason } from './due';
 import { duration } from './duration';
 import type { Piece } from './line';
-import { rounded, significant } from './number';
+import { rounded } from './number';
 import { prettyUnit } from './quantity';
 import { moment } from './time';
 
@@ -31,9 +31,10 @@ export function effectWords(effect: Effect, readings: ReadingsState, latest: num
 
 /** A limit's value beside its bound, to the decimals that tell them apart. */
 export function against(value: number | null, bound: number | null, unit: string): { value: string; bound: string; unit: string } {
-  const share = unit === '' || unit === '1';
-  const factor = share ? 100 : 1;
-  const decimals = bound === null || bound === 0 ? 0 : Math.max(0, 2 - Math.floor(Math.log10(Math.abs(bound * factor))));
-  const show = (v: number | null) => (v === null ? 'not known' : bound === null ? significant(v * factor, 3) : rounded(v * factor, decimals > 2 ? decimals : 0));
-  return { value: show(value), bound: show(bound), unit: share ? '%' : prettyUnit(unit) };
+  const [factor, shown] = unit === '' || unit === '1' ? [100, '%'] : unit === 'm2.K/W' ? [1000, 'm²·K/kW'] : [1, prettyUnit(unit)];
+  const known = bound ?? value ?? 0;
+  const enough = known === 0 ? 0 : Math.max(0, 1 - Math.floor(Math.log10(Math.abs(known * factor))));
+  const show = (v: number | null, decimals: number) => (v === null ? 'not known' : rounded(v * factor, decimals));
+  const decimals = [enough, enough + 1, enough + 2].find(d => value === bound || show(value, d) !== show(bound, d)) ?? enough + 2;
+  return { value: show(value, decimals), bound: show(bound, decimals), unit: shown };
 }

@@ -33,6 +33,11 @@ export function fullMoment(instant: number, zone: string): string {
   return `${days[weekday(c)]} ${c.day} ${months[c.month - 1]} ${c.year} ${clock(c)}`;
 }
 
+/** A text of the service with its UTC instants in the site's time. */
+export function inSiteTime(text: string, zone: string, now: number): string {
+  return text.replace(/\d{4}-\d\d-\d\dT\d\d:\d\d(:\d\d(\.\d+)?)?(Z|\+00:00)/g, instant => moment(Date.parse(instant), zone, now));
+}
+
 /** "2026-11-29T09:12", as an input of type datetime-local holds it. */
 export function toInput(instant: number, zone: string): string {
   const c = civil(instant, zone);

@@ -2,7 +2,7 @@ import { describe, expect, test } from 'vitest';
 import type { Line } from '../../src/api/types';
 import { aged } from '../../src/words/aged';
 import { cleanlinessWords, dueWords } from '../../src/words/due';
-import { effectWords } from '../../src/words/effect';
+import { against, effectWords } from '../../src/words/effect';
 import { lineWords } from '../../src/words/line';
 import { due, effect, line, now, unknown } from './sample';
 
@@ -55,4 +55,11 @@ test('LiveWhenFetchedButGrownOldOnThePage_ReadsAsStale', () => {
   expect(aged(cases.calm!, now).readings).toBe('live');
   const later = now + 20 * 60_000;
   expect(lineWords(aged(cases.calm!, later), later, zone).map(p => p.text).join('')).toMatch(/^No reading has come for 20 min/);
+});
+test('LimitAgainstBound_ToTheDecimalsThatTellThemApart', () => {
+  expect(against(0.7612, 0.7, '1')).toEqual({ value: '76', bound: '70', unit: '%' });
+  expect(against(673.4, 690, 'W/(m2.K)')).toEqual({ value: '673', bound: '690', unit: 'W/(m²·K)' });
+  expect(against(0.000334, 0.00041, 'm2.K/W')).toMatchObject({ value: '0.33', bound: '0.41', unit: 'm²·K/kW' });
+  expect(against(0.6961, 0.7, '1')).toEqual({ value: '69.6', bound: '70.0', unit: '%' });
+  expect(against(null, 600, 'h')).toEqual({ value: 'not known', bound: '600', unit: 'h' });
 });

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { fromInput, moment, toInput } from '../../src/words/time';
+import { fromInput, inSiteTime, moment, toInput } from '../../src/words/time';
 import { firstInstant, instants, offset } from '../../src/words/zone';
 
 const zone = 'Europe/Copenhagen';
@@ -23,6 +23,9 @@ test('Input_ComesBackAsTheSameInstant', () => {
   const at = utc('2026-07-01T10:20:00Z');
   expect(toInput(at, zone)).toBe('2026-07-01T12:20');
   expect(fromInput(toInput(at, zone), zone)).toEqual([at]);
+});
+test('InstantsInATextOfTheService_InSiteTime', () => {
+  expect(inSiteTime('cleaned from 2026-11-03T04:32:00.000Z to 2026-11-03T13:32:00Z, code 12', zone, utc('2026-11-30T12:00:00Z'))).toBe('cleaned from Tue 3 Nov 05:32 to Tue 3 Nov 14:32, code 12');
 });
 test('InputThatIsNoTime_Null', () => expect(fromInput('yesterday', zone)).toBeNull());
 
