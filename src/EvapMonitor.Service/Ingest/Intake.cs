@@ -49,6 +49,7 @@ public sealed class Intake : IDisposable
     private readonly List<long> _damaged = [];
     private long _removeThrough, _removeBytes;
     private int _waiting;
+    private bool _inTrouble;
     private long _refusedAt;
     private volatile string? _refusal;
 
@@ -228,7 +229,7 @@ public sealed class Intake : IDisposable
             if (blob is not null && refusal is null)
             {
                 KillPoint.Pass("spool-after-commit");
-                if (_refusal is not null) Better();
+                if (_inTrouble) Better();
             }
         }
         catch (SqliteException error)
@@ -244,7 +245,12 @@ public sealed class Intake : IDisposable
             if (_notices.Raise(FailedNotice, refusal + " Readings are refused until it can.")) _log.SpoolFailed(error);
         }
 
-        if (refusal is not null) Interlocked.Exchange(ref _refusedAt, _clock.GetTimestamp());
+        if (refusal is not null)
+        {
+            _inTrouble = true;
+            Interlocked.Exchange(ref _refusedAt, _clock.GetTimestamp());
+        }
+
         // Space that came free lets those that come next try again.
         if (blob is not null || removeThrough > 0) _refusal = refusal;
         foreach (Submission submission in gathered)
@@ -266,6 +272,7 @@ public sealed class Intake : IDisposable
 
     private void Better()
     {
+        _inTrouble = false;
         _log.SpoolTakesAgain();
         _notices.Clear(FullNotice);
         _notices.Clear(FailedNotice);
