@@ -1,4 +1,3 @@
-using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Security;
 
 namespace EvapMonitor.Service.Api;
@@ -23,7 +22,7 @@ internal static class Routes
 
         api.MapGet("/signals", SignalHandlers.List).Named("getSignals", "Signals with their last readings", Policies.Read);
         api.MapPost("/readings", ReadingHandlers.Add).Named("addReadings", "Readings in batches, plain or gzip; answered once they are durable", Policies.Write)
-            .Accepts<NewReadingsWire>("application/json").ProducesProblem(StatusCodes.Status503ServiceUnavailable);
+            .AddOpenApiOperationTransformer(OpenApiText.DescribeReadings).ProducesProblem(StatusCodes.Status503ServiceUnavailable);
         api.MapGet("/imports", ImportHandlers.List).Named("getImports", "Imports, newest first", Policies.Read);
         api.MapGet("/imports/{id}", ImportHandlers.Find).Named("getImport", "One import", Policies.Read);
         api.MapPost("/imports", ImportHandlers.Upload).Named("uploadHistory", "Upload a CSV of history, plain or gzip", Policies.Write);

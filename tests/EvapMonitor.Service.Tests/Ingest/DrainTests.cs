@@ -14,28 +14,19 @@ public class DrainTests(IngestServer server)
     [IngestFact]
     public async Task DatabaseAwayAndBack_TheBacklogDrains_AndNothingIsLost()
     {
-        string folder = IngestServer.OpenFolder();
-        PrivateServer postgres = await PrivateServer.StartAsync(folder, TestContext.Current.CancellationToken);
-        try
-        {
-            await using IngestService service = await IngestService.StartAsync(postgres.Connection);
-            await KeepAsync(service, 0, 1_000);
-            await service.StoredAsync(1_000);
-            await postgres.StopAsync();
-            for (int i = 0; i < 40; i++) await KeepAsync(service, 1_000 + (i * 2_500), 2_500);
-            await IngestService.UntilAsync("the notice", () => service.Notices.Standing.Any(notice => notice.Key == "database-away"));
-            await postgres.EnsureRunningAsync(TestContext.Current.CancellationToken);
-            await service.StoredAsync(101_000, 60);
-            Assert.Equal(Enumerable.Range(0, 101_000).Select(i => (double)i), await service.ValuesAsync("F.1"));
-            await IngestService.UntilAsync("the spool empty", () => service.Get<Intake>().SpooledBytes == 0);
-            Assert.Empty(service.Notices.Standing);
-            Assert.Equal((101_000, 0, 0), (service.Drain.Accepted, service.Drain.Repeated, service.Drain.Differing));
-        }
-        finally
-        {
-            await postgres.StopAsync();
-            Directory.Delete(folder, recursive: true);
-        }
+        await using OwnPostgres postgres = await OwnPostgres.StartAsync();
+        await using IngestService service = await IngestService.StartAsync(postgres.Connection);
+        await KeepAsync(service, 0, 1_000);
+        await service.StoredAsync(1_000);
+        await postgres.StopAsync();
+        for (int i = 0; i < 40; i++) await KeepAsync(service, 1_000 + (i * 2_500), 2_500);
+        await IngestService.UntilAsync("the notice", () => service.Notices.Standing.Any(notice => notice.Key == "database-away"));
+        await postgres.StartAgainAsync();
+        await service.StoredAsync(101_000, 60);
+        Assert.Equal(Enumerable.Range(0, 101_000).Select(i => (double)i), await service.ValuesAsync("F.1"));
+        await IngestService.UntilAsync("the spool empty", () => service.Get<Intake>().SpooledBytes == 0);
+        Assert.Empty(service.Notices.Standing);
+        Assert.Equal((101_000, 0, 0), (service.Drain.Accepted, service.Drain.Repeated, service.Drain.Differing));
     }
 
     [IngestFact]

@@ -84,34 +84,25 @@ public class HttpReadingTests(IngestServer server)
     [IngestFact]
     public async Task SpoolFull_IsAnswered503_WithRetryAfter()
     {
-        string folder = IngestServer.OpenFolder();
-        var postgres = await Service.Store.PrivateServer.StartAsync(folder, TestContext.Current.CancellationToken);
-        try
+        await using OwnPostgres postgres = await OwnPostgres.StartAsync();
+        await using IngestService service = await IngestService.StartAsync(postgres.Connection, spoolMebibytes: "1");
+        await postgres.StopAsync();
+        int accepted = 0;
+        HttpStatusCode status = HttpStatusCode.Accepted;
+        string text = "";
+        for (int i = 0; i < 20 && status == HttpStatusCode.Accepted; i++)
         {
-            await using IngestService service = await IngestService.StartAsync(postgres.Connection, spoolMebibytes: "1");
-            await postgres.StopAsync();
-            int accepted = 0;
-            HttpStatusCode status = HttpStatusCode.Accepted;
-            string text = "";
-            for (int i = 0; i < 20 && status == HttpStatusCode.Accepted; i++)
-            {
-                (status, text) = await PostAsync(service, Body([.. Enumerable.Range(i * 20_000, 20_000).Select(n => Item("F.1", n, n))]), gzip: true);
-                if (status == HttpStatusCode.Accepted) accepted += 20_000;
-            }
+            (status, text) = await PostAsync(service, Body([.. Enumerable.Range(i * 20_000, 20_000).Select(n => Item("F.1", n, n))]), gzip: true);
+            if (status == HttpStatusCode.Accepted) accepted += 20_000;
+        }
 
-            Assert.Equal(HttpStatusCode.ServiceUnavailable, status);
-            Assert.Contains("The spool is full", text, StringComparison.Ordinal);
-            using var content = new StringContent(Body(Item("F.1", 1, 1)), Encoding.UTF8, "application/json");
-            using HttpResponseMessage refused = await service.Http.PostAsync("/api/v1/readings", content, TestContext.Current.CancellationToken);
-            Assert.Equal(TimeSpan.FromSeconds(5), refused.Headers.RetryAfter?.Delta);
-            await postgres.EnsureRunningAsync(TestContext.Current.CancellationToken);
-            await service.StoredAsync(accepted, 60);
-        }
-        finally
-        {
-            await postgres.StopAsync();
-            Directory.Delete(folder, recursive: true);
-        }
+        Assert.Equal(HttpStatusCode.ServiceUnavailable, status);
+        Assert.Contains("The spool is full", text, StringComparison.Ordinal);
+        using var content = new StringContent(Body(Item("F.1", 1, 1)), Encoding.UTF8, "application/json");
+        using HttpResponseMessage refused = await service.Http.PostAsync("/api/v1/readings", content, TestContext.Current.CancellationToken);
+        Assert.Equal(TimeSpan.FromSeconds(5), refused.Headers.RetryAfter?.Delta);
+        await postgres.StartAgainAsync();
+        await service.StoredAsync(accepted, 60);
     }
 
     private static string Body(params string[] items) => $"{{\"readings\":[{string.Join(',', items)}]}}";

@@ -16,7 +16,8 @@ public sealed class IngestService : IAsyncDisposable
     {
         (Folder, _host) = (folder, host);
         Http = new HttpClient { BaseAddress = new Uri(host.Address) };
-        Database = NpgsqlDataSource.Create(connection);
+        // Not pooled: the database goes away in some tests, and a connection kept would not notice.
+        Database = NpgsqlDataSource.Create(connection + ";Pooling=false");
     }
 
     public string Folder { get; }

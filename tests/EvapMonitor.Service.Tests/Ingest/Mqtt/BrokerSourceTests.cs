@@ -120,31 +120,22 @@ public class BrokerSourceTests(IngestServer server)
     public async Task SpoolRefuses_TheConnectionEnds_AndWhatWasSentComesLater(string protocol)
     {
         // The database is away, so that the small spool fills.
-        string folder = IngestServer.OpenFolder();
-        var postgres = await Service.Store.PrivateServer.StartAsync(folder, TestContext.Current.CancellationToken);
-        try
-        {
-            await using Mosquitto broker = await Mosquitto.StartAsync();
-            await using IngestService service = await IngestService.StartAsync(
-                postgres.Connection, Sources(broker, protocol, """{"filter": "#", "message": "object"}"""), spoolMebibytes: "1");
-            await postgres.StopAsync();
-            SourceState state = service.Sources.All.Single(source => source.Name == "gateway");
-            await IngestService.UntilAsync("the connection", () => state.ConnectedSince is not null);
-            using Publisher publisher = await Publisher.ConnectAsync(broker.Port);
-            int filled = await FillAsync(service);
-            await publisher.SendSeriesAsync("T.1", Start, 0, 200);
-            await IngestService.UntilAsync("the refusal", () => state.Refused > 0 && service.Notices.Standing.Any(notice => notice.Key == "spool-full"), 30);
-            await IngestService.UntilAsync("the end of the connection", () => state.LastError?.Contains("refused", StringComparison.Ordinal) == true);
-            await postgres.EnsureRunningAsync(TestContext.Current.CancellationToken);
-            await service.StoredAsync(filled + 200, 60);
-            Assert.Equal(Enumerable.Range(0, 200).Select(i => (double)i), await service.ValuesAsync("T.1"));
-            await IngestService.UntilAsync("the notices gone", () => service.Notices.Standing.Count == 0);
-        }
-        finally
-        {
-            await postgres.StopAsync();
-            Directory.Delete(folder, recursive: true);
-        }
+        await using OwnPostgres postgres = await OwnPostgres.StartAsync();
+        await using Mosquitto broker = await Mosquitto.StartAsync();
+        await using IngestService service = await IngestService.StartAsync(
+            postgres.Connection, Sources(broker, protocol, """{"filter": "#", "message": "object"}"""), spoolMebibytes: "1");
+        await postgres.StopAsync();
+        SourceState state = service.Sources.All.Single(source => source.Name == "gateway");
+        await IngestService.UntilAsync("the connection", () => state.ConnectedSince is not null);
+        using Publisher publisher = await Publisher.ConnectAsync(broker.Port);
+        int filled = await FillAsync(service);
+        await publisher.SendSeriesAsync("T.1", Start, 0, 200);
+        await IngestService.UntilAsync("the refusal", () => state.Refused > 0 && service.Notices.Standing.Any(notice => notice.Key == "spool-full"), 30);
+        await IngestService.UntilAsync("the end of the connection", () => state.LastError?.Contains("refused", StringComparison.Ordinal) == true);
+        await postgres.StartAgainAsync();
+        await service.StoredAsync(filled + 200, 60);
+        Assert.Equal(Enumerable.Range(0, 200).Select(i => (double)i), await service.ValuesAsync("T.1"));
+        await IngestService.UntilAsync("the notices gone", () => service.Notices.Standing.Count == 0);
     }
 
     /// <summary>Fills the spool by another way until it refuses a handful.</summary>
