@@ -27,8 +27,14 @@ internal static partial class LogMessages
     [LoggerMessage(302, LogLevel.Warning, "Import of {Name} failed: {Reason}")]
     public static partial void ImportFailed(this ILogger log, string name, string reason);
 
+    [LoggerMessage(303, LogLevel.Error, "Import of {Name} broke off")]
+    public static partial void ImportBroke(this ILogger log, Exception error, string name);
+
     [LoggerMessage(400, LogLevel.Debug, "{Line} {Day} evaluated: {Windows} windows in {Milliseconds:0} ms")]
     public static partial void DayEvaluated(this ILogger log, string line, DateOnly day, int windows, double milliseconds);
+
+    [LoggerMessage(401, LogLevel.Error, "{Line} {Day} could not be evaluated; it has no results until its readings change")]
+    public static partial void DayBroke(this ILogger log, Exception error, string line, DateOnly day);
 
     [LoggerMessage(500, LogLevel.Error, "The spool could not be read and was set aside as {Path}; readings that waited in it are missing")]
     public static partial void SpoolSetAside(this ILogger log, string path);

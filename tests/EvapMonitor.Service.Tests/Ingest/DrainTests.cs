@@ -1,11 +1,12 @@
 using EvapMonitor.Core.Readings;
 using EvapMonitor.Service.Ingest;
 using EvapMonitor.Service.Store;
+using EvapMonitor.Service.Tests.Support;
 using Npgsql;
 
 namespace EvapMonitor.Service.Tests.Ingest;
 
-public class DrainTests(IngestServer server)
+public class DrainTests(PostgresServer server)
 {
     private static readonly long Start = TimeProvider.System.GetUtcNow().AddMinutes(-30).ToUnixTimeMilliseconds();
 
@@ -20,11 +21,11 @@ public class DrainTests(IngestServer server)
         await service.StoredAsync(1_000);
         await postgres.StopAsync();
         for (int i = 0; i < 40; i++) await KeepAsync(service, 1_000 + (i * 2_500), 2_500);
-        await IngestService.UntilAsync("the notice", () => service.Notices.Standing.Any(notice => notice.Key == "database-away"));
+        await Poll.UntilAsync("the notice", () => service.Notices.Standing.Any(notice => notice.Key == "database-away"));
         await postgres.StartAgainAsync();
         await service.StoredAsync(101_000, 60);
         Assert.Equal(Enumerable.Range(0, 101_000).Select(i => (double)i), await service.ValuesAsync("F.1"));
-        await IngestService.UntilAsync("the spool empty", () => service.Get<Intake>().SpooledBytes == 0);
+        await Poll.UntilAsync("the spool empty", () => service.Get<Intake>().SpooledBytes == 0);
         Assert.Empty(service.Notices.Standing);
         Assert.Equal((101_000, 0, 0), (service.Drain.Accepted, service.Drain.Repeated, service.Drain.Differing));
     }
@@ -42,7 +43,7 @@ public class DrainTests(IngestServer server)
         Assert.All(refused, one => Assert.Equal(("F.1", "test"), (one.Signal, one.Source)));
         Assert.All(refused, one => Assert.Contains("no_sevens", one.Reason, StringComparison.Ordinal));
         Assert.Contains(service.Notices.Standing, notice => notice.Key == "readings-refused");
-        await IngestService.UntilAsync("the spool empty", () => service.Get<Intake>().SpooledBytes == 0);
+        await Poll.UntilAsync("the spool empty", () => service.Get<Intake>().SpooledBytes == 0);
     }
 
     [IngestFact]

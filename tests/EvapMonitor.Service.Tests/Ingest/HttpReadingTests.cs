@@ -3,10 +3,11 @@ using System.Net;
 using System.Net.Http.Headers;
 using System.Text;
 using System.Text.Json;
+using EvapMonitor.Service.Tests.Support;
 
 namespace EvapMonitor.Service.Tests.Ingest;
 
-public class HttpReadingTests(IngestServer server)
+public class HttpReadingTests(PostgresServer server)
 {
     private static readonly DateTimeOffset Start = TimeProvider.System.GetUtcNow().AddMinutes(-30);
 
@@ -23,7 +24,7 @@ public class HttpReadingTests(IngestServer server)
         }
 
         await service.StoredAsync(1000);
-        await IngestService.UntilAsync("the repeats counted", () => service.Drain.Repeated == 2000);
+        await Poll.UntilAsync("the repeats counted", () => service.Drain.Repeated == 2000);
         Assert.Equal(Enumerable.Range(0, 1000).Select(i => (double)i), await service.ValuesAsync("F.1"));
     }
 
@@ -33,7 +34,7 @@ public class HttpReadingTests(IngestServer server)
         await using IngestService service = await IngestService.StartAsync(await server.CreateDatabaseAsync());
         await PostAsync(service, Body(Item("F.1", 0, 1)));
         await PostAsync(service, Body(Item("F.1", 0, 2)));
-        await IngestService.UntilAsync("the difference counted", () => service.Drain.Differing == 1);
+        await Poll.UntilAsync("the difference counted", () => service.Drain.Differing == 1);
         Assert.Equal([1], await service.ValuesAsync("F.1"));
     }
 

@@ -1,5 +1,5 @@
 using System.Runtime.CompilerServices;
-using EvapMonitor.Service.Store;
+using EvapMonitor.Service.Tests.Support;
 
 namespace EvapMonitor.Service.Tests.Ingest;
 
@@ -8,7 +8,7 @@ public static class IngestNeeds
 {
     public const string Missing = "PostgreSQL's binaries or mosquitto (/usr/sbin/mosquitto) are not on this machine.";
 
-    public static bool AreThere => Environment.GetEnvironmentVariable("CI") == "true" || (Mosquitto.IsThere && PrivateServer.FindBinaries() is not null);
+    public static bool AreThere => Environment.GetEnvironmentVariable("CI") == "true" || (Mosquitto.IsThere && Prerequisites.HasBinaries);
 }
 
 /// <summary>A test with a real database and a real broker.</summary>

@@ -1,6 +1,6 @@
-using System.Diagnostics;
 using EvapMonitor.Service.Ingest;
 using EvapMonitor.Service.Live;
+using EvapMonitor.Service.Tests.Support;
 using Microsoft.Extensions.DependencyInjection;
 using Npgsql;
 using Serilog.Events;
@@ -42,7 +42,7 @@ public sealed class IngestService : IAsyncDisposable
     /// <param name="folder">The data folder; null makes one.</param>
     public static async Task<IngestService> StartAsync(string connection, string? sources = null, string ownBroker = "off", string? spoolMebibytes = null, string? folder = null)
     {
-        folder ??= IngestServer.OpenFolder();
+        folder ??= TemporaryFolder.Create();
         ServiceOptions options = await OptionsAsync(folder, connection, sources, ownBroker, spoolMebibytes);
         return new IngestService(folder, await ServiceHost.StartAsync(options, Stop, null, LogEventLevel.Fatal), connection);
     }
@@ -76,20 +76,7 @@ public sealed class IngestService : IAsyncDisposable
         return (double[])(await command.ExecuteScalarAsync(Stop))!;
     }
 
-    public Task StoredAsync(long readings, int limitSeconds = 20) => UntilAsync($"{readings} readings stored", async () => await CountAsync() == readings, limitSeconds);
-
-    /// <summary>Waits on what is waited for, with a limit.</summary>
-    public static async Task UntilAsync(string awaited, Func<Task<bool>> ask, int limitSeconds = 20)
-    {
-        long began = Stopwatch.GetTimestamp();
-        while (!await ask())
-        {
-            Assert.True(Stopwatch.GetElapsedTime(began).TotalSeconds < limitSeconds, $"Not within {limitSeconds} s: {awaited}");
-            await Task.Delay(20, Stop);
-        }
-    }
-
-    public static Task UntilAsync(string awaited, Func<bool> ask, int limitSeconds = 20) => UntilAsync(awaited, () => Task.FromResult(ask()), limitSeconds);
+    public Task StoredAsync(long readings, int limitSeconds = 20) => Poll.UntilAsync($"{readings} readings stored", async () => await CountAsync() == readings, limitSeconds);
 
     public async ValueTask DisposeAsync()
     {

@@ -1,4 +1,5 @@
 using EvapMonitor.Service.Store;
+using EvapMonitor.Service.Tests.Support;
 
 namespace EvapMonitor.Service.Tests.Ingest;
 
@@ -14,7 +15,7 @@ public sealed class OwnPostgres : IAsyncDisposable
 
     public static async Task<OwnPostgres> StartAsync()
     {
-        string folder = IngestServer.OpenFolder();
+        string folder = TemporaryFolder.Create();
         return new OwnPostgres(folder, await PrivateServer.StartAsync(folder, TestContext.Current.CancellationToken));
     }
 

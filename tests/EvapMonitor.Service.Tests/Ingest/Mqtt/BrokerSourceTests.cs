@@ -1,9 +1,10 @@
 using EvapMonitor.Core.Readings;
 using EvapMonitor.Service.Ingest;
+using EvapMonitor.Service.Tests.Support;
 
 namespace EvapMonitor.Service.Tests.Ingest.Mqtt;
 
-public class BrokerSourceTests(IngestServer server)
+public class BrokerSourceTests(PostgresServer server)
 {
     private static readonly DateTimeOffset Start = TimeProvider.System.GetUtcNow().AddMinutes(-30);
 
@@ -46,7 +47,7 @@ public class BrokerSourceTests(IngestServer server)
         await publisher.SendAsync("F.1", Publisher.Message(TimeProvider.System.GetUtcNow().AddHours(1), 0));
         await service.StoredAsync(10);
         SourceState state = service.Sources.All.Single(source => source.Name == "gateway");
-        await IngestService.UntilAsync("all counted", () => state.OutOfTime == 1);
+        await Poll.UntilAsync("all counted", () => state.OutOfTime == 1);
         Assert.Equal((30, 1, 10), (state.Malformed, state.Unknown, state.Accepted));
         Assert.Equal(20, state.Samples.Count);
         Assert.Contains(state.Samples, sample => sample.Where == "F.1" && sample.Reason.Contains("not JSON", StringComparison.Ordinal));
@@ -66,10 +67,10 @@ public class BrokerSourceTests(IngestServer server)
         await using IngestService service = await StartAsync(broker, protocol, """{"filter": "#", "message": "object"}""");
         await service.StoredAsync(1);
         SourceState state = service.Sources.All.Single(source => source.Name == "gateway");
-        await IngestService.UntilAsync("the retained message without a time", () => state.InstantUnknown == 1);
+        await Poll.UntilAsync("the retained message without a time", () => state.InstantUnknown == 1);
         await broker.StopAsync();
         await broker.StartAsync();
-        await IngestService.UntilAsync("the reconnection", () => state.Reconnects == 1);
+        await Poll.UntilAsync("the reconnection", () => state.Reconnects == 1);
         using Publisher later = await Publisher.ConnectAsync(broker.Port);
         await later.SendAsync("F.1", Publisher.Message(Start, 8));
         await service.StoredAsync(2);
@@ -86,7 +87,7 @@ public class BrokerSourceTests(IngestServer server)
         using (Publisher first = await Publisher.ConnectAsync(broker.Port)) await first.SendSeriesAsync("F.1", Start, 0, 500);
         await broker.StopAsync();
         SourceState state = service.Sources.All.Single(source => source.Name == "gateway");
-        await IngestService.UntilAsync("the loss noticed", () => service.Notices.Standing.Any(notice => notice.Key == "source:gateway"));
+        await Poll.UntilAsync("the loss noticed", () => service.Notices.Standing.Any(notice => notice.Key == "source:gateway"));
         Assert.Null(state.ConnectedSince);
         Assert.NotNull(state.LastError);
         await broker.StartAsync();
@@ -126,16 +127,16 @@ public class BrokerSourceTests(IngestServer server)
             postgres.Connection, Sources(broker, protocol, """{"filter": "#", "message": "object"}"""), spoolMebibytes: "1");
         await postgres.StopAsync();
         SourceState state = service.Sources.All.Single(source => source.Name == "gateway");
-        await IngestService.UntilAsync("the connection", () => state.ConnectedSince is not null);
+        await Poll.UntilAsync("the connection", () => state.ConnectedSince is not null);
         using Publisher publisher = await Publisher.ConnectAsync(broker.Port);
         int filled = await FillAsync(service);
         await publisher.SendSeriesAsync("T.1", Start, 0, 200);
-        await IngestService.UntilAsync("the refusal", () => state.Refused > 0 && service.Notices.Standing.Any(notice => notice.Key == "spool-full"), 30);
-        await IngestService.UntilAsync("the end of the connection", () => state.LastError?.Contains("refused", StringComparison.Ordinal) == true);
+        await Poll.UntilAsync("the refusal", () => state.Refused > 0 && service.Notices.Standing.Any(notice => notice.Key == "spool-full"), 30);
+        await Poll.UntilAsync("the end of the connection", () => state.LastError?.Contains("refused", StringComparison.Ordinal) == true);
         await postgres.StartAgainAsync();
         await service.StoredAsync(filled + 200, 60);
         Assert.Equal(Enumerable.Range(0, 200).Select(i => (double)i), await service.ValuesAsync("T.1"));
-        await IngestService.UntilAsync("the notices gone", () => service.Notices.Standing.Count == 0);
+        await Poll.UntilAsync("the notices gone", () => service.Notices.Standing.Count == 0);
     }
 
     /// <summary>Fills the spool by another way until it refuses a handful.</summary>
@@ -166,7 +167,7 @@ public class BrokerSourceTests(IngestServer server)
     private async Task<IngestService> StartAsync(Mosquitto broker, string protocol, string topics, string more = "")
     {
         IngestService service = await IngestService.StartAsync(await server.CreateDatabaseAsync(), Sources(broker, protocol, topics, more));
-        await IngestService.UntilAsync("the connection", () => service.Sources.All.Any(source => source.ConnectedSince is not null));
+        await Poll.UntilAsync("the connection", () => service.Sources.All.Any(source => source.ConnectedSince is not null));
         return service;
     }
 }

@@ -2,11 +2,12 @@ using System.Net;
 using System.Security.Cryptography;
 using System.Security.Cryptography.X509Certificates;
 using EvapMonitor.Service.Ingest;
+using EvapMonitor.Service.Tests.Support;
 using MQTTnet;
 
 namespace EvapMonitor.Service.Tests.Ingest.Mqtt;
 
-public class BrokerTlsTests(IngestServer server)
+public class BrokerTlsTests(PostgresServer server)
 {
     private static readonly DateTimeOffset Now = TimeProvider.System.GetUtcNow();
 
@@ -15,7 +16,7 @@ public class BrokerTlsTests(IngestServer server)
     {
         using Authority authority = new("right");
         await using Mosquitto broker = await StartAsync(authority, "require_certificate true");
-        string folder = IngestServer.OpenFolder();
+        string folder = TemporaryFolder.Create();
         await File.WriteAllTextAsync(Path.Combine(folder, "ca.pem"), authority.Pem, TestContext.Current.CancellationToken);
         (string certificate, string key) = authority.Issue("client", isServer: false);
         await File.WriteAllTextAsync(Path.Combine(folder, "client.pem"), certificate, TestContext.Current.CancellationToken);
@@ -25,7 +26,7 @@ public class BrokerTlsTests(IngestServer server)
             await server.CreateDatabaseAsync(),
             Sources(broker, "\"user\": \"evap\", \"password-file\": \"password\", \"tls\": {\"ca\": \"ca.pem\", \"certificate\": \"client.pem\", \"key\": \"client.key\"},"),
             folder: folder);
-        await IngestService.UntilAsync("the connection", () => service.Sources.All[0].ConnectedSince is not null);
+        await Poll.UntilAsync("the connection", () => service.Sources.All[0].ConnectedSince is not null);
         using Publisher publisher = await Publisher.ConnectAsync(broker.Port, true, options => options.WithCredentials("evap", "long enough").WithTlsOptions(tls => tls
             .UseTls().WithTrustChain(authority.Chain).WithClientCertificates([Loaded(certificate, key)]).WithRevocationMode(X509RevocationMode.NoCheck)));
         await publisher.SendAsync("F.1", Publisher.Message(Now, 4));
@@ -39,15 +40,15 @@ public class BrokerTlsTests(IngestServer server)
     {
         using Authority right = new("right"), other = new("other");
         await using Mosquitto broker = await StartAsync(right, "");
-        string folder = IngestServer.OpenFolder();
+        string folder = TemporaryFolder.Create();
         await File.WriteAllTextAsync(Path.Combine(folder, "ca.pem"), otherAuthority ? other.Pem : right.Pem, TestContext.Current.CancellationToken);
         await using IngestService service = await IngestService.StartAsync(
             await server.CreateDatabaseAsync(), Sources(broker, $"\"user\": \"evap\", \"password\": \"{password}\", \"tls\": {{\"ca\": \"ca.pem\"}},"), folder: folder);
-        await IngestService.UntilAsync("the failure told", () => service.Sources.All is [{ LastError: not null }]);
+        await Poll.UntilAsync("the failure told", () => service.Sources.All is [{ LastError: not null }]);
         SourceState state = service.Sources.All[0];
         Assert.Null(state.ConnectedSince);
         Assert.Contains(otherAuthority ? "certificate" : "NotAuthorized", state.LastError, StringComparison.OrdinalIgnoreCase);
-        await IngestService.UntilAsync("the notice", () => service.Notices.Standing.Any(notice => notice.Key == "source:gateway"));
+        await Poll.UntilAsync("the notice", () => service.Notices.Standing.Any(notice => notice.Key == "source:gateway"));
         Assert.DoesNotContain(password, string.Concat(service.Notices.Standing), StringComparison.Ordinal);
     }
 

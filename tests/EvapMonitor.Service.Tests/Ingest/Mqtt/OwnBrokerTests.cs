@@ -3,12 +3,13 @@ using System.Net;
 using System.Net.Sockets;
 using EvapMonitor.Service.Ingest;
 using EvapMonitor.Service.Ingest.Mqtt;
+using EvapMonitor.Service.Tests.Support;
 using MQTTnet;
 using MQTTnet.Exceptions;
 
 namespace EvapMonitor.Service.Tests.Ingest.Mqtt;
 
-public class OwnBrokerTests(IngestServer server)
+public class OwnBrokerTests(PostgresServer server)
 {
     private static readonly DateTimeOffset Start = TimeProvider.System.GetUtcNow().AddMinutes(-30);
 
