@@ -11,7 +11,7 @@ internal static class ReadingHandlers
 {
     private const int RetryAfterSeconds = 5;
 
-    /// <summary>Keeps a batch. Sending it again changes nothing: the first value of an instant stands.</summary>
+    // Sending a batch again changes nothing: the first value of an instant stands.
     public static async Task<Results<Accepted<ReadingsTakenWire>, ProblemHttpResult>> Add(
         HttpRequest request, HttpResponse response, Intake intake, SourceStates sources, TimeProvider clock, CancellationToken stop)
     {

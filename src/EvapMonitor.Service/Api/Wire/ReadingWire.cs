@@ -9,7 +9,7 @@ public sealed record NewReadingsWire(IReadOnlyList<NewReadingWire> Readings);
 /// <param name="At">The instant, RFC 3339 with an offset; parts of a millisecond are cut off.</param>
 /// <param name="Value">The value in the unit of the plant file; null or absent only when the quality is bad.</param>
 /// <param name="Quality">good, uncertain, bad or an OPC UA status code; absent is good.</param>
-public sealed record NewReadingWire(string Signal, DateTimeOffset At, double? Value, string? Quality);
+public sealed record NewReadingWire(string Signal, DateTimeOffset At, double? Value = null, string? Quality = null);
 
 /// <summary>What became of a batch.</summary>
 /// <param name="Accepted">Readings that are on disk now.</param>

@@ -149,7 +149,7 @@ public class BrokerSourceTests(PostgresServer server)
             IntakeAnswer answer;
             do
             {
-                long start = Start.ToUnixTimeMilliseconds() + filled;
+                long start = Start.AddDays(-1).ToUnixTimeMilliseconds() + filled;
                 answer = await service.Get<Intake>().KeepAsync(other, [.. Enumerable.Range(0, size).Select(i => new IncomingReading("F.1", new Reading(start + i, i, Quality.Good)))], alone: true);
                 filled += answer.Accepted;
                 // After a refusal one more is let through only in a second.

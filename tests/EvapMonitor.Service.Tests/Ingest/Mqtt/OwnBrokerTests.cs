@@ -55,9 +55,7 @@ public class OwnBrokerTests(PostgresServer server)
         Assert.True(refused);
         await Assert.ThrowsAnyAsync<MqttCommunicationException>(async () => await three.SendAsync("T.1", Publisher.Message(Start, 300)));
         await postgres.StartAgainAsync();
-        // The readings that filled the spool begin at the same instant as the first hundred.
-        await service.StoredAsync(filled + taken, 60);
-        Assert.Equal(100, service.Drain.Repeated + service.Drain.Differing);
+        await service.StoredAsync(100 + filled + taken, 60);
     }
 
     [IngestFact]
