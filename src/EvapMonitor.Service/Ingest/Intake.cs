@@ -28,7 +28,8 @@ public sealed class Intake : IDisposable
     public static readonly TimeSpan GatherLimit = TimeSpan.FromMilliseconds(20);
 
     /// <summary>
-    /// Wait after which no more are expected: a source that waits for its answer before it sends more must not wait the whole limit each time.
+    /// Shortest wait after which no more are expected: a source that waits for its answer before it sends more must not wait the whole limit each time. On a
+    /// slow disk the wait grows to half of what the last commit took, because a small commit costs as much as a large one.
     /// </summary>
     private const int QuietMilliseconds = 2;
 
@@ -49,6 +50,7 @@ public sealed class Intake : IDisposable
     private readonly List<long> _damaged = [];
     private long _removeThrough, _removeBytes;
     private int _waiting;
+    private TimeSpan _lastCommit;
     private bool _inTrouble;
     private long _refusedAt;
     private volatile string? _refusal;
@@ -196,6 +198,7 @@ public sealed class Intake : IDisposable
         int readings = 0;
         bool alone = false;
         long began = _clock.GetTimestamp();
+        int quiet = int.Clamp((int)(_lastCommit.TotalMilliseconds / 2), QuietMilliseconds, (int)GatherLimit.TotalMilliseconds);
         for (Submission? next = first; next is not null;)
         {
             if (next.Batch is { } batch)
@@ -206,7 +209,7 @@ public sealed class Intake : IDisposable
             }
 
             if (readings >= BatchReadings || _clock.GetElapsedTime(began) >= GatherLimit) return;
-            if (!_queue.TryTake(out next, alone ? 0 : QuietMilliseconds)) return;
+            if (!_queue.TryTake(out next, alone ? 0 : quiet)) return;
         }
     }
 
@@ -225,7 +228,9 @@ public sealed class Intake : IDisposable
         string? refusal = blob is null ? null : WhyFull(blob.Length, removeBytes);
         try
         {
+            long began = _clock.GetTimestamp();
             if (refusal is null || removeThrough > 0) _spool.Commit(refusal is null ? blob : null, damaged, removeThrough, removeBytes);
+            _lastCommit = _clock.GetElapsedTime(began);
             if (blob is not null && refusal is null)
             {
                 KillPoint.Pass("spool-after-commit");

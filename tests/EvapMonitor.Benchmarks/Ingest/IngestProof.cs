@@ -41,7 +41,7 @@ internal static class IngestProof
             while (await stand.CountAsync() == before) await Task.Delay(5);
             began = Stopwatch.GetTimestamp();
             long first = await stand.CountAsync();
-            while (await stand.CountAsync() < before + backlog) await Task.Delay(50);
+            while (await stand.CountAsync() < before + backlog) await Task.Delay(250);
             rate = (before + backlog - first) / Stopwatch.GetElapsedTime(began).TotalSeconds;
             stored = await stand.CountAsync();
         }
