@@ -1,6 +1,7 @@
 using System.Globalization;
 using EvapMonitor.Service.Api;
 using EvapMonitor.Service.Evaluation;
+using EvapMonitor.Service.Ingest;
 using EvapMonitor.Service.Ingest.Files;
 using EvapMonitor.Service.Live;
 using EvapMonitor.Service.PlantFile;
@@ -117,7 +118,7 @@ public sealed class ServiceHost : IAsyncDisposable
         builder.Services.AddSingleton(database);
         if (server is not null) builder.Services.AddSingleton(server).AddHostedService<PrivateServerGuard>();
         builder.Services.AddSingleton(new Uploads(Path.Combine(options.Data, "uploads")));
-        builder.Services.AddStore().AddEvaluation().AddApi();
+        builder.Services.AddStore().AddEvaluation().AddIngest(options.Ingest.Plan(options.Data, out _)).AddApi();
         WebApplication app = builder.Build();
         app.UseExceptionHandler();
         app.UseStatusCodePages();

@@ -1,4 +1,5 @@
 using System.Net;
+using EvapMonitor.Service.Ingest;
 
 namespace EvapMonitor.Service;
 
@@ -16,6 +17,9 @@ public sealed record ServiceOptions
 
     /// <summary>Address to listen on: http, a loopback address, a port (0 takes a free one). Default http://127.0.0.1:8642.</summary>
     public string Listen { get; init; } = DefaultListen;
+
+    /// <summary>How readings come in.</summary>
+    public IngestSettings Ingest { get; init; } = new();
 
     /// <summary>The address when none is given.</summary>
     public const string DefaultListen = "http://127.0.0.1:8642";
@@ -36,6 +40,12 @@ public sealed record ServiceOptions
             problems.Add($"listen: found \"{Listen}\"; allowed: loopback addresses only (127.0.0.1, [::1], localhost), because there is no access control yet.");
         if (Connection is not null && WhyNoConnection(Connection) is { } wrong) problems.Add($"connection: {wrong}");
         if (Plant is not null && !File.Exists(Plant)) problems.Add($"plant: found \"{Plant}\"; there is no such file.");
+        if (!string.IsNullOrWhiteSpace(Data))
+        {
+            Ingest.Plan(Data, out IReadOnlyList<string> more);
+            problems.AddRange(more);
+        }
+
         return problems;
     }
 
