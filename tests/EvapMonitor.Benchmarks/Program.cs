@@ -1,8 +1,10 @@
+using EvapMonitor.Benchmarks.Rating;
 using EvapMonitor.Benchmarks.Steam;
 
 // One name per benchmark; each returns the exit code of the program.
 var benchmarks = new Dictionary<string, Func<int>>
 {
+    ["rating"] = RatingBenchmark.Run,
     ["steam"] = SteamBenchmark.Run,
 };
 

@@ -16,6 +16,8 @@ public sealed partial class LineEquations
             Carry(at.Flow, LineProperties.Enthalpy(heater.Liquor, _x[at.Solids], _x[at.Out]), at.Solids, at.Out, -1);
             Carry(at.Flow, LineProperties.Enthalpy(heater.Liquor, _x[at.Solids], _x[at.In]), at.Solids, at.In);
 
+            // A heater that no bleed heats is heated by something else.
+            if (!_graph.BleedTo.Contains(h)) continue;
             // The bleeds condense at the pressure of their effect and give the duty.
             _rows.Begin("bleed heat", heater.Name, _heat);
             Term(at.Duty, -1);

@@ -34,6 +34,7 @@ public sealed class LineNewton
 
     /// <summary>Solves from a start, which holds the given variables too.</summary>
     /// <returns>The solution; null when none was found.</returns>
+    /// <exception cref="InvalidOperationException">There are not as many free variables as equations.</exception>
     public double[]? Solve(double[] start)
     {
         ArgumentNullException.ThrowIfNull(start);
@@ -103,6 +104,7 @@ public sealed class LineNewton
         Array.Fill(place, -1);
         for (int k = 0; k < n; k++) place[_free[k]] = k;
         double norm = Norm(x);
+        if (_rows.Count != n) throw new InvalidOperationException($"The line has {_rows.Count} equations for {n} free variables.");
         double[] tried = new double[x.Length];
         for (int step = 0; step < MostSteps; step++, Steps++)
         {

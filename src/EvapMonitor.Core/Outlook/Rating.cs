@@ -30,7 +30,14 @@ public sealed class Rating
     public RatingResult Solve(RatingConditions conditions, OperatingPoint? near = null)
     {
         ArgumentNullException.ThrowIfNull(conditions);
-        var givens = new RatingGivens(_graph, _variables, conditions);
+        var givens = new RatingGivens(_graph, _variables, conditions, withMakeUp: true);
+        RatingResult result = Solve(conditions, givens, near);
+        // A compressor that delivers more than enough needs no steam to help it: the rest of the vapour goes to the condenser.
+        return result.Point is null && givens.HasMakeUp ? Solve(conditions, new RatingGivens(_graph, _variables, conditions, withMakeUp: false), near) : result;
+    }
+
+    private RatingResult Solve(RatingConditions conditions, RatingGivens givens, OperatingPoint? near)
+    {
         if (givens.Problem is not null) return new(null, givens.Problem);
         if (TooCold(conditions) is { } cold) return new(null, cold);
         var start = new RatingStart(_graph, _variables, _properties, conditions, givens);
@@ -39,19 +46,20 @@ public sealed class Rating
         if (!(flow > 0) || !double.IsFinite(flow)) return new(null, "no operating point: no heat flows through the line");
         var equations = new LineEquations(_graph, _properties, flow, withMachineCurves: true);
         var newton = new LineNewton(equations, [.. Enumerable.Range(0, _variables.Count).Where(i => !givens.Values.ContainsKey(i))], flow);
-        double[]? solution = null;
+        string? flaw = null;
         int steps = 0;
         foreach (double[] from in (double[][])(near is null ? [made] : [Near(near, givens), made]))
         {
-            if (solution is not null) continue;
-            solution = newton.Solve(from);
+            double[]? solution = newton.Solve(from);
             steps += newton.Steps;
+            if (solution is null) continue;
+            flaw = RatingSense.Flaw(_graph, _variables, solution);
+            if (flaw is null) return new(new OperatingPoint(_variables, solution, _graph, steps, RatingSense.Remarks(_graph, _variables, solution)), null);
         }
 
-        if (solution is null) return new(null, $"no operating point was found: the conditions do not fit the line ({newton.Worst(made).Key} stays open)");
-        return RatingSense.Flaw(_graph, _variables, solution) is { } flaw
-            ? new(null, "no operating point: " + flaw)
-            : new(new OperatingPoint(_variables, solution, _graph, steps, RatingSense.Remarks(_graph, _variables, solution)), null);
+        return new(null, flaw is not null
+            ? "no operating point: " + flaw
+            : $"no operating point was found: the conditions do not fit the line ({newton.Worst(made).Key} stays open)");
     }
 
     private static double[] Near(OperatingPoint near, RatingGivens givens)

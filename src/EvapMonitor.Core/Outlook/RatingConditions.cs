@@ -42,7 +42,7 @@ public sealed record RatingConditions
     /// <summary>Motive steam of each thermal recompressor, by name.</summary>
     public IReadOnlyDictionary<string, MotiveConditions> Motive { get; init; } = new Dictionary<string, MotiveConditions>();
 
-    /// <summary>Steam through a valve into a chest that something else heats too, kg/s, by effect. Not given: none.</summary>
+    /// <summary>Steam through a valve into a chest that something else heats too, kg/s, by effect. Not given: what a compressor leaves short; none elsewhere.</summary>
     public IReadOnlyDictionary<string, double> MakeUpSteam { get; init; } = new Dictionary<string, double>();
 }
 

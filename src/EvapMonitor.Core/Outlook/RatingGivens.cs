@@ -11,9 +11,18 @@ internal sealed class RatingGivens
     private readonly LineVariables _at;
     private readonly RatingConditions _conditions;
 
-    public RatingGivens(LineGraph graph, LineVariables variables, RatingConditions conditions)
+    private readonly bool _withMakeUp;
+
+    /// <summary>Gathers the givens.</summary>
+    /// <param name="graph">The line.</param>
+    /// <param name="variables">Its variables.</param>
+    /// <param name="conditions">What is given.</param>
+    /// <param name="withMakeUp">
+    /// True: where steam helps a compressor and no flow is given for it, it is what the compressor leaves short, and no vapour is in surplus. False: none flows.
+    /// </param>
+    public RatingGivens(LineGraph graph, LineVariables variables, RatingConditions conditions, bool withMakeUp)
     {
-        (_graph, _at, _conditions) = (graph, variables, conditions);
+        (_graph, _at, _conditions, _withMakeUp) = (graph, variables, conditions, withMakeUp);
         Problem = Sense() ?? Missing();
         if (Problem is not null) return;
         Liquor();
@@ -22,6 +31,9 @@ internal sealed class RatingGivens
         Machines();
         Problem = Adjustable();
     }
+
+    /// <summary>True when make-up steam is to be found.</summary>
+    public bool HasMakeUp { get; private set; }
 
     /// <summary>Why nothing can be rated; null when all is there.</summary>
     public string? Problem { get; }
@@ -113,7 +125,9 @@ internal sealed class RatingGivens
         for (int k = 0; k < _graph.Heating.Count; k++)
         {
             HeatingWay way = _graph.Heating[k];
-            if (way.From == LineGraph.Steam && !_graph.BySteamAlone[way.To]) Values[_at.Heating[k]] = _conditions.MakeUpSteam.GetValueOrDefault(_graph.NameOf(way.To));
+            if (way.From != LineGraph.Steam || _graph.BySteamAlone[way.To]) continue;
+            if (_withMakeUp && !_conditions.MakeUpSteam.ContainsKey(_graph.NameOf(way.To)) && SurplusOf(way.To) is >= 0 and var surplus && Values.TryAdd(surplus, 0)) HasMakeUp = true;
+            else Values[_at.Heating[k]] = _conditions.MakeUpSteam.GetValueOrDefault(_graph.NameOf(way.To));
         }
 
         var followed = new HashSet<int>();
@@ -132,6 +146,14 @@ internal sealed class RatingGivens
             Set(VariableKind.HeaterIn, heater.Name, at.In);
             Set(VariableKind.HeaterOut, heater.Name, at.Out);
         }
+    }
+
+    /// <summary>The vapour that a compressor leaves to the condenser and that heats the chest otherwise; −1 when there is none.</summary>
+    private int SurplusOf(int chest)
+    {
+        HeatingWay? way = _graph.Heating.FirstOrDefault(way => way.To == chest && way.Recompressor >= 0
+            && _graph.Line.Recompressors[way.Recompressor].Kind == RecompressorKind.Mechanical);
+        return way is null ? -1 : _at.Effects[_graph.SuctionFrom[way.Recompressor]].ToCondenser;
     }
 
     private void Machines()

@@ -128,7 +128,7 @@ internal sealed class RatingStart
             if (_graph.BySteamAlone[way.To]) continue;
             if (way.From == LineGraph.Steam)
             {
-                right[chest] -= _givens.Values[_at.Heating[k]] * Latent;
+                right[chest] -= _givens.Values.GetValueOrDefault(_at.Heating[k]) * Latent;
                 continue;
             }
 

@@ -33,7 +33,7 @@ internal static class TestLines
 
     public static LineProperties Juice() => new(new Sucrose(0.9) { Name = "juice" });
 
-    public static IReadOnlyDictionary<string, double> Coefficients(params (string, double)[] all) => all.ToDictionary(one => one.Item1, one => one.Item2);
+    public static IReadOnlyDictionary<string, double> ByName(params (string, double)[] all) => all.ToDictionary(one => one.Item1, one => one.Item2);
 
     public sealed record Case(string Name, LineGraph Graph, RatingConditions Conditions)
     {
@@ -57,7 +57,7 @@ internal static class TestLines
 
     private static RatingConditions At(double last, double steam, double product, params (string, double)[] coefficients) => new()
     {
-        Coefficients = Coefficients(coefficients), FeedSolids = 0.14, FeedTemperature = 365, ProductSolids = product, LastVapourPressure = last, SteamPressure = steam,
+        Coefficients = ByName(coefficients), FeedSolids = 0.14, FeedTemperature = 365, ProductSolids = product, LastVapourPressure = last, SteamPressure = steam,
     };
 
     private static Case ForwardWithBleedsAndFlash()
@@ -129,10 +129,10 @@ internal static class TestLines
     };
 
     private static Case MechanicalAlone() => new("mechanical", new(Of(Effect("E", By("M1"), LiquorSource.Feed, 800)) with { Recompressors = [Fan(null)] }),
-        At(8e4, 1e5, 0.25, ("E", 2100)) with { SteamPressure = null, FeedTemperature = 366 });
+        At(8e4, 1e5, 0.25, ("E", 2100)) with { SteamPressure = null, FeedTemperature = 374 });
 
     private static Case MechanicalSprayed() => new("sprayed", new(Of(Effect("E", By("M1"), LiquorSource.Feed, 800)) with { Recompressors = [Fan(Meter("S"))] }),
-        At(8e4, 1e5, 0.25, ("E", 2100)) with { SteamPressure = null, FeedTemperature = 366 });
+        At(8e4, 1e5, 0.25, ("E", 2100)) with { SteamPressure = null, FeedTemperature = 374 });
 
     private static Case FiveWithCascade()
     {
