@@ -27,6 +27,12 @@ internal static partial class LogMessages
     [LoggerMessage(302, LogLevel.Warning, "Import of {Name} failed: {Reason}")]
     public static partial void ImportFailed(this ILogger log, string name, string reason);
 
+    [LoggerMessage(303, LogLevel.Error, "Import of {Name} broke off")]
+    public static partial void ImportBroke(this ILogger log, Exception error, string name);
+
     [LoggerMessage(400, LogLevel.Debug, "{Line} {Day} evaluated: {Windows} windows in {Milliseconds:0} ms")]
     public static partial void DayEvaluated(this ILogger log, string line, DateOnly day, int windows, double milliseconds);
+
+    [LoggerMessage(401, LogLevel.Error, "{Line} {Day} could not be evaluated; it has no results until its readings change")]
+    public static partial void DayBroke(this ILogger log, Exception error, string line, DateOnly day);
 }

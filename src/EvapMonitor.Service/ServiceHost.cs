@@ -50,6 +50,7 @@ public sealed class ServiceHost : IAsyncDisposable
         FileStream folderLock = LockFolder(options.Data);
         PrivateServer? server = null;
         NpgsqlDataSource? database = null;
+        WebApplication? app = null;
         try
         {
             try
@@ -58,7 +59,7 @@ public sealed class ServiceHost : IAsyncDisposable
                 string connection = options.Connection ?? server!.Connection;
                 IReadOnlyList<string> scripts = Schema.Upgrade(connection);
                 database = NpgsqlDataSource.Create(connection);
-                WebApplication app = Build(options, database, clock ?? TimeProvider.System, logLevel, server);
+                app = Build(options, database, clock ?? TimeProvider.System, logLevel, server);
                 if (scripts.Count > 0) app.Logger.SchemaUpgraded(string.Join(", ", scripts));
                 app.Services.GetRequiredService<PlantHolder>().Current = await AcceptAsync(app.Services.GetRequiredService<PlantStore>(), plant, stop);
                 await app.StartAsync(stop);
@@ -74,6 +75,7 @@ public sealed class ServiceHost : IAsyncDisposable
         }
         catch
         {
+            if (app is not null) await app.DisposeAsync();
             if (database is not null) await database.DisposeAsync();
             if (server is not null) await server.StopAsync();
             await folderLock.DisposeAsync();
@@ -109,7 +111,7 @@ public sealed class ServiceHost : IAsyncDisposable
         builder.WebHost.UseUrls(options.Listen).UseKestrelHttpsConfiguration().ConfigureKestrel(kestrel =>
         {
             kestrel.AddServerHeader = false;
-            kestrel.Limits.MaxRequestBodySize = 1 << 20;
+            kestrel.Limits.MaxRequestBodySize = ServiceParts.LargestBody;
         });
         builder.Services.AddSingleton(clock);
         builder.Services.AddSingleton(database);

@@ -14,6 +14,9 @@ namespace EvapMonitor.Service;
 /// <summary>Which parts the service is made of.</summary>
 internal static class ServiceParts
 {
+    /// <summary>Largest body of a request but for uploads of history, bytes.</summary>
+    public const int LargestBody = 1 << 20;
+
     public static IServiceCollection AddStore(this IServiceCollection services) => services
         .AddSingleton<PlantHolder>().AddSingleton<PlantStore>().AddSingleton<ReadingStore>().AddSingleton<DayStore>().AddSingleton<ResultStore>()
         .AddSingleton<TrendStore>().AddSingleton<CleaningStore>().AddSingleton<ImportStore>();
@@ -26,10 +29,15 @@ internal static class ServiceParts
     public static IServiceCollection AddApi(this IServiceCollection services)
     {
         services.AddSingleton<EffectStates>().AddSingleton<SiteStates>().AddSingleton<Trends>();
-        services.AddProblemDetails();
+        services.AddProblemDetails(problems => problems.CustomizeProblemDetails = context =>
+        {
+            if (context.ProblemDetails.Status == StatusCodes.Status413PayloadTooLarge) context.ProblemDetails.Detail ??= $"The body is larger than is allowed here, {LargestBody >> 20} MiB.";
+        }).AddExceptionHandler<Refusals>();
+        services.Configure<RouteHandlerOptions>(routes => routes.ThrowOnBadRequest = true);
         services.ConfigureHttpJsonOptions(json =>
         {
             json.SerializerOptions.PropertyNamingPolicy = JsonNamingPolicy.SnakeCaseLower;
+            json.SerializerOptions.Converters.Add(new Rfc3339Converter());
             json.SerializerOptions.MaxDepth = 16;
             json.SerializerOptions.NumberHandling = JsonNumberHandling.Strict;
             json.SerializerOptions.UnmappedMemberHandling = JsonUnmappedMemberHandling.Disallow;

@@ -1,14 +1,15 @@
-using EvapMonitor.Benchmarks.Rating;
+using EvapMonitor.Benchmarks.Proofs;
 using EvapMonitor.Benchmarks.Steam;
 
-// One name per benchmark; each returns the exit code of the program.
-var benchmarks = new Dictionary<string, Func<int>>
+// One name per figure; "prove" writes it to docs/proof, without it it is only shown.
+var figures = new Dictionary<string, Func<string[], Task<int>>>
 {
-    ["rating"] = RatingBenchmark.Run,
-    ["steam"] = SteamBenchmark.Run,
+    ["steam"] = _ => Task.FromResult(SteamBenchmark.Run()),
+    ["import"] = ImportProof.RunAsync,
+    ["rating"] = _ => Task.FromResult(RatingProof.Run()),
 };
 
-if (args.Length == 1 && benchmarks.TryGetValue(args[0], out var benchmark))
-    return benchmark();
-Console.Error.WriteLine($"Usage: EvapMonitor.Benchmarks NAME, where NAME is one of: {string.Join(", ", benchmarks.Keys)}.");
+string[] words = args is ["prove", .. var rest] ? rest : args;
+if (words.Length >= 1 && figures.TryGetValue(words[0], out var figure)) return await figure(words[1..]);
+Console.Error.WriteLine($"Which figure? One of: {string.Join(", ", figures.Keys)}.");
 return 2;

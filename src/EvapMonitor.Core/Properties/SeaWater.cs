@@ -37,7 +37,7 @@ public sealed class SeaWater : Liquor
     }
 
     /// <inheritdoc/>
-    /// <remarks>Heat capacity integrated; the heat of dilution (under 1 kJ/kg in this range) is left out.</remarks>
+    /// <remarks>Heat capacity integrated; the heat of dilution, small for brines of this range, is left out.</remarks>
     public override double Enthalpy(double solids, double temperature)
     {
         var salt = Coefficients(CorrelationRange.Solids(solids));

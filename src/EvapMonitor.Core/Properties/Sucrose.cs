@@ -62,7 +62,7 @@ public sealed class Sucrose : Liquor
     }
 
     /// <inheritdoc/>
-    /// <remarks>No heat of dilution: for sugar it is under 1 kJ/kg.</remarks>
+    /// <remarks>No heat of dilution: for sugar it is a few kJ/kg of solution at 60 % (from memory), within the uncertainty of the heat capacity.</remarks>
     public override double Enthalpy(double solids, double temperature)
     {
         var t = temperature - CorrelationRange.IcePoint;

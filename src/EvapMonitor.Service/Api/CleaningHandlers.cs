@@ -45,6 +45,7 @@ internal static class CleaningHandlers
         (LogOutcome outcome, LoggedCleaning stands) = await store.LogAsync(cleaning, key!, stop);
         CleaningWire wire = EffectStates.WireOf(stands, line.Line.Name, effect.Name);
         if (outcome == LogOutcome.Overlaps) return Problems.Conflict($"It overlaps the cleaning of {effect.Name} from {stands.Start:O} to {stands.End?.ToString("O") ?? "now"}.");
+        if (outcome == LogOutcome.KeyTaken) return Problems.KeyTaken();
         if (outcome == LogOutcome.Repeated) return TypedResults.Ok(wire);
         evaluation.Wake();
         events.Publish("cleanings", new CleaningsChangedWire(line.Line.Name, effect.Name));

@@ -19,13 +19,13 @@ internal static class Dashboard
     /// <summary>Every path that is not the API's or a file is a page of the dashboard.</summary>
     public static void MapDashboard(this WebApplication app)
     {
-        app.MapFallback("/api/{**rest}", () => Problems.NotFound("There is no such address; /openapi/v1.json describes those there are.")).RequireAuthorization(Policies.Read);
+        app.MapFallback("/api/{**rest}", UnknownAddress.Tell).RequireAuthorization(Policies.Read).ExcludeFromDescription();
         app.MapFallback((HttpContext context) =>
         {
             string page = Path.Combine(app.Environment.WebRootPath ?? "", "index.html");
             if (!File.Exists(page)) return (IResult)Problems.NotFound("The dashboard was not built into this program; ./evapmonitor builds it.");
             context.Response.Headers.CacheControl = "no-cache";
             return TypedResults.PhysicalFile(page, "text/html; charset=utf-8");
-        }).RequireAuthorization(Policies.Read);
+        }).RequireAuthorization(Policies.Read).WithMetadata(new HttpMethodMetadata([HttpMethods.Get, HttpMethods.Head])).ExcludeFromDescription();
     }
 }

@@ -54,17 +54,19 @@ public sealed class EffectStates(TrendStore trends, CleaningStore cleanings, Tim
         [.. verdict.Evidence.Select(one => new EvidenceWire(
             Words.Of(one.Limit), Number(one.Value), one.Bound, Words.UnitOf(one.Limit), Words.Of(one.State), one.Since is { } since ? Utc(since) : null))]);
 
-    private EffectNowWire NowOf(LinePlace line, Effect effect, int effectId, DateTimeOffset lastWindow, CleanExpectation? clean)
+    private EffectNowWire? NowOf(LinePlace line, Effect effect, int effectId, DateTimeOffset lastWindow, CleanExpectation? clean)
     {
         DateTimeOffset from = lastWindow.AddHours(-1).AddMilliseconds(1);
         IReadOnlyList<EffectWindow> windows = trends.Windows(line.LineId, effectId, from, lastWindow.AddMilliseconds(1));
         Measured Mean(HourQuantity quantity) => MeanOf([.. windows.Where(EffectHour.Counts).Select(window => EffectHour.Of(window, quantity)).Where(value => value.IsPresent)]);
         Measured coefficient = Mean(HourQuantity.Coefficient), duty = Mean(HourQuantity.Duty), force = Mean(HourQuantity.DrivingForce);
         Measured cleanliness = CleanComparison.Cleanliness(coefficient, clean), resistance = CleanComparison.Resistance(coefficient, clean);
+        // The day may be rewritten between the two questions.
+        if (windows.Count == 0) return null;
         EffectWindow lastOne = windows[^1];
         string? reason = coefficient.IsPresent ? null : lastOne.Reason ?? NotProducing(lastOne.State);
         return new EffectNowWire(
-            windows.Count == 0 ? lastWindow : Utc(windows[0].At), 1,
+            Utc(windows[0].At), 1,
             Number(coefficient.Value), Number(coefficient.Standard), Number(coefficient.Random),
             Celsius(Mean(HourQuantity.HeatingTemperature).Value, lastOne.HeatingTemperature.Value), Celsius(Mean(HourQuantity.BoilingTemperature).Value, lastOne.BoilingTemperature.Value),
             Number(Mean(HourQuantity.Elevation).Value), Number(force.Value), Number(force.Standard),

@@ -1,4 +1,5 @@
 using Microsoft.AspNetCore.OpenApi;
+using Microsoft.OpenApi;
 
 namespace EvapMonitor.Service.Api;
 
@@ -7,6 +8,14 @@ internal static class OpenApiText
 {
     public static void Describe(OpenApiOptions options) => options.AddDocumentTransformer((document, _, _) =>
     {
+        // Grouped by the noun of the address: /api/v1/cleanings/{id} belongs to cleanings.
+        foreach ((string path, IOpenApiPathItem item) in document.Paths)
+        {
+            string noun = path.Split('/')[3];
+            foreach (OpenApiOperation operation in item.Operations?.Values.ToArray() ?? []) operation.Tags = new HashSet<OpenApiTagReference> { new(noun, document) };
+        }
+
+        document.Tags = new HashSet<OpenApiTag>(document.Paths.Keys.Select(path => path.Split('/')[3]).Distinct().Order(StringComparer.Ordinal).Select(noun => new OpenApiTag { Name = noun }));
         document.Info = new()
         {
             Title = "EvapMonitor",

@@ -17,5 +17,8 @@ internal static class Problems
 
     public static ProblemHttpResult Wrong(string detail) => TypedResults.Problem(detail, statusCode: StatusCodes.Status400BadRequest, title: "Wrong request");
 
+    public static ProblemHttpResult KeyTaken() => TypedResults.Problem(
+        "This Idempotency-Key came before with another content; a new request needs a new key.", statusCode: StatusCodes.Status422UnprocessableEntity, title: "Key taken");
+
     public static ProblemHttpResult Conflict(string detail) => TypedResults.Problem(detail, statusCode: StatusCodes.Status409Conflict, title: "Conflict");
 }

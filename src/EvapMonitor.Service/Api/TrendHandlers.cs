@@ -2,6 +2,7 @@ using System.Text;
 using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Store;
 using Microsoft.AspNetCore.Http.HttpResults;
+using Microsoft.Net.Http.Headers;
 
 namespace EvapMonitor.Service.Api;
 
@@ -17,18 +18,34 @@ internal static class TrendHandlers
         if (place.Find(effect) is not var (found, id)) return Problems.NoEffect(place.Line, effect);
         if (!Trends.Quantities.ContainsKey(quantity)) return Problems.Wrong($"quantity '{quantity}' is not known; allowed: {string.Join(", ", Trends.Quantities.Keys)}.");
         if (points is < 10 or > 10_000) return Problems.Wrong($"points is {points}; allowed: 10 to 10000.");
+        foreach (string name in (string[])["from", "to"])
+        {
+            string? text = context.Request.Query[name];
+            if (!Rfc3339Converter.HasOffset(text)) return Problems.Wrong($"{name} is '{text}'; allowed: an RFC 3339 time with its offset, such as 2026-03-01T14:05:00Z.");
+        }
+
         DateTimeOffset end = to ?? clock.GetUtcNow(), start = from ?? end.AddDays(-30);
         if (start >= end) return Problems.Wrong($"from ({start:O}) must be before to ({end:O}).");
         if (end - start > Trends.LongestSpan) return Problems.Wrong($"The span is {(end - start).TotalDays:0} days; allowed: {Trends.LongestSpan.TotalDays:0}.");
 
         long version = await store.DataVersionAsync(place.LineId, stop);
-        string tag = $"\"{inForce.RevisionId}-{version}\"";
-        if (context.Request.Headers.IfNoneMatch == tag) return TypedResults.StatusCode(StatusCodes.Status304NotModified);
-        TrendWire trend = trends.Of(place, found, id, quantity, start.ToUniversalTime(), end.ToUniversalTime(), points, inForce.Site.Window, version);
-        context.Response.Headers.ETag = tag;
+        bool csv = PrefersCsv(context.Request);
+        var tag = new EntityTagHeaderValue($"\"{inForce.RevisionId}-{version}{(csv ? "-csv" : "")}\"");
+        context.Response.GetTypedHeaders().ETag = tag;
         context.Response.Headers.CacheControl = "no-cache";
         context.Response.Headers.Vary = "Accept";
-        if (!context.Request.Headers.Accept.ToString().Contains("text/csv", StringComparison.OrdinalIgnoreCase)) return TypedResults.Ok(trend);
+        if (context.Request.GetTypedHeaders().IfNoneMatch.Any(known => known.Equals(EntityTagHeaderValue.Any) || known.Compare(tag, useStrongComparison: false))) return TypedResults.StatusCode(StatusCodes.Status304NotModified);
+        TrendWire trend = trends.Of(place, found, id, quantity, start.ToUniversalTime(), end.ToUniversalTime(), points, inForce.Site.Window, version);
+        if (!csv) return TypedResults.Ok(trend);
         return TypedResults.File(Encoding.UTF8.GetBytes(TrendCsv.Of(trend)), "text/csv; charset=utf-8", $"{place.Line.Name}-{found.Name}-{quantity}.csv");
+    }
+
+    /// <summary>True when CSV is named and liked no less than JSON; whoever names neither gets JSON.</summary>
+    private static bool PrefersCsv(HttpRequest request)
+    {
+        IList<MediaTypeHeaderValue> accepted = request.GetTypedHeaders().Accept;
+        double Liking(string type) => accepted.Where(one => one.MediaType.Equals(type, StringComparison.OrdinalIgnoreCase)).Select(one => one.Quality ?? 1).DefaultIfEmpty(0).Max();
+        double csv = Liking("text/csv");
+        return csv > 0 && csv >= Liking("application/json");
     }
 }

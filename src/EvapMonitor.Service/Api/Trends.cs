@@ -11,7 +11,7 @@ namespace EvapMonitor.Service.Api;
 public sealed class Trends(TrendStore store)
 {
     /// <summary>Spans over this come by the hour.</summary>
-    public static readonly TimeSpan LongestByWindow = TimeSpan.FromDays(40);
+    public static readonly TimeSpan LongestByWindow = TimeSpan.FromDays(10);
 
     /// <summary>Longest span of one request.</summary>
     public static readonly TimeSpan LongestSpan = TimeSpan.FromDays(3660);

@@ -101,9 +101,10 @@ internal static class Words
 
     private static string Span(long milliseconds)
     {
-        double hours = milliseconds / (double)Milliseconds.Hour;
+        // Whole hours that have passed, as the dashboard counts them too.
+        double hours = double.Floor(milliseconds / (double)Milliseconds.Hour);
         return hours < 48
             ? string.Create(CultureInfo.InvariantCulture, $"{hours:0} h")
-            : string.Create(CultureInfo.InvariantCulture, $"{hours / 24:0} days");
+            : string.Create(CultureInfo.InvariantCulture, $"{double.Floor(hours / 24):0} days");
     }
 }

@@ -55,7 +55,18 @@ public sealed class EvaluationWorker(
         if (await days.NextAsync(line.LineId, now, Rest, stop) is not { } day) return false;
         long began = clock.GetTimestamp();
         long from = Instant.ToMilliseconds(day.Day.ToDateTime(TimeOnly.MinValue, DateTimeKind.Utc));
-        LineWindow[] windows = await EvaluateDayAsync(inForce, line, from, now, stop);
+        LineWindow[] windows;
+        try
+        {
+            windows = await EvaluateDayAsync(inForce, line, from, now, stop);
+        }
+        catch (Exception error) when (error is not (NpgsqlException or OperationCanceledException))
+        {
+            // Unforeseen: one day must not stop the days after it. It has no results until it changes.
+            log.DayBroke(error, line.Line.Name, day.Day);
+            windows = [];
+        }
+
         await results.WriteDayAsync(line, day, inForce.RevisionId, windows, stop);
         log.DayEvaluated(line.Line.Name, day.Day, windows.Length, clock.GetElapsedTime(began).TotalMilliseconds);
         events.Publish("windows", new WindowsChanged(line.Line.Name, DateTimeOffset.FromUnixTimeMilliseconds(from), DateTimeOffset.FromUnixTimeMilliseconds(from + Milliseconds.Day)));

@@ -41,7 +41,14 @@ internal sealed class FileEvaluation(Site site, CancellationToken stop) : IReadi
         _file = Path.GetFileName(path);
         using FileStream stream = File.OpenRead(path);
         long earliest = site.HistoryFrom.ToUnixTimeMilliseconds();
-        new ReadingFile(stream, DateTimeZoneProviders.Tzdb[site.TimeZone], earliest, long.MaxValue, this).Read();
+        try
+        {
+            new ReadingFile(stream, DateTimeZoneProviders.Tzdb[site.TimeZone], earliest, long.MaxValue, this).Read();
+        }
+        catch (Exception error) when (error is ReadingFileException or InvalidDataException)
+        {
+            throw new StartException([$"{_file}: {error.Message}"]);
+        }
     }
 
     /// <summary>Reads logged events.</summary>

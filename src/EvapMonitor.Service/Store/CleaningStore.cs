@@ -12,7 +12,14 @@ namespace EvapMonitor.Service.Store;
 /// <param name="Kind">The plant's word for it.</param>
 /// <param name="Note">Free text.</param>
 /// <param name="LoggedAt">When it was logged.</param>
-public sealed record LoggedCleaning(Guid Id, int LineId, int EffectId, DateTimeOffset Start, DateTimeOffset? End, string Kind, string Note, DateTimeOffset LoggedAt);
+public sealed record LoggedCleaning(Guid Id, int LineId, int EffectId, DateTimeOffset Start, DateTimeOffset? End, string Kind, string Note, DateTimeOffset LoggedAt)
+{
+    /// <summary>True when another says the same, whenever it was logged. The store keeps microseconds.</summary>
+    public bool Says(LoggedCleaning other) => Same(Start, other.Start) && Same(End, other.End) && (Kind, Note) == (other.Kind, other.Note);
+
+    private static bool Same(DateTimeOffset? one, DateTimeOffset? other) =>
+        one is { } a && other is { } b ? (a - b).Duration() < TimeSpan.FromMilliseconds(1) : one is null && other is null;
+}
 
 /// <summary>What became of an attempt to log a cleaning.</summary>
 public enum LogOutcome
@@ -23,6 +30,8 @@ public enum LogOutcome
     Repeated,
     /// <summary>It overlaps another of the effect.</summary>
     Overlaps,
+    /// <summary>The request key came before with another cleaning.</summary>
+    KeyTaken,
 }
 
 /// <summary>Logged cleanings. Logging or withdrawing one marks the days it covers, so that their results are computed anew.</summary>
@@ -54,7 +63,7 @@ public sealed class CleaningStore(NpgsqlDataSource database, TimeProvider clock)
         var key = new { cleaning.LineId, cleaning.EffectId, requestKey };
         Row? before = await connection.QuerySingleOrDefaultAsync<Row>(
             $"SELECT {Columns} FROM cleaning WHERE line_id = @LineId AND effect_id = @EffectId AND request_key = @requestKey", key);
-        if (before is not null) return (LogOutcome.Repeated, before.ToCleaning());
+        if (before is not null) return (before.ToCleaning().Says(cleaning) ? LogOutcome.Repeated : LogOutcome.KeyTaken, before.ToCleaning());
         Row? other = await connection.QueryFirstOrDefaultAsync<Row>(
             $"""
              SELECT {Columns} FROM cleaning WHERE line_id = @LineId AND effect_id = @EffectId AND withdrawn_at IS NULL

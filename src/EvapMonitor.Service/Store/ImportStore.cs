@@ -160,12 +160,21 @@ public sealed class ImportStore(NpgsqlDataSource database, TimeProvider clock)
         return [.. (await connection.QueryAsync<ImportFile>($"SELECT {Columns} FROM import_file ORDER BY received_at DESC LIMIT 100"))];
     }
 
-    /// <summary>Notes that reading has begun.</summary>
-    public async Task StartAsync(string sha256, CancellationToken stop)
+    /// <summary>Where the uploads lie that an import still needs.</summary>
+    public async Task<IReadOnlyList<string>> StoredAsync(CancellationToken stop)
     {
         await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
-        await connection.ExecuteAsync(
-            "UPDATE import_file SET state = 'running', started_at = coalesce(started_at, @now) WHERE sha256 = @sha256", new { sha256, now = clock.GetUtcNow().UtcDateTime });
+        return [.. await connection.QueryAsync<string>("SELECT stored_as FROM import_file WHERE stored_as IS NOT NULL")];
+    }
+
+    /// <summary>Notes that reading has begun.</summary>
+    /// <returns>False when somebody cancelled it meanwhile.</returns>
+    public async Task<bool> StartAsync(string sha256, CancellationToken stop)
+    {
+        await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
+        return await connection.ExecuteAsync(
+            "UPDATE import_file SET state = 'running', started_at = coalesce(started_at, @now) WHERE sha256 = @sha256 AND state IN ('running', 'waiting')",
+            new { sha256, now = clock.GetUtcNow().UtcDateTime }) == 1;
     }
 
     /// <summary>Stores the progress within the transaction that stores the readings.</summary>

@@ -162,8 +162,12 @@ public sealed class PrivateServer
             throw new InvalidOperationException($"{Path.GetFileName(file)} did not end within {CommandLimit.TotalSeconds:0} s.");
         }
 
-        if (process.ExitCode != 0)
-            throw new InvalidOperationException($"{Path.GetFileName(file)} {arguments[0]} failed: {(await error).Trim()}");
+        if (process.ExitCode == 0) return;
+        string said = (await error).Trim();
+        string hint = user is not null && said.Contains("Permission denied", StringComparison.Ordinal)
+            ? $" (PostgreSQL runs as the user {user}, who must be able to pass through the folders above; choose another data folder, such as /var/lib/evapmonitor)"
+            : "";
+        throw new InvalidOperationException($"{Path.GetFileName(file)} failed: {said}{hint}");
     }
 
     private static string MajorVersion(string binaries)

@@ -12,7 +12,9 @@ internal sealed class PrivateServerGuard(PrivateServer server, Npgsql.NpgsqlData
         {
             try
             {
-                await using Npgsql.NpgsqlConnection connection = await database.OpenConnectionAsync(stoppingToken);
+                // A connection from the pool tells nothing until it is used.
+                await using Npgsql.NpgsqlCommand question = database.CreateCommand("SELECT 1");
+                await question.ExecuteScalarAsync(stoppingToken);
             }
             catch (Exception error) when (error is Npgsql.NpgsqlException or InvalidOperationException && !stoppingToken.IsCancellationRequested)
             {
@@ -33,7 +35,7 @@ internal sealed class PrivateServerGuard(PrivateServer server, Npgsql.NpgsqlData
             Npgsql.NpgsqlConnection.ClearAllPools();
             log.DatabaseRestarted();
         }
-        catch (Exception error) when (error is InvalidOperationException)
+        catch (Exception error) when (error is InvalidOperationException or IOException or UnauthorizedAccessException)
         {
             log.DatabaseAway(error, "everything");
         }

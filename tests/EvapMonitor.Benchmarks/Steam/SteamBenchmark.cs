@@ -59,8 +59,6 @@ public static class SteamBenchmark
         {
             Time(ours, pressures, temperatures, mine);
             Time(handTuned, pressures, temperatures, theirs);
-            if (k == 30)
-                Thread.Yield();
         }
         for (var k = 0; k < States; k++)
         {

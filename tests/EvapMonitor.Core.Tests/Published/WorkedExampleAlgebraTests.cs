@@ -42,7 +42,8 @@ public class WorkedExampleAlgebraTests
         foreach (var effect in effects)
         {
             double duty = HeatBalance.ChestDuty(effect.Steam * PerHour, effect.Latent, 0, 0);
-            Assert.Equal(effect.Duty, duty, 0.003e6);
+            // Flows and latent heats of the table are rounded to four figures: 0.1 %.
+            Assert.Equal(effect.Duty, duty, 0.001 * effect.Duty);
             Assert.Equal(effect.Coefficient, HeatBalance.Coefficient(effect.Duty, effect.Area, effect.Force), 2.5);
         }
     }

@@ -28,7 +28,7 @@ internal sealed class ImportRun(NpgsqlDataSource database, PlantInForce plant, I
     {
         var batches = Channel.CreateBounded<Batch>(new BoundedChannelOptions(2) { SingleReader = true, SingleWriter = true });
         using var together = CancellationTokenSource.CreateLinkedTokenSource(stop);
-        Task reading = Task.Run(() => ReadFile(batches.Writer, together.Token), together.Token);
+        Task reading = Task.Run(() => ReadFile(batches.Writer, together.Token), CancellationToken.None);
         try
         {
             await foreach (Batch batch in batches.Reader.ReadAllAsync(together.Token))
@@ -39,10 +39,10 @@ internal sealed class ImportRun(NpgsqlDataSource database, PlantInForce plant, I
         }
         finally
         {
+            // The file is let go before anybody deletes it. What ended the reading has come out of the channel.
             await together.CancelAsync();
+            await reading;
         }
-
-        await reading;
     }
 
     private void ReadFile(ChannelWriter<Batch> writer, CancellationToken stop)

@@ -14,7 +14,8 @@ public sealed record ImportPace(ImportFile Import, double? RowsPerSecond, double
 
 /// <summary>Takes waiting files into the store, one after the other. A failed file never stops the next.</summary>
 public sealed class ImportWorker(
-    NpgsqlDataSource database, ImportStore imports, PlantHolder plant, EvaluationSignal evaluation, LiveEvents events, TimeProvider clock, ILogger<ImportWorker> log)
+    NpgsqlDataSource database, ImportStore imports, Uploads uploads, PlantHolder plant, EvaluationSignal evaluation, LiveEvents events, TimeProvider clock,
+    ILogger<ImportWorker> log)
     : BackgroundService
 {
     private static readonly TimeSpan Pause = TimeSpan.FromSeconds(2);
@@ -34,6 +35,13 @@ public sealed class ImportWorker(
     {
         if (_running.TryGetValue(sha256, out CancellationTokenSource? running)) await running.CancelAsync();
         else if (await imports.FindAsync(sha256, stop) is { State: ImportState.Waiting } waiting) await EndAsync(waiting, ImportState.Cancelled, null);
+    }
+
+    /// <inheritdoc/>
+    public override async Task StartAsync(CancellationToken cancellationToken)
+    {
+        uploads.RemoveAllBut(await imports.StoredAsync(cancellationToken));
+        await base.StartAsync(cancellationToken);
     }
 
     /// <inheritdoc/>
@@ -61,13 +69,13 @@ public sealed class ImportWorker(
     private async Task RunAsync(ImportFile next, CancellationToken stop)
     {
         using var cancel = CancellationTokenSource.CreateLinkedTokenSource(stop);
-        _running[next.Sha256] = cancel;
-        await imports.StartAsync(next.Sha256, stop);
-        log.ImportStarted(next.Name, next.BytesTotal, next.CommittedOffset);
         long began = clock.GetTimestamp(), announced = 0;
         var run = new ImportRun(database, plant.Current, next with { State = ImportState.Running, StartedAt = clock.GetUtcNow().UtcDateTime }, clock);
         try
         {
+            _running[next.Sha256] = cancel;
+            if (!await imports.StartAsync(next.Sha256, stop)) return;
+            log.ImportStarted(next.Name, next.BytesTotal, next.CommittedOffset);
             await run.RunAsync(progress =>
             {
                 ImportPace pace = PaceOf(next, progress, clock.GetElapsedTime(began));
@@ -95,12 +103,21 @@ public sealed class ImportWorker(
         {
             await EndAsync(run.Progress, ImportState.Cancelled, null);
         }
+        catch (Exception error) when (error is not (NpgsqlException or OperationCanceledException) || IsOfTheData(error))
+        {
+            // Unforeseen: this file fails, the next has its turn.
+            await EndAsync(run.Progress, ImportState.Failed, "The readings could not be stored: " + error.Message);
+            log.ImportBroke(error, next.Name);
+        }
         finally
         {
             _running.TryRemove(next.Sha256, out _);
             _paces.TryRemove(next.Sha256, out _);
         }
     }
+
+    /// <summary>True when the database refused the data themselves (SQLSTATE classes 22 and 23): trying again would go on for ever.</summary>
+    private static bool IsOfTheData(Exception error) => error is PostgresException { SqlState: ['2', '2' or '3', ..] };
 
     private static ImportPace PaceOf(ImportFile start, ImportFile now, TimeSpan elapsed)
     {

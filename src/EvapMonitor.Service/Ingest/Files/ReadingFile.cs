@@ -99,7 +99,10 @@ internal sealed class ReadingFile
         if (header is not [var first, _, ..] || !first.Equals("time", StringComparison.OrdinalIgnoreCase) || !fields.WellQuoted)
             throw new ReadingFileException($"Line 1: found \"{Shown(line)}\"; the header must be time,signal,value[,quality] or time and the names of signals, separated by commas or semicolons.");
         bool IsNamed(int column, string name) => header.Count > column && header[column].Equals(name, StringComparison.OrdinalIgnoreCase);
-        bool isLong = IsNamed(1, "signal") && IsNamed(2, "value") && (header.Count == 3 || (header.Count == 4 && IsNamed(3, "quality")));
+        bool isLong = IsNamed(1, "signal") && IsNamed(2, "value");
+        // A long header with a slip in it would pass as a wide one of unknown signals, and the file would be counted away.
+        if (isLong && header.Count != 3 && (header.Count != 4 || !IsNamed(3, "quality")))
+            throw new ReadingFileException($"Line 1: found \"{Shown(line)}\"; after time,signal,value the header may have one more column, quality.");
         _wide = !isLong;
         _columns = header.Count;
         _names = [.. header.Skip(1)];
@@ -109,8 +112,24 @@ internal sealed class ReadingFile
         _keys = [.. _names.Select(_sink.KeyOf)];
     }
 
+    /// <summary>A row with a column too few or too many gives nothing: its last number may be half a number, and nobody knows which cell is whose.</summary>
+    private string? WhyRowIsWrong(ReadOnlySpan<byte> line)
+    {
+        var fields = new Fields(line, _separator);
+        int columns = 0;
+        while (fields.TryTake(out _)) columns++;
+        if (!fields.WellQuoted) return "a quote is not closed";
+        return columns == _columns ? null : $"{columns} columns where the header has {_columns}";
+    }
+
     private void ReadWide(ReadOnlySpan<byte> line, ref ClockState clock)
     {
+        if (WhyRowIsWrong(line) is { } wrongRow)
+        {
+            _sink.Reject(_lines.Number, wrongRow);
+            return;
+        }
+
         var fields = new Fields(line, _separator);
         fields.TryTake(out ReadOnlySpan<byte> time);
         if (WhyTimeIsWrong(time, ref clock, out long at) is { } wrong)
@@ -119,16 +138,13 @@ internal sealed class ReadingFile
             return;
         }
 
-        int column = 0;
-        for (; fields.TryTake(out ReadOnlySpan<byte> cell); column++)
+        for (int column = 0; fields.TryTake(out ReadOnlySpan<byte> cell); column++)
         {
-            if (column >= _keys.Length || cell.IsEmpty) continue;
+            if (cell.IsEmpty) continue;
             if (_keys[column] < 0) _sink.TakeUnknown(_names[column]);
             else if (TryNumber(cell, out double value)) _sink.Take(_keys[column], new Reading(at, value, Quality.Good));
             else _sink.Reject(_lines.Number, $"{_names[column]}: value '{Shown(cell)}' is not a number");
         }
-
-        if (column != _keys.Length) _sink.Reject(_lines.Number, $"{column + 1} columns where the header has {_columns}");
     }
 
     private void ReadLong(ReadOnlySpan<byte> line, Dictionary<string, ClockState> clocks, Dictionary<string, string>.AlternateLookup<ReadOnlySpan<char>> names)

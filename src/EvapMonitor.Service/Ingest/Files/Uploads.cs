@@ -23,6 +23,16 @@ public sealed class Uploads
         foreach (string half in Directory.GetFiles(_folder, "*.part")) File.Delete(half);
     }
 
+    /// <summary>Removes the uploads that no import knows: a program killed between storing and noting leaves one.</summary>
+    public void RemoveAllBut(IReadOnlyList<string> needed)
+    {
+        HashSet<string?> names = [.. needed.Select(System.IO.Path.GetFileName)];
+        foreach (string upload in Directory.GetFiles(_folder, "*.upload"))
+        {
+            if (!names.Contains(System.IO.Path.GetFileName(upload))) File.Delete(upload);
+        }
+    }
+
     /// <summary>Stores a body.</summary>
     public async Task<StoredUpload> StoreAsync(Stream body, CancellationToken stop)
     {

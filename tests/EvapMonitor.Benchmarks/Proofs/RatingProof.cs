@@ -1,18 +1,21 @@
 using System.Diagnostics;
-using System.Globalization;
+using EvapMonitor.Benchmarks.Rating;
 using EvapMonitor.Core.Balances;
 using EvapMonitor.Core.Outlook;
 
-namespace EvapMonitor.Benchmarks.Rating;
+namespace EvapMonitor.Benchmarks.Proofs;
 
 /// <summary>How surely and how fast a five-effect line is rated: 10,000 random lines and conditions, and 10,000 random states to start from.</summary>
-public static class RatingBenchmark
+internal static class RatingProof
 {
     private const int Count = 10_000, Seed = 20260;
 
     /// <summary>Prints the table; 0 when every line found its operating point.</summary>
     public static int Run()
     {
+        var proof = new Proof("rating", "Rating of five-effect lines");
+        proof.Say("Lines of five effects with random surfaces, coefficients, routes of the liquor, bleeds and flash, at random steam, condenser, feed and product.");
+        proof.Say("");
         var random = new Random(Seed);
         for (int warm = 0; warm < 50; warm++) Solve(RandomLines.Next(new Random(warm)), null);
         int found = 0, steps = 0, most = 0;
@@ -38,13 +41,16 @@ public static class RatingBenchmark
         }
 
         times.Sort();
-        Print($"random lines and conditions (seed {Seed}) | {Count}");
-        Print($"operating point found | {found} ({100.0 * found / Count:0.00} %)");
-        Print($"Newton steps, mean and most | {(double)steps / Math.Max(1, found):0.0}, {most}");
-        Print($"time per rating, median, 99 %, most | {times[Count / 2]:0.000} ms, {times[Count * 99 / 100]:0.000} ms, {times[^1]:0.0} ms");
-        foreach ((string reason, int count) in reasons.OrderByDescending(pair => pair.Value)) Print($"{reason} | {count}");
+        proof.Say("| what | figure |");
+        proof.Say("|---|---|");
+        proof.Say($"| random lines and conditions | {Count:N0} |");
+        proof.Say($"| operating point found | {found} ({100.0 * found / Count:0.00} %) |");
+        proof.Say($"| Newton steps, mean and most | {(double)steps / Math.Max(1, found):0.0}, {most} |");
+        proof.Say($"| time per rating, median, 99 %, most | {times[Count / 2]:0.000} ms, {times[Count * 99 / 100]:0.000} ms, {times[^1]:0.0} ms |");
+        foreach ((string reason, int count) in reasons.OrderByDescending(pair => pair.Value)) proof.Say($"| {reason} | {count} |");
         int fromElsewhere = FromElsewhere();
-        Print($"random states to start from, same point found | {fromElsewhere} of {Count}");
+        proof.Say($"| random states to start from, same point found | {fromElsewhere} of {Count} |");
+        proof.Write(Seed);
         return found == Count && fromElsewhere == Count ? 0 : 1;
     }
 
@@ -74,6 +80,4 @@ public static class RatingBenchmark
 
     private static RatingResult Solve((LineGraph Graph, RatingConditions Conditions) drawn, OperatingPoint? near) =>
         new Core.Outlook.Rating(drawn.Graph, RandomLines.Properties).Solve(drawn.Conditions, near);
-
-    private static void Print(FormattableString row) => Console.WriteLine("| " + row.ToString(CultureInfo.InvariantCulture) + " |");
 }

@@ -1,0 +1,56 @@
+using System.Diagnostics;
+using System.Globalization;
+
+namespace EvapMonitor.Benchmarks.Proofs;
+
+/// <summary>The service as a process of its own, as a user would run it, with a private database.</summary>
+internal sealed class ServiceProcess : IDisposable
+{
+    private readonly Process _process;
+    private readonly string _data;
+    private readonly TaskCompletionSource<string> _address = new();
+
+    private ServiceProcess(Process process, string data)
+    {
+        (_process, _data) = (process, data);
+        process.OutputDataReceived += (_, line) =>
+        {
+            int at = line.Data?.LastIndexOf("http://", StringComparison.Ordinal) ?? -1;
+            if (at >= 0) _address.TrySetResult(line.Data![at..].Trim());
+            if (line.Data is null) _address.TrySetException(new InvalidOperationException("The service ended before it served."));
+        };
+        process.BeginOutputReadLine();
+    }
+
+    public static ServiceProcess Start(string plant, string data)
+    {
+        string program = Path.Combine(AppContext.BaseDirectory, "evapmonitor.dll");
+        var start = new ProcessStartInfo("dotnet", [program, "run", plant, "--data", data, "--listen", "http://127.0.0.1:0"]) { RedirectStandardOutput = true };
+        return new ServiceProcess(Process.Start(start)!, data);
+    }
+
+    public Task<string> AddressAsync() => _address.Task.WaitAsync(TimeSpan.FromSeconds(60));
+
+    /// <summary>Connection string of the private server: its socket folder stands in the server's own note.</summary>
+    public async Task<string> ConnectionAsync()
+    {
+        string note = Directory.GetFiles(Path.Combine(_data, "postgresql"), "postmaster.pid", SearchOption.AllDirectories).Single();
+        string socket = (await File.ReadAllLinesAsync(note))[4];
+        return $"Host={socket};Username=evapmonitor;Database=postgres;Timeout=10;Command Timeout=600";
+    }
+
+    /// <summary>Peak resident memory, kB.</summary>
+    public long PeakMemory() =>
+        File.ReadLines($"/proc/{_process.Id}/status").Where(line => line.StartsWith("VmHWM:", StringComparison.Ordinal))
+            .Select(line => long.Parse(line.Split(' ', StringSplitOptions.RemoveEmptyEntries)[1], CultureInfo.InvariantCulture)).Single();
+
+    public void Dispose()
+    {
+        using (Process.Start("kill", ["-TERM", _process.Id.ToString(CultureInfo.InvariantCulture)])!)
+        {
+            if (!_process.WaitForExit(30_000)) _process.Kill();
+        }
+
+        _process.Dispose();
+    }
+}

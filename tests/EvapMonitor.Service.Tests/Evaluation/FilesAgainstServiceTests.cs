@@ -1,0 +1,52 @@
+using EvapMonitor.Core.Coefficients;
+using EvapMonitor.Service.Evaluation;
+using EvapMonitor.Service.Store;
+using EvapMonitor.Service.Tests.Support;
+using Microsoft.Extensions.DependencyInjection;
+
+namespace EvapMonitor.Service.Tests.Evaluation;
+
+/// <summary>The command line and the service compute the same: coefficients.csv of `evaluate` against what the service has in its database, to the last printed digit.</summary>
+public sealed class FilesAgainstServiceTests(ApiService api) : IClassFixture<ApiService>
+{
+    private static CancellationToken Stop => TestContext.Current.CancellationToken;
+
+    [PostgreSqlFact]
+    public async Task Evaluate_GivesTheServicesNumbers()
+    {
+        string folder = TemporaryFolder.Create(), plant = Path.Combine(folder, "plant.yaml"), readings = Path.Combine(folder, "history.csv");
+        try
+        {
+            await File.WriteAllTextAsync(plant, ApiService.Plant, Stop);
+            await File.WriteAllTextAsync(readings, ApiService.History, Stop);
+            (int exit, string said, string error) = await ChildService.CommandAsync("evaluate", plant, readings, "--out", Path.Combine(folder, "out"));
+            Assert.True(exit == 0, error);
+            Assert.Contains("0 rejected", said);
+            string[] rows = await File.ReadAllLinesAsync(Path.Combine(folder, "out", "coefficients.csv"), Stop);
+            string[] own = OfService(Path.Combine(folder, "service.csv"));
+            Assert.Equal(1 + (576 * 4), rows.Length);
+            // Of all but the coefficient the store keeps the whole uncertainty, which the file does not print: the rows must be alike letter for letter.
+            Assert.Equal(rows.Order(StringComparer.Ordinal), own.Order(StringComparer.Ordinal));
+            Assert.True(rows.Count(row => row.Split(',')[10].Length > 0) > 2000);
+        }
+        finally
+        {
+            Directory.Delete(folder, recursive: true);
+        }
+    }
+
+    /// <summary>Writes the stored windows with the writer of the command line.</summary>
+    private string[] OfService(string path)
+    {
+        LinePlace place = api.Service.Services.GetRequiredService<PlantHolder>().Current.Find("north")!;
+        var trends = api.Service.Services.GetRequiredService<TrendStore>();
+        using (var file = new CoefficientFile(path))
+        {
+            var effects = place.EffectIds.Select(id => trends.Windows(place.LineId, id, ApiService.Start, ApiService.End.AddDays(1))).ToList();
+            for (int i = 0; i < effects[0].Count; i++)
+                file.Write(place.Line, new LineWindow(effects[0][i].At, effects[0][i].State, double.NaN, [.. effects.Select(effect => effect[i])]));
+        }
+
+        return File.ReadAllLines(path);
+    }
+}
