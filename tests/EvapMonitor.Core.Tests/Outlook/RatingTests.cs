@@ -119,6 +119,43 @@ public class RatingTests
         Assert.Equal(["M1 works beyond the points of its curve"], new Rating(new LineGraph(narrow), Juice()).Solve(line.Conditions).Point!.Remarks);
     }
 
+    [Theory]
+    [InlineData(2)]
+    [InlineData(4)]
+    [InlineData(7)]
+    public void ForwardFeed_IsWhatASequentialSolutionFinds(int count)
+    {
+        double[] coefficients = [.. Enumerable.Range(0, count).Select(i => 2900.0 - (1800.0 * i / count))];
+        double[] bleeds = [.. Enumerable.Range(0, count).Select(i => i < 2 && count > 2 ? 0.8 : 0)];
+        Line line = Of([.. Enumerable.Range(0, count).Select(i => Effect(
+            $"N{i}", i == 0 ? HeatSource.Steam : Vapour($"N{i - 1}"), i == 0 ? LiquorSource.Feed : From($"N{i - 1}"), 900 + (40 * i)) with { HeatLoss = None, Vent = None })]) with
+        {
+            Bleeds = [new("N0", "users", null), new("N1", "users", null)],
+        };
+        RatingResult found = new Rating(new LineGraph(line), Juice()).Solve(new RatingConditions
+        {
+            Coefficients = coefficients.Select((u, i) => ($"N{i}", u)).ToDictionary(pair => pair.Item1, pair => pair.u), FeedSolids = 0.14, FeedTemperature = 360,
+            ProductSolids = 0.58, SteamPressure = 2.4e5, LastVapourPressure = 1.9e4,
+            Bleeds = new Dictionary<string, double> { ["N0 to users"] = bleeds[0], ["N1 to users"] = bleeds[1] },
+        });
+        Assert.True(found.Point is not null, found.Reason);
+        // Its start is a few per cent and half a kelvin off, so that it finds the point itself.
+        double[] start =
+        [
+            .. found.Point.Effects.SkipLast(1).Select((effect, i) => Steam.SaturationTemperature(effect.VapourPressure) + (i % 2 == 0 ? 0.5 : -0.5)),
+            found.Point.FreshSteam * 0.97, found.Point.FeedFlow * 1.04,
+        ];
+        ForwardPoint point = new SequentialForwardLine(Juice().Liquor, [.. Enumerable.Range(0, count).Select(i => new ForwardEffect(900 + (40 * i), bleeds[i]))])
+            .Solve(new(2.4e5, 1.9e4, 0.14, 360, 0.58), coefficients, start);
+        Assert.Equal(point.Feed, found.Point.FeedFlow, 1e-7 * point.Feed);
+        Assert.Equal(point.Steam, found.Point.FreshSteam, 1e-7 * point.Steam);
+        for (int i = 0; i < count; i++)
+        {
+            Assert.Equal(point.Effects[i].Boiling, found.Point.Effects[i].BoilingTemperature, 1e-6);
+            Assert.Equal(point.Effects[i].Vapour, found.Point.Effects[i].Vapour, 1e-7 * point.Feed);
+        }
+    }
+
     [Fact]
     public void RandomFiveEffectLines_AllFindTheirOperatingPoint()
     {
