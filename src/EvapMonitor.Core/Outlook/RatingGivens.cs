@@ -58,8 +58,26 @@ internal sealed class RatingGivens
         if (c.FeedTemperature is not (>= 273.15 and <= 473.15)) return Invariant($"no rating: a feed of {c.FeedTemperature - 273.15:0.#} °C is not from 0 to 200 °C");
         if (!IsPressure(c.LastVapourPressure)) return Invariant($"no rating: a last vapour pressure of {c.LastVapourPressure / 1000:0.###} kPa is not from 0.7 to 1500 kPa");
         if (c.SteamPressure is { } steam && !IsPressure(steam)) return Invariant($"no rating: a steam pressure of {steam / 1000:0.###} kPa is not from 0.7 to 1500 kPa");
-        if (c.FeedFlow is <= 0) return "no rating: the feed flow is not above 0";
-        if (c.Evaporation is <= 0) return "no rating: the evaporation asked for is not above 0";
+        if (c.FeedFlow is { } flow && !IsFlow(flow)) return "no rating: the feed flow is not above 0";
+        if (c.Evaporation is { } evaporation && !IsFlow(evaporation)) return "no rating: the evaporation asked for is not above 0";
+        if (c.SteamSuperheat is not (>= 0 and < 300)) return "no rating: the superheat of the steam is not from 0 to under 300 K";
+        foreach ((string way, double bleed) in c.Bleeds.Concat(c.MakeUpSteam))
+        {
+            if (!(bleed >= 0) || !double.IsFinite(bleed)) return $"no rating: the vapour or steam on the way {way} is not 0 or more";
+        }
+
+        foreach ((string name, HeaterConditions h) in c.Heaters)
+        {
+            if (!(h.Flow >= 0) || !double.IsFinite(h.Flow) || h.Solids is not (>= 0 and < 1) || h.In is not (>= 273.15 and <= 473.15) || h.Out is not (>= 273.15 and <= 473.15))
+                return $"no rating: heater {name} has a flow under 0, solids not from 0 to under 100 %, or a temperature not from 0 to 200 °C";
+        }
+
+        foreach ((string name, MotiveConditions m) in c.Motive)
+        {
+            if (m.Pressure is not (>= 700 and <= 1.6e7) || m.Superheat is not (>= 0 and < 300) || (m.Flow is { } motive && !IsFlow(motive)))
+                return $"no rating: the motive steam of {name} has a pressure not from 0.7 kPa to 16 MPa, a superheat not from 0 to under 300 K, or a flow not above 0";
+        }
+
         if (c.FeedFlow is { } feed && c.Evaporation >= feed) return "no rating: more evaporation is asked for than there is feed";
         return null;
     }
@@ -167,8 +185,7 @@ internal sealed class RatingGivens
             }
 
             MotiveConditions motive = _conditions.Motive[machine.Name];
-            double pressure = double.Clamp(motive.Pressure, Steam.LowestSaturationPressure, 1.6e7);
-            Set(VariableKind.MotiveEnthalpy, machine.Name, Steam.VapourEnthalpy(pressure, Steam.SaturationTemperature(pressure) + double.Max(0, motive.Superheat)));
+            Set(VariableKind.MotiveEnthalpy, machine.Name, Steam.VapourEnthalpy(motive.Pressure, Steam.SaturationTemperature(motive.Pressure) + motive.Superheat));
         }
     }
 
@@ -215,6 +232,8 @@ internal sealed class RatingGivens
     {
         if (_at[kind, place] is >= 0 and var i) Values[i] = value;
     }
+
+    private static bool IsFlow(double flow) => flow > 0 && double.IsFinite(flow);
 
     private static bool IsPressure(double pressure) => pressure is >= 700 and <= 1.5e6;
 

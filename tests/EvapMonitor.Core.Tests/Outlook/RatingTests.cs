@@ -111,6 +111,29 @@ public class RatingTests
     }
 
     [Fact]
+    public void ConditionsThatAreNoNumbers_AreRefusedInWords()
+    {
+        Case line = Named("forward"), jet = Named("thermal");
+        RatingConditions c = line.Conditions;
+        foreach (double bad in (double[])[double.NaN, double.PositiveInfinity, double.NegativeInfinity, -1, 1e300])
+        {
+            foreach (RatingConditions other in (RatingConditions[])
+                [
+                    c with { FeedSolids = bad }, c with { FeedTemperature = bad }, c with { LastVapourPressure = bad }, c with { SteamPressure = bad }, c with { SteamSuperheat = bad },
+                    c with { ProductSolids = bad }, c with { SteamPressure = null, Evaporation = bad == 1e300 ? double.NaN : bad },
+                    c with { Coefficients = c.Coefficients.ToDictionary(pair => pair.Key, pair => bad == 1e300 ? double.NaN : bad) },
+                    c with { Bleeds = new Dictionary<string, double> { ["N2 to pans"] = bad } },
+                    c with { Heaters = new Dictionary<string, HeaterConditions> { ["H1"] = new(40, 0, bad, 350) } },
+                ])
+            {
+                Assert.StartsWith("no ", ReasonOf(line.Graph, other), StringComparison.Ordinal);
+            }
+
+            Assert.StartsWith("no ", ReasonOf(jet.Graph, jet.Conditions with { Motive = new Dictionary<string, MotiveConditions> { ["J1"] = new(bad, 0, 1) } }), StringComparison.Ordinal);
+        }
+    }
+
+    [Fact]
     public void MachineBeyondItsCurve_IsRemarked()
     {
         Case line = Named("mechanical");
