@@ -19,6 +19,7 @@ public sealed class LineEvaluation
     private readonly Site _site;
     private readonly Line _line;
     private readonly LineInstruments _instruments;
+    private readonly IReadOnlyList<Instrument> _conditioned;
     private readonly DirectBalance _balance;
     private readonly ApparentCoefficients _coefficients;
 
@@ -28,29 +29,56 @@ public sealed class LineEvaluation
         _site = site;
         _line = line;
         _instruments = new LineInstruments(line);
+        _conditioned = [.. _instruments.All, .. site.Atmosphere.Measured is { } air && _instruments.All.All(instrument => instrument.Signal != air.Signal) ? [air] : Array.Empty<Instrument>()];
         _balance = new DirectBalance(_instruments);
         _coefficients = new ApparentCoefficients(_instruments, _balance);
-        LeadIn = LeadInOf(line);
+        TimeSpan stale = _conditioned.Select(instrument => instrument.StaleAfter).DefaultIfEmpty().Max();
+        TimeSpan still = _conditioned.Select(instrument => instrument.FrozenAfter).DefaultIfEmpty().Max();
+        TimeSpan laboratory = LaboratoryPlaces().Select(place => place.ValidFor).DefaultIfEmpty().Max();
+        LongestStale = stale;
+        Reach = Longer(stale + Longer(still, TimeSpan.FromHours(1)), laboratory);
+        LeadIn = Longer(LineConditioning.Memory + stale, laboratory);
     }
 
     /// <summary>The signals that the line needs, the atmosphere's among them.</summary>
-    public IEnumerable<string> Signals =>
-        _instruments.All.Select(instrument => instrument.Signal).Concat(_site.Atmosphere.Measured is { } air ? [air.Signal] : []).Distinct();
+    public IEnumerable<string> Signals => _conditioned.Select(instrument => instrument.Signal);
 
-    /// <summary>How far before a day its readings reach: 6 h, or the longest time for which a laboratory value stands.</summary>
+    /// <summary>Those of them that are laboratory values, whose samples stand for hours.</summary>
+    public IEnumerable<string> LaboratorySignals => LaboratoryPlaces().Select(place => _instruments.All[place.Place].Signal);
+
+    /// <summary>How far before a span its readings must reach.</summary>
     public TimeSpan LeadIn { get; }
 
-    /// <summary>Evaluates the windows of a span.</summary>
+    /// <summary>How long after its instant a reading may still move a result.</summary>
+    public TimeSpan Reach { get; }
+
+    /// <summary>How long the last reading of a signal is carried forward at most, so that windows without any reading of their own have a result.</summary>
+    public TimeSpan LongestStale { get; }
+
+    /// <summary>A memory for evaluating this line live.</summary>
+    public LineMemory NewMemory() => new(_conditioned, _site.Window);
+
+    /// <summary>Evaluates the windows of a span from readings alone.</summary>
     /// <param name="readings">Readings by signal, from <see cref="LeadIn"/> before the span on.</param>
     /// <param name="from">Start of the span, ms since 1970-01-01T00:00:00Z; on the window grid.</param>
-    /// <param name="to">End of the span.</param>
+    /// <param name="to">End of the span; on the window grid.</param>
     /// <param name="cleanings">Logged cleanings by effect name: start and end, ms; the end is <see cref="long.MaxValue"/> while one goes on.</param>
     public LineWindow[] Evaluate(
-        IReadOnlyDictionary<string, ReadingSeries> readings, long from, long to, ILookup<string, (long Start, long End)> cleanings)
+        IReadOnlyDictionary<string, ReadingSeries> readings, long from, long to, ILookup<string, (long Start, long End)> cleanings) =>
+        Evaluate(NewMemory(), readings, from, to, cleanings);
+
+    /// <summary>Evaluates the windows of a span with what a memory knows already; the result has the same bits as without.</summary>
+    /// <param name="memory">Made by <see cref="NewMemory"/>; filled here.</param>
+    /// <param name="readings">Readings by signal, from <see cref="LongestStale"/> before <see cref="LineMemory.MissingFrom"/>; laboratory values from <see cref="LeadIn"/> before the span.</param>
+    /// <param name="from">Start of the span.</param>
+    /// <param name="to">End of the span.</param>
+    /// <param name="cleanings">As above.</param>
+    public LineWindow[] Evaluate(
+        LineMemory memory, IReadOnlyDictionary<string, ReadingSeries> readings, long from, long to, ILookup<string, (long Start, long End)> cleanings)
     {
-        // One hour of lead windows, so that the scatter of the first windows rests on a whole hour.
-        WindowGrid grid = WindowGrid.Between(from - Milliseconds.Hour, to, _site.Window);
-        (ConditionedSignal[] signals, Atmosphere air) = LineConditioning.Condition(_instruments.All, readings, _site.Atmosphere, grid);
+        memory.Fill(readings, from, to);
+        WindowGrid grid = WindowGrid.Between(from, to, _site.Window);
+        (ConditionedSignal[] signals, Atmosphere air) = LineConditioning.Condition(_conditioned, memory, _site.Atmosphere, grid);
         foreach ((int place, TimeSpan validFor) in LaboratoryPlaces())
         {
             ReadingSeries samples = readings.TryGetValue(_instruments.All[place].Signal, out ReadingSeries? found) ? found : new ReadingSeries();
@@ -58,14 +86,14 @@ public sealed class LineEvaluation
         }
 
         var inputs = new LineInputs(_instruments);
-        var systematic = new double[signals.Length];
-        var random = new double[signals.Length];
+        int places = _instruments.All.Count;
+        var systematic = new double[places];
+        var random = new double[places];
         var windows = new List<LineWindow>(grid.Count);
         for (int window = 0; window < grid.Count; window++)
         {
             long at = grid.StartOf(window);
-            if (at < from) continue;
-            for (int place = 0; place < signals.Length; place++)
+            for (int place = 0; place < places; place++)
             {
                 inputs.Value[place] = signals[place].Mean[window];
                 systematic[place] = signals[place].Systematic[window];
@@ -93,16 +121,7 @@ public sealed class LineEvaluation
         if (_instruments.Product.Laboratory >= 0) yield return (_instruments.Product.Laboratory, _line.Product.LaboratoryValidFor);
     }
 
-    private static TimeSpan LeadInOf(Line line)
-    {
-        TimeSpan longest = LineConditioning.Memory;
-        foreach (LiquorStream stream in (LiquorStream[])[line.Feed, line.Product])
-        {
-            if (stream.Laboratory is not null && stream.LaboratoryValidFor > longest) longest = stream.LaboratoryValidFor;
-        }
-
-        return longest;
-    }
+    private static TimeSpan Longer(TimeSpan one, TimeSpan other) => one > other ? one : other;
 
     private Liquor? LiquorOf(LineInputs inputs)
     {

@@ -33,6 +33,12 @@ internal static partial class LogMessages
     [LoggerMessage(400, LogLevel.Debug, "{Line} {Day} evaluated: {Windows} windows in {Milliseconds:0} ms")]
     public static partial void DayEvaluated(this ILogger log, string line, DateOnly day, int windows, double milliseconds);
 
+    [LoggerMessage(401, LogLevel.Warning, "Line {Line} is evaluated by another process now")]
+    public static partial void LeaseLost(this ILogger log, string line);
+
+    [LoggerMessage(402, LogLevel.Error, "The evaluation of line {Line} failed; it is tried again")]
+    public static partial void EvaluationFailed(this ILogger log, Exception error, string line);
+
     [LoggerMessage(401, LogLevel.Error, "{Line} {Day} could not be evaluated; it has no results until its readings change")]
     public static partial void DayBroke(this ILogger log, Exception error, string line, DateOnly day);
 }

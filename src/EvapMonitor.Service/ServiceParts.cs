@@ -18,7 +18,7 @@ internal static class ServiceParts
     public const int LargestBody = 1 << 20;
 
     public static IServiceCollection AddStore(this IServiceCollection services) => services
-        .AddSingleton<PlantHolder>().AddSingleton<PlantStore>().AddSingleton<ReadingStore>().AddSingleton<DayStore>().AddSingleton<ResultStore>()
+        .AddSingleton<PlantHolder>().AddSingleton<PlantStore>().AddSingleton<ReadingStore>().AddSingleton<DayStore>().AddSingleton<LeaseStore>().AddSingleton<ResultStore>()
         .AddSingleton<TrendStore>().AddSingleton<CleaningStore>().AddSingleton<ImportStore>();
 
     public static IServiceCollection AddEvaluation(this IServiceCollection services) => services

@@ -22,13 +22,9 @@ public sealed class Atmosphere
     /// <summary>Random standard uncertainty, Pa.</summary>
     public double[] Random { get; }
 
-    internal static Atmosphere Of(FixedOrMeasured source, WindowGrid grid, Func<Instrument, ConditionedSignal> condition)
+    internal static Atmosphere Of(FixedOrMeasured source, ConditionedSignal? measured, WindowGrid grid)
     {
-        if (source.Measured is { } instrument)
-        {
-            ConditionedSignal signal = condition(instrument);
-            return new Atmosphere(signal.Mean, signal.Systematic, signal.Random);
-        }
+        if (measured is not null) return new Atmosphere(measured.Mean, measured.Systematic, measured.Random);
 
         double[] Constant(double value)
         {

@@ -23,7 +23,7 @@ public static class Laboratory
             long end = grid.StartOf(window) + grid.Step;
             for (; next < readings.Count && readings.At[next] < end; next++)
             {
-                if (ReadingVerdicts.Judge(instrument, readings.Value[next], readings.Quality[next]) is { } reason)
+                if (SignalPartials.Judge(instrument, readings.Value[next], readings.Quality[next]) is { } reason)
                 {
                     if (readings.At[next] >= grid.StartOf(window)) result.Rejected[window, (int)reason]++;
                     continue;

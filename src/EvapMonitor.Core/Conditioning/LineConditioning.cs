@@ -14,34 +14,35 @@ public static class LineConditioning
     public const double WeatherStandard = 800;
 
     /// <summary>
-    /// The longest that conditioning remembers: a reading has no influence later than this. It bounds stale-after, frozen-after and the hour of the scatter.
+    /// How far back conditioning looks for the scatter (one hour) and for stillness (frozen-after, which may not be longer than this).
     /// </summary>
     public static TimeSpan Memory { get; } = TimeSpan.FromHours(6);
 
     /// <summary>Conditions the signals of a line.</summary>
-    /// <param name="instruments">The instruments, one for each signal.</param>
-    /// <param name="readings">Readings by signal; a signal without any may be absent.</param>
+    /// <param name="instruments">The instruments, one for each signal; the memory was filled for the same ones.</param>
+    /// <param name="memory">Partials of the windows and of <see cref="Memory"/> before them.</param>
     /// <param name="atmosphere">Makes gauge pressures absolute.</param>
     /// <param name="grid">The windows.</param>
     /// <returns>The conditioned signals in the order of the instruments, and the atmosphere by window.</returns>
     public static (ConditionedSignal[] Signals, Atmosphere Atmosphere) Condition(
-        IReadOnlyList<Instrument> instruments, IReadOnlyDictionary<string, ReadingSeries> readings, FixedOrMeasured atmosphere, WindowGrid grid)
+        IReadOnlyList<Instrument> instruments, LineMemory memory, FixedOrMeasured atmosphere, WindowGrid grid)
     {
-        ReadingSeries Series(Instrument instrument) => readings.TryGetValue(instrument.Signal, out ReadingSeries? found) ? found : new ReadingSeries();
-        var movement = new Movement(instruments, Series, grid);
-        Atmosphere air = Atmosphere.Of(atmosphere, grid, instrument => SignalConditioning.Condition(instrument, Series(instrument), grid, (_, _) => false));
-        var conditioned = new ConditionedSignal[instruments.Count];
-        for (int i = 0; i < conditioned.Length; i++)
+        var stillness = new Stillness(instruments, memory.Partials, grid.Step);
+        ConditionedSignal[] signals = [.. instruments.Select((instrument, i) =>
+            SignalConditioning.Condition(instrument, memory.Partials[i], memory.Grid, grid, window => stillness.IsFrozen(i, window)))];
+        ConditionedSignal? measured = atmosphere.Measured is { } barometer ? signals[IndexOf(instruments, barometer.Signal)] : null;
+        var air = Atmosphere.Of(atmosphere, measured, grid);
+        foreach (ConditionedSignal signal in signals) air.MakeAbsolute(signal);
+        return (signals, air);
+    }
+
+    private static int IndexOf(IReadOnlyList<Instrument> instruments, string signal)
+    {
+        for (int i = 0; i < instruments.Count; i++)
         {
-            int index = i;
-            Instrument instrument = instruments[i];
-            long limit = (long)instrument.FrozenAfter.TotalMilliseconds;
-            bool canFreeze = instrument.Unit.Dimension != Dimension.Number;
-            conditioned[i] = SignalConditioning.Condition(instrument, Series(instrument), grid,
-                (at, since) => canFreeze && at - since >= limit && movement.OthersMoved(index, at - limit, at));
-            air.MakeAbsolute(conditioned[i]);
+            if (instruments[i].Signal == signal) return i;
         }
 
-        return (conditioned, air);
+        throw new ArgumentException($"The atmosphere's signal {signal} is not among the instruments.", nameof(instruments));
     }
 }

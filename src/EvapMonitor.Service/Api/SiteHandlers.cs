@@ -63,7 +63,7 @@ public sealed class SiteStates(ReadingStore readings, TrendStore trends, ImportS
         int running = (await imports.ListAsync(stop)).Count(import => import.State is ImportState.Running or ImportState.Waiting);
         return new SiteWire(
             now.Site.Name, now.Site.TimeZone, clock.GetUtcNow(), latest, Freshness(latest), now.RevisionId, (int)now.Site.Window.TotalSeconds, running,
-            await days.WaitingAsync(clock.GetUtcNow(), stop));
+            await days.WaitingAsync(clock.GetUtcNow() - (2 * now.Site.Window), stop));
     }
 
     /// <summary>A line.</summary>

@@ -1,7 +1,3 @@
-using EvapMonitor.Core;
-using EvapMonitor.Core.Coefficients;
-using EvapMonitor.Core.Plant;
-using EvapMonitor.Core.Readings;
 using EvapMonitor.Service.Live;
 using EvapMonitor.Service.Store;
 using Npgsql;
@@ -14,16 +10,22 @@ namespace EvapMonitor.Service.Evaluation;
 /// <param name="To">End of the last.</param>
 public sealed record WindowsChanged(string Line, DateTimeOffset From, DateTimeOffset To);
 
-/// <summary>Turns stored readings into stored results: takes the oldest waiting day of each line in turn, evaluates it, writes it.</summary>
+/// <summary>
+/// Turns stored readings into stored results. Live, late, imported, recomputed: all of it comes as marked days, one at a time for each line, today first.
+/// A line is evaluated by the one process that holds its lease.
+/// </summary>
 public sealed class EvaluationWorker(
-    DayStore days, ReadingStore readings, ResultStore results, CleaningStore cleanings, PlantHolder plant, EvaluationSignal signal, LiveEvents events, TimeProvider clock,
-    ILogger<EvaluationWorker> log)
+    DayStore days, ReadingStore readings, ResultStore results, CleaningStore cleanings, LeaseStore leases, PlantHolder plant, EvaluationSignal signal, LiveEvents events,
+    TimeProvider clock, ILogger<EvaluationWorker> log)
     : BackgroundService
 {
-    private static readonly TimeSpan Pause = TimeSpan.FromSeconds(1);
-
-    /// <summary>How long a day must have been left alone before it is taken.</summary>
+    private static readonly TimeSpan Pause = TimeSpan.FromMilliseconds(500);
     private static readonly TimeSpan Rest = TimeSpan.FromSeconds(1);
+    private static readonly TimeSpan RenewEvery = TimeSpan.FromSeconds(5);
+
+    private readonly Dictionary<int, LineWork> _work = [];
+    private Dictionary<int, long> _fences = [];
+    private long _renewed;
 
     /// <inheritdoc/>
     protected override async Task ExecuteAsync(CancellationToken stoppingToken)
@@ -33,61 +35,84 @@ public sealed class EvaluationWorker(
             try
             {
                 PlantInForce inForce = plant.Current;
+                await RenewAsync(inForce, stoppingToken);
                 bool any = false;
-                foreach (LinePlace line in inForce.Lines) any |= await EvaluateNextAsync(inForce, line, stoppingToken);
+                foreach (LinePlace line in inForce.Lines.Where(line => _fences.ContainsKey(line.LineId))) any |= await EvaluateNextAsync(inForce, line, stoppingToken);
                 if (!any) await signal.WaitAsync(Pause, stoppingToken);
             }
             catch (NpgsqlException error)
             {
                 log.DatabaseAway(error, "evaluation");
-                await Task.Delay(Pause, clock, stoppingToken).ConfigureAwait(ConfigureAwaitOptions.SuppressThrowing);
+                await Task.Delay(RenewEvery, clock, stoppingToken).ConfigureAwait(ConfigureAwaitOptions.SuppressThrowing);
             }
             catch (OperationCanceledException) when (stoppingToken.IsCancellationRequested)
             {
-                return;
+                break;
             }
         }
+
+        await ReleaseAsync();
+    }
+
+    private async Task RenewAsync(PlantInForce inForce, CancellationToken stop)
+    {
+        if (_renewed != 0 && clock.GetElapsedTime(_renewed) < RenewEvery) return;
+        Dictionary<int, long> held = await leases.HoldAsync(inForce.Lines.Select(line => line.LineId), stop);
+        foreach ((int line, long fence) in held)
+        {
+            if (_fences.GetValueOrDefault(line) != fence) _work.Remove(line);
+        }
+
+        (_fences, _renewed) = (held, clock.GetTimestamp());
     }
 
     private async Task<bool> EvaluateNextAsync(PlantInForce inForce, LinePlace line, CancellationToken stop)
     {
-        DateTimeOffset now = clock.GetUtcNow();
-        if (await days.NextAsync(line.LineId, now, Rest, stop) is not { } day) return false;
-        long began = clock.GetTimestamp();
-        long from = Instant.ToMilliseconds(day.Day.ToDateTime(TimeOnly.MinValue, DateTimeKind.Utc));
-        LineWindow[] windows;
+        if (!_work.TryGetValue(line.LineId, out LineWork? work) || work.Plant != inForce) work = _work[line.LineId] = new LineWork(inForce, line, readings);
+        long closed = work.ClosedAt(clock.GetUtcNow());
+        if (await days.TakeAsync(line.LineId, DateTimeOffset.FromUnixTimeMilliseconds(closed), Rest, stop) is not { } taken) return false;
         try
         {
-            windows = await EvaluateDayAsync(inForce, line, from, now, stop);
+            long began = clock.GetTimestamp();
+            DayResult result = work.Evaluate(taken, closed, await CleaningsAsync(line, stop));
+            await results.WriteAsync(result, inForce.RevisionId, _fences[line.LineId], stop);
+            log.DayEvaluated(line.Line.Name, taken.Day, result.Windows.Count, clock.GetElapsedTime(began).TotalMilliseconds);
+            DateTimeOffset to = result.Windows.Count == 0 ? result.From : DateTimeOffset.FromUnixTimeMilliseconds(result.Windows[^1].At) + inForce.Site.Window;
+            events.Publish("windows", new WindowsChanged(line.Line.Name, result.From, to));
+            return true;
         }
-        catch (Exception error) when (error is not (NpgsqlException or OperationCanceledException))
+        catch (LeaseLostException)
         {
-            // Unforeseen: one day must not stop the days after it. It has no results until it changes.
-            log.DayBroke(error, line.Line.Name, day.Day);
-            windows = [];
+            log.LeaseLost(line.Line.Name);
+            _fences.Remove(line.LineId);
+            return false;
         }
-
-        await results.WriteDayAsync(line, day, inForce.RevisionId, windows, stop);
-        log.DayEvaluated(line.Line.Name, day.Day, windows.Length, clock.GetElapsedTime(began).TotalMilliseconds);
-        events.Publish("windows", new WindowsChanged(line.Line.Name, DateTimeOffset.FromUnixTimeMilliseconds(from), DateTimeOffset.FromUnixTimeMilliseconds(from + Milliseconds.Day)));
-        return true;
+        catch (Exception error) when (error is not NpgsqlException and not OperationCanceledException)
+        {
+            // One line that fails must not stop the others; its mark stays, so that it is tried again.
+            log.EvaluationFailed(error, line.Line.Name);
+            work.Forget();
+            return false;
+        }
     }
 
-    private async Task<LineWindow[]> EvaluateDayAsync(PlantInForce inForce, LinePlace line, long from, DateTimeOffset now, CancellationToken stop)
+    private async Task<ILookup<string, (long Start, long End)>> CleaningsAsync(LinePlace line, CancellationToken stop)
     {
-        Site site = inForce.Site;
-        var evaluation = new LineEvaluation(site, line.Line);
-        // Only windows that have closed: a second past their end.
-        long step = (long)site.Window.TotalMilliseconds, closed = now.ToUnixTimeMilliseconds() - 1000;
-        long to = long.Min(from + Milliseconds.Day, closed - Milliseconds.Modulo(closed, step));
-        if (to <= from) return [];
-        var wanted = evaluation.Signals.ToDictionary(name => name, name => inForce.Signals[name]);
-        DateTimeOffset start = DateTimeOffset.FromUnixTimeMilliseconds(from), end = DateTimeOffset.FromUnixTimeMilliseconds(to);
-        Dictionary<string, ReadingSeries> series = readings.Read(wanted, start - evaluation.LeadIn, end);
         var names = line.EffectIds.Zip(line.Line.Effects, (id, effect) => (id, effect.Name)).ToDictionary(pair => pair.id, pair => pair.Name);
-        ILookup<string, (long, long)> logged = (await cleanings.ListAsync(line.LineId, null, stop))
+        return (await cleanings.ListAsync(line.LineId, null, stop))
             .Where(cleaning => names.ContainsKey(cleaning.EffectId))
             .ToLookup(cleaning => names[cleaning.EffectId], cleaning => (cleaning.Start.ToUnixTimeMilliseconds(), cleaning.End?.ToUnixTimeMilliseconds() ?? long.MaxValue));
-        return evaluation.Evaluate(series, from, to, logged);
+    }
+
+    private async Task ReleaseAsync()
+    {
+        try
+        {
+            await leases.ReleaseAsync();
+        }
+        catch (NpgsqlException error)
+        {
+            log.DatabaseAway(error, "giving back the lines");
+        }
     }
 }

@@ -46,6 +46,9 @@ public sealed record PlantInForce(
     IReadOnlyList<LinePlace> Lines,
     IReadOnlyDictionary<string, SignalPlace> Signals)
 {
+    /// <summary>How long after its instant a reading may still move a result, over all lines.</summary>
+    public TimeSpan Reach { get; } = Lines.Select(place => new LineEvaluation(Site, place.Line).Reach).DefaultIfEmpty().Max();
+
     /// <summary>The line with a name; null when there is none.</summary>
     public LinePlace? Find(string line) => Lines.FirstOrDefault(place => place.Line.Name == line);
 

@@ -7,45 +7,49 @@ using NpgsqlTypes;
 
 namespace EvapMonitor.Service.Store;
 
-/// <summary>Writes the results of a day: windows, hours and the day's mark in one transaction, so that a killed run never shows half a day.</summary>
-public sealed class ResultStore(NpgsqlDataSource database)
+/// <summary>Results of a part of a day, ready to be written.</summary>
+/// <param name="Line">The line.</param>
+/// <param name="Day">The UTC day.</param>
+/// <param name="From">Start of the first hour that is replaced; everything of the day from here on is.</param>
+/// <param name="Windows">The windows, whole hours but for the last.</param>
+/// <param name="Again">From when the day must be evaluated once more though nothing new comes: values still held at the end of the last window; null when done.</param>
+public sealed record DayResult(LinePlace Line, DateOnly Day, DateTimeOffset From, IReadOnlyList<LineWindow> Windows, DateTimeOffset? Again);
+
+/// <summary>Writes the results of a day: windows, hours and the day's mark in one transaction, so that a killed run never shows half of them.</summary>
+public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
 {
-    /// <summary>Replaces the results of a day.</summary>
-    /// <returns>False when the day's readings changed meanwhile: the results stand, and the day stays marked.</returns>
-    public async Task<bool> WriteDayAsync(LinePlace line, WaitingDay day, int revisionId, IReadOnlyList<LineWindow> windows, CancellationToken stop)
+    /// <summary>Replaces the results of a day from an hour on and gives back the mark that was taken.</summary>
+    /// <exception cref="LeaseLostException">Another process evaluates the line now; nothing was written.</exception>
+    public async Task WriteAsync(DayResult result, int revisionId, long fence, CancellationToken stop)
     {
         await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
         await using NpgsqlTransaction transaction = await connection.BeginTransactionAsync(stop);
-        DateTime from = day.Day.ToDateTime(TimeOnly.MinValue, DateTimeKind.Utc), to = from.AddDays(1);
-        var key = new { line = line.LineId, from, to, revision = revisionId };
+        int line = result.Line.LineId;
+        await leases.CheckAsync(connection, line, fence);
+        DateTime from = result.From.UtcDateTime, to = result.Day.ToDateTime(TimeOnly.MinValue, DateTimeKind.Utc).AddDays(1);
         await connection.ExecuteAsync(
             """
             SELECT ensure_month('effect_window', @from), ensure_month('line_window', @from);
             DELETE FROM effect_window WHERE line_id = @line AND at >= @from AND at < @to AND revision_id = @revision;
             DELETE FROM line_window WHERE line_id = @line AND at >= @from AND at < @to AND revision_id = @revision;
             DELETE FROM effect_hour WHERE line_id = @line AND hour >= @from AND hour < @to AND revision_id = @revision
-            """, key);
-        WriteLine(connection, line.LineId, revisionId, windows);
-        WriteWindows(connection, line, revisionId, windows);
-        WriteHours(connection, line, revisionId, windows);
-        int cleared = await connection.ExecuteAsync(
+            """,
+            new { line, from, to, revision = revisionId });
+        WriteLine(connection, line, revisionId, result.Windows);
+        WriteWindows(connection, result.Line, revisionId, result.Windows);
+        WriteHours(connection, result.Line, revisionId, result.Windows);
+        await connection.ExecuteAsync(
             """
-            UPDATE line_day SET shown_revision = @revision, evaluated_through = @through,
-                changed_from = CASE WHEN data_version = @version THEN NULL ELSE changed_from END
+            UPDATE line_day SET shown_revision = @revision, taken_from = NULL, result_version = result_version + 1, changed_from = least(changed_from, @again),
+                evaluated_through = @through
             WHERE line_id = @line AND day = @day
             """,
             new
             {
-                line = line.LineId,
-                day = day.Day,
-                revision = revisionId,
-                version = day.DataVersion,
-                through = windows.Count == 0 ? from : Instant.FromMilliseconds(windows[^1].At),
+                line, day = result.Day, revision = revisionId, again = result.Again?.UtcDateTime,
+                through = result.Windows.Count == 0 ? from : Instant.FromMilliseconds(result.Windows[^1].At),
             });
-        bool whole = await connection.ExecuteScalarAsync<bool>(
-            "SELECT changed_from IS NULL FROM line_day WHERE line_id = @line AND day = @day", new { line = line.LineId, day = day.Day });
         await transaction.CommitAsync(stop);
-        return cleared == 1 && whole;
     }
 
     private static void WriteLine(NpgsqlConnection connection, int lineId, int revisionId, IReadOnlyList<LineWindow> windows)

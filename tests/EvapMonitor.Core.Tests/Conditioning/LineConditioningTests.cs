@@ -52,7 +52,9 @@ public class LineConditioningTests
             for (int minute = 0; minute < 240; minute++) series.Add(new Reading(minute * Milliseconds.Minute, value(instrument.Signal, minute), Quality.Good));
             return series;
         });
-        return LineConditioning.Condition(instruments, readings, Air, grid).Signals;
+        var memory = new LineMemory(instruments, TimeSpan.FromMinutes(5));
+        memory.Fill(readings, grid.Start, grid.End);
+        return LineConditioning.Condition(instruments, memory, Air, grid).Signals;
     }
 
     private static Instrument Instrument(string name) => new()

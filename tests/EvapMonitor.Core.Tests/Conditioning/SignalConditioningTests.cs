@@ -133,5 +133,5 @@ public class SignalConditioningTests
         return Condition(instrument, series);
     }
 
-    private static ConditionedSignal Condition(Instrument instrument, ReadingSeries readings) => SignalConditioning.Condition(instrument, readings, Hour, (_, _) => false);
+    private static ConditionedSignal Condition(Instrument instrument, ReadingSeries readings) => SignalConditioning.Condition(instrument, SignalPartials.Of(instrument, readings, Hour), Hour, Hour, _ => false);
 }

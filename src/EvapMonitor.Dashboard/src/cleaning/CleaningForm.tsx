@@ -91,7 +91,7 @@ export function CleaningForm({ lines, chosen }: { lines: Line[]; chosen: { line:
       <label class="tick"><input type="checkbox" checked={draft.goesOn} onChange={e => change({ goesOn: e.currentTarget.checked })} /> The cleaning still goes on</label>
       <Field name="kind" label="Kind, in the words of the plant" error={errors.value?.kind}>
         {props => <>
-          <input {...props} type="text" list="kinds" maxLength={100} value={draft.kind} onInput={e => change({ kind: e.currentTarget.value })} />
+          <input {...props} type="text" list="kinds" maxLength={60} value={draft.kind} onInput={e => change({ kind: e.currentTarget.value })} />
           <datalist id="kinds"><option value="rinse" /><option value="boil-out" /><option value="chemical" /><option value="mechanical" /></datalist>
         </>}
       </Field>

@@ -25,7 +25,7 @@ export function check(draft: Draft, zone: string, now: number): Checked {
   const start = resolve(draft.start, draft.startSecond, zone, 'start', errors);
   const end = draft.goesOn ? null : resolve(draft.end, draft.endSecond, zone, 'end', errors);
   if (draft.kind.trim() === '') errors.kind = 'Say what kind of cleaning it was, in the words of the plant.';
-  if (draft.kind.length > 100) errors.kind = 'At most 100 characters.';
+  if (draft.kind.length > 60) errors.kind = 'At most 60 characters.';
   if (draft.note.length > 2000) errors.note = 'At most 2000 characters.';
   if (start !== null && start > now) errors.start = 'The start lies in the future; a log holds what has begun.';
   if (end !== null && end > now) errors.end = 'The end lies in the future. Leave it open while the cleaning goes on.';

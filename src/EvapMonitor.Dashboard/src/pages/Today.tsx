@@ -96,7 +96,7 @@ function Legend({ lines: all }: { lines: Line[] }) {
       Ring thickness stands for fouling resistance; not to scale, not a flow restriction. One stratum is {weeks === 1 ? 'one week' : 'four weeks'}. Dashed circle: the
       limit. The bar at three o'clock: ± one standard uncertainty.
       {effects.some(e => e.limits.hours_since_cleaning !== null) && ' Arc outside: hours since the cleaning, full at the limit.'}
-      {effects.some(e => e.limits.resistance_m2k_w === null) && ' Dotted circle, where no limit is set: half the clean coefficient.'}
+      {effects.some(e => (e.limits.resistance_m2k_w ?? 0) <= 0) && ' Dotted circle, where no limit is set: half the clean coefficient.'}
     </p>
   );
 }

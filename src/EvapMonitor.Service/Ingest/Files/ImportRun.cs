@@ -68,7 +68,7 @@ internal sealed class ImportRun(NpgsqlDataSource database, PlantInForce plant, I
     {
         await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
         await using NpgsqlTransaction transaction = await connection.BeginTransactionAsync(stop);
-        InsertCount count = await ReadingStore.InsertAsync(connection, transaction, batch.Readings, _progress.Replace, Core.Conditioning.LineConditioning.Memory, stop);
+        InsertCount count = await ReadingStore.InsertAsync(connection, transaction, batch.Readings, _progress.Replace, plant.Reach, stop);
         ImportFile now = _progress;
         now = now with
         {
