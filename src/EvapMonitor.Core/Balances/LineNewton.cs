@@ -9,7 +9,7 @@ namespace EvapMonitor.Core.Balances;
 public sealed class LineNewton
 {
     private const double Solved = 1e-11, AllowedGrowth = 1.5;
-    private const int MostSteps = 60, MostStages = 200;
+    private const int MostSteps = 60, MostStepsOfStage = 12, MostStages = 60;
     private readonly LineEquations _equations;
     private readonly int[] _free;
     private readonly double[] _scale;
@@ -41,7 +41,7 @@ public sealed class LineNewton
         Steps = 0;
         _offset = [];
         double[] x = [.. start];
-        return Iterate(x) ? x : ByStages(start);
+        return Iterate(x, MostSteps) ? x : ByStages(start);
     }
 
     /// <summary>The largest residual of a state, by its scale, and what it belongs to.</summary>
@@ -72,7 +72,7 @@ public sealed class LineNewton
             double aim = double.Max(0, left - stage);
             _offset = [.. whole.Select(one => one * aim)];
             double[] tried = [.. x];
-            if (!Iterate(tried))
+            if (!Iterate(tried, MostStepsOfStage))
             {
                 stage /= 3;
                 continue;
@@ -95,7 +95,7 @@ public sealed class LineNewton
         return double.Sqrt(sum);
     }
 
-    private bool Iterate(double[] x)
+    private bool Iterate(double[] x, int most)
     {
         int n = _free.Length;
         var jacobian = Matrix<double>.Build.Dense(n, n);
@@ -106,7 +106,7 @@ public sealed class LineNewton
         double norm = Norm(x);
         if (_rows.Count != n) throw new InvalidOperationException($"The line has {_rows.Count} equations for {n} free variables.");
         double[] tried = new double[x.Length];
-        for (int step = 0; step < MostSteps; step++, Steps++)
+        for (int step = 0; step < most; step++, Steps++)
         {
             if (!double.IsFinite(norm)) return false;
             jacobian.Clear();
