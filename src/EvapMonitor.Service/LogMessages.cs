@@ -41,4 +41,43 @@ internal static partial class LogMessages
 
     [LoggerMessage(401, LogLevel.Error, "{Line} {Day} could not be evaluated; it has no results until its readings change")]
     public static partial void DayBroke(this ILogger log, Exception error, string line, DateOnly day);
+
+    [LoggerMessage(500, LogLevel.Error, "The spool could not be read and was set aside as {Path}; readings that waited in it are missing")]
+    public static partial void SpoolSetAside(this ILogger log, string path);
+
+    [LoggerMessage(501, LogLevel.Error, "{Count} batches of the spool are damaged and were set aside; their readings are missing")]
+    public static partial void SpoolRowsDamaged(this ILogger log, int count);
+
+    [LoggerMessage(502, LogLevel.Error, "The spool cannot be written; readings are refused until it can")]
+    public static partial void SpoolFailed(this ILogger log, Exception error);
+
+    [LoggerMessage(503, LogLevel.Error, "{Why} Readings are refused until there is room")]
+    public static partial void SpoolFull(this ILogger log, string why);
+
+    [LoggerMessage(504, LogLevel.Information, "The spool takes readings again")]
+    public static partial void SpoolTakesAgain(this ILogger log);
+
+    [LoggerMessage(505, LogLevel.Information, "The database takes readings again after {Seconds:0} s; {MiB} MiB wait in the spool")]
+    public static partial void DrainTakesAgain(this ILogger log, double seconds, long mib);
+
+    [LoggerMessage(506, LogLevel.Error, "The database refused a reading of {Signal} from {Source}: {Reason}")]
+    public static partial void ReadingRefused(this ILogger log, string signal, string source, string reason);
+
+    [LoggerMessage(507, LogLevel.Error, "Readings cannot be stored; they wait in the spool")]
+    public static partial void DrainFailed(this ILogger log, Exception error);
+
+    [LoggerMessage(600, LogLevel.Information, "Connected to MQTT broker {Name} at {Address}")]
+    public static partial void BrokerConnected(this ILogger log, string name, string address);
+
+    [LoggerMessage(601, LogLevel.Warning, "MQTT broker {Name} at {Address} is not connected: {Reason}; next attempt in {Seconds:0.0} s")]
+    public static partial void BrokerLost(this ILogger log, string name, string address, string reason, double seconds);
+
+    [LoggerMessage(602, LogLevel.Warning, "The own MQTT broker does not listen on port {Port}: {Reason} The service goes on without it")]
+    public static partial void OwnBrokerAway(this ILogger log, int port, string reason);
+
+    [LoggerMessage(603, LogLevel.Information, "The own MQTT broker listens at 127.0.0.1:{Port}")]
+    public static partial void OwnBrokerListens(this ILogger log, int port);
+
+    [LoggerMessage(604, LogLevel.Warning, "The own MQTT broker dropped a message for {Client}, which reads too slowly")]
+    public static partial void OwnBrokerDropped(this ILogger log, string client);
 }

@@ -1,6 +1,7 @@
 using System.Globalization;
 using EvapMonitor.Service.Api;
 using EvapMonitor.Service.Evaluation;
+using EvapMonitor.Service.Ingest;
 using EvapMonitor.Service.Ingest.Files;
 using EvapMonitor.Service.Live;
 using EvapMonitor.Service.PlantFile;
@@ -113,11 +114,12 @@ public sealed class ServiceHost : IAsyncDisposable
             kestrel.AddServerHeader = false;
             kestrel.Limits.MaxRequestBodySize = ServiceParts.LargestBody;
         });
+        builder.Services.AddSingleton(new TrustedPeers(options.InContainer));
         builder.Services.AddSingleton(clock);
         builder.Services.AddSingleton(database);
         if (server is not null) builder.Services.AddSingleton(server).AddHostedService<PrivateServerGuard>();
         builder.Services.AddSingleton(new Uploads(Path.Combine(options.Data, "uploads")));
-        builder.Services.AddStore().AddEvaluation().AddApi();
+        builder.Services.AddStore().AddEvaluation().AddIngest(options.Ingest.Plan(options.Data, out _)).AddApi();
         WebApplication app = builder.Build();
         app.UseExceptionHandler();
         app.UseStatusCodePages();

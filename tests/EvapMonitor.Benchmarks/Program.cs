@@ -1,3 +1,5 @@
+using System.Globalization;
+using EvapMonitor.Benchmarks.Ingest;
 using EvapMonitor.Benchmarks.Proofs;
 using EvapMonitor.Benchmarks.Steam;
 
@@ -7,8 +9,13 @@ var figures = new Dictionary<string, Func<string[], Task<int>>>
     ["steam"] = _ => Task.FromResult(SteamBenchmark.Run()),
     ["import"] = ImportProof.RunAsync,
     ["rating"] = _ => Task.FromResult(RatingProof.Run()),
+    ["ingest"] = IngestProof.RunAsync,
+    ["kills"] = KillsProof.RunAsync,
 };
 
+// The other end of a comparison runs as a process of its own.
+if (args is ["receive", var port, var messages])
+    return LibraryAlone.Receive(int.Parse(port, CultureInfo.InvariantCulture), long.Parse(messages, CultureInfo.InvariantCulture));
 string[] words = args is ["prove", .. var rest] ? rest : args;
 if (words.Length >= 1 && figures.TryGetValue(words[0], out var figure)) return await figure(words[1..]);
 Console.Error.WriteLine($"Which figure? One of: {string.Join(", ", figures.Keys)}.");

@@ -1,3 +1,4 @@
+using EvapMonitor.Service.Api.Wire;
 using Microsoft.AspNetCore.OpenApi;
 using Microsoft.OpenApi;
 
@@ -27,4 +28,16 @@ internal static class OpenApiText
         document.Servers?.Clear();
         return Task.CompletedTask;
     });
+
+    /// <summary>
+    /// Describes the body of readings by hand: said on the route itself, the router would send other content to the pages of the dashboard instead of a 415.
+    /// </summary>
+    public static async Task DescribeReadings(OpenApiOperation operation, OpenApiOperationTransformerContext context, CancellationToken stop)
+    {
+        OpenApiSchema schema = await context.GetOrCreateSchemaAsync(typeof(NewReadingsWire), cancellationToken: stop);
+        operation.RequestBody = new OpenApiRequestBody
+        {
+            Required = true, Content = new Dictionary<string, OpenApiMediaType> { ["application/json"] = new() { Schema = schema } },
+        };
+    }
 }

@@ -23,6 +23,8 @@ internal static class Routes
         api.MapDelete("/cleanings/{id:guid}", CleaningHandlers.Withdraw).Named("withdrawCleaning", "Withdraw a logged cleaning", Policies.Write);
 
         api.Get("/signals", SignalHandlers.List, "getSignals", "Signals with their last readings");
+        api.MapPost("/readings", ReadingHandlers.Add).Named("addReadings", "Readings in batches, plain or gzip; answered once they are durable", Policies.Write)
+            .AddOpenApiOperationTransformer(OpenApiText.DescribeReadings).ProducesProblem(StatusCodes.Status503ServiceUnavailable);
         api.Get("/imports", ImportHandlers.List, "getImports", "Imports, newest first");
         api.Get("/imports/{id}", ImportHandlers.Find, "getImport", "One import");
         api.MapPost("/imports", ImportHandlers.Upload).Named("uploadHistory", "Upload a CSV of history, plain or gzip", Policies.Write);
@@ -42,6 +44,6 @@ internal static class Routes
         if (handler.Method.Name != nameof(EventHandlers.Stream)) api.MapMethods(path, Head, handler).RequireAuthorization(Policies.Read).ExcludeFromDescription();
     }
 
-    private static void Named(this RouteHandlerBuilder route, string name, string summary, string policy) =>
+    private static RouteHandlerBuilder Named(this RouteHandlerBuilder route, string name, string summary, string policy) =>
         route.WithName(name).WithSummary(summary).RequireAuthorization(policy).ProducesProblem(StatusCodes.Status400BadRequest);
 }

@@ -22,10 +22,17 @@ internal sealed class ServiceProcess : IDisposable
         process.BeginOutputReadLine();
     }
 
-    public static ServiceProcess Start(string plant, string data)
+    /// <summary>Starts it.</summary>
+    /// <param name="plant">Path of the plant file.</param>
+    /// <param name="data">The data folder.</param>
+    /// <param name="connection">A database of somebody else's; null for a private one.</param>
+    public static ServiceProcess Start(string plant, string data, string? connection = null)
     {
         string program = Path.Combine(AppContext.BaseDirectory, "evapmonitor.dll");
         var start = new ProcessStartInfo("dotnet", [program, "run", plant, "--data", data, "--listen", "http://127.0.0.1:0"]) { RedirectStandardOutput = true };
+        start.Environment["EVAPMONITOR_MQTT"] = "off";
+        start.Environment.Remove("EVAPMONITOR_CONNECTION");
+        if (connection is not null) start.Environment["EVAPMONITOR_CONNECTION"] = connection;
         return new ServiceProcess(Process.Start(start)!, data);
     }
 
@@ -40,9 +47,17 @@ internal sealed class ServiceProcess : IDisposable
     }
 
     /// <summary>Peak resident memory, kB.</summary>
-    public long PeakMemory() =>
-        File.ReadLines($"/proc/{_process.Id}/status").Where(line => line.StartsWith("VmHWM:", StringComparison.Ordinal))
-            .Select(line => long.Parse(line.Split(' ', StringSplitOptions.RemoveEmptyEntries)[1], CultureInfo.InvariantCulture)).Single();
+    public long PeakMemory() => Status("VmHWM:");
+
+    /// <summary>Resident memory, kB.</summary>
+    public long Memory() => Status("VmRSS:");
+
+    /// <summary>As kill -9 does.</summary>
+    public async Task KillAsync()
+    {
+        _process.Kill();
+        await _process.WaitForExitAsync();
+    }
 
     public void Dispose()
     {
@@ -53,4 +68,8 @@ internal sealed class ServiceProcess : IDisposable
 
         _process.Dispose();
     }
+
+    private long Status(string name) =>
+        File.ReadLines($"/proc/{_process.Id}/status").Where(line => line.StartsWith(name, StringComparison.Ordinal))
+            .Select(line => long.Parse(line.Split(' ', StringSplitOptions.RemoveEmptyEntries)[1], CultureInfo.InvariantCulture)).Single();
 }

@@ -40,6 +40,8 @@ internal sealed class ChildService : IAsyncDisposable
     {
         ProcessStartInfo start = StartOf(["run", plant, "--data", data, "--listen", "http://127.0.0.1:0"]);
         start.Environment.Remove("EVAPMONITOR_CONNECTION");
+        start.Environment["EVAPMONITOR_MQTT"] = "off";
+        start.Environment["EVAPMONITOR_SPOOL_RESERVE_MIB"] = "0";
         if (connection is not null) start.Environment["EVAPMONITOR_CONNECTION"] = connection;
         if (killAt is not null) start.Environment["EVAPMONITOR_KILL_AT"] = killAt;
         var child = new ChildService(start);

@@ -21,4 +21,7 @@ internal static class Poll
     /// <summary>Asks until the answer is true.</summary>
     public static Task UntilAsync(string awaited, Func<Task<bool>> ask, int limitSeconds = 30) =>
         UntilAsync<object>(awaited, async () => await ask() ? awaited : null, limitSeconds);
+
+    /// <summary>Looks until it is true.</summary>
+    public static Task UntilAsync(string awaited, Func<bool> look, int limitSeconds = 30) => UntilAsync(awaited, () => Task.FromResult(look()), limitSeconds);
 }

@@ -42,7 +42,7 @@ public sealed class RunningService : IAsyncDisposable
     {
         string folder = TemporaryFolder.Create(), file = Path.Combine(folder, "plant.yaml");
         await File.WriteAllTextAsync(file, plant, Stop);
-        var options = new ServiceOptions { Plant = file, Data = folder, Connection = connection, Listen = "http://127.0.0.1:0" };
+        var options = new ServiceOptions { Plant = file, Data = folder, Connection = connection, Listen = "http://127.0.0.1:0", Ingest = new() { OwnBroker = "off", ReserveMebibytes = "0" } };
         ServiceHost host = await ServiceHost.StartAsync(options, Stop, now is { } start ? new ShiftedClock(start) : null, LogEventLevel.Fatal);
         return new RunningService(folder, host, connection);
     }
