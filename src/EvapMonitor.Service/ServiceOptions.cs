@@ -33,7 +33,7 @@ public sealed record ServiceOptions
     /// <summary>The folder when none is given: a system folder for root, else the user's.</summary>
     public static string DefaultData => Environment.IsPrivilegedProcess && !OperatingSystem.IsWindows()
         ? "/var/lib/evapmonitor"
-        : Path.Combine(Environment.GetFolderPath(Environment.SpecialFolder.LocalApplicationData, Environment.SpecialFolderOption.Create), "evapmonitor");
+        : Path.Combine(Environment.GetFolderPath(Environment.SpecialFolder.LocalApplicationData, Environment.SpecialFolderOption.DoNotVerify), "evapmonitor");
 
     /// <summary>Everything that is wrong with the options, each in one line; empty when all is well.</summary>
     public IReadOnlyList<string> Problems()
