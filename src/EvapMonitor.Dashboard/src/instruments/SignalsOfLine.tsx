@@ -14,8 +14,8 @@ export function SignalsOfLine({ line, signals, first, now }: { line: string | nu
       <div>
         <p class="say">{head}{bold !== '' && <><b>{bold}</b>.</>}</p>
         <table class="signals">
-          <thead><tr><th scope="col">signal</th><th scope="col" class="number">value</th><th scope="col">unit</th><th scope="col">quality</th>
-            <th scope="col">age</th><th scope="col" class="number">good, last 24 h</th><th scope="col">rejected, last 24 h</th></tr></thead>
+          <thead><tr><th scope="col">signal</th><th scope="col" class="number">value</th><th scope="col" class="unit">unit</th><th scope="col">quality</th>
+            <th scope="col">age</th><th scope="col" class="number">good, last 24 h</th><th scope="col" class="rejected">rejected, last 24 h</th></tr></thead>
           <tbody>{(first ? attentionFirst(signals, now) : signals).map(s => <Row key={s.name} signal={s} now={now} />)}</tbody>
         </table>
       </div>

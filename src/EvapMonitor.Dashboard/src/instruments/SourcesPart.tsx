@@ -13,7 +13,7 @@ export function SourcesPart({ of, now }: { of: Sources; now: number }) {
       <div>
         {of.sources.length === 0 && <p class="say">No source of readings is set up, and none has been posted since the service started.</p>}
         <ul class="sources">{of.sources.map(s => <One key={s.name} source={s} now={now} />)}</ul>
-        <p>{spoolWords(of.spool)}</p>
+        <p class="spool">{spoolWords(of.spool)}</p>
         {of.refused.length > 0 && <Refused all={of.refused} now={now} />}
       </div>
     </section>
@@ -27,7 +27,7 @@ function One({ source: s, now }: { source: Source; now: number }) {
       <h3>{s.name}</h3>
       <p class="quiet">{kindWords(s)}{s.address !== '' && `, ${s.address}`}</p>
       <p class="source-state">{isCut(s) && <Mark kind="unknown" />}<span>{bold !== '' && <b>{bold}</b>}{rest}</span></p>
-      <p>{countsWords(s).join('; ')}; since the service started.</p>
+      <p>Since the service started: {countsWords(s).join('; ')}.</p>
       {s.last_error !== null && <p>Last error of the connection: {inSiteTime(s.last_error, zone.value, now)}</p>}
       {s.samples.length > 0 && <details>
         <summary>{count(s.samples.length, 'example')} of what was not used<span class="unseen"> from {s.name}</span></summary>

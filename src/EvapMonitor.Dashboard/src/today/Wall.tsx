@@ -91,11 +91,11 @@ function Row({ line, now: at, weeks }: { line: Line; now: number; weeks: 1 | 4 }
   );
 }
 
-/** An effect in a word or a number: what is due, else the share of the clean coefficient. */
+/** An effect in a word or a number: what is due, else the share of the clean coefficient. Of a silent line no number, which would pass for news across a room. */
 function State({ effect, now: at, stale }: { effect: Effect; now: number; stale: boolean }) {
   const { mark } = dueWords(effect, at, !stale), share = effect.now?.cleanliness ?? null;
   if (mark === 'now') return <span class={stale ? undefined : 'due-now'}>{stale ? 'was due' : 'due'}</span>;
   if (mark === 'cleaning') return <>cleaning</>;
-  if (mark === 'unknown' || share === null || depositOf(effect, 1) === null) return <>not known</>;
-  return <>{stale && 'was '}{Math.round(share * 100)} %</>;
+  if (mark === 'unknown' || share === null || depositOf(effect, 1) === null) return <>unknown</>;
+  return stale ? null : <>{Math.round(share * 100)} %</>;
 }

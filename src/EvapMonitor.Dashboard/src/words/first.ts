@@ -18,8 +18,8 @@ export function firstSentences(notices: readonly Notice[], lines: readonly Line[
   const silent = lines.filter(l => l.readings === 'stale').sort((a, b) => (a.latest_reading_at ?? '').localeCompare(b.latest_reading_at ?? ''));
   const all: First[] = [
     ...orderedNotices(notices).map(n => {
-      const { sentence, since } = noticeWords(n, zone, now);
-      return { key: `notice ${n.key}`, line: null, act: mustAct(n), pieces: [{ text: sentence, bold: true }, { text: ` ${since}`, bold: false }] };
+      const { head, rest, since } = noticeWords(n, zone, now);
+      return { key: `notice ${n.key}`, line: null, act: mustAct(n), pieces: [{ text: head, bold: true }, { text: `${rest} ${since}`, bold: false }] };
     }),
     ...due.map(l => ofLine(l, true)),
     ...silent.map(l => ofLine(l, false)),

@@ -9,10 +9,12 @@ export const mustAct = (notice: Notice) => acting.includes(notice.key);
 
 const ended = (text: string) => (/[.!?]$/.test(text) ? text : `${text}.`);
 
-/** The service's sentence, then since when. */
-export function noticeWords(notice: Notice, zone: string, now: number): { sentence: string; since: string } {
-  const at = Date.parse(notice.since);
-  return { sentence: ended(notice.sentence), since: `Since ${moment(at, zone, now)}, for ${duration(now - at)}.` };
+/** The service's sentences, then since when; `head` is the clause that a hurried reader needs. */
+export function noticeWords(notice: Notice, zone: string, now: number): { head: string; rest: string; since: string } {
+  const at = Date.parse(notice.since), text = ended(notice.sentence);
+  // Up to the first colon or stop that a space follows: an address holds colons and stops of its own.
+  const head = /^.*?(?=:\s|[.!?](?:\s|$))/s.exec(text)?.[0] ?? text;
+  return { head, rest: text.slice(head.length), since: `Since ${moment(at, zone, now)}, for ${duration(now - at)}.` };
 }
 
 /** Those that ask for an act first, the longest standing first among equals. */
@@ -24,6 +26,6 @@ export function orderedNotices(notices: readonly Notice[]): Notice[] {
 export function noticeLine(notices: readonly Notice[], zone: string, now: number): string {
   const [first, ...more] = orderedNotices(notices);
   if (first === undefined) return '';
-  const { sentence, since } = noticeWords(first, zone, now);
-  return `${sentence} ${since}${more.length > 0 ? ` ${more.length} more ${more.length === 1 ? 'notice stands' : 'notices stand'} on Today.` : ''}`;
+  const { head, rest, since } = noticeWords(first, zone, now);
+  return `${head}${rest} ${since}${more.length > 0 ? ` ${more.length} more ${more.length === 1 ? 'notice stands' : 'notices stand'} on Today.` : ''}`;
 }

@@ -61,5 +61,5 @@ export function signalsWords(signals: readonly SignalRow[], now: number): { head
   const parts = [[of('silent', 'never read'), 'without a reading in the last 15 min'], [of('bad now'), 'bad now'], [of('often unsound'), 'sound for less than 90 % of the last 24 h']] as const;
   const bold = parts.filter(([n]) => n > 0).map(([n, what]) => `${n} ${what}`).join(', ');
   const head = `${signals.length} ${signals.length === 1 ? 'signal' : 'signals'}`;
-  return { head: bold === '' ? `${head}, every one with a sound reading in the last 15 min.` : `${head}: `, bold };
+  return { head: bold === '' ? `${head}, ${signals.length === 1 ? '' : 'every one '}with a sound reading in the last 15 min.` : `${head}: `, bold };
 }

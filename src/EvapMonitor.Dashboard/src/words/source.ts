@@ -14,7 +14,7 @@ export const isCut = (source: Source) => source.kind !== 'http' && source.connec
 /** Whether it is connected and when it last spoke. Posted readings hold no connection. */
 export function sourceWords(source: Source, zone: string, now: number): { bold: string; rest: string } {
   const last = source.last_message_at === null ? 'No message has come since the service started.'
-    : `Last message ${duration(now - Date.parse(source.last_message_at))} ago.`;
+    : now - Date.parse(source.last_message_at) < 10_000 ? 'Last message just now.' : `Last message ${duration(now - Date.parse(source.last_message_at))} ago.`;
   if (source.kind === 'http') return { bold: '', rest: last };
   if (source.connected_since === null) return { bold: source.kind === 'broker' ? 'It does not listen' : 'Not connected', rest: `. ${last}` };
   const since = moment(Date.parse(source.connected_since), zone, now);
@@ -25,10 +25,10 @@ export function sourceWords(source: Source, zone: string, now: number): { bold: 
 export function countsWords(source: Source): string[] {
   const rows: [number, string][] = [
     [source.malformed, 'malformed'],
-    [source.out_of_time, 'out of time: too far ahead or before the history'],
+    [source.out_of_time, 'out of time (too far ahead, or before the history)'],
     [source.unknown, 'of signals that no plant file names'],
-    [source.instant_unknown, 'kept messages without a time, left out'],
-    [source.shed, 'dropped, because the intake was full'],
+    [source.instant_unknown, 'retained without a time, left out'],
+    [source.shed, 'dropped because the intake was full'],
   ];
   return [
     `${count(source.accepted, 'reading')} accepted`,
