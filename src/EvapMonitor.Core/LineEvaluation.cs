@@ -115,6 +115,18 @@ public sealed class LineEvaluation
         return [.. windows];
     }
 
+    /// <summary>How sound each signal was over a span: what conditioning took and what it left out.</summary>
+    /// <param name="readings">Readings by signal, from <see cref="LeadIn"/> before the span on.</param>
+    /// <param name="from">Start of the span; on the window grid.</param>
+    /// <param name="to">End of the span; on the window grid.</param>
+    public IReadOnlyList<SignalSummary> Summarise(IReadOnlyDictionary<string, ReadingSeries> readings, long from, long to)
+    {
+        LineMemory memory = NewMemory();
+        memory.Fill(readings, from, to);
+        (ConditionedSignal[] signals, _) = LineConditioning.Condition(_conditioned, memory, _site.Atmosphere, WindowGrid.Between(from, to, _site.Window));
+        return [.. signals.Select(SignalSummary.Of)];
+    }
+
     private IEnumerable<(int Place, TimeSpan ValidFor)> LaboratoryPlaces()
     {
         if (_instruments.Feed.Laboratory >= 0) yield return (_instruments.Feed.Laboratory, _line.Feed.LaboratoryValidFor);

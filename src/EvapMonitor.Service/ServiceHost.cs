@@ -114,6 +114,7 @@ public sealed class ServiceHost : IAsyncDisposable
             kestrel.AddServerHeader = false;
             kestrel.Limits.MaxRequestBodySize = ServiceParts.LargestBody;
         });
+        builder.Services.AddSingleton(new TrustedPeers(options.InContainer));
         builder.Services.AddSingleton(clock);
         builder.Services.AddSingleton(database);
         if (server is not null) builder.Services.AddSingleton(server).AddHostedService<PrivateServerGuard>();

@@ -18,6 +18,12 @@ public sealed record ServiceOptions
     /// <summary>Address to listen on: http, a loopback address, a port (0 takes a free one). Default http://127.0.0.1:8642.</summary>
     public string Listen { get; init; } = DefaultListen;
 
+    /// <summary>
+    /// True inside a container (EVAPMONITOR_NETWORK=container): the service listens in the container's own network, where the host's loopback arrives as a private
+    /// address. The container's port must then be published on the host's loopback only.
+    /// </summary>
+    public bool InContainer { get; init; }
+
     /// <summary>How readings come in.</summary>
     public IngestSettings Ingest { get; init; } = new();
 
@@ -36,7 +42,9 @@ public sealed record ServiceOptions
         if (string.IsNullOrWhiteSpace(Data)) problems.Add("data: empty; allowed: the path of a folder.");
         if (!Uri.TryCreate(Listen, UriKind.Absolute, out Uri? address) || address.Scheme != Uri.UriSchemeHttp || address.PathAndQuery != "/")
             problems.Add($"listen: found \"{Listen}\"; allowed: an address such as {DefaultListen}.");
-        else if (!IsLoopback(address.Host))
+        else if (InContainer && !IsContainer)
+            problems.Add("network: found \"container\", but this is no container; allowed: leave EVAPMONITOR_NETWORK out.");
+        else if (!InContainer && !IsLoopback(address.Host))
             problems.Add($"listen: found \"{Listen}\"; allowed: loopback addresses only (127.0.0.1, [::1], localhost), because there is no access control yet.");
         if (Connection is not null && WhyNoConnection(Connection) is { } wrong) problems.Add($"connection: {wrong}");
         if (Plant is not null && !File.Exists(Plant)) problems.Add($"plant: found \"{Plant}\"; there is no such file.");
@@ -48,6 +56,9 @@ public sealed record ServiceOptions
 
         return problems;
     }
+
+    private static bool IsContainer =>
+        File.Exists("/.dockerenv") || File.Exists("/run/.containerenv") || Environment.GetEnvironmentVariable("DOTNET_RUNNING_IN_CONTAINER") == "true";
 
     private static bool IsLoopback(string host) =>
         host.Equals("localhost", StringComparison.OrdinalIgnoreCase) || (IPAddress.TryParse(host.Trim('[', ']'), out IPAddress? address) && IPAddress.IsLoopback(address));

@@ -1,4 +1,7 @@
 using System.Globalization;
+using EvapMonitor.Core.Balances;
+using EvapMonitor.Core.Outlook;
+using EvapMonitor.Core.Plant;
 using EvapMonitor.Core.Properties;
 
 namespace EvapMonitor.Simulator;
@@ -12,9 +15,10 @@ public static class DemoPlant
     private const int Seed = 20260301;
     private const double ZeroCelsius = 273.15;
 
-    private static readonly SimulatedEffect[] Effects =
+    /// <summary>Name, heating surface (m²), coefficient with clean surfaces (W/(m²·K)), vapour drawn off for other users (kg/s) and who they are.</summary>
+    private static readonly (string Name, double Area, double Clean, double Bleed, string To)[] Effects =
     [
-        new("N1", 1450, 2900, 1.1), new("N2", 1300, 2450, 2.2), new("N3", 1300, 1850, 0), new("N4", 1350, 980, 0),
+        ("N1", 1450, 2900, 1.1, "heater"), ("N2", 1300, 2450, 2.2, "pans"), ("N3", 1300, 1850, 0, ""), ("N4", 1350, 980, 0, ""),
     ];
 
     /// <summary>Fouling of each effect: rate in m²·K/W per day, and the resistance it levels off at (0: it does not).</summary>
@@ -72,10 +76,11 @@ public static class DemoPlant
     public static void WriteHistory(TextWriter text, DateTimeOffset start, DateTimeOffset end)
     {
         ArgumentNullException.ThrowIfNull(text);
-        var line = new ForwardLine(Juice(), Effects);
+        var rating = new Rating(new LineGraph(Line()), new LineProperties(Juice()));
+        OperatingPoint? point = null;
         var noise = new Noise(Seed);
         text.Write("time,N.FT-10,N.DT-10,N.TT-10,N.FT-90,N.DT-90,N.FT-01,N.PT-01,N1.FT-4,N2.FT-4");
-        foreach (SimulatedEffect effect in Effects) text.Write($",{effect.Name}.PT-2,{effect.Name}.TT-2,{effect.Name}.TT-1,{effect.Name}.FT-3,{effect.Name}.DT-2");
+        foreach (var (name, _, _, _, _) in Effects) text.Write($",{name}.PT-2,{name}.TT-2,{name}.TT-1,{name}.FT-3,{name}.DT-2");
         text.WriteLine();
         int step = 0;
         for (DateTimeOffset at = start; at < end; at = at.AddMinutes(2), step++)
@@ -83,7 +88,14 @@ public static class DemoPlant
             double day = (at - start).TotalDays;
             text.Write(at.UtcDateTime.ToString("yyyy-MM-ddTHH:mm:ssZ", CultureInfo.InvariantCulture));
             if (IsStopped(day)) WriteStopped(text, noise);
-            else WriteRow(text, noise, line.Solve(ConditionsAt(day), [.. Effects.Select((effect, i) => 1 / ((1 / effect.Clean) + ResistanceAt(i, day)))]), ConditionsAt(day), day);
+            else
+            {
+                RatingConditions conditions = ConditionsAt(day);
+                RatingResult result = rating.Solve(conditions, point);
+                point = result.Point ?? throw new InvalidOperationException(result.Reason);
+                WriteRow(text, noise, point, conditions, day);
+            }
+
             text.WriteLine();
         }
     }
@@ -113,36 +125,53 @@ public static class DemoPlant
 
     private static bool IsStopped(double day) => Cleanings.Any(cleaning => day >= cleaning.Day && day < cleaning.Day + (8 / 24.0));
 
-    private static OperatingConditions ConditionsAt(double day) => new(
-        1.40e5 + (2.5e3 * double.Sin(day * 2.1)) + (1.2e3 * double.Sin(day * 13.7)),
-        1.95e4 + (4e2 * double.Sin(day * double.Tau)),
-        0.135 + (0.004 * double.Sin(day * 0.9)),
-        ZeroCelsius + 98 + (1.5 * double.Sin(day * 1.7)),
-        0.58 + (0.006 * double.Sin(day * 3.3)));
+    /// <summary>The line without losses and vents, so that the coefficients put in are exactly those that the readings hold.</summary>
+    private static Line Line() => new()
+    {
+        Name = "north",
+        Liquor = new LiquorChoice(Juice(), null, new Dictionary<int, Liquor>()),
+        Effects = [.. Effects.Select((effect, i) => new Effect
+        {
+            Name = effect.Name, Area = effect.Area, HeatLoss = new(0, 0), Vent = new(0, 0),
+            Heating = [i == 0 ? HeatSource.Steam : new HeatSource(Effects[i - 1].Name)], Liquor = [i == 0 ? LiquorSource.Feed : new LiquorSource(Effects[i - 1].Name)],
+        })],
+        Bleeds = [.. Effects.Where(effect => effect.Bleed > 0).Select(effect => new Bleed(effect.Name, effect.To, null))],
+    };
 
-    private static void WriteRow(TextWriter text, Noise noise, LinePoint point, OperatingConditions conditions, double day)
+    private static RatingConditions ConditionsAt(double day) => new()
+    {
+        Coefficients = Effects.Select((effect, i) => (effect.Name, U: 1 / ((1 / effect.Clean) + ResistanceAt(i, day)))).ToDictionary(pair => pair.Name, pair => pair.U),
+        SteamPressure = 1.40e5 + (2.5e3 * double.Sin(day * 2.1)) + (1.2e3 * double.Sin(day * 13.7)),
+        LastVapourPressure = 1.95e4 + (4e2 * double.Sin(day * double.Tau)),
+        FeedSolids = 0.135 + (0.004 * double.Sin(day * 0.9)),
+        FeedTemperature = ZeroCelsius + 98 + (1.5 * double.Sin(day * 1.7)),
+        ProductSolids = 0.58 + (0.006 * double.Sin(day * 3.3)),
+        Bleeds = Effects.Where(effect => effect.Bleed > 0).ToDictionary(effect => VariableKey.Way(effect.Name, effect.To), effect => effect.Bleed),
+    };
+
+    private static void WriteRow(TextWriter text, Noise noise, OperatingPoint point, RatingConditions conditions, double day)
     {
         void Put(double value, double scatter) => text.Write(string.Create(CultureInfo.InvariantCulture, $",{value + (scatter * noise.Next()):0.####}"));
         const double tonsPerHour = 3.6;
-        Put(point.Feed * tonsPerHour, 0.9);
+        Put(point.FeedFlow * tonsPerHour, 0.9);
         Put(conditions.FeedSolids * 100, 0.03);
         Put(conditions.FeedTemperature - ZeroCelsius, 0.15);
-        Put(point.Effects[^1].LiquorOut * tonsPerHour, 0.25);
-        Put(conditions.ProductSolids * 100, 0.08);
-        Put(point.Steam * tonsPerHour, 0.5);
-        Put((conditions.SteamPressure - 101_300) / 1e5, 0.002);
+        Put(point.ProductFlow * tonsPerHour, 0.25);
+        Put(conditions.ProductSolids!.Value * 100, 0.08);
+        Put(point.FreshSteam * tonsPerHour, 0.5);
+        Put((conditions.SteamPressure!.Value - 101_300) / 1e5, 0.002);
         Put(Effects[0].Bleed * tonsPerHour, 0.05);
         Put(Effects[1].Bleed * tonsPerHour, 0.08);
         for (int i = 0; i < Effects.Length; i++)
         {
             EffectPoint effect = point.Effects[i];
             Put(effect.VapourPressure / 1e5, 0.001);
-            Put(effect.Boiling - ZeroCelsius, 0.1);
-            Put(effect.Heating - ZeroCelsius, 0.1);
+            Put(effect.BoilingTemperature - ZeroCelsius, 0.1);
+            Put(effect.HeatingTemperature - ZeroCelsius, 0.1);
             // The condensate meter of N2 fails for half a day: the program must say so, not make up a number.
             if (i == 1 && day is > 22 and < 22.5) text.Write(",");
             else Put(effect.Condensate * tonsPerHour, 0.3);
-            Put(effect.SolidsOut * 100, 0.06);
+            Put(effect.LeavingSolids * 100, 0.06);
         }
     }
 

@@ -8,6 +8,7 @@ var figures = new Dictionary<string, Func<string[], Task<int>>>
 {
     ["steam"] = _ => Task.FromResult(SteamBenchmark.Run()),
     ["import"] = ImportProof.RunAsync,
+    ["rating"] = _ => Task.FromResult(RatingProof.Run()),
     ["ingest"] = IngestProof.RunAsync,
     ["kills"] = KillsProof.RunAsync,
 };

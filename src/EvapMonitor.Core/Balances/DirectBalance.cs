@@ -34,13 +34,17 @@ internal sealed class DirectBalance
     {
         effects.Clear();
         var feed = FeedOf(liquor, inputs);
+        for (int i = 0; i < effects.Length; i++) effects[i].Area = _at.Surfaces[i].At(inputs);
         foreach (int i in _routes.LiquorOrder) LiquorSide(i, liquor, inputs, feed, ref effects[i]);
         for (int i = 0; i < effects.Length; i++) ChestSide(i, inputs, effects);
     }
 
-    /// <summary>Water evaporated in the whole line, kg/s: feed less product, or from the solids of both; NaN when neither is known.</summary>
+    /// <summary>
+    /// Water evaporated in the whole line, kg/s: feed less product, or from the solids of both; NaN when neither is known, and where a tank may fill or empty between the two.
+    /// </summary>
     public double Evaporation(Liquor liquor, LineInputs inputs)
     {
+        if (_at.Line.Tanks.Count > 0) return double.NaN;
         Stream feed = FeedOf(liquor, inputs);
         double product = MassFlow(_at.Product.Flow, inputs, liquor, ProductSolids(inputs), inputs.At(_at.Product.Temperature));
         double byFlows = feed.Flow - product;
@@ -75,6 +79,8 @@ internal sealed class DirectBalance
         foreach (LiquorInflow inflow in _routes.Liquor[i])
         {
             Stream source = inflow.From == LineRoutes.Feed ? feed : _leaving[inflow.From];
+            // What leaves a tank now need not be what enters it now.
+            if (inflow.ThroughTank) source = new Stream(double.NaN, double.NaN, double.NaN);
             flowIn += inflow.Share * source.Flow;
             solidsIn += inflow.Share * source.SolidsFlow;
             heatIn += inflow.Share * source.Flow * source.Enthalpy;
@@ -139,7 +145,8 @@ internal sealed class DirectBalance
     {
         foreach (int heated in _routes.Heats[i])
         {
-            if (_routes.Heating[heated].Length == 1 && inputs.At(_at.Effects[heated].ChestPressure) is var pressure && !double.IsNaN(pressure)) return pressure;
+            if (_routes.Heating[heated].Length == 1 && inputs.At(_at.Effects[heated].ChestPressure) is var pressure && !double.IsNaN(pressure))
+                return pressure + _at.Line.Effects[heated].Chest.LineLoss;
         }
 
         return null;
@@ -161,9 +168,9 @@ internal sealed class DirectBalance
         state.HeatingFrom = double.IsNaN(state.HeatingTemperature) ? HeatingTemperatureSource.None : source;
         double condensate = Physical.CondensateEnthalpy(pressure, inputs.At(at.CondensateTemperature));
         double entering = HeatingEnthalpy(i, pressure, inputs, effects), loss = inputs.HeatLoss[i];
-        double condensateFlow = Physical.WaterMassFlow(inputs.At(at.CondensateFlow), at.CondensateFlow < 0 ? null : _at.All[at.CondensateFlow].Unit, state.HeatingTemperature);
+        double condensateFlow = CondensateFlow(i, state.HeatingTemperature, inputs);
         state.Duty[(int)DutySource.Condensate] = HeatBalance.ChestDuty(condensateFlow, entering, condensate, loss);
-        bool ownsMain = _routes.SteamHeatsOnlyOne && _routes.Heating[i] is [LineRoutes.Steam] && _at.SteamFlow >= 0
+        bool ownsMain = _routes.SteamHeatsOnlyOne && !_routes.JoinedByFlash[i] && _routes.Heating[i] is [LineRoutes.Steam] && _at.SteamFlow >= 0
             && _at.All[_at.SteamFlow].Unit.Dimension == Dimension.MassFlow;
         double condensed = ownsMain ? inputs.At(_at.SteamFlow) * (1 - inputs.Vent[i]) : double.NaN;
         state.Duty[(int)DutySource.Steam] = HeatBalance.ChestDuty(condensed, entering, condensate, loss);
@@ -179,7 +186,7 @@ internal sealed class DirectBalance
         foreach (int heater in _routes.Heating[i])
         {
             bool steam = heater == LineRoutes.Steam;
-            double pressure = !steam ? _vapourPressure[heater]
+            double pressure = !steam ? heater < 0 ? double.NaN : _vapourPressure[heater] - _at.Line.Effects[i].Chest.LineLoss
                 : _at.Line.Steam.PressureAt == SteamGaugePlace.Chest ? inputs.At(_at.SteamPressure) : double.NaN;
             if (pressure >= lowest || double.IsNaN(pressure)) continue;
             lowest = pressure;
@@ -195,6 +202,13 @@ internal sealed class DirectBalance
         double sum = 0;
         foreach (int heater in _routes.Heating[i])
         {
+            if (heater < LineRoutes.Steam)
+            {
+                // What a machine delivers differs too much from other sources to count evenly with them.
+                sum += _routes.Heating[i].Length == 1 ? Delivered(LineRoutes.RecompressorOf(heater), pressure, inputs, effects) : double.NaN;
+                continue;
+            }
+
             if (heater != LineRoutes.Steam)
             {
                 sum += Physical.VapourEnthalpy(double.IsNaN(_vapourPressure[heater]) ? pressure : _vapourPressure[heater], effects[heater].BoilingTemperature);
@@ -208,6 +222,28 @@ internal sealed class DirectBalance
         }
 
         return sum / _routes.Heating[i].Length;
+    }
+
+    private double CondensateFlow(int i, double temperature, LineInputs inputs)
+    {
+        int place = _at.Effects[i].CondensateFlow;
+        return Physical.WaterMassFlow(inputs.At(place), place < 0 ? null : _at.All[place].Unit, temperature);
+    }
+
+    /// <summary>Enthalpy of what a recompressor delivers, J/kg: its flow is told by the condensate of the chests that it alone heats.</summary>
+    private double Delivered(int r, double pressure, LineInputs inputs, Span<EffectState> effects)
+    {
+        int source = LineRoutes.RecompressorAt(r), suction = _routes.Suction[r];
+        double delivered = 0;
+        for (int j = 0; j < effects.Length; j++)
+        {
+            if (!_routes.Heating[j].Contains(source)) continue;
+            bool alone = _routes.Heating[j].Length == 1 && !_routes.JoinedByFlash[j];
+            delivered += alone ? CondensateFlow(j, Physical.SaturationTemperature(ChestPressure(j, inputs).Pressure), inputs) / (1 - inputs.Vent[j]) : double.NaN;
+        }
+
+        double drawn = Physical.VapourEnthalpy(_vapourPressure[suction], effects[suction].BoilingTemperature);
+        return DirectRecompression.Enthalpy(_at.Line.Recompressors[r], _at.Recompressors[r], inputs, delivered, drawn, pressure, inputs.Efficiency[r]);
     }
 
     private double MassFlow(int place, LineInputs inputs, Liquor liquor, double solids, double temperature)

@@ -11,6 +11,7 @@ internal sealed class LineInputs
         Value = new double[instruments.All.Count];
         HeatLoss = [.. instruments.Line.Effects.Select(effect => effect.HeatLoss.Value)];
         Vent = [.. instruments.Line.Effects.Select(effect => effect.Vent.Value)];
+        Efficiency = [.. instruments.Line.Recompressors.Select(machine => machine.Efficiency.Value)];
     }
 
     /// <summary>Window means by place, SI units, pressures absolute; NaN is absent.</summary>
@@ -21,6 +22,9 @@ internal sealed class LineInputs
 
     /// <summary>Share of the heating steam that is vented, by effect.</summary>
     public double[] Vent { get; }
+
+    /// <summary>Share of the power that reaches the vapour, by recompressor.</summary>
+    public double[] Efficiency { get; }
 
     /// <summary>
     /// How many of its own standard uncertainties the elevation correlation is off. One number for the line: the correlation is the same in all effects.
@@ -86,6 +90,9 @@ internal struct EffectState
 
     /// <summary>Dissolved solids of the leaving liquor, mass fraction.</summary>
     public double Solids;
+
+    /// <summary>Heating surface in service, m²; 0 when no body serves, NaN when it is not known.</summary>
+    public double Area;
 
     /// <summary>Evaporation by the liquor side, kg/s.</summary>
     public double Evaporation;

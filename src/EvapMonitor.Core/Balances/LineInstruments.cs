@@ -26,6 +26,11 @@ public sealed class LineInstruments
             Place(effect.Chest.Pressure), Place(effect.Chest.Temperature), Place(effect.Chest.CondensateFlow), Place(effect.Chest.CondensateTemperature),
             Place(effect.Vapour.Pressure), Place(effect.Vapour.Temperature),
             Place(effect.Leaving.Flow), Place(effect.Leaving.Solids), Place(effect.Leaving.Temperature), Place(effect.Level)))];
+        Surfaces = [.. line.Effects.Select(effect => new AreaInService(line, effect, Place))];
+        Heaters = [.. line.Heaters.Select(heater => new HeaterPlaces(Place(heater.Flow), Place(heater.Solids?.Measured), Place(heater.In), Place(heater.Out)))];
+        TankLevels = [.. line.Tanks.Select(tank => Place(tank.Level))];
+        Recompressors = [.. line.Recompressors.Select(machine => new RecompressorPlaces(
+            Place(machine.Motive.Flow), Place(machine.Motive.Pressure), Place(machine.Motive.Temperature), Place(machine.Power), Place(machine.Spray)))];
     }
 
     /// <summary>The line.</summary>
@@ -58,6 +63,18 @@ public sealed class LineInstruments
     /// <summary>Places on the effects, in plant-file order.</summary>
     public IReadOnlyList<EffectPlaces> Effects { get; }
 
+    /// <summary>By effect: the surface in service.</summary>
+    internal IReadOnlyList<AreaInService> Surfaces { get; }
+
+    /// <summary>Places on the heaters, in the order of the line's heaters.</summary>
+    public IReadOnlyList<HeaterPlaces> Heaters { get; }
+
+    /// <summary>Places of the levels, in the order of the line's tanks.</summary>
+    public IReadOnlyList<int> TankLevels { get; }
+
+    /// <summary>Places on the recompressors, in the order of the line's.</summary>
+    public IReadOnlyList<RecompressorPlaces> Recompressors { get; }
+
     private StreamPlaces Stream(LiquorStream stream) =>
         new(Place(stream.Flow), Place(stream.Solids), Place(stream.Temperature), Place(stream.Laboratory));
 
@@ -72,6 +89,12 @@ public sealed class LineInstruments
 
 /// <summary>Places of the instruments of a liquor stream; −1 is absent.</summary>
 public readonly record struct StreamPlaces(int Flow, int Solids, int Temperature, int Laboratory);
+
+/// <summary>Places of the instruments of a heater; −1 is absent.</summary>
+public readonly record struct HeaterPlaces(int Flow, int Solids, int In, int Out);
+
+/// <summary>Places of the instruments of a recompressor; −1 is absent.</summary>
+public readonly record struct RecompressorPlaces(int MotiveFlow, int MotivePressure, int MotiveTemperature, int Power, int Spray);
 
 /// <summary>Places of the instruments of an effect; −1 is absent.</summary>
 public readonly record struct EffectPlaces(

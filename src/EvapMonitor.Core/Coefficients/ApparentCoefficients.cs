@@ -104,6 +104,8 @@ internal sealed class ApparentCoefficients
         if (found.BoilingFrom == BoilingTemperatureSource.None) return "no boiling temperature: " + AbsenceReasons.Boiling(_instruments, i, found, inputs, whyAbsent);
         if (force.Value < LeastDrivingForce) return "no driving force: under 0.5 K";
         if (force.Value < LeastDrivingForceInStandards * force.Standard) return "no driving force: under three standard uncertainties";
+        if (double.IsNaN(found.Area)) return "no coefficient: " + AbsenceReasons.Surface(_instruments, i, inputs, whyAbsent);
+        if (found.Area == 0) return "no coefficient: no body is in service";
         if (source == DutySource.None) return "no duty: " + AbsenceReasons.Duty(_instruments, i, inputs, whyAbsent);
         if (duty.Value <= 0) return "no duty: no heat flows from the chest to the liquor";
         return coefficient.Standard > LargestUncertainty * coefficient.Value ? "too uncertain: over 25 %" : null;

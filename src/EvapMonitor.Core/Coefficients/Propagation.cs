@@ -67,6 +67,13 @@ internal sealed class Propagation
             Contribute(liquor, inputs, loss.Standard, 0, step => inputs.HeatLoss[index] = loss.Value + step);
             Contribute(liquor, inputs, vent.Standard, 0, step => inputs.Vent[index] = vent.Value + step);
         }
+
+        for (int r = 0; r < _instruments.Line.Recompressors.Count; r++)
+        {
+            int index = r;
+            UncertainShare efficiency = _instruments.Line.Recompressors[r].Efficiency;
+            Contribute(liquor, inputs, efficiency.Standard, 0, step => inputs.Efficiency[index] = efficiency.Value + step);
+        }
     }
 
     private double _gaugesAt;
@@ -118,7 +125,7 @@ internal sealed class Propagation
             for (int source = 1; source < 4; source++)
             {
                 row[DutyFirst + source] = state.Duty[source];
-                row[CoefficientFirst + source] = HeatBalance.Coefficient(state.Duty[source], _instruments.Line.Effects[i].Area, force);
+                row[CoefficientFirst + source] = HeatBalance.Coefficient(state.Duty[source], state.Area, force);
             }
         }
     }

@@ -1,15 +1,19 @@
 namespace EvapMonitor.Core.Plant;
 
-/// <summary>What heats an effect: steam, or the vapour of another effect.</summary>
-/// <param name="VapourOf">Name of the effect whose vapour heats; null for steam from the main.</param>
-public sealed record HeatSource(string? VapourOf)
+/// <summary>What heats an effect: steam, the vapour of another effect, or what a recompressor delivers; at most one of the names is set.</summary>
+/// <param name="VapourOf">Name of the effect whose vapour heats; null for the others.</param>
+/// <param name="Recompressor">Name of the recompressor that heats; null for the others.</param>
+public sealed record HeatSource(string? VapourOf, string? Recompressor = null)
 {
+    /// <summary>True for steam from the main.</summary>
+    public bool IsSteam => VapourOf is null && Recompressor is null;
+
     /// <summary>Steam from the main.</summary>
     public static HeatSource Steam { get; } = new((string?)null);
 }
 
 /// <summary>Where an effect's liquor comes from.</summary>
-/// <param name="From">Name of the effect whose leaving liquor enters; null for the feed of the line.</param>
+/// <param name="From">Name of the effect whose leaving liquor enters, or of a tank; null for the feed of the line.</param>
 /// <param name="Share">Share of that source which goes here; null: all that is left.</param>
 public sealed record LiquorSource(string? From, UncertainShare? Share = null)
 {
@@ -32,8 +36,11 @@ public sealed record Effect
     /// <summary>Where its liquor comes from; at least one.</summary>
     public required IReadOnlyList<LiquorSource> Liquor { get; init; }
 
-    /// <summary>Heating surface, m².</summary>
+    /// <summary>Heating surface, m²; of an effect of several bodies, of all that it lists.</summary>
     public required double Area { get; init; }
+
+    /// <summary>Names of the bodies it consists of; empty: it is one body, always in service unless another takes its place.</summary>
+    public IReadOnlyList<string> Bodies { get; init; } = [];
 
     /// <summary>The design value of the coefficient with clean surfaces, W/(m²·K); null when not given.</summary>
     public double? CleanCoefficient { get; init; }
@@ -65,6 +72,9 @@ public sealed record Chest
 {
     /// <summary>Pressure in the chest.</summary>
     public Instrument? Pressure { get; init; }
+
+    /// <summary>What the vapour line to the chest loses, Pa: the chest is that much below the vapour that heats it. Default 0.</summary>
+    public double LineLoss { get; init; }
 
     /// <summary>A thermometer in the chest.</summary>
     public Instrument? Temperature { get; init; }

@@ -66,6 +66,21 @@ public sealed record Line
     /// <summary>Vapour that leaves the train for other users.</summary>
     public IReadOnlyList<Bleed> Bleeds { get; init; } = [];
 
+    /// <summary>Heaters that bleeds heat.</summary>
+    public IReadOnlyList<Heater> Heaters { get; init; } = [];
+
+    /// <summary>Condensate that flashes; at most one place for each effect.</summary>
+    public IReadOnlyList<CondensateFlash> CondensateFlashes { get; init; } = [];
+
+    /// <summary>Tanks that the liquor passes.</summary>
+    public IReadOnlyList<Tank> Tanks { get; init; } = [];
+
+    /// <summary>Bodies of effects that consist of several, and spares.</summary>
+    public IReadOnlyList<Body> Bodies { get; init; } = [];
+
+    /// <summary>Recompressors.</summary>
+    public IReadOnlyList<Recompressor> Recompressors { get; init; } = [];
+
     /// <summary>Effects that are cleaned together.</summary>
     public IReadOnlyList<CleaningGroup> CleaningGroups { get; init; } = [];
 

@@ -32,6 +32,15 @@ public static class SiteInstruments
                 (null, "steam.temperature", line.Steam.Temperature)),
             .. line.Effects.SelectMany(Of),
             .. line.Bleeds.SelectMany(b => Present((null, $"bleed from {b.From} to {b.To}", b.Flow))),
+            .. line.Heaters.SelectMany(h => Present(
+                (null, $"heaters.{h.Name}.flow", h.Flow), (null, $"heaters.{h.Name}.in", h.In), (null, $"heaters.{h.Name}.out", h.Out),
+                (null, $"heaters.{h.Name}.solids", h.Solids?.Measured))),
+            .. line.Tanks.SelectMany(t => Present((null, $"tanks.{t.Name}.level", t.Level))),
+            .. line.Bodies.SelectMany(b => b.Serves.SelectMany(s => Present((null, $"bodies.{b.Name}.serves.{s.Key}", s.Value.Instrument)))),
+            .. line.Recompressors.SelectMany(r => Present(
+                (null, $"recompressors.{r.Name}.motive.flow", r.Motive.Flow), (null, $"recompressors.{r.Name}.motive.pressure", r.Motive.Pressure),
+                (null, $"recompressors.{r.Name}.motive.temperature", r.Motive.Temperature),
+                (null, $"recompressors.{r.Name}.power", r.Power), (null, $"recompressors.{r.Name}.spray", r.Spray))),
             .. line.CleaningGroups.SelectMany(g => Present((null, $"cleaning-groups.{g.Name}", g.Signal?.Instrument))),
         ];
         return [.. all.Select(i => i with { Line = line.Name })];

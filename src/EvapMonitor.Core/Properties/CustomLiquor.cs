@@ -95,6 +95,10 @@ public sealed partial class CustomLiquor : Liquor
         + (_heatCapacity.At(100 * CorrelationRange.Solids(solids)) - _heatCapacity.At(0)) * (temperature - CorrelationRange.IcePoint);
 
     /// <inheritdoc/>
+    public override double EnthalpyByTemperature(double solids, double temperature) =>
+        WaterReference.EnthalpySlope(temperature) + _heatCapacity.At(100 * CorrelationRange.Solids(solids)) - _heatCapacity.At(0);
+
+    /// <inheritdoc/>
     /// <remarks>Standard uncertainty 1 %; 5 % where no density is given.</remarks>
     public override PropertyValue Density(double solids, double temperature)
     {

@@ -30,4 +30,32 @@ public abstract class Liquor
 
     /// <summary>Density, kg/m³.</summary>
     public abstract PropertyValue Density(double solids, double temperature);
+
+    /// <summary>∂h/∂x at constant temperature, J/kg: central difference where a liquor knows no better.</summary>
+    public virtual double EnthalpyBySolids(double solids, double temperature)
+    {
+        (double low, double high) = Around(solids);
+        return (Enthalpy(high, temperature) - Enthalpy(low, temperature)) / (high - low);
+    }
+
+    /// <summary>∂h/∂T at constant solids, J/(kg·K): central difference where a liquor knows no better.</summary>
+    public virtual double EnthalpyByTemperature(double solids, double temperature) =>
+        (Enthalpy(solids, temperature + KelvinStep) - Enthalpy(solids, temperature - KelvinStep)) / (2 * KelvinStep);
+
+    /// <summary>Slopes of the boiling-point elevation and of its standard uncertainty, by solids (K) and by the boiling temperature of water (K/K).</summary>
+    public virtual (double BySolids, double ByTemperature, double StandardBySolids, double StandardByTemperature) ElevationSlopes(
+        double solids, double waterBoilingPoint)
+    {
+        (double low, double high) = Around(solids);
+        PropertyValue thin = BoilingPointElevation(low, waterBoilingPoint), thick = BoilingPointElevation(high, waterBoilingPoint);
+        PropertyValue cold = BoilingPointElevation(solids, waterBoilingPoint - KelvinStep), hot = BoilingPointElevation(solids, waterBoilingPoint + KelvinStep);
+        return ((thick.Value - thin.Value) / (high - low), (hot.Value - cold.Value) / (2 * KelvinStep),
+            (thick.Standard - thin.Standard) / (high - low), (hot.Standard - cold.Standard) / (2 * KelvinStep));
+    }
+
+    // Steps large enough for sixteen digits, small against the curvature of any correlation used here.
+    private const double SolidsStep = 1e-5, KelvinStep = 5e-3;
+
+    private static (double Low, double High) Around(double solids) =>
+        (double.Clamp(solids - SolidsStep, 0, 1 - (2 * SolidsStep)), double.Clamp(solids + SolidsStep, 2 * SolidsStep, 1));
 }

@@ -70,6 +70,17 @@ public sealed class Sucrose : Liquor
     }
 
     /// <inheritdoc/>
+    public override double EnthalpyBySolids(double solids, double temperature)
+    {
+        var t = temperature - CorrelationRange.IcePoint;
+        return t * (LessThanWater + 3.75 * t);
+    }
+
+    /// <inheritdoc/>
+    public override double EnthalpyByTemperature(double solids, double temperature) =>
+        WaterReference.EnthalpySlope(temperature) + CorrelationRange.Solids(solids) * (LessThanWater + 7.5 * (temperature - CorrelationRange.IcePoint));
+
+    /// <inheritdoc/>
     /// <remarks>Stated rule, no publication: water and solids keep their volumes, solids at 1,600 kg/m³, which meets the sugar tables at 20 °C within 0.5
     /// % (from memory). Standard uncertainty 1 %.</remarks>
     public override PropertyValue Density(double solids, double temperature)

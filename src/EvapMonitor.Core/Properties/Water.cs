@@ -24,4 +24,14 @@ public sealed class Water : Liquor
         var value = WaterReference.Density(temperature);
         return new PropertyValue(value, 1e-4 * value, false);
     }
+
+    /// <inheritdoc/>
+    public override double EnthalpyBySolids(double solids, double temperature) => 0;
+
+    /// <inheritdoc/>
+    public override double EnthalpyByTemperature(double solids, double temperature) => WaterReference.EnthalpySlope(temperature);
+
+    /// <inheritdoc/>
+    public override (double BySolids, double ByTemperature, double StandardBySolids, double StandardByTemperature) ElevationSlopes(
+        double solids, double waterBoilingPoint) => default;
 }

@@ -6,6 +6,13 @@ internal static class WaterReference
     /// <summary>Enthalpy h′, J/kg.</summary>
     public static double Enthalpy(double temperature) => Steam.SaturatedLiquidEnthalpyAt(temperature);
 
+    /// <summary>Slope of the enthalpy along the saturation line, dh′/dT in J/(kg·K).</summary>
+    public static double EnthalpySlope(double temperature)
+    {
+        double pressure = Saturation.Pressure(temperature);
+        return Region1.HeatCapacity(pressure, temperature) + (Region1.EnthalpyByPressure(pressure, temperature) / Saturation.TemperatureSlope(pressure));
+    }
+
     /// <summary>Heat capacity, J/(kg·K).</summary>
     public static double HeatCapacity(double temperature) => Steam.SaturatedLiquidHeatCapacityAt(temperature);
 

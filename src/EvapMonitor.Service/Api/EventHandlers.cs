@@ -6,6 +6,7 @@ using EvapMonitor.Service.Evaluation;
 using EvapMonitor.Service.Ingest.Files;
 using EvapMonitor.Service.Live;
 using Microsoft.AspNetCore.Http.HttpResults;
+using Microsoft.AspNetCore.Mvc;
 using Microsoft.Extensions.Options;
 
 namespace EvapMonitor.Service.Api;
@@ -16,9 +17,10 @@ internal static class EventHandlers
     private static readonly TimeSpan SiteEvery = TimeSpan.FromSeconds(15);
 
     public static Results<ServerSentEventsResult<string>, ProblemHttpResult> Stream(
-        LiveEvents events, SiteStates states, TimeProvider clock, IOptions<Microsoft.AspNetCore.Http.Json.JsonOptions> json, IHostApplicationLifetime host, CancellationToken stop)
+        LiveEvents events, SiteStates states, TimeProvider clock, IOptions<Microsoft.AspNetCore.Http.Json.JsonOptions> json, IHostApplicationLifetime host,
+        [FromHeader(Name = "Last-Event-ID")] string? lastEventId, [FromQuery(Name = "last_event_id")] string? lastEventIdAsked, CancellationToken stop)
     {
-        LiveEvents.Listening? listening = events.Listen();
+        LiveEvents.Listening? listening = events.Listen(lastEventId ?? lastEventIdAsked);
         if (listening is null) return TypedResults.Problem($"{LiveEvents.MostListeners} pages listen already.", statusCode: StatusCodes.Status503ServiceUnavailable);
         return TypedResults.ServerSentEvents(Items(listening, states, clock, json.Value.SerializerOptions, host.ApplicationStopping, stop));
     }
@@ -28,6 +30,7 @@ internal static class EventHandlers
     {
         using LiveEvents.Listening hold = listening;
         using var end = CancellationTokenSource.CreateLinkedTokenSource(stop, stopping);
+        if (listening.MustReset) yield return new SseItem<string>("{}", "reset");
         while (!end.IsCancellationRequested)
         {
             string? site = await SiteAsync(states, json, end.Token);
@@ -39,7 +42,7 @@ internal static class EventHandlers
             {
                 yield return new SseItem<string>(JsonSerializer.Serialize(WireOf(happened.Body), json), happened.Kind)
                 {
-                    EventId = happened.Id.ToString(System.Globalization.CultureInfo.InvariantCulture),
+                    EventId = happened.Id,
                 };
             }
         }

@@ -25,6 +25,7 @@ internal static class Routes
         api.Get("/signals", SignalHandlers.List, "getSignals", "Signals with their last readings");
         api.MapPost("/readings", ReadingHandlers.Add).Named("addReadings", "Readings in batches, plain or gzip; answered once they are durable", Policies.Write)
             .AddOpenApiOperationTransformer(OpenApiText.DescribeReadings).ProducesProblem(StatusCodes.Status503ServiceUnavailable);
+        api.Get("/sources", SignalHandlers.Sources, "getSources", "Where readings come from, what waits, what the database would not take");
         api.Get("/imports", ImportHandlers.List, "getImports", "Imports, newest first");
         api.Get("/imports/{id}", ImportHandlers.Find, "getImport", "One import");
         api.MapPost("/imports", ImportHandlers.Upload).Named("uploadHistory", "Upload a CSV of history, plain or gzip", Policies.Write);

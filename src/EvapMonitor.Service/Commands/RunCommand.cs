@@ -20,6 +20,7 @@ internal class ServiceSettings : CommandSettings
         Data = Data ?? Environment.GetEnvironmentVariable("EVAPMONITOR_DATA") ?? defaultData,
         Listen = Listen ?? Environment.GetEnvironmentVariable("EVAPMONITOR_LISTEN") ?? ServiceOptions.DefaultListen,
         Connection = connection,
+        InContainer = Environment.GetEnvironmentVariable("EVAPMONITOR_NETWORK") == "container",
         Ingest = Ingest.IngestSettings.FromEnvironment(),
     };
 }

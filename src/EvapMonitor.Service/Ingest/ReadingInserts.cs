@@ -1,4 +1,3 @@
-using EvapMonitor.Core.Conditioning;
 using EvapMonitor.Service.Live;
 using EvapMonitor.Service.Store;
 using Npgsql;
@@ -15,7 +14,7 @@ public readonly record struct SourcedReading(PlacedReading Placed, string Signal
 /// Inserts readings and never gives up: what may pass is tried again for ever, ever more slowly; what the database will never take is narrowed down to the
 /// single reading, which goes to the refused ones, so that it does not hold up the others.
 /// </summary>
-public sealed class ReadingInserts(NpgsqlDataSource database, RefusedStore refused, Notices notices, TimeProvider clock, ILogger<ReadingInserts> log)
+public sealed class ReadingInserts(NpgsqlDataSource database, PlantHolder plant, RefusedStore refused, Notices notices, TimeProvider clock, ILogger<ReadingInserts> log)
 {
     private const string AwayNotice = "database-away", RefusedNotice = "readings-refused";
     private static readonly TimeSpan LongestPause = TimeSpan.FromSeconds(10);
@@ -67,7 +66,7 @@ public sealed class ReadingInserts(NpgsqlDataSource database, RefusedStore refus
     {
         await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
         await using NpgsqlTransaction transaction = await connection.BeginTransactionAsync(stop);
-        InsertCount count = await ReadingStore.InsertAsync(connection, transaction, [.. readings.Select(reading => reading.Placed)], replace: false, LineConditioning.Memory, stop);
+        InsertCount count = await ReadingStore.InsertAsync(connection, transaction, [.. readings.Select(reading => reading.Placed)], replace: false, plant.Current.Reach, stop);
         await transaction.CommitAsync(stop);
         return count;
     }

@@ -68,7 +68,8 @@ internal sealed class CurveReader(Findings findings)
         return lines.Count == mapping.Entries.Count ? new(lines) : null;
     }
 
-    private static List<(double X, double Y)>? Points(PlantNode node)
+    /// <summary>Points [x, y] with ascending x; null when they are none.</summary>
+    internal static List<(double X, double Y)>? Points(PlantNode node)
     {
         if (node is not ListNode { Items: { Count: >= 2 and <= MostPoints } items }) return null;
         var points = new List<(double X, double Y)>();

@@ -34,14 +34,13 @@ public sealed record EffectCheck(Effect Effect, Sourced Heating, Sourced Boiling
                 ways.Add($"vapour pressure {vapour.Signal} of {source.VapourOf}");
         }
 
-        bool bySteam = effect.Heating.Contains(HeatSource.Steam);
+        bool bySteam = effect.Heating.Any(h => h.IsSteam);
         if (bySteam && line.Steam is { Pressure: { } main, PressureAt: SteamGaugePlace.Chest })
             ways.Add($"steam main gauge {main.Signal} at the chest");
         if (effect.Chest is { Temperature: { } thermometer, TemperatureSeesSaturation: true })
             ways.Add($"chest thermometer {thermometer.Signal} that sees saturation");
-        string others = bySteam
-            ? ", or a steam gauge at the chest"
-            : ", or a vapour pressure of " + string.Join(" or ", effect.Heating.Select(h => h.VapourOf));
+        List<string> vapours = [.. effect.Heating.Select(h => h.VapourOf).OfType<string>()];
+        string others = bySteam ? ", or a steam gauge at the chest" : vapours.Count > 0 ? ", or a vapour pressure of " + string.Join(" or ", vapours) : "";
         return Of(ways, $"a chest pressure of {effect.Name}{others}, or a chest thermometer that sees saturation");
     }
 
@@ -62,11 +61,13 @@ public sealed record EffectCheck(Effect Effect, Sourced Heating, Sourced Boiling
     private static Sourced DutyOf(Line line, Effect effect)
     {
         var ways = new List<string>();
-        bool alone = effect.Heating is [{ VapourOf: null }] && line.Effects.Count(e => e.Heating.Contains(HeatSource.Steam)) == 1;
+        bool joined = line.CondensateFlashes.Any(f => f.To == effect.Name);
+        bool alone = effect.Heating is [{ IsSteam: true }] && line.Effects.Count(e => e.Heating.Contains(HeatSource.Steam)) == 1 && !joined;
         if (alone && line.Steam.Flow is { } steam) ways.Add("steam flow " + steam.Signal);
-        if (effect.Chest.CondensateFlow is { } condensate) ways.Add("condensate flow " + condensate.Signal);
+        Sourced condensate = EquipmentCheck.Condensate(line, effect);
+        if (condensate.From is { } flow) ways.Add(flow);
         if (LiquorKnowledge.Evaporation(line, effect) is { } evaporation) ways.Add("liquor side: " + evaporation);
-        return Of(ways, $"a condensate flow of {effect.Name}, or on the liquor side {LiquorKnowledge.MissingForEvaporation(line, effect)}");
+        return Of(ways, $"{condensate.Missing}, or on the liquor side {LiquorKnowledge.MissingForEvaporation(line, effect)}");
     }
 
     private static Sourced Of(List<string> ways, string missing) =>

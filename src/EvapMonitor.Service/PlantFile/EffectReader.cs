@@ -8,7 +8,7 @@ internal sealed record EffectEntry(
     IReadOnlyList<PlantNode> SourceNodes);
 
 /// <summary>One effect of a line.</summary>
-internal sealed class EffectReader(Findings findings, InstrumentReader instruments, LineNames names)
+internal sealed class EffectReader(Findings findings, InstrumentReader instruments, LineNames names, IReadOnlyList<Body> bodies)
 {
     private static readonly string[] Reserved = ["feed", "steam"];
     private readonly RouteReader _routes = new(findings, names);
@@ -32,7 +32,8 @@ internal sealed class EffectReader(Findings findings, InstrumentReader instrumen
             Formerly = Texts.Names(formerly, findings),
             Heating = heating,
             Liquor = [.. liquor.Select(l => l.Source)],
-            Area = Area(mapping) ?? 0,
+            Area = Area(mapping, out IReadOnlyList<string> own) ?? 0,
+            Bodies = own,
             CleanCoefficient = Quantities.Read(
                 mapping.Take("clean-coefficient"), Dimension.HeatTransferCoefficient, c => c > 0, "more than 0", findings),
             Chest = Chest(mapping.Take("chest")),
@@ -46,21 +47,24 @@ internal sealed class EffectReader(Findings findings, InstrumentReader instrumen
         return name is null ? null : new(effect, nameNode!, formerly, heatingNode, liquorNode, [.. liquor.Select(l => l.Node)]);
     }
 
-    private double? Area(MappingReader mapping)
+    /// <summary>The surface of the effect itself, or of all the bodies that it lists.</summary>
+    private double? Area(MappingReader mapping, out IReadOnlyList<string> own)
     {
-        if (mapping.Take("bodies") is { } bodies)
+        own = [];
+        if (mapping.Take("bodies") is not { } list)
+            return Quantities.Read(mapping.Require("area", Units.Allowed(Dimension.Area)), Dimension.Area, a => a > 0, "more than 0", findings);
+        if (mapping.TakeKey("area") is { } both) findings.Wrong(both, "an area beside bodies", "the area of each body, in the section bodies of the line");
+        var found = new List<string>();
+        foreach (PlantNode item in MappingReader.Items(list, "a list of bodies of this line", findings))
         {
-            findings.NotSupportedYet(mapping.TakeKey("bodies")!, "an effect of several bodies", "area: 1450 m2 for the effect as a whole");
-            foreach (PlantNode item in MappingReader.Items(bodies, "a list of bodies", findings))
-            {
-                if (Texts.Name(item, findings) is { } body && !names.Bodies.Contains(body))
-                    findings.Wrong(item, "the name of a body of this line: " + Shown.Names(names.Bodies));
-            }
-
-            if (mapping.Take("area") is null) return null;
+            if (Texts.Name(item, findings) is not { } body) continue;
+            if (!names.Bodies.Contains(body)) findings.Wrong(item, "the name of a body of this line: " + Shown.Names(names.Bodies));
+            else if (found.Contains(body)) findings.Wrong(item, $"{body} a second time", "each body once");
+            else found.Add(body);
         }
 
-        return Quantities.Read(mapping.Require("area", Units.Allowed(Dimension.Area)), Dimension.Area, a => a > 0, "more than 0", findings);
+        own = found;
+        return bodies.Where(body => found.Contains(body.Name)).Sum(body => body.Area);
     }
 
     private Chest Chest(PlantNode? node)
@@ -70,6 +74,7 @@ internal sealed class EffectReader(Findings findings, InstrumentReader instrumen
         return new()
         {
             Pressure = instruments.Read(mapping.Take("pressure"), Dimension.Pressure),
+            LineLoss = Quantities.Read(mapping.Take("line-loss"), Dimension.Pressure, p => p is >= 0 and < 1e5, "from 0 to under 1 bar", findings) ?? 0,
             Temperature = thermometer,
             TemperatureSeesSaturation = sees,
             CondensateFlow = instruments.Read(mapping.Take("condensate-flow"), Dimension.MassFlow, Dimension.VolumeFlow),

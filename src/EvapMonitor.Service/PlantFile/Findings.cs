@@ -41,10 +41,6 @@ internal sealed class Findings
     public void At(long line, long column, string found, string allowed) =>
         Add(new((int)long.Max(1, line), (int)long.Max(1, column), "", found, allowed));
 
-    /// <summary>Part of the grammar that this revision of the program does not carry out: refused, never ignored.</summary>
-    public void NotSupportedYet(PlantNode node, string what, string instead) =>
-        Wrong(node, $"{what}, which is not supported yet", instead);
-
     public void Note(PlantNode node, string text)
     {
         if (_notes.Count < Most) _notes.Add(new(node.Line, node.Column, node.Path, text));

@@ -7,7 +7,7 @@ internal static class LineChecks
 {
     private const double Rounding = 1e-9;
 
-    public static void Check(IReadOnlyList<EffectEntry> entries, Findings findings)
+    public static void Check(IReadOnlyList<EffectEntry> entries, IReadOnlyList<Tank> tanks, PlantNode? tanksNode, Findings findings)
     {
         NamesOnce(entries, findings);
         var first = entries.DistinctBy(e => e.Effect.Name).ToDictionary(e => e.Effect.Name, StringComparer.Ordinal);
@@ -15,9 +15,9 @@ internal static class LineChecks
             first, e => e.Effect.Heating.Select(h => h.VapourOf), e => e.HeatingNode,
             "heating that goes round in a circle", "effects that are heated in the end by steam", findings);
         Circle(
-            first, e => e.Effect.Liquor.Select(l => l.From), e => e.LiquorNode,
+            first, e => e.Effect.Liquor.Select(l => Before(l.From, tanks)), e => e.LiquorNode,
             "liquor that goes round in a circle", "liquor that comes in the end from the feed", findings);
-        SharesAddUp(entries, findings);
+        SharesAddUp(entries, tanks, tanksNode, findings);
     }
 
     /// <summary>Names and former names, each at one place only.</summary>
@@ -71,9 +71,13 @@ internal static class LineChecks
         if (place(entries[circle[0]]) is { } node) findings.Wrong(node, $"{found}: {Shown.Names(circle)}", allowed);
     }
 
-    private static void SharesAddUp(IReadOnlyList<EffectEntry> entries, Findings findings)
+    /// <summary>The effect before a tank; what is no tank is itself.</summary>
+    private static string? Before(string? source, IReadOnlyList<Tank> tanks) => tanks.FirstOrDefault(t => t.Name == source) is { } tank ? tank.From : source;
+
+    private static void SharesAddUp(IReadOnlyList<EffectEntry> entries, IReadOnlyList<Tank> tanks, PlantNode? tanksNode, Findings findings)
     {
-        var takers = entries.SelectMany(e => e.Effect.Liquor.Zip(e.SourceNodes, (source, node) => (source, node, effect: e.Effect.Name)));
+        var takers = entries.SelectMany(e => e.Effect.Liquor.Zip(e.SourceNodes, (source, node) => (source, node, effect: e.Effect.Name)))
+            .Concat(tanks.Select(t => (source: new LiquorSource(t.From), node: tanksNode!, effect: t.Name)));
         foreach (var group in takers.GroupBy(t => t.source.From))
         {
             string from = group.Key ?? "the feed";

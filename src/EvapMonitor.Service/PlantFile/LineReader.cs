@@ -25,7 +25,11 @@ internal sealed class LineReader(
         LiquorChoice? liquor = new LiquorChoiceReader(findings, instruments, liquors, liquorNames).Read(
             mapping.Require("liquor", "the name of a liquor"));
         var defaults = new Line { Name = name, Liquor = new(null, null, new Dictionary<int, Liquor>()), Effects = [] };
-        new LaterSections(findings, instruments, names, liquorNames).Refuse(mapping);
+        var equipment = new EquipmentReader(findings, instruments, names);
+        IReadOnlyList<Tank> tanks = equipment.Tanks(mapping.Take("tanks"));
+        IReadOnlyList<Body> bodies = equipment.Bodies(mapping.Take("bodies"));
+        IReadOnlyList<Recompressor> machines = new RecompressorReader(findings, instruments, names).Read(mapping.Take("recompressors"));
+        IReadOnlyList<Heater> heaters = equipment.Heaters(mapping.Take("heaters"), liquors, liquorNames);
         return defaults with
         {
             Formerly = Texts.Names(mapping.Take("formerly"), findings),
@@ -35,8 +39,13 @@ internal sealed class LineReader(
             Feed = Stream(mapping.Take("feed")),
             Product = Stream(mapping.Take("product")),
             Steam = Steam(mapping.Take("steam")),
-            Effects = Effects(mapping, names),
-            Bleeds = Bleeds(mapping.Take("bleeds"), names),
+            Effects = Effects(mapping, names, tanks, bodies, machines),
+            Bleeds = Bleeds(mapping.Take("bleeds"), names, heaters, mapping),
+            Heaters = heaters,
+            CondensateFlashes = equipment.Flashes(mapping.Take("condensate")),
+            Tanks = tanks,
+            Bodies = bodies,
+            Recompressors = machines,
             CleaningGroups = new CleaningReader(findings, instruments).Groups(mapping.Take("cleaning-groups"), names),
             RequiredEvaporation = Quantities.Read(
                 mapping.Take("required-evaporation"), Dimension.MassFlow, f => f > 0, "more than 0", findings),
@@ -44,7 +53,8 @@ internal sealed class LineReader(
         };
     }
 
-    private List<Effect> Effects(MappingReader mapping, LineNames names)
+    private List<Effect> Effects(
+        MappingReader mapping, LineNames names, IReadOnlyList<Tank> tanks, IReadOnlyList<Body> bodies, IReadOnlyList<Recompressor> machines)
     {
         const string Allowed = "a list of effects, each with name, heating, liquor and area";
         PlantNode? node = mapping.Require("effects", Allowed);
@@ -55,9 +65,10 @@ internal sealed class LineReader(
             return [];
         }
 
-        var reader = new EffectReader(findings, instruments, names);
+        var reader = new EffectReader(findings, instruments, names, bodies);
         List<EffectEntry> entries = [.. items.Select(reader.Read).OfType<EffectEntry>()];
-        LineChecks.Check(entries, findings);
+        LineChecks.Check(entries, tanks, mapping.Take("tanks"), findings);
+        EquipmentChecks.Check(entries, bodies, machines, mapping, findings);
         return [.. entries.Select(e => e.Effect)];
     }
 
@@ -104,7 +115,7 @@ internal sealed class LineReader(
         };
     }
 
-    private List<Bleed> Bleeds(PlantNode? node, LineNames names)
+    private List<Bleed> Bleeds(PlantNode? node, LineNames names, IReadOnlyList<Heater> heaters, MappingReader line)
     {
         var bleeds = new List<Bleed>();
         var seen = new HashSet<(string From, string To)>();
@@ -121,6 +132,12 @@ internal sealed class LineReader(
             if (from is null || to is null) continue;
             if (!seen.Add((from, to))) findings.Wrong(item, $"a second bleed from {from} to {to}", "each bleed once");
             else bleeds.Add(new(from, to, flow));
+        }
+
+        foreach (Heater heater in heaters.Where(h => bleeds.TrueForAll(b => b.To != h.Name)))
+        {
+            PlantNode place = ((MappingNode)line.Take("heaters")!).Entries.First(e => e.Key.Text == heater.Name).Key;
+            findings.Note(place, $"no bleed goes to {heater.Name}: it says nothing of any effect");
         }
 
         return bleeds;

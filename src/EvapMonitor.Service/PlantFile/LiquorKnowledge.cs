@@ -55,7 +55,7 @@ internal static class LiquorKnowledge
         if (OnlySource(line, effect) is not { } source) return null;
         return source.From is null
             ? line.Feed.Flow is { } feed ? "feed flow " + feed.Signal : null
-            : FlowLeaving(line, line.Effects.First(e => e.Name == source.From));
+            : EffectOf(line, source.From) is { } before ? FlowLeaving(line, before) : null;
     }
 
     private static string? SolidsEntering(Line line, Effect effect)
@@ -65,21 +65,28 @@ internal static class LiquorKnowledge
             return line.Feed.Solids is { } feed ? "feed solids " + feed.Signal
                 : line.Feed.Laboratory is { } laboratory ? "laboratory value " + laboratory.Signal
                 : null;
-        return SolidsLeaving(line, line.Effects.First(e => e.Name == source.From));
+        return EffectOf(line, source.From) is { } before ? SolidsLeaving(line, before) : null;
     }
+
+    /// <summary>The effect of a name; null for a tank, whose liquor is not that which enters it at the time.</summary>
+    private static Effect? EffectOf(Line line, string name) => line.Effects.FirstOrDefault(e => e.Name == name);
 
     /// <summary>The source of an effect that takes all of one source and nothing else.</summary>
     private static LiquorSource? OnlySource(Line line, Effect effect) =>
-        effect.Liquor is [{ Share: null } source] && line.Effects.SelectMany(e => e.Liquor).Count(s => s.From == source.From) == 1
+        effect.Liquor is [{ Share: null } source] && Takers(line, source.From) == 1
             ? source
             : null;
 
     /// <summary>True when the product is what leaves this effect and nothing else.</summary>
     private static bool IsLast(Line line, Effect effect)
     {
-        List<Effect> last = [.. line.Effects.Where(e => !line.Effects.SelectMany(o => o.Liquor).Any(s => s.From == e.Name))];
+        List<Effect> last = [.. line.Effects.Where(e => Takers(line, e.Name) == 0)];
         bool wholly = line.Effects.SelectMany(o => o.Liquor).Where(s => s.From is not null)
-            .GroupBy(s => s.From).All(g => g.Any(s => s.Share is null));
+            .GroupBy(s => s.From).All(g => g.Any(s => s.Share is null) || line.Tanks.Any(t => t.From == g.Key))
+            && line.Tanks.All(t => Takers(line, t.Name) > 0);
         return wholly && last is [var only] && only.Name == effect.Name;
     }
+
+    private static int Takers(Line line, string? source) =>
+        line.Effects.SelectMany(e => e.Liquor).Count(s => s.From == source) + line.Tanks.Count(t => t.From == source);
 }

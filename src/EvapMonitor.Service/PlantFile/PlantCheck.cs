@@ -36,6 +36,7 @@ public static class PlantCheck
             report.Add("    coefficient:         " + coefficient);
         }
 
+        report.AddRange(EquipmentCheck.Report(line));
         Assumed("  accuracy assumed", SiteInstruments.Of(line), report);
         report.Add(Invariant($"  {checks.Count(c => c.IsComplete)} of {checks.Count} effects have a coefficient from their own instruments"));
     }
@@ -56,9 +57,10 @@ public static class PlantCheck
 
     private static string Head(Effect effect)
     {
-        string heating = Names(effect.Heating.Select(h => h.VapourOf is null ? "steam" : "vapour of " + h.VapourOf));
+        string heating = Names(effect.Heating.Select(h => h.IsSteam ? "steam" : h.Recompressor ?? "vapour of " + h.VapourOf));
         string liquor = Names(effect.Liquor.Select(l => l.From ?? "the feed"));
-        return Invariant($"  {effect.Name}: {effect.Area:0.##} m2, heated by {heating}, liquor from {liquor}");
+        string bodies = effect.Bodies.Count == 0 ? "" : $" in {string.Join(", ", effect.Bodies)}";
+        return Invariant($"  {effect.Name}: {effect.Area:0.##} m2{bodies}, heated by {heating}, liquor from {liquor}");
     }
 
     private static string Words(Sourced sourced) => sourced.From ?? "missing: " + sourced.Missing;

@@ -34,17 +34,19 @@ internal static class PlantFileKeys
         "leaving", "level", "due-when");
 
     public static readonly KeySet LiquorSource = new("liquor-source", "from", "share");
-    public static readonly KeySet Chest = new("chest", "pressure", "temperature", "condensate-flow", "condensate-temperature");
+    public static readonly KeySet Chest = new("chest", "pressure", "line-loss", "temperature", "condensate-flow", "condensate-temperature");
     public static readonly KeySet Vapour = new("vapour", "pressure", "temperature");
     public static readonly KeySet Leaving = new("leaving", "temperature", "solids", "flow");
     public static readonly KeySet DueWhen = new("due-when", "coefficient-below", "cleanliness-below", "hours-since-cleaning");
 
     public static readonly KeySet Bleed = new("bleed", "from", "to", "flow");
-    public static readonly KeySet Heater = new("heater", "liquor", "flow", "in", "out");
+    public static readonly KeySet Heater = new("heater", "liquor", "solids", "flow", "in", "out");
     public static readonly KeySet CondensateFlash = new("condensate-flash", "flash-to");
     public static readonly KeySet Tank = new("tank", "from", "hold-up", "level");
     public static readonly KeySet Body = new("body", "area", "serves");
     public static readonly KeySet Recompressor = new("recompressor", "kind", "suction", "motive", "power", "efficiency", "spray", "curve");
+
+    public static readonly KeySet MachineCurve = new("machine-curve", "entrainment", "flow-unit", "pressure-ratio", "isentropic-efficiency");
 
     public static readonly KeySet CleaningGroup = new("cleaning-group", "effects", "duration", "cost", "signal");
     public static readonly KeySet CleaningRules = new("cleaning-rules", "at-once", "allowed", "not-together");
@@ -54,6 +56,6 @@ internal static class PlantFileKeys
     [
         Site, Instrument, SteamPressure, SeeingThermometer, Laboratory, ActiveSignal, Liquor, Curve, ElevationCurve, LiquorChoice, Line,
         ProducingWhen, LiquorStream, Steam, Effect, LiquorSource, Chest, Vapour, Leaving, DueWhen, Bleed, Heater, CondensateFlash, Tank, Body, Recompressor,
-        Motive, CleaningGroup, CleaningRules, Money,
+        Motive, MachineCurve, CleaningGroup, CleaningRules, Money,
     ];
 }

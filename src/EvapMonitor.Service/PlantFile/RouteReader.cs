@@ -7,10 +7,10 @@ internal sealed class RouteReader(Findings findings, LineNames names)
 {
     private const string VapourOf = "vapour of ";
 
-    public string HeatingAllowed => "steam, " + Shown.Names(names.Effects.Select(e => VapourOf + e)) + ", or a list of these";
+    public string HeatingAllowed => "steam, " + Shown.Names([.. names.Effects.Select(e => VapourOf + e), .. names.Recompressors]) + ", or a list of these";
 
     public string LiquorAllowed =>
-        $"feed, {Shown.Names(names.Effects)}, or a list such as [{{from: feed, share: 60 % ± 5 %}}, {{from: {names.Effects.LastOrDefault("N2")}}}]";
+        $"feed, {Shown.Names([.. names.Effects, .. names.Tanks])}, or a list such as [{{from: feed, share: 60 % ± 5 %}}, {{from: {names.Effects.LastOrDefault("N2")}}}]";
 
     public IReadOnlyList<HeatSource> Heating(PlantNode node)
     {
@@ -58,12 +58,7 @@ internal sealed class RouteReader(Findings findings, LineNames names)
     private HeatSource? HeatSourceAt(PlantNode node)
     {
         if (node is ScalarNode { Text: "steam" }) return HeatSource.Steam;
-        if (node is ScalarNode scalar && names.Recompressors.Contains(scalar.Text))
-        {
-            findings.NotSupportedYet(node, $"heating by the recompressor {Shown.Quoted(scalar.Text)}", HeatingAllowed);
-            return null;
-        }
-
+        if (node is ScalarNode scalar && names.Recompressors.Contains(scalar.Text)) return new(null, scalar.Text);
         if (node is ScalarNode text && text.Text.StartsWith(VapourOf, StringComparison.Ordinal))
             return VapourAt(node) is { } effect ? new(effect) : null;
         findings.Wrong(node, HeatingAllowed);
@@ -74,7 +69,7 @@ internal sealed class RouteReader(Findings findings, LineNames names)
     {
         if (node is ScalarNode) return From(node, null);
         if (MappingReader.Open(node, PlantFileKeys.LiquorSource, findings) is not { } mapping) return null;
-        PlantNode? from = mapping.Require("from", "feed, or the name of an effect: " + Shown.Names(names.Effects));
+        PlantNode? from = mapping.Require("from", "feed, or the name of an effect or a tank: " + Shown.Names([.. names.Effects, .. names.Tanks]));
         UncertainShare? share = Shares.Uncertain(mapping.Take("share"), findings);
         return from is null ? null : From(from, share);
     }
@@ -82,10 +77,8 @@ internal sealed class RouteReader(Findings findings, LineNames names)
     private LiquorSource? From(PlantNode node, UncertainShare? share)
     {
         if (node is ScalarNode { Text: "feed" }) return new(null, share);
-        if (node is ScalarNode scalar && names.Effects.Contains(scalar.Text)) return new(scalar.Text, share);
-        if (node is ScalarNode tank && names.Tanks.Contains(tank.Text))
-            findings.NotSupportedYet(node, $"liquor from the tank {Shown.Quoted(tank.Text)}", LiquorAllowed);
-        else findings.Wrong(node, LiquorAllowed);
+        if (node is ScalarNode scalar && (names.Effects.Contains(scalar.Text) || names.Tanks.Contains(scalar.Text))) return new(scalar.Text, share);
+        findings.Wrong(node, LiquorAllowed);
         return null;
     }
 }

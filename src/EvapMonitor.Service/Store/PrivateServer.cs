@@ -92,7 +92,18 @@ public sealed class PrivateServer
     }
 
     /// <summary>Stops the server in an orderly way: open transactions are rolled back, everything committed is on disk.</summary>
-    public Task StopAsync() => RunAsync("pg_ctl", ["stop", "-D", _data, "-m", "fast", "-w", "-t", "60", "-s"], CancellationToken.None);
+    public async Task StopAsync()
+    {
+        await RunAsync("pg_ctl", ["stop", "-D", _data, "-m", "fast", "-w", "-t", "60", "-s"], CancellationToken.None);
+        try
+        {
+            Directory.Delete(_socket);
+        }
+        catch (Exception error) when (error is IOException or UnauthorizedAccessException)
+        {
+            // Not empty or gone already: it costs nothing.
+        }
+    }
 
     private string Settings() =>
         $"-c listen_addresses='' -c unix_socket_directories='{_socket}' -c unix_socket_permissions=0700 -c fsync=on -c full_page_writes=on " +

@@ -40,7 +40,7 @@ public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
         WriteHours(connection, result.Line, revisionId, result.Windows);
         await connection.ExecuteAsync(
             """
-            UPDATE line_day SET shown_revision = @revision, taken_from = NULL, data_version = data_version + 1, changed_from = least(changed_from, @again),
+            UPDATE line_day SET shown_revision = @revision, taken_from = NULL, result_version = result_version + 1, changed_from = least(changed_from, @again),
                 evaluated_through = @through
             WHERE line_id = @line AND day = @day
             """,

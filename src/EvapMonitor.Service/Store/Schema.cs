@@ -2,6 +2,7 @@ using System.Reflection;
 using DbUp;
 using DbUp.Engine;
 using DbUp.Engine.Output;
+using Npgsql;
 
 namespace EvapMonitor.Service.Store;
 
@@ -13,8 +14,10 @@ public static class Schema
     /// <exception cref="InvalidOperationException">A script failed; the database is as the last whole script left it.</exception>
     public static IReadOnlyList<string> Upgrade(string connection)
     {
+        // A pooled connection would stay open, unused, as long as the program runs.
+        string unpooled = new NpgsqlConnectionStringBuilder(connection) { Pooling = false }.ConnectionString;
         UpgradeEngine engine = DeployChanges.To
-            .PostgresqlDatabase(connection)
+            .PostgresqlDatabase(unpooled)
             .WithScriptsEmbeddedInAssembly(Assembly.GetExecutingAssembly(), name => name.Contains(".Store.Migrations.", StringComparison.Ordinal))
             .WithTransactionPerScript()
             .LogTo(new NoOpUpgradeLog())

@@ -85,7 +85,7 @@ public sealed class TrendStore(NpgsqlDataSource database)
     {
         await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
         return await connection.ExecuteScalarAsync<long>(new CommandDefinition(
-            "SELECT coalesce(sum(data_version), 0)::bigint FROM line_day WHERE line_id = @lineId",
+            "SELECT coalesce(sum(data_version + result_version), 0)::bigint FROM line_day WHERE line_id = @lineId",
             new { lineId }, cancellationToken: stop));
     }
 

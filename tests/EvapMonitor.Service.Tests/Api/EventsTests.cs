@@ -26,7 +26,7 @@ public sealed class EventsTests(PostgresServer server)
         JsonElement import = await NextAsync(events, "import", body => body.GetProperty("state").GetString() == "done");
         Assert.Equal((id, 1), (import.GetProperty("id").GetString(), import.GetProperty("accepted").GetInt32()));
         JsonElement windows = await NextAsync(events, "windows", _ => true);
-        Assert.Equal(("one", "2026-04-02T00:00:00Z", "2026-04-03T00:00:00Z"),
+        Assert.Equal(("one", "2026-04-02T08:00:00Z", "2026-04-02T08:15:00Z"),
             (windows.GetProperty("line").GetString(), windows.GetProperty("from").GetString(), windows.GetProperty("to").GetString()));
 
         using var log = new HttpRequestMessage(HttpMethod.Post, "/api/v1/cleanings")

@@ -33,8 +33,8 @@ public sealed class TrendTests(ApiService api) : IClassFixture<ApiService>
     [InlineData("driving_force", "K", 5, 40)]
     [InlineData("duty", "kW", 10_000, 60_000)]
     [InlineData("heat_flux", "kW/m2", 8, 45)]
-    [InlineData("heating_temperature", "°C", 60, 130)]
-    [InlineData("boiling_temperature", "°C", 55, 110)]
+    [InlineData("heating_temperature", "degC", 60, 130)]
+    [InlineData("boiling_temperature", "degC", 55, 110)]
     [InlineData("elevation", "K", 0.5, 6)]
     public async Task EveryQuantity_HasItsUnitAndSize(string quantity, string unit, double low, double high)
     {

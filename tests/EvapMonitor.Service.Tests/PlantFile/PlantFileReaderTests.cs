@@ -8,7 +8,7 @@ public sealed class PlantFileReaderTests
     [Fact]
     public void DocumentedExamples_AreSound()
     {
-        Assert.Equal(3, Examples.Files.Count);
+        Assert.Equal(7, Examples.Files.Count);
         foreach (string file in Examples.Files) Examples.Sound(File.ReadAllText(file));
     }
 

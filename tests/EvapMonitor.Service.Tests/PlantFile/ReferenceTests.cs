@@ -134,36 +134,4 @@ public sealed class ReferenceTests
         PlantFileProblem problem = Examples.OnlyProblem(Examples.With("heating: steam", "heating: vapour of E2"));
         Assert.Equal("heating that goes round in a circle: E1, E2", problem.Found);
     }
-
-    [Theory]
-    [InlineData("heaters", "{H1: {liquor: water, flow: {signal: HF, unit: t/h}, in: {signal: HI, unit: degC}, out: {signal: HO, unit: degC}}}")]
-    [InlineData("condensate", "{E1: {flash-to: E2}}")]
-    [InlineData("tanks", "{T1: {from: E2, hold-up: 120 t}}")]
-    [InlineData("bodies", "{NA: {area: 100 m2}}")]
-    [InlineData("recompressors", "{M1: {kind: mechanical, suction: vapour of E1, power: {signal: MP, unit: kW}}}")]
-    public void SectionForLater_IsRefusedWhereItStands(string key, string content)
-    {
-        PlantFileProblem problem = Examples.OnlyProblem(Examples.With("    feed:", $"    {key}: {content}\n    feed:"));
-        Assert.Equal((8, 5, "lines.one." + key), (problem.Line, problem.Column, problem.Path));
-        Assert.Contains("not supported yet", problem.Found, StringComparison.Ordinal);
-    }
-
-    [Theory]
-    [InlineData("heaters: {H1: {liquor: syrup}}", "heaters.H1.liquor")]
-    [InlineData("condensate: {E1: {flash-to: E9}}", "condensate.E1.flash-to")]
-    [InlineData("tanks: {T1: {from: E2, hold-up: 120 m}}", "tanks.T1.hold-up")]
-    [InlineData("bodies: {NA: {area: 100 m}}", "bodies.NA.area")]
-    [InlineData("recompressors: {M1: {kind: jet, suction: vapour of E1}}", "recompressors.M1.kind")]
-    public void SectionForLater_IsCheckedAllTheSame(string section, string path) =>
-        Assert.Contains(PlantFileReader.Read(Examples.With("    feed:", $"    {section}\n    feed:")).Problems, p => p.Path == "lines.one." + path);
-
-    [Fact]
-    public void UseOfWhatIsForLater_IsRefusedWhereItStands()
-    {
-        string text = Examples.With(Heater2, "heating: M1").Replace(Liquor2, "liquor: T1", StringComparison.Ordinal)
-            .Replace("    feed:", "    tanks: {T1: {from: E1}}\n    recompressors: {M1: {kind: thermal, suction: vapour of E1, motive: {}}}\n    feed:", StringComparison.Ordinal);
-        Assert.Equal(
-            ["lines.one.tanks", "lines.one.recompressors", "lines.one.effects[1].heating", "lines.one.effects[1].liquor"],
-            PlantFileReader.Read(text).Problems.Where(p => p.Found.Contains("not supported yet", StringComparison.Ordinal)).Select(p => p.Path));
-    }
 }

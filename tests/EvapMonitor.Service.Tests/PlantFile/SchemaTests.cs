@@ -127,7 +127,6 @@ public sealed class SchemaTests
         JsonNode root = ToJson(YamlText.Read(text, new Findings())!)!;
         foreach ((string path, JsonObject parent, string key) in Places("", root).ToList())
         {
-            if (path.Contains(".curve", StringComparison.Ordinal)) continue; // its content is not settled yet
             JsonNode? kept = parent[key];
             parent[key] = new JsonArray(new JsonArray(new JsonArray()));
             yield return (path, root.ToJsonString());

@@ -37,6 +37,7 @@ public sealed class PrivateServerTests
 
             // The program dies: its server lives on, and the next start takes it over.
             int left = ServerOf(data);
+            string socket = File.ReadAllLines(PidFile(data))[4];
             Assert.False(HasEnded(left));
             await using (ChildService second = await ChildService.RunAsync(plant, data))
             {
@@ -46,6 +47,7 @@ public sealed class PrivateServerTests
             }
 
             Assert.Empty(Directory.GetFiles(data, "postmaster.pid", SearchOption.AllDirectories));
+            Assert.False(Directory.Exists(socket));
         }
         finally
         {

@@ -54,9 +54,10 @@ public sealed class PostgresServer : IAsyncDisposable
     private async Task<string?> TryContainerAsync()
     {
         if (!Prerequisites.DockerAnswers) return null;
-        PostgreSqlContainer container = new PostgreSqlBuilder(Environment.GetEnvironmentVariable("EVAPMONITOR_TEST_IMAGE") ?? "postgres:17-alpine").Build();
+        PostgreSqlContainer? container = null;
         try
         {
+            container = new PostgreSqlBuilder(Environment.GetEnvironmentVariable("EVAPMONITOR_TEST_IMAGE") ?? "postgres:17-alpine").Build();
             using var limit = new CancellationTokenSource(TimeSpan.FromSeconds(60));
             await container.StartAsync(limit.Token);
             _container = container;
@@ -64,8 +65,8 @@ public sealed class PostgresServer : IAsyncDisposable
         }
         catch (Exception) when (PrivateServer.FindBinaries() is not null)
         {
-            // The engine answers but has no image and cannot get one.
-            await container.DisposeAsync();
+            // The engine answers but speaks another version, has no image, or cannot get one.
+            if (container is not null) await container.DisposeAsync();
             return null;
         }
     }

@@ -67,7 +67,13 @@ public sealed class RunningService : IAsyncDisposable
         await GetAsync<ImportWire>($"/api/v1/imports/{id}") is { State: not ("waiting" or "running") } ended ? ended : null, 60);
 
     /// <summary>Waits until no day waits for evaluation.</summary>
-    public Task EvaluatedAsync() => Poll.UntilAsync("the evaluation of every day", async () => await CountAsync("SELECT count(*) FROM line_day WHERE changed_from IS NOT NULL") == 0, 60);
+    /// <summary>Waits until nothing that could be evaluated waits: a day whose last window is still open keeps its mark.</summary>
+    public Task EvaluatedAsync() => Poll.UntilAsync(
+        "the evaluation of every day",
+        async () => await CountAsync($"SELECT count(*) FROM line_day WHERE taken_from IS NOT NULL OR changed_from < '{LastClosed:O}'") == 0,
+        120);
+
+    private DateTimeOffset LastClosed => new(((Services.GetService(typeof(TimeProvider)) as TimeProvider)!.GetUtcNow().AddSeconds(-1).Ticks / TimeSpan.FromMinutes(5).Ticks) * TimeSpan.FromMinutes(5).Ticks, TimeSpan.Zero);
 
     public async Task<T> GetAsync<T>(string path) => (await Http.GetFromJsonAsync<T>(path, Json, Stop))!;
 

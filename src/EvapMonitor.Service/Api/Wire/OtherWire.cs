@@ -45,24 +45,89 @@ public sealed record CleaningsWire(IReadOnlyList<CleaningWire> Cleanings);
 public sealed record NewCleaningWire(string? Line, string? Effect, DateTimeOffset? Start, string? Kind, DateTimeOffset? End = null, string? Note = null);
 
 /// <summary>Signals and what arrives that no plant file names.</summary>
+/// <param name="AsOf">The instant of the ages and shares.</param>
 /// <param name="Signals">Signals of the plant file.</param>
-/// <param name="Unknown">Signals that came in and are not in it.</param>
-public sealed record SignalsWire(IReadOnlyList<SignalWire> Signals, IReadOnlyList<UnknownSignalWire> Unknown);
+/// <param name="Unknown">Signals that came in and are not in it, most frequent first, at most a thousand.</param>
+public sealed record SignalsWire(DateTimeOffset AsOf, IReadOnlyList<SignalWire> Signals, IReadOnlyList<UnknownSignalWire> Unknown);
 
-/// <summary>A signal with its last reading.</summary>
+/// <summary>A signal with its last reading and how sound it was over the last 24 hours.</summary>
 /// <param name="Name">Name of the signal.</param>
 /// <param name="Line">The first line that uses it.</param>
 /// <param name="Unit">The unit as the plant file writes it.</param>
 /// <param name="LatestAt">Instant of the last reading; null when there is none.</param>
 /// <param name="LatestValue">Its value in the plant's unit; null when the source gave none.</param>
 /// <param name="LatestQuality">good, uncertain, bad; null when there is no reading.</param>
-public sealed record SignalWire(string Name, string Line, string Unit, DateTimeOffset? LatestAt, double? LatestValue, string? LatestQuality);
+/// <param name="GoodShare">Share of the last 24 hours with a sound value, 0 to 1; null when there was no reading.</param>
+/// <param name="Rejected">Readings left out in that time, by reason.</param>
+/// <param name="Readings">Sound readings in that time.</param>
+public sealed record SignalWire(
+    string Name, string Line, string Unit, DateTimeOffset? LatestAt, double? LatestValue, string? LatestQuality, double? GoodShare, RejectedWire Rejected, long Readings);
+
+/// <summary>Readings left out, by reason.</summary>
+/// <param name="Bad">Bad by the source.</param>
+/// <param name="NotANumber">No number.</param>
+/// <param name="OutOfRange">Outside the instrument's range.</param>
+/// <param name="Frozen">Stood still while its neighbours moved.</param>
+public sealed record RejectedWire(long Bad, long NotANumber, long OutOfRange, long Frozen);
 
 /// <summary>A signal that the plant file does not name.</summary>
 /// <param name="Name">Its name.</param>
 /// <param name="Count">How many readings came.</param>
 /// <param name="LastSeen">When.</param>
-public sealed record UnknownSignalWire(string Name, long Count, DateTimeOffset? LastSeen);
+/// <param name="Source">Where the last one came from; null when not known.</param>
+public sealed record UnknownSignalWire(string Name, long Count, DateTimeOffset? LastSeen, string? Source = null);
+
+/// <summary>Where readings come from, what waits, what the database would not take.</summary>
+/// <param name="Sources">The sources.</param>
+/// <param name="Spool">What waits for the database.</param>
+/// <param name="Refused">The last readings that the database would not take, newest first.</param>
+public sealed record SourcesWire(IReadOnlyList<SourceWire> Sources, SpoolWire Spool, IReadOnlyList<RefusedWire> Refused);
+
+/// <summary>A source. Counts are since the service started.</summary>
+/// <param name="Name">Its name.</param>
+/// <param name="Kind">mqtt (a broker that is read), broker (the service's own), http.</param>
+/// <param name="Address">Where it is.</param>
+/// <param name="ConnectedSince">Null while it is not connected.</param>
+/// <param name="LastMessageAt">When the last message came.</param>
+/// <param name="Accepted">Readings that are durable.</param>
+/// <param name="Malformed">Messages that could not be read.</param>
+/// <param name="OutOfTime">Readings too far ahead of the clock or before the plant's history.</param>
+/// <param name="Unknown">Readings of signals that the plant file does not name.</param>
+/// <param name="InstantUnknown">Retained messages without a time.</param>
+/// <param name="Shed">Messages without a promise (QoS 0) that were dropped.</param>
+/// <param name="Refused">Times that it was told to come again later.</param>
+/// <param name="Reconnects">Connections made after the first.</param>
+/// <param name="LastError">The last thing that went wrong with the connection.</param>
+/// <param name="Samples">The last messages and readings that were not used, oldest first.</param>
+public sealed record SourceWire(
+    string Name, string Kind, string Address, DateTimeOffset? ConnectedSince, DateTimeOffset? LastMessageAt, long Accepted, long Malformed, long OutOfTime, long Unknown,
+    long InstantUnknown, long Shed, long Refused, long Reconnects, string? LastError, IReadOnlyList<SampleWire> Samples);
+
+/// <summary>A message or reading that was not used.</summary>
+/// <param name="At">When it came.</param>
+/// <param name="Where">Topic or signal.</param>
+/// <param name="Reason">Why it was not used.</param>
+public sealed record SampleWire(DateTimeOffset At, string Where, string Reason);
+
+/// <summary>What waits for the database.</summary>
+/// <param name="Bytes">Its size on disk.</param>
+public sealed record SpoolWire(long Bytes);
+
+/// <summary>A reading that the database would not take.</summary>
+/// <param name="RefusedAt">When.</param>
+/// <param name="Signal">The signal.</param>
+/// <param name="At">Instant of the reading.</param>
+/// <param name="Value">Its value.</param>
+/// <param name="Quality">Its quality.</param>
+/// <param name="Source">Where it came from.</param>
+/// <param name="Reason">What the database said.</param>
+public sealed record RefusedWire(DateTimeOffset RefusedAt, string Signal, DateTimeOffset At, double? Value, string Quality, string Source, string Reason);
+
+/// <summary>Something that the operator should know as long as it lasts.</summary>
+/// <param name="Key">What it is about.</param>
+/// <param name="Since">Since when.</param>
+/// <param name="Sentence">What is the matter, for people.</param>
+public sealed record NoticeWire(string Key, DateTimeOffset Since, string Sentence);
 
 /// <summary>Imports, newest first.</summary>
 /// <param name="Imports">The imports.</param>

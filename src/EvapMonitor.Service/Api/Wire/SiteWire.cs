@@ -12,8 +12,10 @@ namespace EvapMonitor.Service.Api.Wire;
 /// <param name="WindowS">Length of an evaluation window, s.</param>
 /// <param name="ImportsRunning">Imports that run or wait.</param>
 /// <param name="DaysWaiting">Days of readings that wait for evaluation, all lines together.</param>
+/// <param name="Notices">What the operator should know as long as it lasts.</param>
 public sealed record SiteWire(
-    string Name, string TimeZone, DateTimeOffset Now, DateTimeOffset? LatestReadingAt, string Readings, int PlantRevision, int WindowS, int ImportsRunning, int DaysWaiting);
+    string Name, string TimeZone, DateTimeOffset Now, DateTimeOffset? LatestReadingAt, string Readings, int PlantRevision, int WindowS, int ImportsRunning, int DaysWaiting,
+    IReadOnlyList<NoticeWire> Notices);
 
 /// <summary>All lines.</summary>
 /// <param name="Lines">In plant-file order.</param>

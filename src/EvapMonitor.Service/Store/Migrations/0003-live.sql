@@ -1,5 +1,7 @@
 -- An evaluation takes a day's mark before it reads, so that what comes meanwhile marks it anew; a killed one leaves what it took for the next.
-ALTER TABLE line_day ADD COLUMN taken_from timestamptz;
+ALTER TABLE line_day ADD COLUMN taken_from timestamptz, ADD COLUMN result_version bigint NOT NULL DEFAULT 0;
+COMMENT ON COLUMN line_day.data_version IS 'Grows with every change of what the day rests on.';
+COMMENT ON COLUMN line_day.result_version IS 'Grows with every write of its results.';
 DROP INDEX line_day_waiting;
 CREATE INDEX line_day_waiting ON line_day (line_id, day) WHERE changed_from IS NOT NULL OR taken_from IS NOT NULL;
 

@@ -4,17 +4,17 @@ using Npgsql;
 
 namespace EvapMonitor.Service.Tests.Ingest.Files;
 
-/// <summary>The program dies as if by kill -9 in the middle of an import of five batches and is started again: nothing is lost, nothing doubled.</summary>
+/// <summary>The program dies as if by kill -9 in the middle of an import of three batches and is started again: nothing is lost, nothing doubled.</summary>
 public sealed class ImportKillTests(PostgresServer server)
 {
-    private const int Readings = 230_000;
+    private const int Readings = 120_000;
 
     private static readonly byte[] File = HistoryWithFaults();
 
     private static CancellationToken Stop => TestContext.Current.CancellationToken;
 
     [PostgreSqlTheory]
-    [InlineData("import-before-commit:3")]
+    [InlineData("import-before-commit:2")]
     [InlineData("import-after-commit:2")]
     [InlineData("import-before-end")]
     public async Task KilledImport_GoesOn_AndHoldsTheSame(string place)

@@ -81,8 +81,8 @@ public sealed class ImportTests(PostgresServer server)
         Assert.Equal("02:1 03:1 04:2 05:1", await service.TextAsync(versions));
         Assert.Equal(before, await service.TextAsync("SELECT string_agg(xmin || ' ' || at, ',' ORDER BY at) FROM line_window WHERE at < '2026-04-04' OR at >= '2026-04-05'"));
 
-        // A reading in the evening reaches into the next day's first windows.
-        await service.ImportAsync(Days([2], 20));
+        // A reading shortly before midnight reaches into the next day: it is held for a while, and its stillness and scatter count for two hours more.
+        await service.ImportAsync(Days([2], 23));
         await service.EvaluatedAsync();
         Assert.Equal("02:2 03:2 04:2 05:1", await service.TextAsync(versions));
     }

@@ -1,53 +1,38 @@
 using EvapMonitor.Core.Properties;
 using MathNet.Numerics.LinearAlgebra;
 
-namespace EvapMonitor.Simulator;
+namespace EvapMonitor.Core.Tests.Outlook;
 
-/// <summary>An effect of a simulated line.</summary>
-/// <param name="Name">Its name.</param>
-/// <param name="Area">Heating surface, m².</param>
-/// <param name="Clean">Coefficient with clean surfaces, W/(m²·K).</param>
-/// <param name="Bleed">Vapour drawn off for other users, kg/s.</param>
-public sealed record SimulatedEffect(string Name, double Area, double Clean, double Bleed);
+/// <summary>An effect of a forward line.</summary>
+internal sealed record ForwardEffect(double Area, double Bleed);
 
-/// <summary>What a line is run at.</summary>
-/// <param name="SteamPressure">Chest pressure of the first effect, Pa.</param>
-/// <param name="LastPressure">Vapour pressure of the last effect, Pa.</param>
-/// <param name="FeedSolids">Mass fraction.</param>
-/// <param name="FeedTemperature">K.</param>
-/// <param name="ProductSolids">Mass fraction; the feed flow is found so that it is reached.</param>
-public sealed record OperatingConditions(double SteamPressure, double LastPressure, double FeedSolids, double FeedTemperature, double ProductSolids);
+/// <summary>What a forward line is run at, SI units.</summary>
+internal sealed record ForwardConditions(double SteamPressure, double LastPressure, double FeedSolids, double FeedTemperature, double ProductSolids);
 
 /// <summary>One effect at the operating point, SI units.</summary>
-public sealed record EffectPoint(double VapourPressure, double Boiling, double Heating, double Duty, double Vapour, double LiquorOut, double SolidsOut, double Condensate);
+internal sealed record ForwardEffectPoint(double VapourPressure, double Boiling, double Heating, double Duty, double Vapour, double LiquorOut, double SolidsOut, double Condensate);
 
-/// <summary>A line at its operating point, SI units.</summary>
-public sealed record LinePoint(double Steam, double Feed, IReadOnlyList<EffectPoint> Effects);
+/// <summary>A forward line at its operating point, SI units.</summary>
+internal sealed record ForwardPoint(double Steam, double Feed, IReadOnlyList<ForwardEffectPoint> Effects);
 
 /// <summary>
-/// A forward-feed line with known coefficients, solved for its operating point: mass, solids and heat of every effect, and Q = U·A·(Ts − Tb).
-/// Losses and vents are nil, so that the coefficient put in is exactly the one that the readings hold.
+/// A second way to the operating point of a forward-feed line, from effect to effect along the steam with only the vapour temperatures, steam and feed unknown.
+/// It shares no code with the line equations. Losses and vents are nil.
 /// </summary>
-public sealed class ForwardLine(Liquor liquor, IReadOnlyList<SimulatedEffect> effects)
+internal sealed class SequentialForwardLine(Liquor liquor, IReadOnlyList<ForwardEffect> effects)
 {
-    private double[]? _start;
-
-    /// <summary>The effects.</summary>
-    public IReadOnlyList<SimulatedEffect> Effects => effects;
-
     /// <summary>Solves the line for given coefficients, W/(m²·K), by Newton's method.</summary>
+    /// <param name="conditions">What the line is run at.</param>
+    /// <param name="coefficients">Of each effect.</param>
+    /// <param name="start">Unknowns near the solution: saturation temperature in each vapour space but the last (K), steam flow, feed flow (kg/s).</param>
     /// <exception cref="InvalidOperationException">There is no operating point near the start.</exception>
-    public LinePoint Solve(OperatingConditions conditions, IReadOnlyList<double> coefficients)
+    public ForwardPoint Solve(ForwardConditions conditions, IReadOnlyList<double> coefficients, double[] start)
     {
-        double[] x = _start ?? Start(conditions, coefficients);
+        double[] x = start;
         for (int step = 0; step < 60; step++)
         {
-            double[] residual = Residuals(x, conditions, coefficients, out LinePoint point);
-            if (residual.All(one => double.Abs(one) < 1e-10))
-            {
-                _start = x;
-                return point;
-            }
+            double[] residual = Residuals(x, conditions, coefficients, out ForwardPoint point);
+            if (residual.All(one => double.Abs(one) < 1e-10)) return point;
 
             var jacobian = Matrix<double>.Build.Dense(x.Length, x.Length);
             for (int k = 0; k < x.Length; k++)
@@ -67,25 +52,11 @@ public sealed class ForwardLine(Liquor liquor, IReadOnlyList<SimulatedEffect> ef
         throw new InvalidOperationException("No operating point was found: the conditions do not fit the line.");
     }
 
-    /// <summary>Unknowns: saturation temperature in each vapour space but the last (K), steam flow, feed flow (kg/s).</summary>
-    private double[] Start(OperatingConditions conditions, IReadOnlyList<double> coefficients)
-    {
-        double hot = Steam.SaturationTemperature(conditions.SteamPressure), cold = Steam.SaturationTemperature(conditions.LastPressure);
-        double resistances = effects.Select((effect, i) => 1 / (effect.Area * coefficients[i])).Sum();
-        var x = new double[effects.Count + 1];
-        double at = hot;
-        for (int i = 0; i < effects.Count - 1; i++) x[i] = at -= (hot - cold) / (effects[i].Area * coefficients[i]) / resistances;
-        double duty = (hot - cold - 5) / resistances;
-        x[^2] = duty / 2.25e6;
-        x[^1] = effects.Count * x[^2] / (1 - (conditions.FeedSolids / conditions.ProductSolids));
-        return x;
-    }
-
-    private double[] Residuals(double[] x, OperatingConditions conditions, IReadOnlyList<double> coefficients, out LinePoint point)
+    private double[] Residuals(double[] x, ForwardConditions conditions, IReadOnlyList<double> coefficients, out ForwardPoint point)
     {
         int n = effects.Count;
         var residual = new double[n + 1];
-        var points = new EffectPoint[n];
+        var points = new ForwardEffectPoint[n];
         double chest = conditions.SteamPressure, heatingFlow = x[n - 1], heatingEnthalpy = Steam.SaturatedVapourEnthalpy(chest);
         double liquorIn = x[n], solidsIn = conditions.FeedSolids, enthalpyIn = liquor.Enthalpy(solidsIn, conditions.FeedTemperature);
         for (int i = 0; i < n; i++)
@@ -96,7 +67,7 @@ public sealed class ForwardLine(Liquor liquor, IReadOnlyList<SimulatedEffect> ef
             double duty = heatingFlow * (heatingEnthalpy - Steam.SaturatedLiquidEnthalpy(chest));
             (double vapour, double boiling, double solids, double vapourEnthalpy) = Boil(liquorIn, solidsIn, enthalpyIn, duty, pressure, saturation);
             residual[i] = (duty / (coefficients[i] * effects[i].Area * (heating - boiling))) - 1;
-            points[i] = new EffectPoint(pressure, boiling, heating, duty, vapour, liquorIn - vapour, solids, heatingFlow);
+            points[i] = new ForwardEffectPoint(pressure, boiling, heating, duty, vapour, liquorIn - vapour, solids, heatingFlow);
             solidsIn = solids;
             liquorIn -= vapour;
             enthalpyIn = liquor.Enthalpy(solidsIn, boiling);
@@ -104,7 +75,7 @@ public sealed class ForwardLine(Liquor liquor, IReadOnlyList<SimulatedEffect> ef
         }
 
         residual[n] = (solidsIn / conditions.ProductSolids) - 1;
-        point = new LinePoint(x[n - 1], x[n], points);
+        point = new ForwardPoint(x[n - 1], x[n], points);
         return residual;
     }
 
