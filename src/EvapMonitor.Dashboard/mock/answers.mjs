@@ -1,4 +1,4 @@
-import { cleanings, plant, start } from './plant.mjs';
+import { cleanings, start } from './plant.mjs';
 import { at } from './series.mjs';
 
 const day = 86_400_000, iso = t => new Date(t).toISOString();
@@ -49,11 +49,3 @@ export function lineOf(l, now) {
     evaporation_kg_s: l.evaporation, required_evaporation_kg_s: l.required, effects: l.effects.map(e => effectOf(l, e)),
   };
 }
-
-export const signals = {
-  signals: plant.flatMap(l => l.effects.flatMap((e, i) => [
-    { name: `${e.name}.PT-1`, line: l.name, unit: 'bar', latest_at: iso(l.stale ? start - l.stale : start - 3000), latest_value: 1.4 - 0.3 * i, latest_quality: 'good' },
-    { name: `${e.name}.TT-2`, line: l.name, unit: 'degC', latest_at: e.unknown ? null : iso(start - 3000), latest_value: e.unknown ? null : e.Ts - e.force, latest_quality: e.unknown ? null : i === 2 ? 'uncertain' : 'good' },
-  ])),
-  unknown: [{ name: 'N9.XT-7', count: 1840, last_seen: iso(start - 60_000) }],
-};

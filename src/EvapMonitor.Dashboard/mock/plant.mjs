@@ -28,15 +28,16 @@ export const plant = [
   },
 ];
 
-if (process.argv.includes('--many')) {
-  // Forty lines, some silent, few that ask.
-  for (let i = 4; i <= 40; i++) {
-    const like = plant[1];
-    plant.push({ ...like, name: `L${i}`, stale: i % 13 === 0 ? like.stale : 0, effects: like.effects.map((e, k) => ({ ...e, name: `L${i}-${k + 1}`, floor: i % 9 === 0 && k === 1 ? 1950 : e.floor })) });
-  }
-}
+/** Forty lines, some silent, few that ask. */
+const many = [...plant, ...Array.from({ length: 37 }, (_, at) => {
+  const i = at + 4, like = plant[1], ask = i % 9 === 0;
+  return { ...like, name: `L${i}`, stale: i % 13 === 0 ? like.stale : 0, effects: [...like.effects, ...like.effects].map((e, k) => ({ ...e, name: `L${i}-${k + 1}`, rate: e.rate * (1 + (i % 5) * 0.6), floor: ask && k === 1 ? 1950 : k % 3 === 2 ? 500 : e.floor && 900 })) };
+})];
 
-export const cleanings = plant.flatMap(l => l.effects.flatMap(e => [0, 28, 57].map((back, i) => ({
+/** Sites by size; the port that is asked chooses. */
+export const sizes = { few: plant, many, one: plant.slice(0, 1) };
+
+export const cleanings = many.flatMap(l => l.effects.flatMap(e => [0, 28, 57].map((back, i) => ({
   id: `c-${e.name}-${i}`, line: l.name, effect: e.name,
   start: new Date(start - (e.cleaned + back) * day - 9 * 3_600_000).toISOString(), end: new Date(start - (e.cleaned + back) * day).toISOString(),
   kind: ['chemical', 'chemical', 'rinse'][i], note: i === 1 ? 'caustic 4 %, then rinse; <b>not markup</b>' : '', logged_at: new Date(start - (e.cleaned + back) * day + 3_600_000).toISOString(),

@@ -1,21 +1,23 @@
 // The REST interface with invented data, for work on the dashboard alone. `--built` serves dist under the service's content security policy;
-// `--empty` has no readings; `--down-after N` stops answering after N seconds.
+// `--empty` has no readings; `--calm` has no notices; `--down-after N` stops answering after N seconds.
+// PORT (5180) serves three lines, the next port forty, the one after that a single line.
 import { createReadStream, existsSync, statSync } from 'node:fs';
 import { createServer } from 'node:http';
 import { extname, join, normalize } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { effectOf, lineOf, signals } from './answers.mjs';
-import { cleanings, plant, plantText, start } from './plant.mjs';
+import { effectOf, lineOf } from './answers.mjs';
+import { notices, signals, sources } from './intake.mjs';
+import { cleanings, plantText, sizes, start } from './plant.mjs';
 import { trend } from './series.mjs';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
 const option = name => process.argv.includes(name);
-const port = Number(process.env.PORT ?? 5180), begun = Date.now(), empty = option('--empty');
+const port = Number(process.env.PORT ?? 5180), begun = Date.now(), empty = option('--empty'), calm = option('--calm');
 const downAfter = option('--down-after') ? Number(process.argv[process.argv.indexOf('--down-after') + 1]) * 1000 : Infinity;
 const now = () => start + Date.now() - begun;
 const iso = t => new Date(t).toISOString();
 const total = 18_423_100, rate = 41_000;
-let cancelled = false, listeners = [];
+let cancelled = false, listeners = [], sent = 0;
 const keys = new Map();
 
 function running() {
@@ -27,7 +29,7 @@ function running() {
 }
 const failed = { ...running(), id: 'sha256-0', name: 'south.csv', state: 'failed', bytes_total: 9400, bytes_read: 120, accepted: 0, rejected: 0, error: 'line 1: the header has no column time', problems: [], unknown_signals: [], ended_at: iso(start - 86_000_000), started_at: iso(start - 86_010_000) };
 const site = () => ({ name: 'Fennholm', time_zone: 'Europe/Copenhagen', now: iso(now()), latest_reading_at: empty ? null : iso(now() - 3000), readings: empty ? 'none' : 'live', plant_revision: 3, window_s: 300,
-  imports_running: empty || cancelled ? 0 : 1, days_waiting: empty ? 0 : Math.max(0, 12 - Math.floor((Date.now() - begun) / 20_000)) });
+  imports_running: empty || cancelled ? 0 : 1, days_waiting: empty ? 0 : Math.max(0, 12 - Math.floor((Date.now() - begun) / 20_000)), notices: empty || calm ? [] : notices });
 
 const json = (response, status, body, type = 'application/json') => { response.writeHead(status, { 'content-type': type }); response.end(JSON.stringify(body)); };
 const problem = (response, status, title, detail) => json(response, status, { status, title, detail }, 'application/problem+json');
@@ -35,6 +37,7 @@ const body = request => new Promise(resolve => { let text = ''; request.on('data
 
 async function answer(request, response, url) {
   const path = url.pathname.replace('/api/v1', '').split('/').filter(Boolean).map(decodeURIComponent), q = url.searchParams;
+  const plant = [sizes.few, sizes.many, sizes.one][request.socket.localPort - port];
   const line = plant.find(l => l.name === path[1]), effect = line?.effects.find(e => e.name === path[3]);
   switch (path[0]) {
     case 'site': return json(response, 200, site());
@@ -46,7 +49,8 @@ async function answer(request, response, url) {
       if (path.length === 4) return json(response, 200, effectOf(line, effect));
       return answerTrend(request, response, trend(line, effect, q.get('quantity'), Date.parse(q.get('from')), Date.parse(q.get('to')), Number(q.get('points') ?? 2000)));
     case 'cleanings': return answerCleanings(request, response, path, q);
-    case 'signals': return json(response, 200, empty ? { signals: [], unknown: [] } : signals);
+    case 'signals': return json(response, 200, empty ? { as_of: iso(now()), signals: [], unknown: [] } : signals(plant, now()));
+    case 'sources': return json(response, 200, empty ? { sources: [], spool: { bytes: 0, readings: 0 }, refused: [] } : sources(now()));
     case 'plant': return json(response, 200, { revision: 3, accepted_at: '2026-10-02T08:11:00Z', in_force_from: '2026-10-01T00:00:00Z', author: 'k.olm', text: plantText });
     case 'imports':
       if (path[2] === 'cancel') { cancelled = true; return json(response, 202, running()); }
@@ -54,7 +58,8 @@ async function answer(request, response, url) {
       return json(response, 200, { imports: empty ? [] : [running(), failed] });
     case 'events':
       response.writeHead(200, { 'content-type': 'text/event-stream', 'cache-control': 'no-cache' });
-      response.write(`event: site\ndata: ${JSON.stringify(site())}\n\n`);
+      if (q.has('last_event_id') || request.headers['last-event-id']) response.write(`id: ${++sent}\nevent: reset\ndata: {}\n\n`);
+      response.write(`id: ${++sent}\nevent: site\ndata: ${JSON.stringify(site())}\n\n`);
       listeners.push(response);
       return request.on('close', () => { listeners = listeners.filter(l => l !== response); });
     default: return problem(response, 404, 'Not found', 'No such resource.');
@@ -82,7 +87,7 @@ async function answerCleanings(request, response, path, q) {
   return json(response, 200, { cleanings: empty ? [] : cleanings.filter(c => (!q.get('line') || c.line === q.get('line')) && (!q.get('effect') || c.effect === q.get('effect'))) });
 }
 
-setInterval(() => { for (const l of listeners) l.write(`event: import\ndata: ${JSON.stringify(running())}\n\nevent: site\ndata: ${JSON.stringify(site())}\n\n`); }, 2000);
+setInterval(() => { for (const l of listeners) l.write(`id: ${++sent}\nevent: import\ndata: ${JSON.stringify(running())}\n\nid: ${++sent}\nevent: site\ndata: ${JSON.stringify(site())}\n\n`); }, 2000);
 
 const types = { '.html': 'text/html; charset=utf-8', '.js': 'text/javascript', '.css': 'text/css', '.svg': 'image/svg+xml', '.woff2': 'font/woff2' };
 function built(request, response, url) {
@@ -93,10 +98,12 @@ function built(request, response, url) {
 }
 
 const vite = option('--built') ? null : await (await import('vite')).createServer({ root, appType: 'spa', server: { middlewareMode: true } });
-createServer((request, response) => {
+const serve = (request, response) => {
   const url = new URL(request.url, 'http://localhost');
   if (Date.now() - begun > downAfter && url.pathname.startsWith('/api')) { listeners.forEach(l => l.destroy()); return request.destroy(); }
   if (url.pathname.startsWith('/api/')) return void answer(request, response, url);
   return vite ? vite.middlewares(request, response) : built(request, response, url);
-}).listen(port, '127.0.0.1', () => console.log(`http://127.0.0.1:${port}/ with invented data${vite ? '' : ', built'}`));
+};
+for (const at of [port, port + 1, port + 2]) createServer(serve).listen(at, '127.0.0.1');
+console.log(`http://127.0.0.1:${port}/ with invented data${vite ? '' : ', built'}; forty lines on ${port + 1}, one on ${port + 2}`);
 setInterval(() => { if (Date.now() - begun > downAfter) { listeners.forEach(l => l.destroy()); listeners = []; } }, 500);

@@ -1,4 +1,4 @@
-import { Route, Switch } from 'wouter-preact';
+import { Route, Switch, useLocation, useSearch } from 'wouter-preact';
 import { pages } from './api/addresses';
 import { Boundary } from './parts/Boundary';
 import { useArrival } from './parts/use-arrival';
@@ -6,6 +6,7 @@ import { Announcer } from './parts/Announcer';
 import { BottomBar, Header } from './parts/Header';
 import { ConnectionLost } from './parts/ConnectionLost';
 import { ImportProgress } from './parts/ImportProgress';
+import { NoticeLine, NoticeVoice } from './parts/Notices';
 import { Cleanings } from './pages/Cleanings';
 import { EffectPage } from './pages/Effect';
 import { Instruments } from './pages/Instruments';
@@ -13,15 +14,29 @@ import { Lines } from './pages/Lines';
 import { NotHere } from './pages/NotHere';
 import { Plant } from './pages/Plant';
 import { Today } from './pages/Today';
+import { Wall } from './today/Wall';
 
-/** The frame of every page and the page that the address names. */
+/** What the address names: a page in its frame, or Today for a wall screen, which has none. */
 export function App() {
   useArrival();
+  const [path] = useLocation();
+  const wall = path === pages.today && new URLSearchParams(useSearch()).has('wall');
+  return (
+    <>
+      {wall ? <main id="content" tabIndex={-1}><Boundary><Wall /></Boundary></main> : <Framed today={path === pages.today} />}
+      <NoticeVoice />
+      <Announcer />
+    </>
+  );
+}
+
+function Framed({ today }: { today: boolean }) {
   return (
     <>
       <a class="skip" href="#content">Skip to the content</a>
       <Header />
       <ConnectionLost />
+      {!today && <NoticeLine />}
       <ImportProgress />
       <main id="content" tabIndex={-1}>
         <Boundary><Switch>
@@ -37,7 +52,6 @@ export function App() {
         </Switch></Boundary>
       </main>
       <BottomBar />
-      <Announcer />
     </>
   );
 }

@@ -7,9 +7,11 @@ import './styles/tokens.css';
 import './styles/type.css';
 import './styles/shell.css';
 import './styles/today.css';
+import './styles/wall.css';
 import './styles/bore.css';
 import './styles/forms.css';
 import './styles/tables.css';
+import './styles/instruments.css';
 import './styles/chart.css';
 import './styles/print.css';
 

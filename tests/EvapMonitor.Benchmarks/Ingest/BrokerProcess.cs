@@ -17,7 +17,7 @@ internal sealed class BrokerProcess : IAsyncDisposable
     {
         int port = FreePort();
         string settings = Path.Combine(folder, "mosquitto.conf");
-        await File.WriteAllTextAsync(settings, Invariant($"listener {port} 127.0.0.1\nallow_anonymous true\nmax_queued_messages 0\nmax_inflight_messages 0\npersistence false\nlog_type none\n"));
+        await File.WriteAllTextAsync(settings, Invariant($"listener {port} 127.0.0.1\nallow_anonymous true\nmax_queued_messages 0\nmax_inflight_messages 500\npersistence false\nlog_type none\n"));
         Process process = Process.Start(new ProcessStartInfo("/usr/sbin/mosquitto", ["-c", settings]))!;
         for (int i = 0; i < 200; i++)
         {

@@ -46,7 +46,10 @@ internal static class KillsProof
             await service.KillAsync();
             (service, address) = await stand.ServeAsync();
             Volatile.Write(ref current, address);
+            await Console.Error.WriteAsync(Invariant($"\r{i + 1} kills, {publisher.Acknowledged} taken by the broker, {posted.Count * (long)HttpBatch} by HTTP "));
         }
+
+        await Console.Error.WriteLineAsync();
 
         await Task.Delay(1_000);
         await end.CancelAsync();
@@ -58,8 +61,9 @@ internal static class KillsProof
         {
             stored = await CountAsync(stand, first);
             quiet = stored >= expected ? quiet + 1 : 0;
-            if (quiet > 5 || looks > 600) break;
-            await Task.Delay(200);
+            if (quiet > 2 || looks > 300) break;
+            await Console.Error.WriteAsync(Invariant($"\r{stored} of {expected} stored "));
+            await Task.Delay(1_000);
         }
 
         (long missing, long foreign, long wrong) = await CompareAsync(stand, start, first, acknowledged, sent, posted);
@@ -81,7 +85,7 @@ internal static class KillsProof
         long began = System.Diagnostics.Stopwatch.GetTimestamp(), from = n;
         for (; !end.IsCancellationRequested; n++)
         {
-            while (System.Diagnostics.Stopwatch.GetElapsedTime(began).TotalSeconds * PerSecond < n - from) Thread.Yield();
+            while (System.Diagnostics.Stopwatch.GetElapsedTime(began).TotalSeconds * PerSecond < n - from) end.WaitHandle.WaitOne(1);
             if (!publisher.Send(LoadPlant.Topic(n), LoadPlant.Payload(start, n))) break;
         }
 

@@ -17,6 +17,8 @@ internal sealed class ServiceProcess : IDisposable
         {
             int at = line.Data?.LastIndexOf("http://", StringComparison.Ordinal) ?? -1;
             if (at >= 0) _address.TrySetResult(line.Data![at..].Trim());
+            // What the service complains of belongs beside a figure.
+            if (line.Data is { } said && (said.Contains(" WRN ", StringComparison.Ordinal) || said.Contains(" ERR ", StringComparison.Ordinal))) Console.Error.WriteLine(said);
             if (line.Data is null) _address.TrySetException(new InvalidOperationException("The service ended before it served."));
         };
         process.BeginOutputReadLine();
@@ -61,8 +63,9 @@ internal sealed class ServiceProcess : IDisposable
 
     public void Dispose()
     {
-        using (Process.Start("kill", ["-TERM", _process.Id.ToString(CultureInfo.InvariantCulture)])!)
+        if (!_process.HasExited)
         {
+            using Process asked = Process.Start("kill", ["-TERM", _process.Id.ToString(CultureInfo.InvariantCulture)])!;
             if (!_process.WaitForExit(30_000)) _process.Kill();
         }
 

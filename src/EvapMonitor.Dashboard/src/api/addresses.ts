@@ -8,9 +8,12 @@ export const addresses = {
   site: `${base}/site`,
   lines: `${base}/lines`,
   signals: `${base}/signals`,
+  sources: `${base}/sources`,
   plant: `${base}/plant`,
   imports: `${base}/imports`,
   events: `${base}/events`,
+  /** The events missed since one are sent first. */
+  eventsAfter: (id: string) => `${base}/events?last_event_id=${part(id)}`,
   effect: (line: string, effect: string) => `${base}/lines/${part(line)}/effects/${part(effect)}`,
   trend: (line: string, effect: string, quantity: Quantity, from: number, to: number, points: number) =>
     `${addresses.effect(line, effect)}/trend?quantity=${quantity}&from=${part(new Date(from).toISOString())}` +
@@ -27,6 +30,7 @@ export const addresses = {
 /** Addresses of the pages. */
 export const pages = {
   today: '/',
+  wall: '/?wall',
   lines: '/lines',
   cleanings: '/cleanings',
   instruments: '/instruments',

@@ -16,6 +16,15 @@ export interface Site {
   imports_running: number;
   /** Days of readings that wait for evaluation, all lines together. */
   days_waiting: number;
+  /** What the operator should know as long as it lasts. */
+  notices: Notice[];
+}
+
+/** Something that the operator should know; at most one stands for a key. */
+export interface Notice {
+  key: string;
+  since: Instant;
+  sentence: string;
 }
 
 export interface Line {
@@ -147,6 +156,7 @@ export interface NewCleaning {
   note: string;
 }
 
+/** A signal of the plant file. Shares and counts are of the last 24 hours. */
 export interface SignalRow {
   name: string;
   line: string | null;
@@ -154,17 +164,72 @@ export interface SignalRow {
   latest_at: Instant | null;
   latest_value: number | null;
   latest_quality: string | null;
+  /** Share of the time with a sound value, 0 to 1; null when there was no reading. */
+  good_share: number | null;
+  rejected: Rejected;
+  readings: number;
+}
+
+/** Readings that were not used, by what was wrong with them. */
+export interface Rejected {
+  bad: number;
+  not_a_number: number;
+  out_of_range: number;
+  frozen: number;
 }
 
 export interface UnknownSignal {
   name: string;
   count: number;
   last_seen: Instant | null;
+  source: string | null;
 }
 
 export interface Signals {
+  as_of: Instant;
   signals: SignalRow[];
   unknown: UnknownSignal[];
+}
+
+/** A source of readings. Counts are since the service started. */
+export interface Source {
+  name: string;
+  /** A broker that is read, the service's own one, or posted readings. */
+  kind: 'mqtt' | 'broker' | 'http';
+  address: string;
+  connected_since: Instant | null;
+  last_message_at: Instant | null;
+  accepted: number;
+  malformed: number;
+  out_of_time: number;
+  unknown: number;
+  /** Kept messages without a time: when their value was true is not known. */
+  instant_unknown: number;
+  /** Messages without a promise of delivery, dropped because the intake was full. */
+  shed: number;
+  /** Times that it was told to come again later. */
+  refused: number;
+  reconnects: number;
+  last_error: string | null;
+  samples: { at: Instant; where: string; reason: string }[];
+}
+
+/** A reading that the database would not take. */
+export interface RefusedReading {
+  refused_at: Instant;
+  signal: string;
+  at: Instant;
+  value: number | null;
+  quality: string;
+  source: string;
+  reason: string;
+}
+
+export interface Sources {
+  sources: Source[];
+  /** What is on disk and not yet in the database. */
+  spool: { bytes: number; readings: number };
+  refused: RefusedReading[];
 }
 
 export type ImportState = 'waiting' | 'running' | 'done' | 'failed' | 'cancelled';

@@ -1,64 +1,43 @@
+import { useEffect } from 'preact/hooks';
+import { useLocation, useSearch } from 'wouter-preact';
 import { addresses } from '../api/addresses';
-import type { Signals } from '../api/types';
+import type { Signals, Sources } from '../api/types';
 import { useResource } from '../api/use-resource';
-import { Scroller } from '../parts/Scroller';
+import { SignalsOfLine } from '../instruments/SignalsOfLine';
+import { SourcesPart } from '../instruments/SourcesPart';
+import { UnknownSignals } from '../instruments/UnknownSignals';
+import { useRegularly } from '../instruments/use-regularly';
 import { Shown } from '../parts/Waiting';
 import { useTitle } from '../parts/use-title';
-import { useEffect } from 'preact/hooks';
 import { calmNow } from '../site/clock';
-import { resultsChanged, zone } from '../site/state';
-import { duration } from '../words/duration';
-import { count, raw } from '../words/number';
-import { prettyUnit } from '../words/quantity';
-import { moment } from '../words/time';
+import { eventsMissed, resultsChanged } from '../site/state';
+import { byLine } from '../words/signal';
 
-const old = 15 * 60_000;
-
-/** Can I trust the data? Every signal with its latest value, quality and age. */
+/** Can I trust the data? Every signal with value, age and share of sound time; where readings come from and what became of them. */
 export function Instruments() {
   useTitle('Instruments');
-  const signals = useResource<Signals>(addresses.signals);
-  const changes = resultsChanged.value;
-  useEffect(() => { if (signals.state.peek().value) void signals.load(); }, [changes]);
+  const signals = useResource<Signals>(addresses.signals), sources = useResource<Sources>(addresses.sources);
+  const changes = resultsChanged.value, missed = eventsMissed.value;
+  const again = () => { for (const r of [signals, sources]) if (r.state.peek().value) void r.load(); };
+  useEffect(again, [changes, missed]);
+  useRegularly(again, 30_000);
+  const [path, navigate] = useLocation();
+  const first = new URLSearchParams(useSearch()).get('order') === 'attention';
   const now = calmNow.value;
   return (
-    <section class="page">
+    <>
       <h1 class="page-name">Instruments</h1>
       <Shown of={signals} what="The signals">
-        {({ signals: all, unknown }) => {
-          const silent = all.filter(s => s.latest_at === null || now - Date.parse(s.latest_at) > old).length;
-          return <>
-            {all.length === 0
-              ? <p class="say">The plant file names no signal yet.</p>
-              : <p class="say">{count(all.length, 'signal')}{silent > 0 ? <>, <b>{silent} of them without a reading in the last 15 min</b>.</> : ', every one with a reading in the last 15 min.'}</p>}
-            {all.length > 0 && <Scroller label="Signals">
-              <table>
-                <thead><tr><th scope="col">signal</th><th scope="col">line</th><th scope="col" class="number">latest value</th><th scope="col">unit</th><th scope="col">quality</th><th scope="col">age</th></tr></thead>
-                <tbody>{all.map(s => {
-                  const at = s.latest_at === null ? null : Date.parse(s.latest_at);
-                  return <tr key={s.name}>
-                    <th scope="row" class="signal">{s.name}</th><td>{s.line ?? ''}</td>
-                    <td class="number">{s.latest_value === null ? 'none' : raw(s.latest_value)}</td><td>{prettyUnit(s.unit ?? '')}</td>
-                    <td>{s.latest_quality ?? ''}</td>
-                    <td>{at === null ? 'never read' : now - at > old ? <b title={moment(at, zone.value, now)}>{duration(now - at)}</b> : duration(now - at)}</td>
-                  </tr>;
-                })}</tbody>
-              </table>
-            </Scroller>}
-            {unknown.length > 0 && <>
-              <h2>Signals that no plant file names</h2>
-              <p class="quiet">Their readings are counted, not stored. Name them in the plant file, or stop sending them.</p>
-              <Scroller label="Signals that no plant file names">
-                <table>
-                  <thead><tr><th scope="col">signal</th><th scope="col" class="number">readings</th><th scope="col">last seen</th></tr></thead>
-                  <tbody>{unknown.map(u => <tr key={u.name}><th scope="row" class="signal">{u.name}</th><td class="number">{u.count}</td>
-                    <td>{u.last_seen === null ? '' : moment(Date.parse(u.last_seen), zone.value, now)}</td></tr>)}</tbody>
-                </table>
-              </Scroller>
-            </>}
-          </>;
-        }}
+        {({ signals: all, unknown }) => <>
+          {all.length === 0
+            ? <p class="empty">The plant file names no signal yet. The Plant page shows what is in force.</p>
+            : <p class="order"><label class="tick"><input type="checkbox" checked={first}
+                onChange={e => navigate(path + (e.currentTarget.checked ? '?order=attention' : ''), { replace: true })} />What asks for attention first, within its line</label></p>}
+          {byLine(all).map(g => <SignalsOfLine key={g.line} line={g.line} signals={g.signals} first={first} now={now} />)}
+          <UnknownSignals all={unknown} now={now} />
+        </>}
       </Shown>
-    </section>
+      <Shown of={sources} what="The sources">{of => <SourcesPart of={of} now={now} />}</Shown>
+    </>
   );
 }

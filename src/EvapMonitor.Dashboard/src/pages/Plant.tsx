@@ -6,7 +6,7 @@ import { Shown } from '../parts/Waiting';
 import { Upload } from '../parts/Upload';
 import { useTitle } from '../parts/use-title';
 import { calmNow } from '../site/clock';
-import { imports, site, zone } from '../site/state';
+import { eventsMissed, imports, site, zone } from '../site/state';
 import { bytes, count, fixed } from '../words/number';
 import { fullMoment, moment } from '../words/time';
 import { useEffect } from 'preact/hooks';
@@ -17,6 +17,8 @@ export function Plant() {
   const plant = useResource<PlantRevision>(addresses.plant);
   const revision = site.state.value.value?.plant_revision ?? null;
   useEffect(() => { const known = plant.state.peek().value; if (known && revision !== null && known.revision !== revision) void plant.load(); }, [revision]);
+  const missed = eventsMissed.value;
+  useEffect(() => { if (plant.state.peek().value) void plant.load(); }, [missed]);
   return (
     <section class="page">
       <h1 class="page-name">Plant</h1>

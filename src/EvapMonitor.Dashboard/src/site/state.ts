@@ -19,6 +19,11 @@ export const zone = computed(() => usableZone(site.state.value.value?.time_zone)
 export const resultsChanged = signal<Readonly<Record<string, number>>>({});
 /** Grows when cleanings were logged or taken back. */
 export const cleaningsChanged = signal(0);
+/** Grows when events were missed for good: everything shown is to be fetched anew. */
+export const eventsMissed = signal(0);
+
+/** What the operator should know as long as it lasts. A service from before there were notices sends none. */
+export const notices = computed(() => site.state.value.value?.notices ?? []);
 
 function usableZone(name: string | undefined): string {
   if (!name) return 'UTC';
@@ -48,6 +53,7 @@ export function startState(): () => void {
     for (const line of lines.state.peek().value?.lines ?? []) changedLines.add(line.name);
     publish();
     cleaningsChanged.value++;
+    eventsMissed.value++;
   };
   all();
   const forget = effect(() => {
@@ -56,7 +62,7 @@ export function startState(): () => void {
   });
   // Ages and running hours move without any event.
   const regular = setInterval(() => { if (connection.peek().state === 'open' && !document.hidden) void lines.load(); }, 60_000);
-  const close = connect(addresses.events, {
+  const close = connect({ first: addresses.events, after: addresses.eventsAfter }, {
     site: data => site.put(data as Site),
     windows: data => { changedLines.add((data as { line: string }).line); publish(); },
     import: data => mergeImport(data as Import),

@@ -17,10 +17,10 @@ internal sealed class BrokerConnection : IAsyncDisposable
     public const ushort ReceiveMaximum = 500;
 
     /// <summary>
-    /// Most unacknowledged messages before the connection is ended. A broker of MQTT 3.1.1 is not bound by <see cref="ReceiveMaximum"/>, and the library's own
-    /// queue has no bound.
+    /// Most unacknowledged messages, and bytes of them, before the connection is ended. A broker of MQTT 3.1.1 is not bound by <see cref="ReceiveMaximum"/>, some
+    /// of MQTT 5 forget it when a session is resumed, and the library's own queue has no bound.
     /// </summary>
-    private const int MostWaiting = 5_000;
+    private const int MostWaiting = 100_000, MostWaitingBytes = 64 << 20;
 
     private readonly BrokerSettings _settings;
     private readonly SourceState _state;
@@ -33,6 +33,7 @@ internal sealed class BrokerConnection : IAsyncDisposable
         Channel.CreateUnbounded<(MqttApplicationMessageReceivedEventArgs, Task<IntakeAnswer>)>(new UnboundedChannelOptions { SingleReader = true });
 
     private int _waiting;
+    private long _waitingBytes;
 
     public BrokerConnection(BrokerSettings settings, SourceState state, Intake intake, TimeProvider clock)
     {
@@ -153,8 +154,9 @@ internal sealed class BrokerConnection : IAsyncDisposable
         else if (promised) answer = _intake.KeepAsync(_state, readings);
         else _intake.TryKeep(_state, readings);
         if (!promised) return Task.CompletedTask;
-        if (Interlocked.Increment(ref _waiting) > MostWaiting) End($"the broker sent more than {MostWaiting} messages without an acknowledgement");
-        else _unanswered.Writer.TryWrite((message, answer));
+        _unanswered.Writer.TryWrite((message, answer));
+        if (Interlocked.Increment(ref _waiting) > MostWaiting || Interlocked.Add(ref _waitingBytes, content.Payload.Length) > MostWaitingBytes)
+            End($"the broker sent {_waiting} messages without waiting for an acknowledgement; allowed: {MostWaiting}, {MostWaitingBytes >> 20} MiB");
         return Task.CompletedTask;
     }
 
@@ -171,9 +173,10 @@ internal sealed class BrokerConnection : IAsyncDisposable
                     return;
                 }
 
-                if (_end.Task.IsCompleted) return;
+                // Also after the end: what was taken before it need not come again.
                 await message.AcknowledgeAsync(CancellationToken.None);
                 Interlocked.Decrement(ref _waiting);
+                Interlocked.Add(ref _waitingBytes, -message.ApplicationMessage.Payload.Length);
             }
         }
         catch (Exception error) when (error is MqttCommunicationException or ObjectDisposedException or InvalidOperationException or IOException or OperationCanceledException or NullReferenceException)

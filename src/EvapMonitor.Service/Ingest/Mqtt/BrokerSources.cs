@@ -8,7 +8,7 @@ public sealed class BrokerSources(IReadOnlyList<BrokerSettings> brokers, Intake 
 {
     private static readonly TimeSpan FirstPause = TimeSpan.FromSeconds(0.5), LongestPause = TimeSpan.FromSeconds(30);
 
-    /// <summary>A connection that lasted this long starts the pauses anew.</summary>
+    /// <summary>A connection that lasted this long, or brought something, starts the pauses anew.</summary>
     private static readonly TimeSpan Lasting = TimeSpan.FromSeconds(10);
 
     /// <inheritdoc/>
@@ -21,7 +21,7 @@ public sealed class BrokerSources(IReadOnlyList<BrokerSettings> brokers, Intake 
         bool again = false;
         for (int attempt = 0; !stop.IsCancellationRequested; attempt++)
         {
-            long began = clock.GetTimestamp();
+            long began = clock.GetTimestamp(), accepted = state.Accepted;
             string why;
             await using (var connection = new BrokerConnection(broker, state, intake, clock))
             {
@@ -39,7 +39,7 @@ public sealed class BrokerSources(IReadOnlyList<BrokerSettings> brokers, Intake 
 
             state.Disconnected(stop.IsCancellationRequested ? null : why);
             if (stop.IsCancellationRequested) return;
-            if (clock.GetElapsedTime(began) > Lasting) attempt = 0;
+            if (clock.GetElapsedTime(began) > Lasting || state.Accepted > accepted) attempt = 0;
             TimeSpan pause = PauseAfter(attempt);
             notices.Raise(notice, $"The MQTT broker {broker.Name} at {broker.Address} is not connected: {why}. What it sends with an acknowledgement waits there.");
             log.BrokerLost(broker.Name, broker.Address, why, pause.TotalSeconds);

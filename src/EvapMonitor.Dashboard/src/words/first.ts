@@ -1,0 +1,35 @@
+import type { Line, Notice } from '../api/types';
+import { lineWords, type Piece } from './line';
+import { mustAct, noticeWords, orderedNotices } from './notice';
+import { asks } from './site';
+
+/** At most so many sentences stand before the rows. */
+export const mostFirst = 5;
+
+/** A sentence that comes before the rows. `line`: whose it is, null for the whole site. `act`: someone must act. */
+export interface First { key: string; line: string | null; act: boolean; pieces: Piece[] }
+
+/** What the reader should know first: notices, then lines with a due effect, the longest due first, then lines that went silent, the
+ * longest silent first, then lines with an effect that cannot be judged. A line has one entry. `left`: entries that found no room. */
+export function firstSentences(notices: readonly Notice[], lines: readonly Line[], now: number, zone: string): { first: First[]; left: number } {
+  const ofLine = (line: Line, act: boolean): First => ({ key: `line ${line.name}`, line: line.name, act, pieces: lineWords(line, now, zone) });
+  const asking = lines.filter(asks);
+  const due = asking.filter(l => dueSince(l) !== null).sort((a, b) => dueSince(a)!.localeCompare(dueSince(b)!));
+  const silent = lines.filter(l => l.readings === 'stale').sort((a, b) => (a.latest_reading_at ?? '').localeCompare(b.latest_reading_at ?? ''));
+  const all: First[] = [
+    ...orderedNotices(notices).map(n => {
+      const { head, rest, since } = noticeWords(n, zone, now);
+      return { key: `notice ${n.key}`, line: null, act: mustAct(n), pieces: [{ text: head, bold: true }, { text: `${rest} ${since}`, bold: false }] };
+    }),
+    ...due.map(l => ofLine(l, true)),
+    ...silent.map(l => ofLine(l, false)),
+    ...asking.filter(l => dueSince(l) === null).map(l => ofLine(l, false)),
+  ];
+  return { first: all.slice(0, mostFirst), left: Math.max(0, all.length - mostFirst) };
+}
+
+/** Since when the longest due effect of a line is due; null when none is. One that does not say since when comes last. */
+function dueSince(line: Line): string | null {
+  const since = line.effects.filter(e => e.due.state === 'due' && e.cleaning_since === null).map(e => e.due.since ?? '~');
+  return since.length === 0 ? null : since.reduce((a, b) => (a < b ? a : b));
+}
