@@ -13,11 +13,11 @@ import { ofWallPage, wallPage, wallPages } from '../site/wall';
 import { aged } from '../words/aged';
 import { dueWords } from '../words/due';
 import { age, duration } from '../words/duration';
-import { firstSentences, type First } from '../words/first';
+import { firstSentences, wallFirst, type First } from '../words/first';
 import { siteWords } from '../words/site';
 import { dayAndClock, moment } from '../words/time';
 
-/** As many alerts as a wall can carry beside six lines. */
+/** As many lines of alerts as a wall can carry beside six lines of effects. */
 const alertsShown = 3;
 
 /** Today for a wall screen: six lines a page, cut every 20 s; alerts, clock and data age stand still above them. */
@@ -34,7 +34,7 @@ export function Wall() {
   return (
     <div class="wall">
       <Top />
-      <Alerts {...firstSentences(notices.value, all, at, zone.value)} />
+      <Alerts all={firstSentences(notices.value, all, at, zone.value, Infinity).first} />
       {all.length === 0
         ? <p class="wall-empty">{lines.state.value.failure === null ? 'The lines are on the way.' : `The lines could not be fetched: ${lines.state.value.failure.words}. It is tried again by itself.`}</p>
         : <div class="wall-lines" style={{ gridTemplateRows: `repeat(${shown.length}, minmax(0, 1fr))` }}>{shown.map(l => <Row key={l.name} line={l} now={at} weeks={weeks} />)}</div>}
@@ -61,16 +61,17 @@ function Top() {
   );
 }
 
-/** The bold clause of each sentence; what is lost comes before all. */
-function Alerts({ first, left }: { first: First[]; left: number }) {
+/** The bold clause of each sentence; a lost connection comes before all. */
+function Alerts({ all }: { all: First[] }) {
   const state = connection.value, since = state.state === 'lost' ? serviceTime(state.since) : null;
   const lost = since !== null && now.value - since >= 3000;
-  const room = alertsShown - (lost ? 1 : 0), shown = first.slice(0, room), more = left + first.length - shown.length;
-  if (!lost && first.length === 0) return null;
+  const { full, also } = wallFirst(all, alertsShown - (lost ? 1 : 0));
+  if (!lost && all.length === 0) return null;
   return (
     <div class="wall-alerts">
-      {lost && <p><b>The connection to the service is lost</b> since {moment(since, zone.value, now.value)}; all this is as of then.</p>}
-      {shown.map((f, i) => <p key={f.key}>{f.act && <Mark kind="now" />}<span>{f.line !== null && `${f.line}: `}<b>{clause(f)}</b>{more > 0 && i === shown.length - 1 && ` and ${more} more`}</span></p>)}
+      {lost && <p><span><b>The connection to the service is lost</b> since {moment(since, zone.value, now.value)}; all this is as of then.</span></p>}
+      {full.map(f => <p key={f.key}>{f.act && <Mark kind="now" />}<span>{f.line !== null && `${f.line}: `}<b>{clause(f)}</b></span></p>)}
+      {also !== '' && <p>{also}</p>}
     </div>
   );
 }

@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest';
 import type { Notice } from '../../src/api/types';
-import { firstSentences } from '../../src/words/first';
+import { firstSentences, wallFirst } from '../../src/words/first';
 import { noticeLine, noticeWords, orderedNotices } from '../../src/words/notice';
 import { due, effect, line, now, unknown } from './sample';
 
@@ -40,6 +40,15 @@ test('OnlyWhereSomeoneMustAct_IsMarked', () => {
 });
 test('EveryFirst_OneBoldClause', () => {
   for (const f of firstSentences([cut, full], [dueAt('a', '2026-11-30T04:00:00Z')], now, zone).first) expect(f.pieces.filter(p => p.bold)).toHaveLength(1);
+});
+
+test('Wall_ActsInFullFirstAndTheRestByName', () => {
+  const entry = (name: string, act: boolean) => ({ key: name, line: name, act, pieces: [] });
+  const all = [entry('known', false), ...Array.from({ length: 11 }, (_, i) => entry(`L${i + 1}`, true))];
+  const { full, also } = wallFirst(all, 3);
+  expect(full.map(f => f.line)).toEqual(['L1', 'L2']);
+  expect(also).toBe('Also L3, L4, L5, L6, L7, L8, L9, L10 and 2 more');
+  expect(wallFirst(all.slice(0, 3), 3)).toMatchObject({ full: [{ line: 'L1' }, { line: 'L2' }, { line: 'known' }], also: '' });
 });
 
 test('Notice_BoldUpToItsFirstStopAndSinceWhen', () => {
