@@ -11,6 +11,7 @@ var figures = new Dictionary<string, Func<string[], Task<int>>>
     ["rating"] = _ => Task.FromResult(RatingProof.Run()),
     ["ingest"] = IngestProof.RunAsync,
     ["kills"] = KillsProof.RunAsync,
+    ["fuzz"] = FuzzProof.RunAsync,
 };
 
 // The other end of a comparison runs as a process of its own.
