@@ -58,6 +58,12 @@ internal static class ReadingBody
             wrong = $"The body is not JSON: {error.Message}";
             return [];
         }
+        catch (InvalidOperationException)
+        {
+            // The name of a member with half a surrogate pair cannot be compared with anything.
+            wrong = "The body holds text that is not valid Unicode.";
+            return [];
+        }
     }
 
     private static List<IncomingReading> ReadItems(JsonElement list, int count, out string? wrong)
