@@ -33,7 +33,7 @@ export function sources(now) {
       { ...counts, name: 'own broker', kind: 'broker', address: 'port 1883', connected_since: iso(start - 30 * 3_600_000), last_message_at: null },
       { ...counts, name: 'posted', kind: 'http', address: '/api/v1/readings', connected_since: null, last_message_at: iso(now - 4_000_000), accepted: 120, refused: 2, out_of_time: 7 },
     ],
-    spool: { bytes: 40_960, readings: 120 },
+    spool: { bytes: 40_960 },
     refused: [{ refused_at: iso(start - 5_000_000), signal: 'N1.PT-1', at: iso(start - 5_003_000), value: 1.2, quality: 'good', source: 'gateway', reason: 'the instant lies outside the history that is kept' }],
   };
 }

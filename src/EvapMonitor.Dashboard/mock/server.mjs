@@ -50,7 +50,7 @@ async function answer(request, response, url) {
       return answerTrend(request, response, trend(line, effect, q.get('quantity'), Date.parse(q.get('from')), Date.parse(q.get('to')), Number(q.get('points') ?? 2000)));
     case 'cleanings': return answerCleanings(request, response, path, q);
     case 'signals': return json(response, 200, empty ? { as_of: iso(now()), signals: [], unknown: [] } : signals(plant, now()));
-    case 'sources': return json(response, 200, empty ? { sources: [], spool: { bytes: 0, readings: 0 }, refused: [] } : sources(now()));
+    case 'sources': return json(response, 200, empty ? { sources: [], spool: { bytes: 0 }, refused: [] } : sources(now()));
     case 'plant': return json(response, 200, { revision: 3, accepted_at: '2026-10-02T08:11:00Z', in_force_from: '2026-10-01T00:00:00Z', author: 'k.olm', text: plantText });
     case 'imports':
       if (path[2] === 'cancel') { cancelled = true; return json(response, 202, running()); }

@@ -228,7 +228,7 @@ export interface RefusedReading {
 export interface Sources {
   sources: Source[];
   /** What is on disk and not yet in the database. */
-  spool: { bytes: number; readings: number };
+  spool: { bytes: number };
   refused: RefusedReading[];
 }
 

@@ -41,6 +41,6 @@ export function countsWords(source: Source): string[] {
 const times = (n: number) => (n === 1 ? 'once' : `${fixed(n)} times`);
 
 /** What is on disk and has not reached the database. */
-export function spoolWords({ bytes: size, readings }: Sources['spool']): string {
-  return readings === 0 ? 'Nothing waits for the database.' : `${count(readings, 'reading')} (${bytes(size)}) ${readings === 1 ? 'waits' : 'wait'} on disk for the database.`;
+export function spoolWords({ bytes: size }: Sources['spool']): string {
+  return size === 0 ? 'Nothing waits for the database.' : `${bytes(size)} of readings wait on disk for the database.`;
 }

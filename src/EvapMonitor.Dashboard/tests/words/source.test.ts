@@ -30,6 +30,6 @@ test('Counts_OnlyWhatHappened', () => {
   ]);
 });
 test('Spool_EmptyOrWhatWaits', () => {
-  expect(spoolWords({ bytes: 0, readings: 0 })).toBe('Nothing waits for the database.');
-  expect(spoolWords({ bytes: 40960, readings: 120 })).toBe('120 readings (41 kB) wait on disk for the database.');
+  expect(spoolWords({ bytes: 0 })).toBe('Nothing waits for the database.');
+  expect(spoolWords({ bytes: 40960 })).toBe('41 kB of readings wait on disk for the database.');
 });
