@@ -247,7 +247,7 @@ public sealed class Intake : IDisposable
             }
 
             refusal = error.SqliteErrorCode == SQLitePCL.raw.SQLITE_FULL ? "The disk of the spool is full." : $"The spool cannot be written: {error.Message}";
-            if (_notices.Raise(FailedNotice, refusal + " Readings are refused until it can.")) _log.SpoolFailed(error);
+            if (_notices.Raise(FailedNotice, refusal + " Readings are refused until that is mended.")) _log.SpoolFailed(error);
         }
 
         if (refusal is not null)

@@ -49,6 +49,7 @@ public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
                 line, day = result.Day, revision = revisionId, again = result.Again?.UtcDateTime,
                 through = result.Windows.Count == 0 ? from : Instant.FromMilliseconds(result.Windows[^1].At),
             });
+        KillPoint.Pass("evaluation-before-commit");
         await transaction.CommitAsync(stop);
     }
 

@@ -22,6 +22,7 @@ public static class Schema
             .WithTransactionPerScript()
             .LogTo(new NoOpUpgradeLog())
             .Build();
+        engine.ScriptExecuted += (_, _) => KillPoint.Pass("migration-after-script");
         DatabaseUpgradeResult result = engine.PerformUpgrade();
         return result.Successful
             ? [.. result.Scripts.Select(script => script.Name)]

@@ -1,4 +1,4 @@
-namespace EvapMonitor.Service.Ingest;
+namespace EvapMonitor.Service;
 
 /// <summary>
 /// Named places at which a test can have the process die as if by kill -9, to see that nothing acknowledged is lost. Without the environment variable
