@@ -10,6 +10,7 @@ var figures = new Dictionary<string, Func<string[], Task<int>>>
     ["import"] = ImportProof.RunAsync,
     ["rating"] = _ => Task.FromResult(RatingProof.Run()),
     ["ingest"] = IngestProof.RunAsync,
+    ["database"] = DatabaseProof.RunAsync,
     ["kills"] = KillsProof.RunAsync,
     ["fuzz"] = FuzzProof.RunAsync,
 };

@@ -45,8 +45,21 @@ internal static class SignalHandlers
                 source.InstantUnknown, source.Shed, source.Refused, source.Reconnects, source.LastError,
                 [.. source.Samples.Select(sample => new SampleWire(sample.At, sample.Where, sample.Reason))]))],
             new SpoolWire(intake.SpooledBytes),
-            [.. (await refused.ListAsync(MostRefused, stop)).Select(reading => new RefusedWire(
-                Utc(reading.RefusedAt), reading.Signal, Utc(reading.At), reading.Value, Words.Of((Quality)reading.Quality), reading.Source, reading.Reason))]));
+            await RefusedAsync(refused, stop)));
+
+    /// <summary>What the database refused; null while it does not answer, when the sources matter most.</summary>
+    private static async Task<IReadOnlyList<RefusedWire>?> RefusedAsync(RefusedStore refused, CancellationToken stop)
+    {
+        try
+        {
+            return [.. (await refused.ListAsync(MostRefused, stop)).Select(reading => new RefusedWire(
+                Utc(reading.RefusedAt), reading.Signal, Utc(reading.At), reading.Value, Words.Of((Quality)reading.Quality), reading.Source, reading.Reason))];
+        }
+        catch (Npgsql.NpgsqlException)
+        {
+            return null;
+        }
+    }
 
     private static UnknownSignalWire[] Unknown(IReadOnlyList<ImportFile> imports, UnknownSignals live, PlantInForce plant)
     {

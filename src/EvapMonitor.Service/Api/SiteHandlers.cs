@@ -55,8 +55,27 @@ public sealed class SiteStates(ReadingStore readings, TrendStore trends, ImportS
     /// <summary>A youngest reading under this age is live.</summary>
     public static readonly TimeSpan LiveUnder = TimeSpan.FromMinutes(15);
 
-    /// <summary>The site.</summary>
+    private SiteWire? _lastKnown;
+
+    /// <summary>The site; while the database does not answer, what was last known of it, with a notice that says so.</summary>
+    /// <exception cref="Npgsql.NpgsqlException">The database does not answer and nothing is known yet.</exception>
     public async Task<SiteWire> SiteAsync(CancellationToken stop)
+    {
+        try
+        {
+            return _lastKnown = await AskAsync(stop);
+        }
+        catch (Npgsql.NpgsqlException) when (_lastKnown is not null)
+        {
+            SiteWire known = _lastKnown;
+            IEnumerable<NoticeWire> standing = Standing();
+            if (!standing.Any(notice => notice.Key == Ingest.ReadingInserts.AwayNotice))
+                standing = standing.Append(new NoticeWire(Ingest.ReadingInserts.AwayNotice, known.Now, "The database does not answer. Readings that come are kept in the spool; what is shown is from before."));
+            return known with { Now = clock.GetUtcNow(), Readings = Freshness(known.LatestReadingAt), Notices = [.. standing] };
+        }
+    }
+
+    private async Task<SiteWire> AskAsync(CancellationToken stop)
     {
         PlantInForce now = plant.Current;
         DateTimeOffset? latest = await LatestAsync(now.Signals.Values, stop);
@@ -64,8 +83,10 @@ public sealed class SiteStates(ReadingStore readings, TrendStore trends, ImportS
         return new SiteWire(
             now.Site.Name, now.Site.TimeZone, clock.GetUtcNow(), latest, Freshness(latest), now.RevisionId, (int)now.Site.Window.TotalSeconds, running,
             await days.WaitingAsync(clock.GetUtcNow() - (2 * now.Site.Window), stop),
-            [.. notices.Standing.Select(notice => new NoticeWire(notice.Key, notice.Since, notice.Sentence))]);
+            [.. Standing()]);
     }
+
+    private IEnumerable<NoticeWire> Standing() => notices.Standing.Select(notice => new NoticeWire(notice.Key, notice.Since, notice.Sentence));
 
     /// <summary>A line.</summary>
     public async Task<LineWire> LineAsync(PlantInForce inForce, LinePlace line, CancellationToken stop)

@@ -30,6 +30,7 @@ public sealed class EvaluationWorker(
     /// <inheritdoc/>
     protected override async Task ExecuteAsync(CancellationToken stoppingToken)
     {
+        bool away = false;
         while (!stoppingToken.IsCancellationRequested)
         {
             try
@@ -38,11 +39,14 @@ public sealed class EvaluationWorker(
                 await RenewAsync(inForce, stoppingToken);
                 bool any = false;
                 foreach (LinePlace line in inForce.Lines.Where(line => _fences.ContainsKey(line.LineId))) any |= await EvaluateNextAsync(inForce, line, stoppingToken);
+                away = false;
                 if (!any) await signal.WaitAsync(Pause, stoppingToken);
             }
             catch (NpgsqlException error)
             {
-                log.DatabaseAway(error, "evaluation");
+                // Once for each absence: it may last for hours.
+                if (!away) log.DatabaseAway(error, "evaluation");
+                away = true;
                 await Task.Delay(RenewEvery, clock, stoppingToken).ConfigureAwait(ConfigureAwaitOptions.SuppressThrowing);
             }
             catch (OperationCanceledException) when (stoppingToken.IsCancellationRequested)

@@ -16,7 +16,10 @@ public readonly record struct SourcedReading(PlacedReading Placed, string Signal
 /// </summary>
 public sealed class ReadingInserts(NpgsqlDataSource database, PlantHolder plant, RefusedStore refused, Notices notices, TimeProvider clock, ILogger<ReadingInserts> log)
 {
-    private const string AwayNotice = "database-away", RefusedNotice = "readings-refused";
+    /// <summary>Key of the notice that stands while the database takes no readings.</summary>
+    internal const string AwayNotice = "database-away";
+
+    private const string RefusedNotice = "readings-refused";
     private static readonly TimeSpan LongestPause = TimeSpan.FromSeconds(10);
 
     private long _awaySince;
@@ -101,7 +104,8 @@ public sealed class ReadingInserts(NpgsqlDataSource database, PlantHolder plant,
             log.DrainFailed(error);
         }
 
-        notices.Raise(AwayNotice, Invariant($"The database cannot be reached. Readings are kept in the spool: {intake.SpooledBytes / 1048576.0:0.0} MiB wait."));
+        string why = error is PostgresException told ? $"The database takes no readings ({told.MessageText})." : "The database cannot be reached.";
+        notices.Raise(AwayNotice, why + Invariant($" Readings are kept in the spool: {intake.SpooledBytes / 1048576.0:0.0} MiB wait."));
     }
 
     private void Back(Intake intake)

@@ -1,4 +1,5 @@
 using EvapMonitor.Core.Readings;
+using EvapMonitor.Service.Api;
 using EvapMonitor.Service.Ingest;
 using EvapMonitor.Service.Store;
 using EvapMonitor.Service.Tests.Support;
@@ -28,6 +29,20 @@ public class DrainTests(PostgresServer server)
         await Poll.UntilAsync("the spool empty", () => service.Get<Intake>().SpooledBytes == 0);
         Assert.Empty(service.Notices.Standing);
         Assert.Equal((101_000, 0, 0), (service.Drain.Accepted, service.Drain.Repeated, service.Drain.Differing));
+    }
+
+    [IngestFact]
+    public async Task DatabaseAway_TheSiteIsStillTold_AsItWasKnown_WithTheNotice()
+    {
+        await using OwnPostgres postgres = await OwnPostgres.StartAsync();
+        await using IngestService service = await IngestService.StartAsync(postgres.Connection);
+        SiteStates states = service.Get<SiteStates>();
+        Service.Api.Wire.SiteWire before = await states.SiteAsync(TestContext.Current.CancellationToken);
+        Assert.Empty(before.Notices);
+        await postgres.StopAsync();
+        Service.Api.Wire.SiteWire away = await states.SiteAsync(TestContext.Current.CancellationToken);
+        Assert.Equal((before.Name, before.LatestReadingAt), (away.Name, away.LatestReadingAt));
+        Assert.Contains("does not answer", Assert.Single(away.Notices).Sentence, StringComparison.Ordinal);
     }
 
     [IngestFact]

@@ -229,7 +229,8 @@ export interface Sources {
   sources: Source[];
   /** What is on disk and not yet in the database. */
   spool: { bytes: number };
-  refused: RefusedReading[];
+  /** Null while the database does not answer. */
+  refused: RefusedReading[] | null;
 }
 
 export type ImportState = 'waiting' | 'running' | 'done' | 'failed' | 'cancelled';

@@ -14,7 +14,8 @@ export function SourcesPart({ of, now }: { of: Sources; now: number }) {
         {of.sources.length === 0 && <p class="say">No source of readings is set up, and none has been posted since the service started.</p>}
         <ul class="sources">{of.sources.map(s => <One key={s.name} source={s} now={now} />)}</ul>
         <p class="spool">{spoolWords(of.spool)}</p>
-        {of.refused.length > 0 && <Refused all={of.refused} now={now} />}
+        {of.refused === null && <p>What the database refused cannot be read: it does not answer.</p>}
+        {of.refused !== null && of.refused.length > 0 && <Refused all={of.refused} now={now} />}
       </div>
     </section>
   );

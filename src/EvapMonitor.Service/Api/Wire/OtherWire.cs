@@ -81,7 +81,7 @@ public sealed record UnknownSignalWire(string Name, long Count, DateTimeOffset? 
 /// <param name="Sources">The sources.</param>
 /// <param name="Spool">What waits for the database.</param>
 /// <param name="Refused">The last readings that the database would not take, newest first.</param>
-public sealed record SourcesWire(IReadOnlyList<SourceWire> Sources, SpoolWire Spool, IReadOnlyList<RefusedWire> Refused);
+public sealed record SourcesWire(IReadOnlyList<SourceWire> Sources, SpoolWire Spool, IReadOnlyList<RefusedWire>? Refused);
 
 /// <summary>A source. Counts are since the service started.</summary>
 /// <param name="Name">Its name.</param>

@@ -47,16 +47,20 @@ public sealed class ImportWorker(
     /// <inheritdoc/>
     protected override async Task ExecuteAsync(CancellationToken stoppingToken)
     {
+        bool away = false;
         while (!stoppingToken.IsCancellationRequested)
         {
             try
             {
                 if (await imports.NextAsync(stoppingToken) is { } next) await RunAsync(next, stoppingToken);
                 else await _bell.WaitAsync(Pause, stoppingToken);
+                away = false;
             }
             catch (NpgsqlException error)
             {
-                log.DatabaseAway(error, "import");
+                // Once for each absence: it may last for hours.
+                if (!away) log.DatabaseAway(error, "import");
+                away = true;
                 await Task.Delay(Pause, clock, stoppingToken).ConfigureAwait(ConfigureAwaitOptions.SuppressThrowing);
             }
             catch (OperationCanceledException) when (stoppingToken.IsCancellationRequested)
