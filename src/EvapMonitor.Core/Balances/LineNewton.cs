@@ -12,7 +12,8 @@ public sealed class LineNewton
     private const int MostSteps = 60, MostStepsOfStage = 12, MostStages = 60;
     private readonly LineEquations _equations;
     private readonly int[] _free;
-    private readonly double[] _scale;
+    private readonly double[] _scale, _moved;
+    private readonly StateSteps _steps;
     private readonly ConstraintRows _rows = new();
     private double[] _offset = [];
 
@@ -27,6 +28,8 @@ public sealed class LineNewton
         _equations = equations;
         _free = [.. free];
         _scale = equations.Variables.Scales(typicalFlow);
+        _moved = new double[_scale.Length];
+        _steps = new StateSteps(equations.Variables.Keys, _scale);
     }
 
     /// <summary>Steps taken in the last solution.</summary>
@@ -125,11 +128,12 @@ public sealed class LineNewton
             double largest = change.AbsoluteMaximum();
             if (!double.IsFinite(largest)) return false;
             if (norm < Solved || largest < 1e-13) return true;
-            double share = Allowed(x, change);
+            for (int k = 0; k < n; k++) _moved[_free[k]] = change[k] * _scale[_free[k]];
+            double share = _steps.Allowed(x, _moved);
             double before = norm;
             for (int halved = 0; ; halved++)
             {
-                Move(x, change, share, tried);
+                _steps.Move(x, _moved, share, tried);
                 norm = Norm(tried);
                 // A small growth is let pass: the way to the solution may lead over a ridge.
                 if (norm < before * (halved == 0 && step < 3 ? AllowedGrowth : 1) || before < 1e-9 || halved == 7) break;
@@ -140,41 +144,5 @@ public sealed class LineNewton
         }
 
         return norm < 1e-9;
-    }
-
-    /// <summary>The share of a step that keeps every variable where it makes sense.</summary>
-    private double Allowed(double[] x, Vector<double> change)
-    {
-        double share = 1;
-        for (int k = 0; k < _free.Length; k++)
-        {
-            int i = _free[k];
-            double moved = double.Abs(change[k]) * _scale[i];
-            double most = _equations.Variables.Keys[i].Kind switch
-            {
-                VariableKind.VapourPressure or VariableKind.ChestPressure or VariableKind.SteamPressure or VariableKind.DischargePressure => 0.7 * x[i],
-                VariableKind.LeavingSolids or VariableKind.ProductSolids => change[k] > 0 ? 0.7 * (0.99 - x[i]) : 0.7 * double.Max(x[i], 0.01),
-                VariableKind.BoilingTemperature or VariableKind.HeatingTemperature => 30,
-                VariableKind.LeavingFlow => change[k] < 0 ? 0.8 * double.Max(x[i], 0.01 * _scale[i]) : double.PositiveInfinity,
-                _ => double.PositiveInfinity,
-            };
-            if (moved * share > most) share = most / moved;
-        }
-
-        return share;
-    }
-
-    /// <summary>Pressures move by ratio, in which saturation temperatures are nearly straight and a pressure stays above nothing.</summary>
-    private void Move(double[] x, Vector<double> change, double share, double[] moved)
-    {
-        x.CopyTo(moved, 0);
-        for (int k = 0; k < _free.Length; k++)
-        {
-            int i = _free[k];
-            double step = share * change[k] * _scale[i];
-            moved[i] = _equations.Variables.Keys[i].Kind is VariableKind.VapourPressure or VariableKind.ChestPressure or VariableKind.SteamPressure or VariableKind.DischargePressure
-                ? x[i] * double.Exp(step / x[i])
-                : x[i] + step;
-        }
     }
 }

@@ -1,0 +1,139 @@
+using System.Numerics;
+
+namespace EvapMonitor.Core.Balances;
+
+/// <summary>
+/// Gauss-Jordan elimination of the unknowns of a linear system whose rows also hold measured quantities. What is left says which unknowns follow from the
+/// measured quantities, which do not, and which rows bind measured quantities alone: the redundancy (Crowe, Garcia Campos and Hrymak 1983 reach the same by
+/// projection). Columns: unknowns, then measured quantities, then the right side.
+/// </summary>
+internal sealed class Elimination
+{
+    /// <summary>An entry under this is none: rows and columns are scaled so that true entries are near 1.</summary>
+    public const double Nothing = 1e-9;
+
+    /// <summary>A pivot under this share of the largest entry of its row is not taken.</summary>
+    private const double LeastShare = 0.1;
+
+    /// <summary>A pivot under this has lost too many digits.</summary>
+    private const double LeastPivot = 1e-7;
+
+    private readonly int _unknowns, _width;
+    private double[] _a = [];
+
+    /// <summary>Prepares a system.</summary>
+    /// <param name="unknowns">How many unknowns there are.</param>
+    /// <param name="measured">How many measured quantities.</param>
+    public Elimination(int unknowns, int measured)
+    {
+        (_unknowns, Right) = (unknowns, unknowns + measured);
+        _width = Right + 1;
+    }
+
+    /// <summary>Index of the right side in a row.</summary>
+    public int Right { get; }
+
+    /// <summary>How many rows there are.</summary>
+    public int Rows { get; private set; }
+
+    /// <summary>Clears the system for a number of rows.</summary>
+    public void Clear(int rows)
+    {
+        Rows = rows;
+        if (_a.Length < rows * _width) _a = new double[rows * _width];
+        _a.AsSpan(0, rows * _width).Clear();
+    }
+
+    /// <summary>A row.</summary>
+    public Span<double> Row(int row) => _a.AsSpan(row * _width, _width);
+
+    /// <summary>Chooses pivots and eliminates by them: rows with few unknowns first, so that little fills up.</summary>
+    /// <param name="allowed">By unknown: true when it may be eliminated.</param>
+    /// <returns>Row and column of each pivot, in order.</returns>
+    public (int Row, int Column)[] Choose(bool[] allowed)
+    {
+        var pivots = new List<(int, int)>();
+        bool[] done = new bool[Rows];
+        while (true)
+        {
+            (int row, int column, int fewest, double size) best = (-1, -1, int.MaxValue, 0);
+            for (int row = 0; row < Rows; row++)
+            {
+                if (done[row]) continue;
+                ReadOnlySpan<double> entries = Row(row)[.._unknowns];
+                int count = 0, largest = -1;
+                for (int column = 0; column < _unknowns; column++)
+                {
+                    if (!allowed[column] || double.Abs(entries[column]) < LeastPivot) continue;
+                    count++;
+                    if (largest < 0 || double.Abs(entries[column]) > double.Abs(entries[largest])) largest = column;
+                }
+
+                if (count == 0 || count > best.fewest || (count == best.fewest && double.Abs(entries[largest]) <= best.size)) continue;
+                best = (row, Sparsest(entries, allowed, largest), count, double.Abs(entries[largest]));
+            }
+
+            if (best.row < 0) return [.. pivots];
+            done[best.row] = true;
+            pivots.Add((best.row, best.column));
+            Eliminate(best.row, best.column);
+        }
+    }
+
+    /// <summary>Eliminates by pivots chosen before; false when one of them is too small here.</summary>
+    public bool Run((int Row, int Column)[] pivots)
+    {
+        foreach ((int row, int column) in pivots)
+        {
+            if (!(double.Abs(Row(row)[column]) >= LeastPivot)) return false;
+            Eliminate(row, column);
+        }
+
+        return true;
+    }
+
+    /// <summary>Of the entries that are large enough, the one whose column meets the fewest rows.</summary>
+    private int Sparsest(ReadOnlySpan<double> entries, bool[] allowed, int largest)
+    {
+        int best = largest, fewest = int.MaxValue;
+        for (int column = 0; column < _unknowns; column++)
+        {
+            if (!allowed[column] || double.Abs(entries[column]) < LeastShare * double.Abs(entries[largest])) continue;
+            int meets = 0;
+            for (int row = 0; row < Rows; row++)
+            {
+                if (double.Abs(_a[(row * _width) + column]) > Nothing) meets++;
+            }
+
+            if (meets < fewest) (best, fewest) = (column, meets);
+        }
+
+        return best;
+    }
+
+    private void Eliminate(int pivotRow, int column)
+    {
+        Span<double> pivot = Row(pivotRow);
+        double factor = 1 / pivot[column];
+        for (int k = 0; k < pivot.Length; k++) pivot[k] *= factor;
+        pivot[column] = 1;
+        for (int row = 0; row < Rows; row++)
+        {
+            if (row == pivotRow) continue;
+            double share = _a[(row * _width) + column];
+            if (share == 0) continue;
+            Span<double> target = Row(row);
+            Subtract(target, pivot, share);
+            target[column] = 0;
+        }
+    }
+
+    private static void Subtract(Span<double> target, ReadOnlySpan<double> source, double share)
+    {
+        var factor = new Vector<double>(share);
+        int k = 0;
+        for (; k <= target.Length - Vector<double>.Count; k += Vector<double>.Count)
+            (new Vector<double>(target[k..]) - (new Vector<double>(source[k..]) * factor)).CopyTo(target[k..]);
+        for (; k < target.Length; k++) target[k] -= source[k] * share;
+    }
+}

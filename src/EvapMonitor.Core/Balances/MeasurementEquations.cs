@@ -1,0 +1,325 @@
+using EvapMonitor.Core.Plant;
+using EvapMonitor.Core.Properties;
+
+namespace EvapMonitor.Core.Balances;
+
+/// <summary>
+/// How each instrument sees the state of a line: one equation for each role that an instrument plays, in the variables of the line and in one column for each
+/// measured quantity. Shares and model errors that nobody measures are measured quantities too, with their stated value and uncertainty. What is known for
+/// certain (no superheat without a thermometer, no accumulation) is fixed instead.
+/// </summary>
+internal sealed class MeasurementEquations
+{
+    private readonly LineInstruments _at;
+    private readonly LineGraph _graph;
+    private readonly LineVariables _variables;
+    private readonly LineProperties _properties;
+    private readonly double _flow;
+    private readonly List<Equation> _all = [];
+    private readonly List<(int Variable, double Value, double Standard, string Name)> _stated = [];
+    private readonly List<(int Variable, int[] Unless)> _certain = [];
+
+    /// <summary>Lays out the equations of a line for one liquor.</summary>
+    public MeasurementEquations(LineInstruments instruments, LineGraph graph, LineVariables variables, LineProperties properties, double typicalFlow)
+    {
+        (_at, _graph, _variables, _properties, _flow) = (instruments, graph, variables, properties, typicalFlow);
+        AirColumn = instruments.All.Count;
+        Liquors();
+        Main();
+        for (int i = 0; i < graph.Line.Effects.Count; i++) Effect(i);
+        Others();
+        // Shared by all effects: the correlation is the same one.
+        Stated(variables.ElevationError, 0, 1, "elevation correlation");
+    }
+
+    /// <summary>The column of the atmosphere's error; the instruments' own columns stand before it, in their places.</summary>
+    public int AirColumn { get; }
+
+    /// <summary>How many columns of measured quantities there are: instruments by place, the atmosphere, the stated ones.</summary>
+    public int Columns => AirColumn + 1 + _stated.Count;
+
+    /// <summary>The stated quantities, in the order of their columns after <see cref="AirColumn"/>.</summary>
+    public IReadOnlyList<(int Variable, double Value, double Standard, string Name)> StatedOnes => _stated;
+
+    /// <summary>The equations that hold while some places have a value.</summary>
+    public List<Equation> Active(Func<int, bool> hasValue) => _all.FindAll(equation => (equation.Place < 0 || hasValue(equation.Place)) && (equation.Second < 0 || hasValue(equation.Second))
+        && (equation.Unless < 0 || !hasValue(equation.Unless)));
+
+    /// <summary>Variables that are fixed while some places have a value, with what they are fixed at.</summary>
+    public IEnumerable<(int Variable, double Value)> Fixed(Func<int, bool> hasValue)
+    {
+        foreach ((int variable, int[] unless) in _certain)
+        {
+            if (!unless.Any(hasValue)) yield return (variable, 0);
+        }
+
+        foreach ((int variable, double value, double standard, _) in _stated)
+        {
+            if (standard == 0) yield return (variable, value);
+        }
+
+        if (_properties.Liquor is Water) yield return (_variables.FeedSolids, 0);
+        for (int h = 0; h < _variables.Heaters.Length; h++)
+        {
+            Heater heater = _graph.Line.Heaters[h];
+            if (heater.Solids?.Fixed is { } solids) yield return (_variables.Heaters[h].Solids, solids);
+            else if (heater.Solids is null || heater.Liquor is Water) yield return (_variables.Heaters[h].Solids, 0);
+        }
+    }
+
+    /// <summary>Residual of an equation and its slopes: by variables of the line into <paramref name="x"/>, by measured columns into <paramref name="z"/>.</summary>
+    public double Evaluate(in Equation equation, double[] state, double[] measured, Span<double> x, Span<double> z)
+    {
+        double Here(int variable) => state[variable];
+        double reading = equation.Place < 0 ? double.NaN : measured[equation.Place];
+        x[equation.Variable] += 1;
+        switch (equation.Kind)
+        {
+            case Reading.Plain:
+                z[equation.Place] -= 1;
+                if (equation.BySign == 0) return Here(equation.Variable) - reading;
+                z[AirColumn] -= 1;
+                return Here(equation.Variable) - reading - measured[AirColumn];
+            case Reading.LiquorVolume:
+                // Density moves by less than a thousandth with what is corrected here, so that its slopes are left out; its value is followed.
+                double density = Physical.LiquorDensity(equation.Liquor!, double.Clamp(Here(equation.First), 0, 0.95), Here(equation.Other));
+                z[equation.Place] -= density;
+                return Here(equation.Variable) - (reading * density);
+            case Reading.WaterVolume:
+                double water = Physical.WaterMassFlow(1, _at.All[equation.Place].Unit, Here(equation.First));
+                z[equation.Place] -= water;
+                return Here(equation.Variable) - (reading * water);
+            case Reading.Subcooling:
+                x[equation.First] -= 1;
+                z[equation.Place] += 1;
+                return Here(equation.Variable) - Here(equation.First) + reading;
+            case Reading.Superheat:
+                Sloped saturation = _properties.SaturationTemperature(Here(equation.First));
+                x[equation.First] += saturation.First;
+                z[equation.Place] -= 1;
+                return Here(equation.Variable) + saturation.Value - reading;
+            case Reading.Throttled:
+            case Reading.ThrottledSaturated:
+                x[equation.Variable] -= 1;
+                Sloped behind = _properties.Superheated(Here(equation.First), Here(equation.Variable));
+                x[equation.First] += behind.First;
+                x[equation.Variable] += behind.Second;
+                return behind.Value - Before(equation, measured, z);
+            case Reading.Enthalpy:
+            case Reading.Saturated:
+                return Here(equation.Variable) - Before(equation, measured, z);
+            default:
+                z[equation.Column] -= 1;
+                return Here(equation.Variable) - measured[equation.Column];
+        }
+    }
+
+    /// <summary>A size of an equation's terms, to judge residuals by.</summary>
+    public double Scale(in Equation equation, double[] scales) => equation.Kind is Reading.Throttled or Reading.ThrottledSaturated ? 1e5 : scales[equation.Variable];
+
+    /// <summary>Enthalpy of steam where pressure and temperature are measured, or saturated at the pressure.</summary>
+    private double Before(in Equation equation, double[] measured, Span<double> z)
+    {
+        double pressure = measured[equation.Place] + (equation.BySign * measured[AirColumn]);
+        double slope;
+        double enthalpy;
+        if (equation.Second >= 0)
+        {
+            Sloped steam = _properties.VapourEnthalpy(pressure, measured[equation.Second]);
+            (enthalpy, slope) = (steam.Value, steam.First);
+            z[equation.Second] -= steam.Second;
+        }
+        else
+        {
+            Sloped steam = _properties.SaturatedVapour(pressure);
+            (enthalpy, slope) = (steam.Value, steam.First);
+        }
+
+        z[equation.Place] -= slope;
+        z[AirColumn] -= equation.BySign * slope;
+        return enthalpy;
+    }
+
+    private void Liquors()
+    {
+        Liquor liquor = _properties.Liquor;
+        bool water = liquor is Water;
+        Flow(_variables.FeedFlow, _at.Feed.Flow, _variables.FeedSolids, _variables.FeedTemperature, liquor);
+        Plain(_variables.FeedTemperature, _at.Feed.Temperature);
+        int last = _graph.Liquor.FirstOrDefault(way => way.To == LineGraph.Product)?.From ?? LineGraph.Feed;
+        while (last >= _graph.FirstTank) last = _graph.Liquor.First(way => way.To == last).From;
+        if (last >= 0) Flow(_variables.ProductFlow, _at.Product.Flow, _variables.ProductSolids, _variables.Effects[last].Boiling, liquor);
+        // Water carries no solids, whether or not somebody measures them.
+        if (water) return;
+        Plain(_variables.FeedSolids, _at.Feed.Solids);
+        Plain(_variables.FeedSolids, _at.Feed.Laboratory);
+        Plain(_variables.ProductSolids, _at.Product.Solids);
+        Plain(_variables.ProductSolids, _at.Product.Laboratory);
+    }
+
+    private void Main()
+    {
+        if (!_graph.HasSteam) return;
+        if (_at.SteamFlow >= 0 && _at.All[_at.SteamFlow].Unit.Dimension == Dimension.MassFlow) Plain(_variables.SteamFlow, _at.SteamFlow);
+        (int super, int pressure) = (_variables.SteamSuperheat, _variables.SteamPressure);
+        if (_graph.Line.Steam.PressureAt == SteamGaugePlace.Chest)
+        {
+            Plain(pressure, _at.SteamPressure);
+            if (_at.SteamTemperature >= 0) _all.Add(new(Reading.Superheat, super, _at.SteamTemperature) { First = pressure });
+            _certain.Add((super, [_at.SteamTemperature]));
+            return;
+        }
+
+        // A valve keeps the enthalpy.
+        if (_at.SteamPressure >= 0)
+        {
+            int sign = SignOf(_at.SteamPressure);
+            // Without a thermometer, or while it is away, steam counts as saturated before the valve.
+            if (_at.SteamTemperature >= 0)
+                _all.Add(new(Reading.Throttled, super, _at.SteamPressure) { First = pressure, Second = _at.SteamTemperature, BySign = sign });
+            _all.Add(new(Reading.ThrottledSaturated, super, _at.SteamPressure) { First = pressure, Unless = _at.SteamTemperature, BySign = sign });
+        }
+
+        _certain.Add((super, [_at.SteamPressure]));
+    }
+
+    private void Effect(int i)
+    {
+        Effect effect = _graph.Line.Effects[i];
+        EffectPlaces places = _at.Effects[i];
+        EffectVariables at = _variables.Effects[i];
+        Plain(at.ChestPressure, places.ChestPressure);
+        if (effect.Chest.TemperatureSeesSaturation) Plain(at.Heating, places.ChestTemperature);
+        if (places.CondensateFlow >= 0 && _at.All[places.CondensateFlow].Unit.Dimension == Dimension.VolumeFlow)
+            _all.Add(new(Reading.WaterVolume, at.Condensate, places.CondensateFlow) { First = at.Heating });
+        else Plain(at.Condensate, places.CondensateFlow);
+        if (places.CondensateTemperature >= 0) _all.Add(new(Reading.Subcooling, at.Subcooling, places.CondensateTemperature) { First = at.Heating });
+        _certain.Add((at.Subcooling, [places.CondensateTemperature]));
+        Plain(at.VapourPressure, places.VapourPressure);
+        Flow(at.Flow, places.LeavingFlow, at.Solids, at.Boiling, _properties.Liquor);
+        if (_properties.Liquor is not Water) Plain(at.Solids, places.LeavingSolids);
+        if (effect.Leaving.TemperatureSeesFlashedLiquor) Plain(at.Boiling, places.LeavingTemperature);
+        _certain.Add((at.Accumulation, []));
+        Stated(at.HeatLoss, effect.HeatLoss, "heat loss of " + effect.Name);
+        Stated(at.Vent, effect.Vent, "vent of " + effect.Name);
+    }
+
+    private void Others()
+    {
+        Line line = _graph.Line;
+        for (int k = 0; k < _graph.Liquor.Count; k++)
+        {
+            if (_graph.Liquor[k].Share is { } share)
+                Stated(_variables.Liquor[k].Share, share, $"share of {_graph.NameOf(_graph.Liquor[k].From)} to {_graph.NameOf(_graph.Liquor[k].To)}");
+        }
+
+        for (int b = 0; b < line.Bleeds.Count; b++) Plain(_variables.Bleeds[b], _at.BleedFlows[b]);
+        for (int h = 0; h < line.Heaters.Count; h++)
+        {
+            HeaterVariables at = _variables.Heaters[h];
+            HeaterPlaces places = _at.Heaters[h];
+            Flow(at.Flow, places.Flow, at.Solids, at.In, line.Heaters[h].Liquor);
+            if (line.Heaters[h].Liquor is not Water) Plain(at.Solids, places.Solids);
+            Plain(at.In, places.In);
+            Plain(at.Out, places.Out);
+        }
+
+        for (int r = 0; r < line.Recompressors.Count; r++)
+        {
+            Recompressor machine = line.Recompressors[r];
+            RecompressorPlaces places = _at.Recompressors[r];
+            RecompressorVariables at = _variables.Recompressors[r];
+            if (machine.Kind == RecompressorKind.Thermal)
+            {
+                Plain(at.Motive, places.MotiveFlow);
+                if (places.MotivePressure < 0) continue;
+                int sign = SignOf(places.MotivePressure);
+                if (places.MotiveTemperature >= 0)
+                    _all.Add(new(Reading.Enthalpy, at.MotiveEnthalpy, places.MotivePressure) { Second = places.MotiveTemperature, BySign = sign });
+                // Without a thermometer, or while it is away, motive steam counts as saturated.
+                _all.Add(new(Reading.Saturated, at.MotiveEnthalpy, places.MotivePressure) { Unless = places.MotiveTemperature, BySign = sign });
+                continue;
+            }
+
+            Plain(at.Power, places.Power);
+            Plain(at.Spray, places.Spray);
+            if (machine.Spray is null) _certain.Add((at.Spray, []));
+            Stated(at.Efficiency, machine.Efficiency, "efficiency of " + machine.Name);
+        }
+    }
+
+    private void Flow(int variable, int place, int solids, int temperature, Liquor liquor)
+    {
+        if (place < 0) return;
+        if (_at.All[place].Unit.Dimension == Dimension.VolumeFlow) _all.Add(new(Reading.LiquorVolume, variable, place) { First = solids, Other = temperature, Liquor = liquor });
+        else Plain(variable, place);
+    }
+
+    private void Plain(int variable, int place)
+    {
+        if (place >= 0) _all.Add(new(Reading.Plain, variable, place) { BySign = SignOf(place) });
+    }
+
+    private void Stated(int variable, UncertainShare share, string name) => Stated(variable, share.Value, share.Standard, name);
+
+    private void Stated(int variable, double value, double standard, string name)
+    {
+        _stated.Add((variable, value, standard, name));
+        if (standard > 0) _all.Add(new(Reading.Stated, variable, -1) { Column = AirColumn + _stated.Count });
+    }
+
+    private int SignOf(int place) => Conditioning.Atmosphere.SignOf(_at.All[place]);
+
+    /// <summary>What an instrument sees.</summary>
+    internal enum Reading
+    {
+        /// <summary>The variable itself; a gauge pressure with the error of the atmosphere.</summary>
+        Plain,
+        /// <summary>A mass flow by its volume and the density of the liquor.</summary>
+        LiquorVolume,
+        /// <summary>A mass flow by its volume and the density of condensate.</summary>
+        WaterVolume,
+        /// <summary>How far a thermometer is under saturation.</summary>
+        Subcooling,
+        /// <summary>How far a thermometer is over saturation.</summary>
+        Superheat,
+        /// <summary>Superheat behind a valve, by pressure and temperature before it.</summary>
+        Throttled,
+        /// <summary>Superheat behind a valve, by the pressure before it, where steam is saturated.</summary>
+        ThrottledSaturated,
+        /// <summary>An enthalpy by pressure and temperature.</summary>
+        Enthalpy,
+        /// <summary>An enthalpy by pressure, saturated.</summary>
+        Saturated,
+        /// <summary>A stated quantity.</summary>
+        Stated,
+    }
+
+    /// <summary>One equation.</summary>
+    /// <param name="Kind">What is seen.</param>
+    /// <param name="Variable">The variable it is about.</param>
+    /// <param name="Place">The instrument's place; −1 for a stated quantity.</param>
+    internal readonly record struct Equation(Reading Kind, int Variable, int Place)
+    {
+        /// <summary>A variable it depends on as well.</summary>
+        public int First { get; init; } = -1;
+
+        /// <summary>Another.</summary>
+        public int Other { get; init; } = -1;
+
+        /// <summary>The place of a second instrument.</summary>
+        public int Second { get; init; } = -1;
+
+        /// <summary>The place of an instrument that takes over when it has a value.</summary>
+        public int Unless { get; init; } = -1;
+
+        /// <summary>The column of a stated quantity.</summary>
+        public int Column { get; init; } = -1;
+
+        /// <summary>1 for a gauge pressure.</summary>
+        public int BySign { get; init; }
+
+        /// <summary>The liquor whose density counts.</summary>
+        public Liquor? Liquor { get; init; }
+    }
+}

@@ -1,0 +1,320 @@
+using EvapMonitor.Core.Plant;
+using EvapMonitor.Core.Properties;
+
+namespace EvapMonitor.Core.Balances;
+
+/// <summary>
+/// The reconciled balance of a line in one window: the state nearest to what was measured, each correction counted in standard uncertainties, among the states in
+/// which the equations of the line hold. Successive linearisation; in each step the unknowns are eliminated, what is left binds measured quantities alone and
+/// gives their corrections (weighted least squares with constraints, VDI 2048-1). Not for use by two threads at a time.
+/// </summary>
+internal sealed class Reconciliation
+{
+    private const int MostSteps = 30, MostPlans = 256;
+    private const double Converged = 1e-9;
+
+    private readonly LineInstruments _instruments;
+    private readonly LineEquations _equations;
+    private readonly LineVariables _variables;
+    private readonly LineProperties _properties;
+    private readonly MeasurementEquations _measurements;
+    private readonly BalanceStart _start;
+    private readonly StateSteps _steps;
+    private readonly Elimination _system;
+    private readonly Redundancy _redundancy;
+    private readonly double[] _scale, _known, _unknown, _moved, _next, _measured, _reading, _standard;
+    private readonly double _typicalFlow;
+    private readonly ConstraintRows _rows = new();
+    private readonly bool[] _hasValue;
+    private readonly int[] _pivotRow;
+    private readonly Dictionary<string, Plan> _plans = new(StringComparer.Ordinal);
+    private readonly Dictionary<string, int> _ways;
+    private Plan _plan = new([], [], [], []);
+    private (int Row, int Column)[] _pivots = [];
+    private string _planKey = "";
+
+    /// <summary>Prepares the reconciliation of a line that boils one liquor.</summary>
+    public Reconciliation(LineInstruments instruments, LineGraph graph, Liquor liquor)
+    {
+        _instruments = instruments;
+        _properties = new LineProperties(liquor);
+        // A flow that such surfaces could evaporate at 1,000 W/(m²·K) and 10 K: only a size.
+        _typicalFlow = double.Max(1, graph.Line.Effects.Sum(effect => effect.Area) * 1e4 / LineVariables.LatentHeat);
+        _equations = new LineEquations(graph, _properties, _typicalFlow);
+        _variables = _equations.Variables;
+        _measurements = new MeasurementEquations(instruments, graph, _variables, _properties, _typicalFlow);
+        Stated = [.. _measurements.StatedOnes.Select(one => one.Value)];
+        _start = new BalanceStart(graph, _variables, _properties);
+        _scale = _variables.Scales(_typicalFlow);
+        _steps = new StateSteps(_variables.Keys, _scale);
+        int n = _variables.Count, columns = _measurements.Columns;
+        _system = new Elimination(n, columns);
+        _redundancy = new Redundancy(_system, n, columns);
+        (State, _known, _unknown, _moved, _next) = (new double[n], new double[n], new double[n], new double[n], new double[n]);
+        (_measured, _reading, _standard) = (new double[columns], new double[columns], new double[columns]);
+        (_hasValue, _pivotRow) = (new bool[instruments.All.Count], new int[n]);
+        _ways = graph.Heating.Select((way, k) => (_variables.Keys[_variables.Heating[k]].Place, k)).ToDictionary(pair => pair.Place, pair => pair.k, StringComparer.Ordinal);
+    }
+
+    /// <summary>The variables of the line.</summary>
+    public LineVariables Variables => _variables;
+
+    /// <summary>The reconciled state; where a variable does not follow from what is measured, its value means nothing.</summary>
+    public double[] State { get; }
+
+    /// <summary>The measured quantities behind the columns.</summary>
+    public MeasurementEquations Measurements => _measurements;
+
+    /// <summary>What is stated instead of measured, in the order of the columns; starts as the plant states it.</summary>
+    public double[] Stated { get; }
+
+    /// <summary>How many steps the last window took.</summary>
+    public int Steps { get; private set; }
+
+    /// <summary>Corrections of the measured quantities in their standard uncertainties, and what is left of each.</summary>
+    public Redundancy Corrections => _redundancy;
+
+    /// <summary>Reconciles one window.</summary>
+    /// <param name="inputs">Means; NaN is absent.</param>
+    /// <param name="systematic">Systematic standard uncertainties by place.</param>
+    /// <param name="random">Random standard uncertainties by place.</param>
+    /// <param name="air">Standard uncertainties of the atmosphere.</param>
+    /// <returns>False when no state was found in which the equations hold.</returns>
+    public bool Solve(LineInputs inputs, ReadOnlySpan<double> systematic, ReadOnlySpan<double> random, (double Systematic, double Random) air)
+    {
+        Measure(inputs, systematic, random, air);
+        Choose();
+        _start.Fill(State, _typicalFlow, _known);
+        foreach ((int variable, double value) in _plan.Fixed) State[variable] = value;
+        _reading.CopyTo(_measured, 0);
+        for (Steps = 1; Steps <= MostSteps; Steps++)
+        {
+            double largest = Step();
+            if (!double.IsFinite(largest)) return false;
+            if (largest < Converged) return true;
+        }
+
+        return false;
+    }
+
+    /// <summary>True when a variable follows from what is measured.</summary>
+    public bool IsObservable(int variable) => _unknown[variable] == 0;
+
+    /// <summary>
+    /// How a variable moves, in its own unit, with each measured quantity by one of its standard uncertainties, all corrections made anew; nothing where it is fixed.
+    /// </summary>
+    /// <param name="variable">The variable.</param>
+    /// <param name="factor">Multiplies the answer.</param>
+    /// <param name="sum">The answer is added to this, by column.</param>
+    public void AddSensitivity(int variable, double factor, Span<double> sum)
+    {
+        if (_pivotRow[variable] >= 0) _redundancy.AddSensitivity(_pivotRow[variable], -factor * _scale[variable], sum);
+    }
+
+    private double Step()
+    {
+        Assemble();
+        if (!_system.Run(_plan.Pivots))
+        {
+            // The state is too far from where the order of elimination was chosen: choose one for this state alone.
+            Assemble();
+            _pivots = _system.Choose(_plan.Allowed);
+        }
+        else _pivots = _plan.Pivots;
+
+        _redundancy.Project(_pivots);
+        Array.Clear(_moved);
+        Array.Fill(_pivotRow, -1);
+        double largest = 0;
+        foreach ((int row, int column) in _pivots)
+        {
+            _pivotRow[column] = row;
+            double change = _redundancy.Change(row);
+            _moved[column] = change * _scale[column];
+            largest = double.Max(largest, double.Abs(change));
+            if (double.IsNaN(change)) return double.NaN;
+        }
+
+        double share = _steps.Allowed(State, _moved);
+        _steps.Move(State, _moved, share, _next);
+        _next.CopyTo(State, 0);
+        for (int column = 0; column < _measured.Length; column++)
+            _measured[column] += share * (_reading[column] + (_standard[column] * _redundancy.Correction(column)) - _measured[column]);
+        Observe();
+        return largest;
+    }
+
+    /// <summary>Unknowns that were not eliminated, and those that depend on one of them.</summary>
+    private void Observe()
+    {
+        for (int i = 0; i < _unknown.Length; i++) _unknown[i] = _plan.Allowed[i] && _pivotRow[i] < 0 ? 1 : 0;
+        foreach ((int row, int column) in _pivots)
+        {
+            ReadOnlySpan<double> entries = _system.Row(row);
+            double most = 0;
+            for (int i = 0; i < _unknown.Length; i++)
+            {
+                if (_pivotRow[i] < 0 && _plan.Allowed[i]) most = double.Max(most, double.Abs(entries[i]));
+            }
+
+            _unknown[column] = most > 1e-6 ? most : 0;
+        }
+    }
+
+    private void Assemble()
+    {
+        _equations.Evaluate(State, _rows);
+        _system.Clear(_plan.Rows.Length + _plan.Equations.Count);
+        int at = 0;
+        foreach (int row in _plan.Rows)
+        {
+            Span<double> target = _system.Row(at++);
+            double scale = 1 / _rows.Scale(row);
+            ReadOnlySpan<int> columns = _rows.Columns(row);
+            ReadOnlySpan<double> slopes = _rows.Slopes(row);
+            for (int e = 0; e < columns.Length; e++)
+            {
+                if (_plan.Allowed[columns[e]]) target[columns[e]] = slopes[e] * scale * _scale[columns[e]];
+            }
+
+            target[_system.Right] = -_rows.Residual(row) * scale;
+        }
+
+        int n = _variables.Count;
+        foreach (MeasurementEquations.Equation equation in _plan.Equations)
+        {
+            Span<double> target = _system.Row(at++), x = target[..n], z = target[n.._system.Right];
+            double scale = 1 / _measurements.Scale(equation, _scale);
+            double right = -_measurements.Evaluate(equation, State, _measured, x, z);
+            for (int i = 0; i < n; i++)
+            {
+                if (x[i] != 0) x[i] *= _plan.Allowed[i] ? scale * _scale[i] : 0;
+            }
+
+            // Measured quantities are counted from their readings, in standard uncertainties.
+            for (int k = 0; k < z.Length; k++)
+            {
+                if (z[k] == 0) continue;
+                right -= z[k] * (_reading[k] - _measured[k]);
+                z[k] *= scale * _standard[k];
+            }
+
+            target[_system.Right] = right * scale;
+        }
+    }
+
+    private void Measure(LineInputs inputs, ReadOnlySpan<double> systematic, ReadOnlySpan<double> random, (double Systematic, double Random) air)
+    {
+        for (int place = 0; place < _hasValue.Length; place++)
+        {
+            double value = inputs.Value[place];
+            _hasValue[place] = double.IsFinite(value);
+            _reading[place] = _hasValue[place] ? value : 0;
+            _standard[place] = _hasValue[place] ? double.Hypot(systematic[place], random[place]) : 0;
+            _redundancy.SetShare(place, systematic[place], random[place]);
+        }
+
+        _standard[_measurements.AirColumn] = double.Hypot(air.Systematic, air.Random);
+        _redundancy.SetShare(_measurements.AirColumn, air.Systematic, air.Random);
+        for (int k = 0; k < _measurements.StatedOnes.Count; k++)
+        {
+            int column = _measurements.AirColumn + 1 + k;
+            (_reading[column], _standard[column]) = (Stated[k], _measurements.StatedOnes[k].Standard);
+            _redundancy.SetShare(column, 1, 0);
+        }
+
+        Array.Fill(_known, double.NaN);
+    }
+
+    /// <summary>
+    /// The plan for what is measured in this window. It is made at a state that depends on the plant alone, so that the same readings give the same bits whatever was
+    /// computed before.
+    /// </summary>
+    private void Choose()
+    {
+        string key = string.Create(_hasValue.Length, _hasValue, (text, has) =>
+        {
+            for (int i = 0; i < text.Length; i++) text[i] = has[i] ? '1' : '0';
+        });
+        if (key != _planKey)
+        {
+            if (!_plans.TryGetValue(key, out Plan? plan))
+            {
+                if (_plans.Count >= MostPlans) _plans.Clear();
+                _plans[key] = plan = Make();
+            }
+
+            (_plan, _planKey) = (plan, key);
+        }
+
+        foreach (MeasurementEquations.Equation equation in _plan.Equations)
+        {
+            // The first instrument on a variable starts it; several that disagree are weighed afterwards.
+            if (equation.Kind == MeasurementEquations.Reading.Plain && double.IsNaN(_known[equation.Variable])) _known[equation.Variable] = _reading[equation.Place];
+        }
+
+        foreach ((int variable, double value) in _plan.Fixed) _known[variable] = value;
+    }
+
+    private Plan Make()
+    {
+        bool Has(int place) => place >= 0 && _hasValue[place];
+        List<MeasurementEquations.Equation> equations = _measurements.Active(Has);
+        (int, double)[] known = [.. _measurements.Fixed(Has)];
+        bool[] allowed = new bool[_variables.Count];
+        for (int i = 0; i < allowed.Length; i++) allowed[i] = _variables.Keys[i].Kind is not (VariableKind.Coefficient or VariableKind.BodyCoefficient);
+        foreach ((int variable, _) in known) allowed[variable] = false;
+        Array.Fill(_known, double.NaN);
+        foreach ((int variable, double value) in known) _known[variable] = value;
+        _start.Fill(State, _typicalFlow, _known);
+        Array.Fill(_known, double.NaN);
+        _equations.Evaluate(State, _rows);
+        int[] rows = [.. Enumerable.Range(0, _rows.Count).Where(row => Counts(_rows.Key(row), Has))];
+        _plan = new Plan(rows, equations, known, allowed);
+        double[] reading = [.. _reading];
+        // At the plan's state an instrument reads what is there.
+        foreach (MeasurementEquations.Equation equation in equations)
+        {
+            if (equation.Place >= 0) _measured[equation.Place] = Nominal(equation);
+            if (equation.Second >= 0) _measured[equation.Second] = 420;
+        }
+
+        for (int column = _measurements.AirColumn; column < _measured.Length; column++) _measured[column] = _reading[column];
+        _measured.CopyTo(_reading, 0);
+        Assemble();
+        reading.CopyTo(_reading, 0);
+        return _plan with { Pivots = _system.Choose(allowed) };
+    }
+
+    private double Nominal(in MeasurementEquations.Equation equation) => equation.Kind switch
+    {
+        MeasurementEquations.Reading.LiquorVolume or MeasurementEquations.Reading.WaterVolume => State[equation.Variable] / 1000,
+        MeasurementEquations.Reading.Subcooling => State[equation.First],
+        MeasurementEquations.Reading.Superheat => _properties.SaturationTemperature(State[equation.First]).Value,
+        MeasurementEquations.Reading.Plain => State[equation.Variable],
+        _ => 2e5,
+    };
+
+    /// <summary>
+    /// The coefficient is defined by its equation and binds nothing. A chest with a gauge of its own need not have the very pressure of the vapour's gauge: what the
+    /// vapour line loses is not known.
+    /// </summary>
+    private bool Counts(ConstraintKey key, Func<int, bool> has)
+    {
+        if (key.Says is "heat transfer" or "bodies") return false;
+        if (key.Says != "chest pressure") return true;
+        HeatingWay way = _equations.Graph.Heating[_ways[key.Place]];
+        return way.From < 0 || !has(_instruments.Effects[way.To].ChestPressure) || !has(_instruments.Effects[way.From].VapourPressure);
+    }
+
+    /// <summary>What belongs to a set of available instruments.</summary>
+    /// <param name="Rows">The equations of the line that count.</param>
+    /// <param name="Equations">The equations of the instruments.</param>
+    /// <param name="Fixed">Variables that are fixed, and at what.</param>
+    /// <param name="Allowed">By variable: true when it is an unknown.</param>
+    private sealed record Plan(int[] Rows, List<MeasurementEquations.Equation> Equations, (int Variable, double Value)[] Fixed, bool[] Allowed)
+    {
+        /// <summary>The order of elimination.</summary>
+        public (int Row, int Column)[] Pivots { get; init; } = [];
+    }
+}
