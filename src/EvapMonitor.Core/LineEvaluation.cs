@@ -8,19 +8,18 @@ using EvapMonitor.Core.Readings;
 namespace EvapMonitor.Core;
 
 /// <summary>
-/// The journey of a reading through the stations, for one line: readings → conditioned windows → direct balance → apparent coefficients.
+/// The journey of a reading through the stations, for one line: readings → conditioned windows → reconciled balance → apparent coefficients.
 /// The result for a UTC day is a pure function of the plant, the day's readings, those of the lead-in before it, and the logged cleanings.
 /// </summary>
 public sealed class LineEvaluation
 {
     /// <summary>Raised when a change to the computation may move figures; stored with every result.</summary>
-    public const int ModelNumber = 1;
+    public const int ModelNumber = 2;
 
     private readonly Site _site;
     private readonly Line _line;
     private readonly LineInstruments _instruments;
     private readonly IReadOnlyList<Instrument> _conditioned;
-    private readonly DirectBalance _balance;
     private readonly ApparentCoefficients _coefficients;
 
     /// <summary>Prepares the evaluation of a line. Not for use by two threads at a time.</summary>
@@ -30,8 +29,7 @@ public sealed class LineEvaluation
         _line = line;
         _instruments = new LineInstruments(line);
         _conditioned = [.. _instruments.All, .. site.Atmosphere.Measured is { } air && _instruments.All.All(instrument => instrument.Signal != air.Signal) ? [air] : Array.Empty<Instrument>()];
-        _balance = new DirectBalance(_instruments);
-        _coefficients = new ApparentCoefficients(_instruments, _balance);
+        _coefficients = new ApparentCoefficients(_instruments, new LineGraph(line));
         TimeSpan stale = _conditioned.Select(instrument => instrument.StaleAfter).DefaultIfEmpty().Max();
         TimeSpan still = _conditioned.Select(instrument => instrument.FrozenAfter).DefaultIfEmpty().Max();
         TimeSpan laboratory = LaboratoryPlaces().Select(place => place.ValidFor).DefaultIfEmpty().Max();
@@ -105,11 +103,10 @@ public sealed class LineEvaluation
             int w = window;
             Liquor? liquor = LiquorOf(inputs);
             RunningState state = StateOf(inputs, liquor);
-            EffectWindow[] effects = liquor is null
-                ? [.. _line.Effects.Select(_ => Unknown(at, state))]
+            LineWindow result = liquor is null
+                ? LineWindow.Absent(at, state, _line.Effects.Count, $"the product is not known: {_line.Liquor.Signal!.Signal} names none")
                 : _coefficients.Evaluate(at, state, liquor, inputs, systematic, random, (air.Systematic[w], air.Random[w]), place => signals[place].WhyAbsent(w));
-            MarkCleanings(effects, grid.Step, cleanings);
-            windows.Add(new LineWindow(at, state, liquor is null ? double.NaN : _balance.Evaporation(liquor, inputs), effects));
+            windows.Add(result with { Effects = Marked(result.Effects, grid.Step, cleanings) });
         }
 
         return [.. windows];
@@ -150,31 +147,7 @@ public sealed class LineEvaluation
         return liquor is Water ? RunningState.WaterRun : RunningState.Producing;
     }
 
-    private void MarkCleanings(EffectWindow[] effects, long step, ILookup<string, (long Start, long End)> cleanings)
-    {
-        for (int i = 0; i < effects.Length; i++)
-        {
-            long at = effects[i].At;
-            if (cleanings[_line.Effects[i].Name].Any(cleaning => at < cleaning.End && at + step > cleaning.Start))
-                effects[i] = effects[i] with { State = RunningState.Cleaning };
-        }
-    }
-
-    private EffectWindow Unknown(long at, RunningState state) => new()
-    {
-        At = at,
-        State = state,
-        HeatingTemperature = Measured.Absent,
-        BoilingTemperature = Measured.Absent,
-        Elevation = Measured.Absent,
-        DrivingForce = Measured.Absent,
-        Duty = Measured.Absent,
-        Coefficient = Measured.Absent,
-        Solids = double.NaN,
-        HeatingFrom = HeatingTemperatureSource.None,
-        BoilingFrom = BoilingTemperatureSource.None,
-        DutyFrom = DutySource.None,
-        Extrapolated = false,
-        Reason = $"the product is not known: {_line.Liquor.Signal!.Signal} names none",
-    };
+    private IReadOnlyList<EffectWindow> Marked(IReadOnlyList<EffectWindow> effects, long step, ILookup<string, (long Start, long End)> cleanings) =>
+        [.. effects.Select((effect, i) => cleanings[_line.Effects[i].Name].Any(cleaning => effect.At < cleaning.End && effect.At + step > cleaning.Start)
+            ? effect with { State = RunningState.Cleaning } : effect)];
 }

@@ -9,7 +9,7 @@ namespace EvapMonitor.Core.Balances;
 /// </summary>
 public class LineProperties(Liquor liquor)
 {
-    private const double LowestPressure = 700, HighestPressure = 1.6e7, LowestTemperature = 273.2, HighestLiquorTemperature = 473.1, HighestVapourTemperature = 1050;
+    private const double LowestPressure = 700, HighestPressure = 1.6e7, LowestTemperature = 273.2, HighestLiquorTemperature = 473.1, HighestVapourTemperature = 1050, HighestLiquidTemperature = 623.1;
 
     /// <summary>How far under saturation vapour is asked for, K: within the steam tables' tolerance.</summary>
     private const double Wetness = 10;
@@ -37,7 +37,7 @@ public class LineProperties(Liquor liquor)
     public virtual Sloped CondensateEnthalpy(double pressure, double temperature)
     {
         double p = double.Clamp(pressure, LowestPressure, HighestPressure);
-        double t = double.Clamp(temperature, LowestTemperature, Steam.SaturationTemperature(p) + Wetness);
+        double t = double.Clamp(temperature, LowestTemperature, double.Min(Steam.SaturationTemperature(p) + Wetness, HighestLiquidTemperature));
         double byPressure = Steam.LiquidEnthalpyByPressure(p, t), byTemperature = Steam.LiquidHeatCapacity(p, t);
         return new(Steam.LiquidEnthalpy(p, t) + (byPressure * (pressure - p)) + (byTemperature * (temperature - t)), byPressure, byTemperature);
     }

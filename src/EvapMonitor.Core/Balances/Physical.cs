@@ -14,32 +14,14 @@ internal static class Physical
     /// <summary>True when a temperature can be a saturation temperature of the steam tables used here.</summary>
     public static bool IsSaturated(double temperature) => temperature is >= LowestTemperature and <= HighestTemperature;
 
-    /// <summary>Saturation temperature, K; NaN outside 611.657 Pa to 16.5 MPa.</summary>
-    public static double SaturationTemperature(double pressure) =>
-        pressure is >= LowestPressure and <= HighestPressure ? Steam.SaturationTemperature(pressure) : double.NaN;
-
-    /// <summary>Saturation pressure, Pa; NaN outside 273.16 to 623.15 K.</summary>
-    public static double SaturationPressure(double temperature) => IsSaturated(temperature) ? Steam.SaturationPressure(temperature) : double.NaN;
-
-    /// <summary>Enthalpy of vapour, J/kg, at a pressure and temperature; never below saturation, because a thermometer's noise must not make it wet.</summary>
-    public static double VapourEnthalpy(double pressure, double temperature)
+    /// <summary>True when a reading, SI units and absolute, can be of anything in an evaporator.</summary>
+    public static bool IsPossible(Dimension dimension, double value) => dimension switch
     {
-        double saturation = SaturationTemperature(pressure);
-        if (double.IsNaN(saturation) || !(temperature <= 1073.15)) return double.NaN;
-        return Steam.VapourEnthalpy(pressure, double.Max(saturation, temperature));
-    }
-
-    /// <summary>Enthalpy of condensate, J/kg: saturated, or as cold as it was measured.</summary>
-    public static double CondensateEnthalpy(double pressure, double measured)
-    {
-        double saturation = SaturationTemperature(pressure);
-        if (double.IsNaN(saturation)) return double.NaN;
-        return Steam.LiquidEnthalpy(pressure, measured >= LowestTemperature ? double.Min(measured, saturation) : saturation);
-    }
-
-    /// <summary>Enthalpy of liquor, J/kg; NaN for solids outside 0 to 1 or temperatures outside 0 to 200 °C.</summary>
-    public static double LiquorEnthalpy(Liquor liquor, double solids, double temperature) =>
-        IsLiquor(solids, temperature) ? liquor.Enthalpy(solids, temperature) : double.NaN;
+        Dimension.Pressure => value is >= LowestPressure and <= HighestPressure,
+        Dimension.Fraction => value is >= 0 and < 1,
+        Dimension.Temperature => value is >= LowestTemperature and <= HighestTemperature,
+        _ => double.IsFinite(value),
+    };
 
     /// <summary>Density of liquor, kg/m³; NaN for solids outside 0 to 1 or temperatures outside 0 to 200 °C.</summary>
     public static double LiquorDensity(Liquor liquor, double solids, double temperature) =>

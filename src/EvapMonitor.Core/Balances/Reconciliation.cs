@@ -29,7 +29,7 @@ internal sealed class Reconciliation
     private readonly int[] _pivotRow;
     private readonly Dictionary<string, Plan> _plans = new(StringComparer.Ordinal);
     private readonly Dictionary<string, int> _ways;
-    private Plan _plan = new([], [], [], []);
+    private Plan _plan = new([], [], [], [], false);
     private (int Row, int Column)[] _pivots = [];
     private string _planKey = "";
 
@@ -58,6 +58,9 @@ internal sealed class Reconciliation
 
     /// <summary>The variables of the line.</summary>
     public LineVariables Variables => _variables;
+
+    /// <summary>Properties of water and of the liquor.</summary>
+    public LineProperties Properties => _properties;
 
     /// <summary>The reconciled state; where a variable does not follow from what is measured, its value means nothing.</summary>
     public double[] State { get; }
@@ -98,7 +101,7 @@ internal sealed class Reconciliation
     }
 
     /// <summary>True when a variable follows from what is measured.</summary>
-    public bool IsObservable(int variable) => _unknown[variable] == 0;
+    public bool IsObservable(int variable) => _unknown[variable] == 0 && (_plan.HasFlow || !IsAmount(_variables.Keys[variable].Kind));
 
     /// <summary>
     /// How a variable moves, in its own unit, with each measured quantity by one of its standard uncertainties, all corrections made anew; nothing where it is fixed.
@@ -123,30 +126,43 @@ internal sealed class Reconciliation
         else _pivots = _plan.Pivots;
 
         _redundancy.Project(_pivots);
+        Observe();
         Array.Clear(_moved);
-        Array.Fill(_pivotRow, -1);
-        double largest = 0;
+        (double largest, double share) = (0, 1);
         foreach ((int row, int column) in _pivots)
         {
-            _pivotRow[column] = row;
             double change = _redundancy.Change(row);
+            if (!double.IsFinite(change)) return double.NaN;
             _moved[column] = change * _scale[column];
+            double allowed = _steps.Allowed(column, State[column], _moved[column]);
+            if (_unknown[column] > 0)
+            {
+                // What does not follow from the readings may go where it will, but it must not hold up what does.
+                _moved[column] *= allowed;
+                continue;
+            }
+
+            share = double.Min(share, allowed);
             largest = double.Max(largest, double.Abs(change));
-            if (double.IsNaN(change)) return double.NaN;
         }
 
-        double share = _steps.Allowed(State, _moved);
         _steps.Move(State, _moved, share, _next);
+        foreach (double value in _next)
+        {
+            if (!double.IsFinite(value)) return double.NaN;
+        }
+
         _next.CopyTo(State, 0);
         for (int column = 0; column < _measured.Length; column++)
             _measured[column] += share * (_reading[column] + (_standard[column] * _redundancy.Correction(column)) - _measured[column]);
-        Observe();
         return largest;
     }
 
     /// <summary>Unknowns that were not eliminated, and those that depend on one of them.</summary>
     private void Observe()
     {
+        Array.Fill(_pivotRow, -1);
+        foreach ((int row, int column) in _pivots) _pivotRow[column] = row;
         for (int i = 0; i < _unknown.Length; i++) _unknown[i] = _plan.Allowed[i] && _pivotRow[i] < 0 ? 1 : 0;
         foreach ((int row, int column) in _pivots)
         {
@@ -260,7 +276,9 @@ internal sealed class Reconciliation
     {
         bool Has(int place) => place >= 0 && _hasValue[place];
         List<MeasurementEquations.Equation> equations = _measurements.Active(Has);
-        (int, double)[] known = [.. _measurements.Fixed(Has)];
+        bool hasFlow = Enumerable.Range(0, _hasValue.Length).Any(place => _hasValue[place] && _instruments.All[place].Unit.Dimension is Dimension.MassFlow or Dimension.VolumeFlow or Dimension.Power);
+        // Without any flow all flows could be nothing and every balance would hold: one is taken for granted, and no flow is told.
+        (int, double)[] known = [.. _measurements.Fixed(Has), .. hasFlow ? [] : new[] { (_variables.FeedFlow, _typicalFlow) }];
         bool[] allowed = new bool[_variables.Count];
         for (int i = 0; i < allowed.Length; i++) allowed[i] = _variables.Keys[i].Kind is not (VariableKind.Coefficient or VariableKind.BodyCoefficient);
         foreach ((int variable, _) in known) allowed[variable] = false;
@@ -270,7 +288,7 @@ internal sealed class Reconciliation
         Array.Fill(_known, double.NaN);
         _equations.Evaluate(State, _rows);
         int[] rows = [.. Enumerable.Range(0, _rows.Count).Where(row => Counts(_rows.Key(row), Has))];
-        _plan = new Plan(rows, equations, known, allowed);
+        _plan = new Plan(rows, equations, known, allowed, hasFlow);
         double[] reading = [.. _reading];
         // At the plan's state an instrument reads what is there.
         foreach (MeasurementEquations.Equation equation in equations)
@@ -307,12 +325,20 @@ internal sealed class Reconciliation
         return way.From < 0 || !has(_instruments.Effects[way.To].ChestPressure) || !has(_instruments.Effects[way.From].VapourPressure);
     }
 
+    /// <summary>True for what grows with the size of the line.</summary>
+    private static bool IsAmount(VariableKind kind) => kind is not (VariableKind.FeedSolids or VariableKind.FeedTemperature or VariableKind.ProductSolids or VariableKind.ElevationError
+        or VariableKind.SteamPressure or VariableKind.SteamSuperheat or VariableKind.LeavingSolids or VariableKind.BoilingTemperature or VariableKind.VapourPressure
+        or VariableKind.ChestPressure or VariableKind.HeatingTemperature or VariableKind.HeatLossShare or VariableKind.VentShare or VariableKind.Subcooling
+        or VariableKind.LiquorShare or VariableKind.HeaterSolids or VariableKind.HeaterIn or VariableKind.HeaterOut or VariableKind.DischargeEnthalpy
+        or VariableKind.DischargePressure or VariableKind.MotiveEnthalpy or VariableKind.Efficiency);
+
     /// <summary>What belongs to a set of available instruments.</summary>
     /// <param name="Rows">The equations of the line that count.</param>
     /// <param name="Equations">The equations of the instruments.</param>
     /// <param name="Fixed">Variables that are fixed, and at what.</param>
     /// <param name="Allowed">By variable: true when it is an unknown.</param>
-    private sealed record Plan(int[] Rows, List<MeasurementEquations.Equation> Equations, (int Variable, double Value)[] Fixed, bool[] Allowed)
+    /// <param name="HasFlow">True when any flow or power is measured.</param>
+    private sealed record Plan(int[] Rows, List<MeasurementEquations.Equation> Equations, (int Variable, double Value)[] Fixed, bool[] Allowed, bool HasFlow)
     {
         /// <summary>The order of elimination.</summary>
         public (int Row, int Column)[] Pivots { get; init; } = [];

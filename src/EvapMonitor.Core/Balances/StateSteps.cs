@@ -9,20 +9,22 @@ internal sealed class StateSteps(IReadOnlyList<VariableKey> keys, double[] scale
     public double Allowed(double[] x, ReadOnlySpan<double> moved)
     {
         double share = 1;
-        for (int i = 0; i < x.Length; i++)
-        {
-            double most = keys[i].Kind switch
-            {
-                VariableKind.VapourPressure or VariableKind.ChestPressure or VariableKind.SteamPressure or VariableKind.DischargePressure => 0.7 * x[i],
-                VariableKind.LeavingSolids or VariableKind.ProductSolids => moved[i] > 0 ? 0.7 * (0.99 - x[i]) : 0.7 * double.Max(x[i], 0.01),
-                VariableKind.BoilingTemperature or VariableKind.HeatingTemperature => 30,
-                VariableKind.LeavingFlow => moved[i] < 0 ? 0.8 * double.Max(x[i], 0.01 * scale[i]) : double.PositiveInfinity,
-                _ => double.PositiveInfinity,
-            };
-            if (double.Abs(moved[i]) * share > most) share = most / double.Abs(moved[i]);
-        }
-
+        for (int i = 0; i < x.Length; i++) share = double.Min(share, Allowed(i, x[i], moved[i]));
         return share;
+    }
+
+    /// <summary>The share of a step of one variable that keeps it where it makes sense.</summary>
+    public double Allowed(int i, double x, double moved)
+    {
+        double most = keys[i].Kind switch
+        {
+            VariableKind.VapourPressure or VariableKind.ChestPressure or VariableKind.SteamPressure or VariableKind.DischargePressure => 0.7 * x,
+            VariableKind.LeavingSolids or VariableKind.ProductSolids => moved > 0 ? 0.7 * (0.99 - x) : 0.7 * double.Max(x, 0.01),
+            VariableKind.BoilingTemperature or VariableKind.HeatingTemperature => 30,
+            VariableKind.LeavingFlow => moved < 0 ? 0.8 * double.Max(x, 0.01 * scale[i]) : double.PositiveInfinity,
+            _ => double.PositiveInfinity,
+        };
+        return double.Abs(moved) > most ? most / double.Abs(moved) : 1;
     }
 
     /// <summary>Moves a state. Saturation temperatures are nearly straight in the ratio of pressures, and a pressure stays above nothing.</summary>

@@ -24,13 +24,13 @@ internal static class AbsenceReasons
         FirstAbsent(inputs, whyAbsent, [.. at.Surfaces[i].Signals]) ?? "it is not known which bodies serve";
 
     /// <summary>Why an effect has no boiling temperature.</summary>
-    public static string Boiling(LineInstruments at, int i, in EffectState found, LineInputs inputs, Func<int, string> whyAbsent)
+    public static string Boiling(LineInstruments at, int i, LineInputs inputs, Func<int, string> whyAbsent)
     {
         EffectPlaces places = at.Effects[i];
         int thermometer = at.Line.Effects[i].Leaving.TemperatureSeesFlashedLiquor ? places.LeavingTemperature : -1;
         string? pressure = FirstAbsent(inputs, whyAbsent, places.VapourPressure, thermometer);
         if (pressure is not null) return pressure;
-        if (!double.IsNaN(found.Solids)) return "needs a vapour pressure, or a thermometer that sees flashed liquor";
+        if (places.VapourPressure < 0) return "needs a vapour pressure, or a thermometer that sees flashed liquor";
         return FirstAbsent(inputs, whyAbsent, places.LeavingSolids, at.Product.Solids, at.Feed.Flow, at.Feed.Solids)
             ?? "needs the solids or the flow of the leaving liquor";
     }

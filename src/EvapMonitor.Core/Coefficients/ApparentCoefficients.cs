@@ -4,9 +4,10 @@ using EvapMonitor.Core.Properties;
 namespace EvapMonitor.Core.Coefficients;
 
 /// <summary>
-/// The apparent coefficient U = Q/(A·(Ts − Tb)) of each effect of a line in one window, with its standard uncertainty, or the reason why there is none.
+/// The apparent coefficient U = Q/(A·(Ts − Tb)) of each effect of a line in one window, from the reconciled balance, with its standard uncertainty, or the reason
+/// why there is none.
 /// </summary>
-internal sealed class ApparentCoefficients
+internal sealed class ApparentCoefficients(LineInstruments instruments, LineGraph graph)
 {
     /// <summary>Least driving force, K, for a coefficient to be worth its name.</summary>
     public const double LeastDrivingForce = 0.5;
@@ -17,20 +18,7 @@ internal sealed class ApparentCoefficients
     /// <summary>A coefficient with a larger share of uncertainty is too uncertain to be shown.</summary>
     public const double LargestUncertainty = 0.25;
 
-    /// <summary>
-    /// A later way to the duty (steam, then condensate, then liquor) must be this much surer than an earlier one to be taken, so that the choice does not
-    /// flicker between two that are alike.
-    /// </summary>
-    private const double ClearlySurer = 0.75;
-
-    private readonly LineInstruments _instruments;
-    private readonly Propagation _propagation;
-
-    public ApparentCoefficients(LineInstruments instruments, DirectBalance balance)
-    {
-        _instruments = instruments;
-        _propagation = new Propagation(instruments, balance);
-    }
+    private readonly Dictionary<Liquor, Reconciliation> _balances = [];
 
     /// <summary>Evaluates one window.</summary>
     /// <param name="at">Start of the window.</param>
@@ -41,72 +29,103 @@ internal sealed class ApparentCoefficients
     /// <param name="random">Random standard uncertainties by place.</param>
     /// <param name="air">Standard uncertainties of the atmosphere, systematic and random.</param>
     /// <param name="whyAbsent">Says of a place why it has no value.</param>
-    public EffectWindow[] Evaluate(
+    public LineWindow Evaluate(
         long at, RunningState state, Liquor liquor, LineInputs inputs, ReadOnlySpan<double> systematic, ReadOnlySpan<double> random,
         (double Systematic, double Random) air, Func<int, string> whyAbsent)
     {
-        _propagation.Run(liquor, inputs, systematic, random, air.Systematic, air.Random);
-        var windows = new EffectWindow[_instruments.Effects.Count];
-        for (int i = 0; i < windows.Length; i++)
+        if (state == RunningState.Idle) return LineWindow.Absent(at, state, graph.Line.Effects.Count, "no duty: the line is idle");
+        List<int> impossible = LeaveOutImpossible(inputs);
+        string WhyAbsent(int place) => impossible.Contains(place) ? $"{instruments.All[place].Signal} reads what cannot be" : whyAbsent(place);
+        if (!_balances.TryGetValue(liquor, out Reconciliation? balance)) _balances[liquor] = balance = new Reconciliation(instruments, graph, liquor);
+        if (!balance.Solve(inputs, systematic, random, air))
+            return LineWindow.Absent(at, state, graph.Line.Effects.Count, "no balance: the readings of the line fit no state in which it could run");
+        var quantities = new BalanceQuantities(balance);
+        var effects = new EffectWindow[graph.Line.Effects.Count];
+        for (int i = 0; i < effects.Length; i++) effects[i] = Of(i, at, state, liquor, balance, quantities, inputs, WhyAbsent);
+        return new LineWindow(at, state, quantities.Of(balance.Variables.Evaporation).Value, effects);
+    }
+
+    /// <summary>A gauge that reads nonsense must cost one number and no more.</summary>
+    private List<int> LeaveOutImpossible(LineInputs inputs)
+    {
+        var left = new List<int>();
+        for (int place = 0; place < inputs.Value.Length; place++)
         {
-            DutySource source = Surest(i);
-            Measured force = At(i, Propagation.Force), duty = At(i, Propagation.DutyFirst + (int)source), coefficient = At(i, Propagation.CoefficientFirst + (int)source);
-            string? reason = WhyNone(i, source, force, duty, coefficient, inputs, whyAbsent);
-            EffectState found = _propagation.NominalStates[i];
-            windows[i] = new EffectWindow
-            {
-                At = at,
-                State = state,
-                HeatingTemperature = At(i, Propagation.Heating),
-                BoilingTemperature = At(i, Propagation.Boiling),
-                Elevation = At(i, Propagation.Elevation),
-                DrivingForce = force,
-                Duty = source == DutySource.None ? Measured.Absent : duty,
-                Coefficient = reason is null ? coefficient : Measured.Absent,
-                Solids = found.Solids,
-                HeatingFrom = found.HeatingFrom,
-                BoilingFrom = found.BoilingFrom,
-                DutyFrom = source,
-                Extrapolated = found.Extrapolated,
-                Reason = reason,
-            };
+            if (double.IsNaN(inputs.Value[place]) || Physical.IsPossible(instruments.All[place].Unit.Dimension, inputs.Value[place])) continue;
+            inputs.Value[place] = double.NaN;
+            left.Add(place);
         }
 
-        return windows;
+        return left;
     }
 
-    private Measured At(int effect, int column)
+    private EffectWindow Of(
+        int i, long at, RunningState state, Liquor liquor, Reconciliation balance, BalanceQuantities quantities, LineInputs inputs, Func<int, string> whyAbsent)
     {
-        int k = (effect * Propagation.Columns) + column;
-        double value = _propagation.Nominal[k];
-        return double.IsFinite(value)
-            ? new Measured(value, double.Sqrt(_propagation.SystematicSquares[k]), double.Sqrt(_propagation.RandomSquares[k]))
-            : Measured.Absent;
-    }
-
-    private DutySource Surest(int effect)
-    {
-        var best = DutySource.None;
-        double least = double.PositiveInfinity;
-        for (var source = DutySource.Steam; source <= DutySource.Liquor; source++)
+        EffectVariables its = balance.Variables.Effects[i];
+        Measured heating = quantities.Of(its.Heating), boiling = quantities.Of(its.Boiling), duty = quantities.Of(its.Duty);
+        Measured force = quantities.Difference(its.Heating, its.Boiling), solids = quantities.Of(its.Solids);
+        double area = instruments.Surfaces[i].At(inputs);
+        Measured coefficient = quantities.Coefficient(its, area);
+        string? reason = WhyNone(i, heating, boiling, force, duty, coefficient, area, inputs, whyAbsent);
+        return new EffectWindow
         {
-            Measured duty = At(effect, Propagation.DutyFirst + (int)source);
-            if (duty.IsPresent && duty.Standard < least * ClearlySurer) (best, least) = (source, duty.Standard);
+            At = at,
+            State = state,
+            HeatingTemperature = heating,
+            BoilingTemperature = boiling,
+            Elevation = quantities.Elevation(its),
+            DrivingForce = force,
+            Duty = duty,
+            Coefficient = reason is null ? coefficient : Measured.Absent,
+            Solids = solids.Value,
+            HeatingFrom = heating.IsPresent ? HeatingFrom(i, inputs) : HeatingTemperatureSource.None,
+            BoilingFrom = boiling.IsPresent ? BoilingFrom(i, inputs) : BoilingTemperatureSource.None,
+            DutyFrom = duty.IsPresent ? DutySource.Balance : DutySource.None,
+            Extrapolated = solids.IsPresent && boiling.IsPresent && (!Physical.IsSaturated(boiling.Value) || liquor.BoilingPointElevation(double.Clamp(solids.Value, 0, 0.99), boiling.Value).Extrapolated),
+            Reason = reason,
+        };
+    }
+
+    /// <summary>The surest of the instruments that tell the heating temperature, by the order of the method.</summary>
+    private HeatingTemperatureSource HeatingFrom(int i, LineInputs inputs)
+    {
+        bool Has(int place) => !double.IsNaN(inputs.At(place));
+        if (Has(instruments.Effects[i].ChestPressure)) return HeatingTemperatureSource.ChestPressure;
+        foreach (HeatingWay way in graph.Heating)
+        {
+            if (way.To == i && way.From >= 0 && Has(instruments.Effects[way.From].VapourPressure)) return HeatingTemperatureSource.HeatingVapourPressure;
+            if (way.To == i && way.From == LineGraph.Steam && graph.Line.Steam.PressureAt == Plant.SteamGaugePlace.Chest && Has(instruments.SteamPressure))
+                return HeatingTemperatureSource.SteamPressure;
         }
 
-        return best;
+        return graph.Line.Effects[i].Chest.TemperatureSeesSaturation && Has(instruments.Effects[i].ChestTemperature)
+            ? HeatingTemperatureSource.ChestThermometer : HeatingTemperatureSource.Balance;
     }
 
-    private string? WhyNone(int i, DutySource source, Measured force, Measured duty, Measured coefficient, LineInputs inputs, Func<int, string> whyAbsent)
+    private BoilingTemperatureSource BoilingFrom(int i, LineInputs inputs)
     {
-        EffectState found = _propagation.NominalStates[i];
-        if (found.HeatingFrom == HeatingTemperatureSource.None) return "no heating temperature: " + AbsenceReasons.Heating(_instruments, i, inputs, whyAbsent);
-        if (found.BoilingFrom == BoilingTemperatureSource.None) return "no boiling temperature: " + AbsenceReasons.Boiling(_instruments, i, found, inputs, whyAbsent);
+        bool Has(int place) => !double.IsNaN(inputs.At(place));
+        if (Has(instruments.Effects[i].VapourPressure)) return BoilingTemperatureSource.VapourPressure;
+        foreach (HeatingWay way in graph.Heating)
+        {
+            if (way.From == i && Has(instruments.Effects[way.To].ChestPressure)) return BoilingTemperatureSource.HeatedChestPressure;
+        }
+
+        return graph.Line.Effects[i].Leaving.TemperatureSeesFlashedLiquor && Has(instruments.Effects[i].LeavingTemperature)
+            ? BoilingTemperatureSource.LiquorThermometer : BoilingTemperatureSource.Balance;
+    }
+
+    private string? WhyNone(
+        int i, Measured heating, Measured boiling, Measured force, Measured duty, Measured coefficient, double area, LineInputs inputs, Func<int, string> whyAbsent)
+    {
+        if (!heating.IsPresent) return "no heating temperature: " + AbsenceReasons.Heating(instruments, i, inputs, whyAbsent);
+        if (!boiling.IsPresent) return "no boiling temperature: " + AbsenceReasons.Boiling(instruments, i, inputs, whyAbsent);
         if (force.Value < LeastDrivingForce) return "no driving force: under 0.5 K";
         if (force.Value < LeastDrivingForceInStandards * force.Standard) return "no driving force: under three standard uncertainties";
-        if (double.IsNaN(found.Area)) return "no coefficient: " + AbsenceReasons.Surface(_instruments, i, inputs, whyAbsent);
-        if (found.Area == 0) return "no coefficient: no body is in service";
-        if (source == DutySource.None) return "no duty: " + AbsenceReasons.Duty(_instruments, i, inputs, whyAbsent);
+        if (double.IsNaN(area)) return "no coefficient: " + AbsenceReasons.Surface(instruments, i, inputs, whyAbsent);
+        if (area == 0) return "no coefficient: no body is in service";
+        if (!duty.IsPresent) return "no duty: " + AbsenceReasons.Duty(instruments, i, inputs, whyAbsent);
         if (duty.Value <= 0) return "no duty: no heat flows from the chest to the liquor";
         return coefficient.Standard > LargestUncertainty * coefficient.Value ? "too uncertain: over 25 %" : null;
     }

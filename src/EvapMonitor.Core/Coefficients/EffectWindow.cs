@@ -61,6 +61,25 @@ public sealed record EffectWindow
 
     /// <summary>Why there is no coefficient; null when there is one.</summary>
     public required string? Reason { get; init; }
+
+    /// <summary>A window of which nothing is known but why.</summary>
+    public static EffectWindow Absent(long at, RunningState state, string reason) => new()
+    {
+        At = at,
+        State = state,
+        HeatingTemperature = Measured.Absent,
+        BoilingTemperature = Measured.Absent,
+        Elevation = Measured.Absent,
+        DrivingForce = Measured.Absent,
+        Duty = Measured.Absent,
+        Coefficient = Measured.Absent,
+        Solids = double.NaN,
+        HeatingFrom = HeatingTemperatureSource.None,
+        BoilingFrom = BoilingTemperatureSource.None,
+        DutyFrom = DutySource.None,
+        Extrapolated = false,
+        Reason = reason,
+    };
 }
 
 /// <summary>What evaluation leaves of a line and one window.</summary>
@@ -68,4 +87,9 @@ public sealed record EffectWindow
 /// <param name="State">What the line was doing.</param>
 /// <param name="Evaporation">Water evaporated, kg/s; NaN when not known.</param>
 /// <param name="Effects">The effects in plant-file order.</param>
-public sealed record LineWindow(long At, RunningState State, double Evaporation, IReadOnlyList<EffectWindow> Effects);
+public sealed record LineWindow(long At, RunningState State, double Evaporation, IReadOnlyList<EffectWindow> Effects)
+{
+    /// <summary>A window of which nothing is known but why.</summary>
+    public static LineWindow Absent(long at, RunningState state, int effects, string reason) =>
+        new(at, state, double.NaN, [.. Enumerable.Range(0, effects).Select(_ => EffectWindow.Absent(at, state, reason))]);
+}

@@ -24,6 +24,7 @@ internal static class Words
         HeatingTemperatureSource.HeatingVapourPressure => "vapour pressure of what heats it",
         HeatingTemperatureSource.SteamPressure => "steam pressure at the chest",
         HeatingTemperatureSource.ChestThermometer => "chest thermometer",
+        HeatingTemperatureSource.Balance => "balance of the line",
         _ => null,
     };
 
@@ -32,6 +33,7 @@ internal static class Words
         BoilingTemperatureSource.VapourPressure => "vapour pressure and elevation",
         BoilingTemperatureSource.HeatedChestPressure => "pressure of the chest it heats, and elevation",
         BoilingTemperatureSource.LiquorThermometer => "liquor thermometer",
+        BoilingTemperatureSource.Balance => "balance of the line",
         _ => null,
     };
 
@@ -40,6 +42,7 @@ internal static class Words
         DutySource.Steam => "steam flow",
         DutySource.Condensate => "condensate flow",
         DutySource.Liquor => "liquor side",
+        DutySource.Balance => "balance of the line",
         _ => null,
     };
 

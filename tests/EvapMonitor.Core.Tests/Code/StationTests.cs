@@ -30,8 +30,8 @@ public class StationTests
     public void UsesAreSeen()
     {
         // The rule above holds only as long as uses are found at all: this one is real.
-        Assert.Contains(typeof(EvapMonitor.Core.Balances.DirectBalance), UsedBy(typeof(EvapMonitor.Core.Coefficients.Propagation)));
-        Assert.True(Rank(typeof(EvapMonitor.Core.Coefficients.Propagation)) > Rank(typeof(EvapMonitor.Core.Balances.DirectBalance)));
+        Assert.Contains(typeof(EvapMonitor.Core.Balances.Reconciliation), UsedBy(typeof(EvapMonitor.Core.Coefficients.BalanceQuantities)));
+        Assert.True(Rank(typeof(EvapMonitor.Core.Coefficients.BalanceQuantities)) > Rank(typeof(EvapMonitor.Core.Balances.Reconciliation)));
     }
 
     [Fact]

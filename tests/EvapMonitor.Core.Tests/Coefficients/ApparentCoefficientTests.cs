@@ -7,23 +7,26 @@ namespace EvapMonitor.Core.Tests.Coefficients;
 
 public class ApparentCoefficientTests
 {
+    /// <summary>Steam, its pressure and those of the vapours, solids and one flow of condensate: nothing that checks another.</summary>
+    private static Line Bare() => TestLine.Line(effect => effect with { Chest = new Chest() }, feed: new LiquorStream());
+
     [Fact]
     public void FirstEffect_IsDutyByAreaAndDrivingForce()
     {
-        EffectWindow first = TestLine.Evaluate(TestLine.Line(), TestLine.Values).Effects[0];
+        EffectWindow first = TestLine.Evaluate(Bare(), TestLine.Values).Effects[0];
         double heating = Steam.SaturationTemperature(150_000), saturation = Steam.SaturationTemperature(110_000);
         double elevation = TestLine.Liquor.BoilingPointElevation(0.124, saturation).Value;
         double duty = 4 * (Steam.SaturatedVapourEnthalpy(150_000) - Steam.SaturatedLiquidEnthalpy(150_000));
         Assert.Equal(duty, first.Duty.Value, 1e-6 * duty);
         Assert.Equal(heating - saturation - elevation, first.DrivingForce.Value, 1e-9);
         Assert.Equal(duty / (300 * (heating - saturation - elevation)), first.Coefficient.Value, 1e-6 * first.Coefficient.Value);
-        Assert.Equal((HeatingTemperatureSource.SteamPressure, BoilingTemperatureSource.VapourPressure, DutySource.Steam), (first.HeatingFrom, first.BoilingFrom, first.DutyFrom));
+        Assert.Equal((HeatingTemperatureSource.SteamPressure, BoilingTemperatureSource.VapourPressure, DutySource.Balance), (first.HeatingFrom, first.BoilingFrom, first.DutyFrom));
     }
 
     [Fact]
     public void SecondEffect_IsHeatedAtSaturationWithSuperheatedVapour()
     {
-        EffectWindow second = TestLine.Evaluate(TestLine.Line(), TestLine.Values).Effects[1];
+        EffectWindow second = TestLine.Evaluate(Bare(), TestLine.Values).Effects[1];
         double saturation = Steam.SaturationTemperature(110_000), boiling = saturation + TestLine.Liquor.BoilingPointElevation(0.124, saturation).Value;
         double duty = 3.9 * (Steam.VapourEnthalpy(110_000, boiling) - Steam.SaturatedLiquidEnthalpy(110_000));
         Assert.Equal(saturation, second.HeatingTemperature.Value, 1e-9);
@@ -34,11 +37,14 @@ public class ApparentCoefficientTests
     public void LiquorSide_BalancesVapourAndLiquors()
     {
         Line line = TestLine.Line(effect => effect with { Chest = new Chest() }, steam: new SteamMain { Pressure = TestLine.Instrument("SP", TestLine.Pascal), PressureAt = SteamGaugePlace.Chest });
-        EffectWindow first = TestLine.Evaluate(line, TestLine.Values).Effects[0];
+        Dictionary<string, double> values = TestLine.Values;
+        // Nothing of the second effect that would check the first.
+        values.Remove("C2");
+        values.Remove("X2");
+        EffectWindow first = TestLine.Evaluate(line, values).Effects[0];
         double saturation = Steam.SaturationTemperature(110_000), boiling = saturation + TestLine.Liquor.BoilingPointElevation(0.124, saturation).Value;
         double leaving = 20 * 0.1 / 0.124, vapour = 20 - leaving;
         double duty = (vapour * Steam.VapourEnthalpy(110_000, boiling)) + (leaving * TestLine.Liquor.Enthalpy(0.124, boiling)) - (20 * TestLine.Liquor.Enthalpy(0.1, 365));
-        Assert.Equal(DutySource.Liquor, first.DutyFrom);
         Assert.Equal(duty, first.Duty.Value, 1e-6 * duty);
     }
 
@@ -46,7 +52,7 @@ public class ApparentCoefficientTests
     public void Uncertainty_IsThatOfJcgm100ForAProductOfInputs()
     {
         // Steam flow 1 %, pressures 1 % each, elevation by its correlation: Q carries the flow's 1 % and almost nothing else, the driving force what the pressures do.
-        EffectWindow first = TestLine.Evaluate(TestLine.Line(), TestLine.Values).Effects[0];
+        EffectWindow first = TestLine.Evaluate(Bare(), TestLine.Values).Effects[0];
         double byChest = 0.01 * 150_000 * Steam.SaturationTemperatureSlope(150_000), byVapour = 0.01 * 110_000 * Steam.SaturationTemperatureSlope(110_000);
         double saturation = Steam.SaturationTemperature(110_000);
         double byElevation = TestLine.Liquor.BoilingPointElevation(0.124, saturation).Standard;
@@ -64,7 +70,7 @@ public class ApparentCoefficientTests
         var gauge = new UnitOfMeasure("Pa(g)", Dimension.Pressure, 1, 0, PressureReference.Gauge);
         Instrument Exact(string signal) => TestLine.Instrument(signal, gauge) with { Accuracy = new Accuracy(0, 0, AccuracyMeaning.Standard) };
         Line line = TestLine.Line(
-            effect => effect with { Vapour = new VapourSpace { Pressure = Exact("P1") } }, steam: new SteamMain { Flow = TestLine.Instrument("SF", TestLine.Flow), Pressure = Exact("SP"), PressureAt = SteamGaugePlace.Chest });
+            effect => effect with { Chest = new Chest(), Vapour = new VapourSpace { Pressure = Exact("P1") } }, feed: new LiquorStream(), steam: new SteamMain { Flow = TestLine.Instrument("SF", TestLine.Flow), Pressure = Exact("SP"), PressureAt = SteamGaugePlace.Chest });
         Dictionary<string, double> values = TestLine.Values;
         values["SP"] -= 101_325;
         values["P1"] -= 101_325;
@@ -90,21 +96,43 @@ public class ApparentCoefficientTests
     {
         Dictionary<string, double> values = TestLine.Values;
         values.Remove(lost);
-        EffectWindow first = TestLine.Evaluate(TestLine.Line(), values).Effects[0];
+        EffectWindow first = TestLine.Evaluate(Bare(), values).Effects[0];
         Assert.False(first.Coefficient.IsPresent);
         Assert.Equal(reason, first.Reason);
     }
 
     [Fact]
-    public void LostFlow_FallsBackToTheNextWayToTheDuty()
+    public void LostFlows_AreMadeGoodByTheBalance_WhileItCan()
     {
         Dictionary<string, double> values = TestLine.Values;
+        double Uncertainty()
+        {
+            EffectWindow first = TestLine.Evaluate(TestLine.Line(), values).Effects[0];
+            Assert.Null(first.Reason);
+            return first.Duty.Standard / first.Duty.Value;
+        }
+
+        double all = Uncertainty();
         values.Remove("SF");
-        Assert.Equal(DutySource.Condensate, TestLine.Evaluate(TestLine.Line(), values).Effects[0].DutyFrom);
+        double without = Uncertainty();
         values.Remove("C1");
-        Assert.Equal(DutySource.Liquor, TestLine.Evaluate(TestLine.Line(), values).Effects[0].DutyFrom);
+        double poorer = Uncertainty();
+        // The vapour of the first effect is what condenses in the second.
         values.Remove("FF");
+        double poorest = Uncertainty();
+        Assert.True(all < without && without < poorer && poorer < poorest, $"{all} {without} {poorer} {poorest}");
+        values.Remove("C2");
         Assert.Equal("no duty: C1 has no reading", TestLine.Evaluate(TestLine.Line(), values).Effects[0].Reason);
+    }
+
+    [Fact]
+    public void LostSolids_FollowFromTheBalance()
+    {
+        Dictionary<string, double> values = TestLine.Values;
+        values.Remove("X1");
+        EffectWindow first = TestLine.Evaluate(TestLine.Line(), values).Effects[0];
+        Assert.Equal(20 * 0.1 / (20 - 3.9), first.Solids, 0.005);
+        Assert.Null(first.Reason);
     }
 
     [Theory]
@@ -117,10 +145,9 @@ public class ApparentCoefficientTests
     [InlineData("X1", 1.7, "no boiling temperature")]
     public void OddReadings_GiveAReasonAndNoNumber(string signal, double value, string reason)
     {
-        Line line = TestLine.Line(effect => effect with { Chest = new Chest() }, feed: new LiquorStream());
         Dictionary<string, double> values = TestLine.Values;
         values[signal] = value;
-        EffectWindow first = TestLine.Evaluate(line, values).Effects[0];
+        EffectWindow first = TestLine.Evaluate(Bare(), values).Effects[0];
         Assert.StartsWith(reason, first.Reason, StringComparison.Ordinal);
         Assert.False(first.Coefficient.IsPresent);
     }

@@ -1,0 +1,58 @@
+using EvapMonitor.Core.Balances;
+
+namespace EvapMonitor.Core.Coefficients;
+
+/// <summary>Quantities of a reconciled window with their standard uncertainties, each by how it follows the readings (JCGM 100, 5.2: what is shared cancels).</summary>
+internal sealed class BalanceQuantities(Reconciliation balance)
+{
+    private readonly double[] _sensitivity = new double[balance.Measurements.Columns];
+
+    /// <summary>A variable; absent when it does not follow from what is measured.</summary>
+    public Measured Of(int variable)
+    {
+        if (!balance.IsObservable(variable)) return Measured.Absent;
+        Array.Clear(_sensitivity);
+        balance.AddSensitivity(variable, 1, _sensitivity);
+        return With(balance.State[variable]);
+    }
+
+    /// <summary>The difference of two variables.</summary>
+    public Measured Difference(int one, int other)
+    {
+        if (!balance.IsObservable(one) || !balance.IsObservable(other)) return Measured.Absent;
+        Array.Clear(_sensitivity);
+        balance.AddSensitivity(one, 1, _sensitivity);
+        balance.AddSensitivity(other, -1, _sensitivity);
+        return With(balance.State[one] - balance.State[other]);
+    }
+
+    /// <summary>Boiling temperature less the saturation temperature at the vapour pressure.</summary>
+    public Measured Elevation(in EffectVariables its)
+    {
+        if (!balance.IsObservable(its.Boiling) || !balance.IsObservable(its.VapourPressure)) return Measured.Absent;
+        Sloped saturation = balance.Properties.SaturationTemperature(balance.State[its.VapourPressure]);
+        Array.Clear(_sensitivity);
+        balance.AddSensitivity(its.Boiling, 1, _sensitivity);
+        balance.AddSensitivity(its.VapourPressure, -saturation.First, _sensitivity);
+        return With(balance.State[its.Boiling] - saturation.Value);
+    }
+
+    /// <summary>Q/(A·(Ts − Tb)).</summary>
+    public Measured Coefficient(in EffectVariables its, double area)
+    {
+        if (!(area > 0) || !balance.IsObservable(its.Duty) || !balance.IsObservable(its.Heating) || !balance.IsObservable(its.Boiling)) return Measured.Absent;
+        double duty = balance.State[its.Duty], force = balance.State[its.Heating] - balance.State[its.Boiling];
+        double coefficient = HeatBalance.Coefficient(duty, area, force);
+        Array.Clear(_sensitivity);
+        balance.AddSensitivity(its.Duty, coefficient / duty, _sensitivity);
+        balance.AddSensitivity(its.Heating, -coefficient / force, _sensitivity);
+        balance.AddSensitivity(its.Boiling, coefficient / force, _sensitivity);
+        return With(coefficient);
+    }
+
+    private Measured With(double value)
+    {
+        (double systematic, double random) = balance.Corrections.Uncertainty(_sensitivity);
+        return new Measured(value, systematic, random);
+    }
+}
