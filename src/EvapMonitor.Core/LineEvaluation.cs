@@ -34,8 +34,8 @@ public sealed class LineEvaluation
         TimeSpan still = _conditioned.Select(instrument => instrument.FrozenAfter).DefaultIfEmpty().Max();
         TimeSpan laboratory = LaboratoryPlaces().Select(place => place.ValidFor).DefaultIfEmpty().Max();
         LongestStale = stale;
-        Reach = Longer(stale + Longer(still, TimeSpan.FromHours(1)), laboratory);
-        LeadIn = Longer(LineConditioning.Memory + stale, laboratory);
+        Reach = Longer(stale + Longer(still, TimeSpan.FromHours(1)), laboratory) + line.SuspectAfter;
+        LeadIn = Longer(LineConditioning.Memory + stale, laboratory) + line.SuspectAfter + site.Window;
     }
 
     /// <summary>The signals that the line needs, the atmosphere's among them.</summary>
@@ -54,7 +54,7 @@ public sealed class LineEvaluation
     public TimeSpan LongestStale { get; }
 
     /// <summary>A memory for evaluating this line live.</summary>
-    public LineMemory NewMemory() => new(_conditioned, _site.Window);
+    public LineMemory NewMemory() => new(_conditioned, _site.Window, _line.SuspectAfter);
 
     /// <summary>Evaluates the windows of a span from readings alone.</summary>
     /// <param name="readings">Readings by signal, from <see cref="LeadIn"/> before the span on.</param>
@@ -75,7 +75,9 @@ public sealed class LineEvaluation
         LineMemory memory, IReadOnlyDictionary<string, ReadingSeries> readings, long from, long to, ILookup<string, (long Start, long End)> cleanings)
     {
         memory.Fill(readings, from, to);
-        WindowGrid grid = WindowGrid.Between(from, to, _site.Window);
+        // Windows before the span are judged too: an instrument is left out once it has been suspect for long enough.
+        WindowGrid grid = WindowGrid.Between(memory.JudgedFrom(from), to, _site.Window);
+        memory.Suspicions.Forget(long.MaxValue, grid.Start);
         (ConditionedSignal[] signals, Atmosphere air) = LineConditioning.Condition(_conditioned, memory, _site.Atmosphere, grid);
         foreach ((int place, TimeSpan validFor) in LaboratoryPlaces())
         {
@@ -83,33 +85,46 @@ public sealed class LineEvaluation
             signals[place] = Laboratory.Condition(_instruments.All[place], samples, validFor, grid);
         }
 
-        var inputs = new LineInputs(_instruments);
-        int places = _instruments.All.Count;
-        var systematic = new double[places];
-        var random = new double[places];
         var windows = new List<LineWindow>(grid.Count);
         for (int window = 0; window < grid.Count; window++)
         {
             long at = grid.StartOf(window);
-            for (int place = 0; place < places; place++)
-            {
-                inputs.Value[place] = signals[place].Mean[window];
-                systematic[place] = signals[place].Systematic[window];
-                random[place] = signals[place].Random[window];
-            }
-
+            if (at < from && memory.Suspicions.Knows(at)) continue;
+            LineInputs inputs = Read(signals, window, out double[] systematic, out double[] random);
             // A window into which no signal reaches has no result, not an absent one.
             if (Array.TrueForAll(inputs.Value, double.IsNaN)) continue;
-            int w = window;
             Liquor? liquor = LiquorOf(inputs);
             RunningState state = StateOf(inputs, liquor);
-            LineWindow result = liquor is null
-                ? LineWindow.Absent(at, state, _line.Effects.Count, $"the product is not known: {_line.Liquor.Signal!.Signal} names none")
-                : _coefficients.Evaluate(at, state, liquor, inputs, systematic, random, (air.Systematic[w], air.Random[w]), place => signals[place].WhyAbsent(w));
-            windows.Add(result with { Effects = Marked(result.Effects, grid.Step, cleanings) });
+            if (liquor is null)
+            {
+                if (at >= from) windows.Add(Marked(LineWindow.Absent(at, state, _line.Effects.Count, $"the product is not known: {_line.Liquor.Signal!.Signal} names none"), grid.Step, cleanings));
+                continue;
+            }
+
+            var read = new WindowReadings(state, liquor, inputs, systematic, random, (air.Systematic[window], air.Random[window]));
+            IReadOnlyList<IReadOnlyList<int>> suspects = _coefficients.Suspects(read);
+            // Of several that cannot be told apart none is left out: it might be the sound one.
+            if (state != RunningState.Idle) memory.Suspicions.Keep(at, [.. suspects.Where(set => set.Count == 1).Select(set => set[0])]);
+            if (at < from) continue;
+            int w = window;
+            windows.Add(Marked(_coefficients.Evaluate(at, read, suspects, memory.Suspicions.LeftOutAt(at), place => signals[place].WhyAbsent(w)), grid.Step, cleanings));
         }
 
         return [.. windows];
+    }
+
+    private LineInputs Read(ConditionedSignal[] signals, int window, out double[] systematic, out double[] random)
+    {
+        var inputs = new LineInputs(_instruments);
+        (systematic, random) = (new double[inputs.Value.Length], new double[inputs.Value.Length]);
+        for (int place = 0; place < systematic.Length; place++)
+        {
+            inputs.Value[place] = signals[place].Mean[window];
+            systematic[place] = signals[place].Systematic[window];
+            random[place] = signals[place].Random[window];
+        }
+
+        return inputs;
     }
 
     /// <summary>How sound each signal was over a span: what conditioning took and what it left out.</summary>
@@ -147,7 +162,9 @@ public sealed class LineEvaluation
         return liquor is Water ? RunningState.WaterRun : RunningState.Producing;
     }
 
-    private IReadOnlyList<EffectWindow> Marked(IReadOnlyList<EffectWindow> effects, long step, ILookup<string, (long Start, long End)> cleanings) =>
-        [.. effects.Select((effect, i) => cleanings[_line.Effects[i].Name].Any(cleaning => effect.At < cleaning.End && effect.At + step > cleaning.Start)
-            ? effect with { State = RunningState.Cleaning } : effect)];
+    private LineWindow Marked(LineWindow window, long step, ILookup<string, (long Start, long End)> cleanings) => window with
+    {
+        Effects = [.. window.Effects.Select((effect, i) => cleanings[_line.Effects[i].Name].Any(cleaning => effect.At < cleaning.End && effect.At + step > cleaning.Start)
+            ? effect with { State = RunningState.Cleaning } : effect)],
+    };
 }

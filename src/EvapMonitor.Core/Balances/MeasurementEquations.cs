@@ -41,6 +41,22 @@ internal sealed class MeasurementEquations
     /// <summary>The stated quantities, in the order of their columns after <see cref="AirColumn"/>.</summary>
     public IReadOnlyList<(int Variable, double Value, double Standard, string Name)> StatedOnes => _stated;
 
+    /// <summary>The places of the instruments that measure a variable.</summary>
+    public int[] On(int variable) =>
+        [.. _all.Where(one => one.Variable == variable && one.Place >= 0 && one.Kind is (Reading.Plain or Reading.LiquorVolume or Reading.WaterVolume)).Select(one => one.Place).Distinct()];
+
+    /// <summary>What an instrument's reading says of a variable at a state of the line.</summary>
+    public double ReadingOf(int variable, int place, double reading, double[] state)
+    {
+        Equation equation = _all.Find(one => one.Variable == variable && one.Place == place);
+        return equation.Kind switch
+        {
+            Reading.LiquorVolume => reading * Density(equation, state),
+            Reading.WaterVolume => Physical.WaterMassFlow(reading, _at.All[place].Unit, state[equation.First]),
+            _ => reading,
+        };
+    }
+
     /// <summary>The equations that hold while some places have a value.</summary>
     public List<Equation> Active(Func<int, bool> hasValue) => _all.FindAll(equation => (equation.Place < 0 || hasValue(equation.Place)) && (equation.Second < 0 || hasValue(equation.Second))
         && (equation.Unless < 0 || !hasValue(equation.Unless)));
@@ -82,7 +98,7 @@ internal sealed class MeasurementEquations
                 return Here(equation.Variable) - reading - measured[AirColumn];
             case Reading.LiquorVolume:
                 // Density moves by less than a thousandth with what is corrected here, so that its slopes are left out; its value is followed.
-                double density = Physical.LiquorDensity(equation.Liquor!, double.Clamp(Here(equation.First), 0, 0.95), Here(equation.Other));
+                double density = Density(equation, state);
                 z[equation.Place] -= density;
                 return Here(equation.Variable) - (reading * density);
             case Reading.WaterVolume:
@@ -139,6 +155,9 @@ internal sealed class MeasurementEquations
         z[AirColumn] -= equation.BySign * slope;
         return enthalpy;
     }
+
+    private static double Density(in Equation equation, double[] state) =>
+        Physical.LiquorDensity(equation.Liquor!, double.Clamp(state[equation.First], 0, 0.95), state[equation.Other]);
 
     private void Liquors()
     {

@@ -43,6 +43,7 @@ internal sealed class Reconciliation
         _equations = new LineEquations(graph, _properties, _typicalFlow);
         _variables = _equations.Variables;
         _measurements = new MeasurementEquations(instruments, graph, _variables, _properties, _typicalFlow);
+        Layout = new BalanceLayout(instruments, _variables, _measurements);
         Stated = [.. _measurements.StatedOnes.Select(one => one.Value)];
         _start = new BalanceStart(graph, _variables, _properties);
         _scale = _variables.Scales(_typicalFlow);
@@ -73,6 +74,12 @@ internal sealed class Reconciliation
 
     /// <summary>How many steps the last window took.</summary>
     public int Steps { get; private set; }
+
+    /// <summary>What a window of this balance shows.</summary>
+    public BalanceLayout Layout { get; }
+
+    /// <summary>What an instrument's reading says of a variable: a volume as a mass, with the density of the reconciled state.</summary>
+    public double ReadingOf(int variable, int place, double reading) => _measurements.ReadingOf(variable, place, reading, State);
 
     /// <summary>Corrections of the measured quantities in their standard uncertainties, and what is left of each.</summary>
     public Redundancy Corrections => _redundancy;

@@ -19,30 +19,53 @@ internal sealed class ApparentCoefficients(LineInstruments instruments, LineGrap
     public const double LargestUncertainty = 0.25;
 
     private readonly Dictionary<Liquor, Reconciliation> _balances = [];
+    private readonly InstrumentTests _tests = new(instruments);
+    private LineInputs? _solved;
+
+    /// <summary>Names the instruments that do not fit the others in one window.</summary>
+    public IReadOnlyList<IReadOnlyList<int>> Suspects(in WindowReadings readings)
+    {
+        if (readings.State == RunningState.Idle) return [];
+        LeaveOutImpossible(readings.Inputs);
+        WindowReadings these = readings;
+        Reconciliation balance = BalanceOf(readings.Liquor);
+        bool Solve() => balance.Solve(these.Inputs, these.Systematic, these.Random, these.Air);
+        _solved = null;
+        if (!Solve()) return [];
+        IReadOnlyList<IReadOnlyList<int>> suspects = _tests.Find(balance, readings.Inputs, Solve);
+        if (suspects.Count == 0) _solved = readings.Inputs;
+        return suspects;
+    }
 
     /// <summary>Evaluates one window.</summary>
     /// <param name="at">Start of the window.</param>
-    /// <param name="state">What the line was doing.</param>
-    /// <param name="liquor">What it boiled.</param>
-    /// <param name="inputs">Means.</param>
-    /// <param name="systematic">Systematic standard uncertainties by place.</param>
-    /// <param name="random">Random standard uncertainties by place.</param>
-    /// <param name="air">Standard uncertainties of the atmosphere, systematic and random.</param>
+    /// <param name="readings">What was read.</param>
+    /// <param name="suspects">Instruments that do not fit the others.</param>
+    /// <param name="leftOut">Instruments that have been suspect for long enough: their readings do not count.</param>
     /// <param name="whyAbsent">Says of a place why it has no value.</param>
-    public LineWindow Evaluate(
-        long at, RunningState state, Liquor liquor, LineInputs inputs, ReadOnlySpan<double> systematic, ReadOnlySpan<double> random,
-        (double Systematic, double Random) air, Func<int, string> whyAbsent)
+    public LineWindow Evaluate(long at, in WindowReadings readings, IReadOnlyList<IReadOnlyList<int>> suspects, IReadOnlyList<int> leftOut, Func<int, string> whyAbsent)
     {
-        if (state == RunningState.Idle) return LineWindow.Absent(at, state, graph.Line.Effects.Count, "no duty: the line is idle");
+        (RunningState state, LineInputs inputs, int count) = (readings.State, readings.Inputs, graph.Line.Effects.Count);
+        if (state == RunningState.Idle) return LineWindow.Absent(at, state, count, "no duty: the line is idle");
         List<int> impossible = LeaveOutImpossible(inputs);
-        string WhyAbsent(int place) => impossible.Contains(place) ? $"{instruments.All[place].Signal} reads what cannot be" : whyAbsent(place);
-        if (!_balances.TryGetValue(liquor, out Reconciliation? balance)) _balances[liquor] = balance = new Reconciliation(instruments, graph, liquor);
-        if (!balance.Solve(inputs, systematic, random, air))
-            return LineWindow.Absent(at, state, graph.Line.Effects.Count, "no balance: the readings of the line fit no state in which it could run");
+        foreach (int place in leftOut) inputs.Value[place] = double.NaN;
+        string WhyAbsent(int place) => impossible.Contains(place) ? $"{instruments.All[place].Signal} reads what cannot be"
+            : leftOut.Contains(place) ? $"{instruments.All[place].Signal} does not fit the other readings and was left out" : whyAbsent(place);
+        Reconciliation balance = BalanceOf(readings.Liquor);
+        // Judging it has solved it already, when nothing was found and nothing is left out.
+        bool solved = ReferenceEquals(_solved, inputs) && leftOut.Count == 0;
+        if (!solved && !balance.Solve(inputs, readings.Systematic, readings.Random, readings.Air))
+            return LineWindow.Absent(at, state, count, "no balance: the readings of the line fit no state in which it could run");
         var quantities = new BalanceQuantities(balance);
-        var effects = new EffectWindow[graph.Line.Effects.Count];
-        for (int i = 0; i < effects.Length; i++) effects[i] = Of(i, at, state, liquor, balance, quantities, inputs, WhyAbsent);
-        return new LineWindow(at, state, quantities.Of(balance.Variables.Evaporation).Value, effects);
+        var effects = new EffectWindow[count];
+        for (int i = 0; i < effects.Length; i++) effects[i] = Of(i, at, state, readings.Liquor, balance, quantities, inputs, WhyAbsent);
+        return new LineWindow(at, state, quantities.Of(balance.Variables.Evaporation).Value, effects) { Balance = quantities.Window(inputs, suspects, leftOut) };
+    }
+
+    private Reconciliation BalanceOf(Liquor liquor)
+    {
+        if (!_balances.TryGetValue(liquor, out Reconciliation? balance)) _balances[liquor] = balance = new Reconciliation(instruments, graph, liquor);
+        return balance;
     }
 
     /// <summary>A gauge that reads nonsense must cost one number and no more.</summary>
@@ -130,3 +153,13 @@ internal sealed class ApparentCoefficients(LineInstruments instruments, LineGrap
         return coefficient.Standard > LargestUncertainty * coefficient.Value ? "too uncertain: over 25 %" : null;
     }
 }
+
+/// <summary>What was read in one window.</summary>
+/// <param name="State">What the line was doing.</param>
+/// <param name="Liquor">What it boiled.</param>
+/// <param name="Inputs">Means by place.</param>
+/// <param name="Systematic">Systematic standard uncertainties by place.</param>
+/// <param name="Random">Random standard uncertainties by place.</param>
+/// <param name="Air">Standard uncertainties of the atmosphere.</param>
+internal readonly record struct WindowReadings(
+    RunningState State, Liquor Liquor, LineInputs Inputs, double[] Systematic, double[] Random, (double Systematic, double Random) Air);

@@ -50,6 +50,42 @@ internal sealed class BalanceQuantities(Reconciliation balance)
         return With(coefficient);
     }
 
+    /// <summary>All that the balance shows.</summary>
+    public BalanceWindow Window(LineInputs inputs, IReadOnlyList<IReadOnlyList<int>> suspects, IReadOnlyList<int> leftOut)
+    {
+        BalanceLayout layout = balance.Layout;
+        int variables = layout.Variables.Count, signals = layout.Signals.Count;
+        var window = new BalanceWindow
+        {
+            Layout = layout, Measured = new double[variables], Reconciled = new double[variables], Standard = new double[variables], Class = new VariableClass[variables],
+            Correction = new double[signals], Test = new double[signals], ChiSquare = balance.Corrections.SumOfSquares, Degrees = balance.Corrections.Degrees,
+            Suspects = suspects, LeftOut = leftOut,
+        };
+        for (int place = 0; place < signals; place++)
+        {
+            bool read = !double.IsNaN(inputs.Value[place]);
+            window.Correction[place] = read ? balance.Corrections.Correction(place) : double.NaN;
+            window.Test[place] = read ? InstrumentTests.Test(balance.Corrections, place) : double.NaN;
+        }
+
+        for (int k = 0; k < variables; k++)
+        {
+            Measured found = Of(layout.Index[k]);
+            (window.Reconciled[k], window.Standard[k], window.Measured[k]) = (found.Value, found.Standard, double.NaN);
+            bool isChecked = false;
+            foreach (int place in layout.Instruments[k])
+            {
+                if (double.IsNaN(inputs.Value[place])) continue;
+                if (double.IsNaN(window.Measured[k])) window.Measured[k] = balance.ReadingOf(layout.Index[k], place, inputs.Value[place]);
+                isChecked |= !double.IsNaN(window.Test[place]);
+            }
+
+            window.Class[k] = !found.IsPresent ? VariableClass.Unobservable : isChecked ? VariableClass.Redundant : VariableClass.Observable;
+        }
+
+        return window;
+    }
+
     private Measured With(double value)
     {
         (double systematic, double random) = balance.Corrections.Uncertainty(_sensitivity);

@@ -89,6 +89,9 @@ public sealed record EffectWindow
 /// <param name="Effects">The effects in plant-file order.</param>
 public sealed record LineWindow(long At, RunningState State, double Evaporation, IReadOnlyList<EffectWindow> Effects)
 {
+    /// <summary>The reconciled balance; null when there is none.</summary>
+    public BalanceWindow? Balance { get; init; }
+
     /// <summary>A window of which nothing is known but why.</summary>
     public static LineWindow Absent(long at, RunningState state, int effects, string reason) =>
         new(at, state, double.NaN, [.. Enumerable.Range(0, effects).Select(_ => EffectWindow.Absent(at, state, reason))]);

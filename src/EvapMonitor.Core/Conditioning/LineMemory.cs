@@ -10,16 +10,18 @@ namespace EvapMonitor.Core.Conditioning;
 public sealed class LineMemory
 {
     private readonly IReadOnlyList<Instrument> _instruments;
-    private readonly long _step;
+    private readonly long _step, _suspectAfter;
     private WindowGrid _grid;
     private WindowPartial[][] _partials;
 
     /// <summary>An empty memory.</summary>
     /// <param name="instruments">The instruments, one for each signal.</param>
     /// <param name="window">Length of a window.</param>
-    public LineMemory(IReadOnlyList<Instrument> instruments, TimeSpan window)
+    /// <param name="suspectAfter">How long an instrument must have been suspect to be left out.</param>
+    public LineMemory(IReadOnlyList<Instrument> instruments, TimeSpan window, TimeSpan suspectAfter)
     {
-        _instruments = instruments;
+        (_instruments, _suspectAfter) = (instruments, (long)suspectAfter.TotalMilliseconds);
+        Suspicions = new Suspicions((long)window.TotalMilliseconds, suspectAfter);
         _step = (long)window.TotalMilliseconds;
         _grid = new WindowGrid(0, _step, 0);
         _partials = [.. instruments.Select(_ => Array.Empty<WindowPartial>())];
@@ -31,9 +33,16 @@ public sealed class LineMemory
     /// <summary>Partials by signal and window of <see cref="Grid"/>.</summary>
     internal WindowPartial[][] Partials => _partials;
 
+    /// <summary>The verdicts on instruments.</summary>
+    internal Suspicions Suspicions { get; }
+
+    /// <summary>Start of the windows that must be judged before those from an instant on can be evaluated.</summary>
+    internal long JudgedFrom(long from) => from - _suspectAfter - Milliseconds.Modulo(from - _suspectAfter, _step);
+
     /// <summary>Forgets all windows from the one that holds an instant: its readings have changed.</summary>
     public void Forget(long from)
     {
+        Suspicions.Forget(from - Milliseconds.Modulo(from, _step));
         if (from < _grid.End) Keep(_grid.Start, long.Max(_grid.Start, from - Milliseconds.Modulo(from, _step)));
     }
 
@@ -65,7 +74,7 @@ public sealed class LineMemory
 
     private long StartFor(long from)
     {
-        long start = from - (long)LineConditioning.Memory.TotalMilliseconds;
+        long start = JudgedFrom(from) - (long)LineConditioning.Memory.TotalMilliseconds;
         return start - Milliseconds.Modulo(start, _step);
     }
 

@@ -48,6 +48,9 @@ public sealed record Line
     /// <summary>How long the line needs to settle after a change. Default 20 min.</summary>
     public TimeSpan SettlingTime { get; init; } = TimeSpan.FromMinutes(20);
 
+    /// <summary>How long an instrument must have been suspect before its readings are left out. Default 1 h; at most 6 h.</summary>
+    public TimeSpan SuspectAfter { get; init; } = TimeSpan.FromHours(1);
+
     /// <summary>The line produces while its feed flow is above this, kg/s; null: whenever feed flows.</summary>
     public double? ProducingAboveFeedFlow { get; init; }
 
