@@ -47,6 +47,19 @@ internal sealed class InstrumentedLine
     /// <summary>Their standard uncertainties.</summary>
     public double[] Standards() => [.. _instruments.All.Zip(Exact()).Select(pair => _sees[pair.First.Signal] is var sees ? (sees.Relative * double.Abs(pair.Second)) + sees.Absolute : 0)];
 
+    public int PlaceOf(string name) => Enumerable.Range(0, Instruments.Count).First(place => Instruments[place].Signal == name);
+
+    /// <summary>Instruments that do not fit the others.</summary>
+    public IReadOnlyList<IReadOnlyList<int>> Suspects(double[] readings)
+    {
+        var inputs = new LineInputs(_instruments);
+        readings.CopyTo(inputs.Value, 0);
+        double[] standards = Standards(), none = new double[readings.Length];
+        bool Again() => Balance.Solve(inputs, standards, none, (0, 0));
+        Assert.True(Again());
+        return new InstrumentTests(_instruments).Find(Balance, inputs, Again);
+    }
+
     /// <summary>Standard uncertainty of a variable in the window solved last.</summary>
     public double Standard(VariableKind kind, string place = "")
     {

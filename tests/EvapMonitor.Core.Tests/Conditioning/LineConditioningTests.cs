@@ -52,7 +52,7 @@ public class LineConditioningTests
             for (int minute = 0; minute < 240; minute++) series.Add(new Reading(minute * Milliseconds.Minute, value(instrument.Signal, minute), Quality.Good));
             return series;
         });
-        var memory = new LineMemory(instruments, TimeSpan.FromMinutes(5));
+        var memory = new LineMemory(instruments, TimeSpan.FromMinutes(5), TimeSpan.FromHours(1));
         memory.Fill(readings, grid.Start, grid.End);
         return LineConditioning.Condition(instruments, memory, Air, grid).Signals;
     }

@@ -20,7 +20,7 @@ public class WorkedExampleTests
         AssertWithin(0.01, 1704, row.Coefficient);
         AssertWithin(0.01, 2545, row.DutyKw);
         row = await EvaluateAsync(Plant(liquor, 149.3, "vapour: {pressure: {signal: PV, unit: kPa, accuracy: 0.1 abs}}", withSteam: true), new(readings) { ["SF"] = 4108 });
-        Assert.Contains("duty:steam-flow", row.Flags, StringComparison.Ordinal);
+        Assert.Contains("duty:balance-of-the-line", row.Flags, StringComparison.Ordinal);
         AssertWithin(0.01, 1704, row.Coefficient);
     }
 
