@@ -1,4 +1,5 @@
 using System.Globalization;
+using EvapMonitor.Benchmarks.Balances;
 using EvapMonitor.Benchmarks.Ingest;
 using EvapMonitor.Benchmarks.Proofs;
 using EvapMonitor.Benchmarks.Steam;
@@ -9,6 +10,9 @@ var figures = new Dictionary<string, Func<string[], Task<int>>>
     ["steam"] = _ => Task.FromResult(SteamBenchmark.Run()),
     ["import"] = ImportProof.RunAsync,
     ["rating"] = _ => Task.FromResult(RatingProof.Run()),
+    ["speed"] = _ => Task.FromResult(SpeedProof.Run()),
+    ["uncertainty"] = arguments => Task.FromResult(UncertaintyProof.Run(arguments)),
+    ["instruments"] = arguments => Task.FromResult(InstrumentsProof.Run(arguments)),
     ["ingest"] = IngestProof.RunAsync,
     ["database"] = DatabaseProof.RunAsync,
     ["kills"] = KillsProof.RunAsync,

@@ -42,7 +42,9 @@ public sealed class ConstraintRows
 
     internal void Clear()
     {
-        foreach (List<double> list in (List<double>[])[_slopes, _residuals, _scales]) list.Clear();
+        _slopes.Clear();
+        _residuals.Clear();
+        _scales.Clear();
         _starts.Clear();
         _columns.Clear();
         _keys.Clear();

@@ -1,5 +1,3 @@
-using System.Numerics;
-
 namespace EvapMonitor.Core.Balances;
 
 /// <summary>
@@ -19,6 +17,7 @@ internal sealed class Elimination
     private const double LeastPivot = 1e-7;
 
     private readonly int _unknowns, _width;
+    private readonly int[] _entries;
     private double[] _a = [];
 
     /// <summary>Prepares a system.</summary>
@@ -28,6 +27,7 @@ internal sealed class Elimination
     {
         (_unknowns, Right) = (unknowns, unknowns + measured);
         _width = Right + 1;
+        _entries = new int[_width];
     }
 
     /// <summary>Index of the right side in a row.</summary>
@@ -111,29 +111,28 @@ internal sealed class Elimination
         return best;
     }
 
+    /// <summary>Only where the pivot's row has an entry is anything to be subtracted, and that is in few places.</summary>
     private void Eliminate(int pivotRow, int column)
     {
         Span<double> pivot = Row(pivotRow);
         double factor = 1 / pivot[column];
-        for (int k = 0; k < pivot.Length; k++) pivot[k] *= factor;
-        pivot[column] = 1;
-        for (int row = 0; row < Rows; row++)
+        int count = 0;
+        for (int k = 0; k < pivot.Length; k++)
         {
-            if (row == pivotRow) continue;
-            double share = _a[(row * _width) + column];
-            if (share == 0) continue;
+            if (pivot[k] == 0) continue;
+            pivot[k] *= factor;
+            if (k != column) _entries[count++] = k;
+        }
+
+        pivot[column] = 1;
+        ReadOnlySpan<int> entries = _entries.AsSpan(0, count);
+        for (int row = 0, at = column; row < Rows; row++, at += _width)
+        {
+            double share = _a[at];
+            if (share == 0 || row == pivotRow) continue;
             Span<double> target = Row(row);
-            Subtract(target, pivot, share);
+            foreach (int k in entries) target[k] -= pivot[k] * share;
             target[column] = 0;
         }
-    }
-
-    private static void Subtract(Span<double> target, ReadOnlySpan<double> source, double share)
-    {
-        var factor = new Vector<double>(share);
-        int k = 0;
-        for (; k <= target.Length - Vector<double>.Count; k += Vector<double>.Count)
-            (new Vector<double>(target[k..]) - (new Vector<double>(source[k..]) * factor)).CopyTo(target[k..]);
-        for (; k < target.Length; k++) target[k] -= source[k] * share;
     }
 }

@@ -19,13 +19,13 @@ public sealed partial class LineEquations
         _rows.Begin("chest mass", name, _flow);
         Term(at.Condensate);
         double before = _rows.Residual(_rows.Count - 1);
-        EnteringChest(i, (flow, _) => Term(flow, -vented));
+        ChestMass(i, -vented);
         // Residual so far less the condensate is −(1 − v)·M, so its slope by v is M.
         _rows.Slope(at.Vent, (before - _rows.Residual(_rows.Count - 1)) / vented);
 
         // Q = (1 − loss)·[(1 − vent)·Σ m·h − G·h_condensate], by (1 − loss) as a whole.
         _rows.Begin("chest heat", name, _heat);
-        EnteringChest(i, (_, carry) => carry(-kept * vented));
+        ChestHeat(i, -kept * vented);
         double entered = -_rows.Residual(_rows.Count - 1);
         Carry(at.Condensate, _effects[i].Condensate, at.ChestPressure, at.Subcooling, kept);
         double given = -_rows.Residual(_rows.Count - 1);
@@ -39,20 +39,32 @@ public sealed partial class LineEquations
         _rows.Slope(at.ChestPressure, -_effects[i].Heating.First);
     }
 
-    /// <summary>Everything that enters a chest: flow variable, and what adds its heat with a factor.</summary>
-    private void EnteringChest(int i, Action<int, Action<double>> add)
+    /// <summary>Adds factor times all that enters a chest.</summary>
+    private void ChestMass(int i, double factor)
     {
-        for (int k = 0; k < _graph.Heating.Count; k++)
+        for (int k = 0; k < _at.Heating.Length; k++)
         {
-            int way = k;
-            if (_graph.Heating[k].To == i) add(_at.Heating[k], factor => CarryHeating(way, factor));
+            if (_graph.Heating[k].To == i) Term(_at.Heating[k], factor);
         }
 
         for (int j = 0; j < _effects.Length; j++)
         {
-            int pot = j;
-            if (_graph.FlashTo[j] == i)
-                add(_at.Effects[j].FlashVapour, factor => Carry(_at.Effects[pot].FlashVapour, _properties.SaturatedVapour(_x[_at.Effects[i].ChestPressure]), _at.Effects[i].ChestPressure, -1, factor));
+            if (_graph.FlashTo[j] == i) Term(_at.Effects[j].FlashVapour, factor);
+        }
+    }
+
+    /// <summary>Adds factor times the heat of all that enters a chest.</summary>
+    private void ChestHeat(int i, double factor)
+    {
+        for (int k = 0; k < _at.Heating.Length; k++)
+        {
+            if (_graph.Heating[k].To == i) CarryHeating(k, factor);
+        }
+
+        int chest = _at.Effects[i].ChestPressure;
+        for (int j = 0; j < _effects.Length; j++)
+        {
+            if (_graph.FlashTo[j] == i) Carry(_at.Effects[j].FlashVapour, _properties.SaturatedVapour(_x[chest]), chest, -1, factor);
         }
     }
 
@@ -60,7 +72,7 @@ public sealed partial class LineEquations
     private void Transfer(int i)
     {
         EffectVariables at = _at.Effects[i];
-        double area = _graph.Bodies[i].Sum(body => body.Area), force = _x[at.Heating] - _x[at.Boiling], conductance = _x[at.Coefficient] * area;
+        double area = _areas[i], force = _x[at.Heating] - _x[at.Boiling], conductance = _x[at.Coefficient] * area;
         _rows.Begin("heat transfer", EffectAt(i).Name, _heat);
         Term(at.Duty);
         _rows.Value(-conductance * force);
@@ -109,25 +121,25 @@ public sealed partial class LineEquations
         _rows.Begin("condensate to the pot", name, _flow);
         Term(at.Flashing, -1);
         Term(at.Condensate);
-        Remainders(i, (flow, sign) => Term(flow, sign));
-
-        _rows.Begin("flash heat", name, _heat);
-        Carry(at.Condensate, _effects[i].Condensate, at.ChestPressure, at.Subcooling);
-        Remainders(i, (flow, sign) => Carry(flow, own, at.ChestPressure, -1, sign));
-        Carry(at.Flashing, liquid, chest, -1, -1);
-        Carry(at.FlashVapour, liquid, chest, -1);
-        Carry(at.FlashVapour, vapour, chest, -1, -1);
-    }
-
-    /// <summary>What stayed liquid in pots at this effect's chest pressure goes along with its condensate.</summary>
-    private void Remainders(int i, Action<int, double> add)
-    {
         for (int j = 0; j < _effects.Length; j++)
         {
             if (_graph.FlashTo[j] != i) continue;
-            add(_at.Effects[j].Flashing, 1);
-            add(_at.Effects[j].FlashVapour, -1);
+            Term(_at.Effects[j].Flashing);
+            Term(_at.Effects[j].FlashVapour, -1);
         }
+
+        _rows.Begin("flash heat", name, _heat);
+        Carry(at.Condensate, _effects[i].Condensate, at.ChestPressure, at.Subcooling);
+        // What stayed liquid in pots at this effect's chest pressure goes along with its condensate.
+        for (int j = 0; j < _effects.Length; j++)
+        {
+            if (_graph.FlashTo[j] != i) continue;
+            Carry(_at.Effects[j].Flashing, own, at.ChestPressure, -1);
+            Carry(_at.Effects[j].FlashVapour, own, at.ChestPressure, -1, -1);
+        }
+        Carry(at.Flashing, liquid, chest, -1, -1);
+        Carry(at.FlashVapour, liquid, chest, -1);
+        Carry(at.FlashVapour, vapour, chest, -1, -1);
     }
 
     /// <summary>A chest has the pressure of what heats it, less what the line loses. Steam beside another source comes through a valve and has its own.</summary>

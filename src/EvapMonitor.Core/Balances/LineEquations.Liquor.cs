@@ -11,10 +11,10 @@ public sealed partial class LineEquations
     /// <summary>A tank keeps solids and temperature: its liquor is that of the effect before it.</summary>
     private int OriginOf(int node)
     {
-        while (node >= _graph.FirstTank)
+        for (int k = 0; node >= _graph.FirstTank; k++)
         {
-            int tank = node;
-            node = _graph.Liquor.First(way => way.To == tank).From;
+            if (_graph.Liquor[k].To != node) continue;
+            (node, k) = (_graph.Liquor[k].From, -1);
         }
 
         return node;
@@ -58,7 +58,7 @@ public sealed partial class LineEquations
         for (int t = 0; t < _at.Tanks.Length; t++)
         {
             _rows.Begin("mass", _graph.Line.Tanks[t].Name, _flow);
-            Entering(_graph.FirstTank + t, k => Term(_at.Liquor[k].Flow));
+            EnteringMass(_graph.FirstTank + t);
             Term(_at.Tanks[t].Flow, -1);
             Term(_at.Tanks[t].Accumulation, -1);
         }
@@ -69,18 +69,22 @@ public sealed partial class LineEquations
         EffectVariables at = _at.Effects[i];
         string name = EffectAt(i).Name;
         _rows.Begin("mass", name, _flow);
-        Entering(i, k => Term(_at.Liquor[k].Flow));
+        EnteringMass(i);
         Term(at.Flow, -1);
         Term(at.Accumulation, -1);
         Term(at.Vapour, -1);
 
         _rows.Begin("solids", name, _flow);
-        Entering(i, k => Product(_at.Liquor[k].Flow, SolidsOf(_graph.Liquor[k].From)));
+        EnteringSolids(i);
         Product(at.Flow, at.Solids, -1);
         Product(at.Accumulation, at.Solids, -1);
 
         _rows.Begin("liquor heat", name, _heat);
-        Entering(i, k => CarryLiquor(_at.Liquor[k].Flow, _graph.Liquor[k].From, 1));
+        for (int k = 0; k < _at.Liquor.Length; k++)
+        {
+            if (_graph.Liquor[k].To == i) CarryLiquor(_at.Liquor[k].Flow, _graph.Liquor[k].From, 1);
+        }
+
         Term(at.Duty);
         Carry(at.Vapour, _effects[i].Vapour, at.VapourPressure, at.Boiling, -1);
         CarryLiquor(at.Flow, i, -1);
@@ -99,10 +103,10 @@ public sealed partial class LineEquations
     private void Whole()
     {
         _rows.Begin("product", "", _flow);
-        Entering(LineGraph.Product, k => Term(_at.Liquor[k].Flow));
+        EnteringMass(LineGraph.Product);
         Term(_at.ProductFlow, -1);
         _rows.Begin("product solids", "", _flow);
-        Entering(LineGraph.Product, k => Product(_at.Liquor[k].Flow, SolidsOf(_graph.Liquor[k].From)));
+        EnteringSolids(LineGraph.Product);
         Product(_at.ProductFlow, _at.ProductSolids, -1);
         _rows.Begin("evaporation", "", _flow);
         foreach (EffectVariables effect in _at.Effects) Term(effect.Vapour);
@@ -117,11 +121,19 @@ public sealed partial class LineEquations
         Term(_at.SteamFlow, -1);
     }
 
-    private void Entering(int node, Action<int> add)
+    private void EnteringMass(int node)
     {
-        for (int k = 0; k < _graph.Liquor.Count; k++)
+        for (int k = 0; k < _at.Liquor.Length; k++)
         {
-            if (_graph.Liquor[k].To == node) add(k);
+            if (_graph.Liquor[k].To == node) Term(_at.Liquor[k].Flow);
+        }
+    }
+
+    private void EnteringSolids(int node)
+    {
+        for (int k = 0; k < _at.Liquor.Length; k++)
+        {
+            if (_graph.Liquor[k].To == node) Product(_at.Liquor[k].Flow, SolidsOf(_graph.Liquor[k].From));
         }
     }
 }

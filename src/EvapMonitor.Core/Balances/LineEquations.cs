@@ -12,6 +12,7 @@ public sealed partial class LineEquations
     private readonly LineVariables _at;
     private readonly LineProperties _properties;
     private readonly EffectProperties[] _effects;
+    private readonly double[] _areas;
     private readonly double _flow, _heat;
     private readonly bool _withMachineCurves;
     private double[] _x = [];
@@ -35,6 +36,7 @@ public sealed partial class LineEquations
         (_graph, _properties, _withMachineCurves) = (graph, properties, withMachineCurves);
         _at = new LineVariables(graph);
         _effects = new EffectProperties[graph.Line.Effects.Count];
+        _areas = [.. graph.Bodies.Select(bodies => bodies.Sum(body => body.Area))];
         (_flow, _heat) = (typicalFlow, typicalFlow * LineVariables.LatentHeat / 5);
     }
 

@@ -11,7 +11,9 @@ namespace EvapMonitor.Core.Balances;
 internal sealed class Reconciliation
 {
     private const int MostSteps = 30, MostPlans = 256;
-    private const double Converged = 1e-9;
+
+    /// <summary>A step under this, by the variables' scales, is the last: the next would be its square.</summary>
+    private const double Converged = 1e-6;
 
     private readonly LineInstruments _instruments;
     private readonly LineEquations _equations;
@@ -25,13 +27,14 @@ internal sealed class Reconciliation
     private readonly double[] _scale, _known, _unknown, _moved, _next, _measured, _reading, _standard;
     private readonly double _typicalFlow;
     private readonly ConstraintRows _rows = new();
-    private readonly bool[] _hasValue;
+    private readonly bool[] _hasValue, _planFor;
     private readonly int[] _pivotRow;
     private readonly Dictionary<string, Plan> _plans = new(StringComparer.Ordinal);
     private readonly Dictionary<string, int> _ways;
     private Plan _plan = new([], [], [], [], false);
+    private bool _planned;
+
     private (int Row, int Column)[] _pivots = [];
-    private string _planKey = "";
 
     /// <summary>Prepares the reconciliation of a line that boils one liquor.</summary>
     public Reconciliation(LineInstruments instruments, LineGraph graph, Liquor liquor)
@@ -53,7 +56,7 @@ internal sealed class Reconciliation
         _redundancy = new Redundancy(_system, n, columns);
         (State, _known, _unknown, _moved, _next) = (new double[n], new double[n], new double[n], new double[n], new double[n]);
         (_measured, _reading, _standard) = (new double[columns], new double[columns], new double[columns]);
-        (_hasValue, _pivotRow) = (new bool[instruments.All.Count], new int[n]);
+        (_hasValue, _planFor, _pivotRow) = (new bool[instruments.All.Count], new bool[instruments.All.Count], new int[n]);
         _ways = graph.Heating.Select((way, k) => (_variables.Keys[_variables.Heating[k]].Place, k)).ToDictionary(pair => pair.Place, pair => pair.k, StringComparer.Ordinal);
     }
 
@@ -94,12 +97,18 @@ internal sealed class Reconciliation
     {
         Measure(inputs, systematic, random, air);
         Choose();
+        // A way that does not lead to the state at full steps may do so at shorter ones.
+        return Iterate(1) || Iterate(0.4);
+    }
+
+    private bool Iterate(double longest)
+    {
         _start.Fill(State, _typicalFlow, _known);
         foreach ((int variable, double value) in _plan.Fixed) State[variable] = value;
         _reading.CopyTo(_measured, 0);
         for (Steps = 1; Steps <= MostSteps; Steps++)
         {
-            double largest = Step();
+            double largest = Step(Steps < MostSteps / 2 ? longest : 1);
             if (!double.IsFinite(largest)) return false;
             if (largest < Converged) return true;
         }
@@ -121,7 +130,7 @@ internal sealed class Reconciliation
         if (_pivotRow[variable] >= 0) _redundancy.AddSensitivity(_pivotRow[variable], -factor * _scale[variable], sum);
     }
 
-    private double Step()
+    private double Step(double longest)
     {
         Assemble();
         if (!_system.Run(_plan.Pivots))
@@ -135,7 +144,7 @@ internal sealed class Reconciliation
         _redundancy.Project(_pivots);
         Observe();
         Array.Clear(_moved);
-        (double largest, double share) = (0, 1);
+        (double largest, double share) = (0, longest);
         foreach ((int row, int column) in _pivots)
         {
             double change = _redundancy.Change(row);
@@ -255,19 +264,18 @@ internal sealed class Reconciliation
     /// </summary>
     private void Choose()
     {
-        string key = string.Create(_hasValue.Length, _hasValue, (text, has) =>
+        if (!_planned || !_hasValue.AsSpan().SequenceEqual(_planFor))
         {
-            for (int i = 0; i < text.Length; i++) text[i] = has[i] ? '1' : '0';
-        });
-        if (key != _planKey)
-        {
+            _planned = true;
+            _hasValue.CopyTo(_planFor, 0);
+            string key = string.Concat(_hasValue.Select(has => has ? '1' : '0'));
             if (!_plans.TryGetValue(key, out Plan? plan))
             {
                 if (_plans.Count >= MostPlans) _plans.Clear();
                 _plans[key] = plan = Make();
             }
 
-            (_plan, _planKey) = (plan, key);
+            _plan = plan;
         }
 
         foreach (MeasurementEquations.Equation equation in _plan.Equations)

@@ -1,3 +1,5 @@
+using System.Numerics;
+
 namespace EvapMonitor.Core.Balances;
 
 /// <summary>
@@ -170,15 +172,28 @@ internal sealed class Redundancy
         }
     }
 
+    /// <summary>Four sums side by side: faster, and the same on every machine.</summary>
     private static double Dot(ReadOnlySpan<double> a, ReadOnlySpan<double> b)
     {
-        double sum = 0;
-        for (int i = 0; i < a.Length; i++) sum += a[i] * b[i];
-        return sum;
+        (double first, double second, double third, double fourth) = (0, 0, 0, 0);
+        int i = 0;
+        for (; i <= a.Length - 4; i += 4)
+        {
+            first += a[i] * b[i];
+            second += a[i + 1] * b[i + 1];
+            third += a[i + 2] * b[i + 2];
+            fourth += a[i + 3] * b[i + 3];
+        }
+
+        for (; i < a.Length; i++) first += a[i] * b[i];
+        return first + second + (third + fourth);
     }
 
     private static void AddTo(Span<double> sum, ReadOnlySpan<double> one, double factor)
     {
-        for (int i = 0; i < sum.Length; i++) sum[i] += factor * one[i];
+        int i = 0;
+        for (; i <= sum.Length - Vector<double>.Count; i += Vector<double>.Count)
+            (new Vector<double>(sum[i..]) + (new Vector<double>(one[i..]) * factor)).CopyTo(sum[i..]);
+        for (; i < sum.Length; i++) sum[i] += one[i] * factor;
     }
 }

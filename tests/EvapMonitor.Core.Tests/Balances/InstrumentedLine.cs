@@ -1,4 +1,5 @@
 using EvapMonitor.Core.Balances;
+using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Outlook;
 using EvapMonitor.Core.Plant;
 
@@ -56,9 +57,65 @@ internal sealed class InstrumentedLine
         readings.CopyTo(inputs.Value, 0);
         double[] standards = Standards(), none = new double[readings.Length];
         bool Again() => Balance.Solve(inputs, standards, none, (0, 0));
-        Assert.True(Again());
+        if (!Again()) throw new InvalidOperationException("No balance.");
         return new InstrumentTests(_instruments).Find(Balance, inputs, Again);
     }
+
+    /// <summary>Coefficient of an effect in the window solved last.</summary>
+    public Measured Coefficient(string effect) => new BalanceQuantities(Balance).Coefficient(VariablesOf(effect), AreaOf(effect));
+
+    /// <summary>How that coefficient follows each measured quantity, by one of its standard uncertainties.</summary>
+    public double[] SensitivityOfCoefficient(string effect)
+    {
+        EffectVariables its = VariablesOf(effect);
+        double[] sum = new double[Balance.Measurements.Columns];
+        double value = Coefficient(effect).Value, force = Balance.State[its.Heating] - Balance.State[its.Boiling];
+        Balance.AddSensitivity(its.Duty, value / Balance.State[its.Duty], sum);
+        Balance.AddSensitivity(its.Heating, -value / force, sum);
+        Balance.AddSensitivity(its.Boiling, value / force, sum);
+        return sum;
+    }
+
+    /// <summary>
+    /// Relative error of the coefficient by condensate and the two nearest gauges alone, with the stated loss and the elevation of the correlation at the true solids;
+    /// null without these instruments.
+    /// </summary>
+    public double? DirectError(EffectPoint effect, double[] readings, double[] drawn)
+    {
+        double? Read(string name) => Instruments.Any(one => one.Signal == name) ? readings[PlaceOf(name)] : null;
+        int i = Graph.Line.Effects.Select((one, k) => (one.Name, k)).First(pair => pair.Name == effect.Name).k;
+        double? heating = Read(effect.Name + "-chest");
+        foreach (HeatingWay way in Graph.Heating.Where(way => way.To == i))
+            heating ??= way.From >= 0 ? Read(Graph.Line.Effects[way.From].Name + "-vapour") : way.From == LineGraph.Steam ? Read("steam-pressure") : null;
+        if (Read(effect.Name + "-condensate") is not { } condensate || heating is not { } chest || Read(effect.Name + "-vapour") is not { } vapour) return null;
+        double water = Core.Properties.Steam.SaturationTemperature(effect.VapourPressure);
+        double Drawn(VariableKind kind, string place) => Balance.Measurements.StatedOnes.Select((one, k) => (one, k)).Where(pair => pair.one.Variable == Balance.Variables[kind, place])
+            .Sum(pair => pair.one.Standard * drawn[Balance.Measurements.AirColumn + 1 + pair.k]);
+        double elevation = effect.BoilingTemperature - water
+            + (Drawn(VariableKind.ElevationError, "") * Graph.Line.Liquor.Always!.BoilingPointElevation(effect.LeavingSolids, water).Standard);
+        double kept = 1 - (Drawn(VariableKind.HeatLossShare, effect.Name) / (1 - Graph.Line.Effects[i].HeatLoss.Value));
+        double force = Core.Properties.Steam.SaturationTemperature(chest) - Core.Properties.Steam.SaturationTemperature(vapour) - elevation;
+        return (condensate / effect.Condensate * kept * (effect.HeatingTemperature - effect.BoilingTemperature) / force) - 1;
+    }
+
+    /// <summary>Solves a window with what is stated drawn too.</summary>
+    /// <param name="readings">By place.</param>
+    /// <param name="drawn">By column: how many standard uncertainties it is off.</param>
+    public bool SolveDrawn(double[] readings, double[] drawn)
+    {
+        for (int k = 0; k < Balance.Stated.Length; k++)
+        {
+            (_, double value, double standard, _) = Balance.Measurements.StatedOnes[k];
+            Balance.Stated[k] = value + (standard * drawn[Balance.Measurements.AirColumn + 1 + k]);
+        }
+
+        return SolveAsStated(readings);
+    }
+
+    private EffectVariables VariablesOf(string effect) => Balance.Variables.Effects[Graph.Line.Effects.Select((one, k) => (one.Name, k)).First(pair => pair.Name == effect).k];
+
+    private double AreaOf(string effect) =>
+        Graph.Bodies[Graph.Line.Effects.Select((one, k) => (one.Name, k)).First(pair => pair.Name == effect).k].Sum(body => body.Area);
 
     /// <summary>Standard uncertainty of a variable in the window solved last.</summary>
     public double Standard(VariableKind kind, string place = "")
@@ -72,16 +129,13 @@ internal sealed class InstrumentedLine
     /// <summary>Solves a window.</summary>
     /// <param name="readings">By place.</param>
     /// <param name="stated">Draws what is stated instead of measured; null takes it as it stands.</param>
-    public bool Solve(double[] readings, Gaussian? stated = null)
+    public bool Solve(double[] readings, Gaussian? stated = null) =>
+        SolveDrawn(readings, [.. Enumerable.Range(0, Balance.Measurements.Columns).Select(_ => stated?.Next() ?? 0)]);
+
+    private bool SolveAsStated(double[] readings)
     {
         var inputs = new LineInputs(_instruments);
         readings.CopyTo(inputs.Value, 0);
-        for (int k = 0; k < Balance.Stated.Length; k++)
-        {
-            (_, double value, double standard, _) = Balance.Measurements.StatedOnes[k];
-            Balance.Stated[k] = value + (stated is null ? 0 : standard * stated.Next());
-        }
-
         return Balance.Solve(inputs, Standards(), new double[readings.Length], (0, 0));
     }
 

@@ -42,8 +42,7 @@ internal static class TestLines
         public OperatingPoint Solved()
         {
             RatingResult result = Rating().Solve(Conditions);
-            Assert.True(result.Point is not null, $"{Name}: {result.Reason}");
-            return result.Point;
+            return result.Point ?? throw new InvalidOperationException($"{Name}: {result.Reason}");
         }
     }
 
