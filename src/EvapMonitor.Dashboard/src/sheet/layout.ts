@@ -45,7 +45,7 @@ export function layout(graph: Graph, wished: Metrics): Sheet {
   const condensateAt = (below.rows > 0 ? tanksAt + below.rows * step : tanksAt - 4) + (flash.into.count > 0 ? 10 : 0);
   const vesselsAt = condensateAt + (flash.into.count > 0 ? (flash.into.count - 1) * metrics.lane + clear : 0);
   const outAt = flash.vessels.length > 0 ? vesselsAt + 30 + 14 : condensateAt;
-  const headerAt = outAt + flash.on.count * metrics.lane + (metrics.turned ? 10 : 30);
+  const headerAt = outAt + flash.on.count * metrics.lane + (metrics.turned ? 6 : 30);
 
   const nodes: [Place, number, number, number, number][] = [];
   const edges = new Map<string, { top: number; bottom: number }>();
@@ -94,7 +94,7 @@ export function layout(graph: Graph, wished: Metrics): Sheet {
 
   const end = startOf(columns.length - 1), header = graph.places.find(p => p.id === 'condensate');
   if (header && joins.length > 0) box(header, Math.min(...joins) - 6, metrics.turned ? end + metrics.box : end, headerAt, headerAt + 3);
-  const height = headerAt + (metrics.turned ? 8 : 14), width = metrics.gutter + columns.length * metrics.column;
+  const height = headerAt + (metrics.turned ? 6 : 14), width = metrics.gutter + columns.length * metrics.column;
   const point = ([along, across]: [number, number]): Point => (metrics.turned ? { x: across, y: along } : { x: along, y: across });
   const tracks: Track[] = [
     { name: 'steam, vapour', at: topOfBoxes - clear }, { name: 'liquor', at: liquorAt(0) }, { name: 'condensate', at: headerAt },

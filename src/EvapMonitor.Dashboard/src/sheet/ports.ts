@@ -18,7 +18,7 @@ export function portsOf(ends: End[], start: number, size: number, metrics: Metri
   if (left.length === 0 && metrics.turned) at += Math.max(0, metrics.small.along! / 2 - margin + 2);
   middle.forEach(e => { found.set(e.key, at); at += metrics.apart * squeeze; });
   let back = start + size - margin;
-  right.toReversed().forEach(e => { found.set(e.key, back); back -= metrics.port * squeeze; });
+  [...right].reverse().forEach(e => { found.set(e.key, back); back -= metrics.port * squeeze; });
   return found;
 }
 
