@@ -2,6 +2,7 @@ import { Link } from 'wouter-preact';
 import { pages } from '../api/addresses';
 import type { Metrics } from '../sheet/metrics';
 import type { Column } from '../sheet/order';
+import { fitted } from '../sheet/text';
 import type { Fall, Lift } from './descent';
 import { descentRows, wallRows, type NumberRow } from './numbers';
 
@@ -15,7 +16,7 @@ export function ColumnsTable({ line, columns, falls, lifts, asOf, metrics, width
     <table class="descent-table" style={{ width: `${width}px` }}>
       <caption class="unseen">The descent of {line} in numbers, {asOf}; ± one standard uncertainty</caption>
       <colgroup><col style={{ width: share(metrics.gutter) }} />{columns.map(c => <col key={c.id} style={{ width: share(metrics.column) }} />)}</colgroup>
-      <thead><tr><th scope="col"><span class="unseen">quantity</span></th>{columns.map(c => <Head key={c.id} line={line} column={c} />)}</tr></thead>
+      <thead><tr><th scope="col"><span class="unseen">quantity</span></th>{columns.map(c => <Head key={c.id} line={line} column={c} name={fitted(c.name, metrics.column - 10, 14.5)} />)}</tr></thead>
       <tbody>{rows.map(r => <tr key={r.name} class={r === wallRows[0] ? 'descent-break' : undefined}>
         <th scope="row" class={r.part ? 'descent-part' : undefined}>{r.name}</th>{columns.map(c => <td key={c.id}><Cell row={r} column={c} falls={falls} lifts={lifts} /></td>)}
       </tr>)}</tbody>
@@ -23,10 +24,12 @@ export function ColumnsTable({ line, columns, falls, lifts, asOf, metrics, width
   );
 }
 
-function Head({ line, column }: { line: string; column: Column }) {
+/** A name that is too long is shortened for the eye, not for the ear. */
+function Head({ line, column, name }: { line: string; column: Column; name: string }) {
+  const shown = name === column.name ? name : <><span aria-hidden="true">{name}</span><span class="unseen">{column.name}</span></>;
   switch (column.kind) {
-    case 'effect': return <th scope="col"><Link href={pages.effect(line, column.name)}>{column.name}</Link></th>;
-    case 'recompressor': return <th scope="col">{column.name}</th>;
+    case 'effect': return <th scope="col"><Link href={pages.effect(line, column.name)}>{shown}</Link></th>;
+    case 'recompressor': return <th scope="col">{shown}</th>;
     default: return <td />;
   }
 }

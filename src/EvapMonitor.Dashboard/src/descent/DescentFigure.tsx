@@ -20,7 +20,7 @@ export function DescentFigure({ of, columns, metrics, falls, lifts, width }: Des
   const all = [...falls.values()].flatMap(f => [f.heating, f.boiling, f.condensing, f.condensing === null || f.loss === null ? null : f.condensing - f.loss]);
   const scale = scaleOf(all);
   if (scale === null) return <figure class="descent"><figcaption><h2>Where the kelvins go</h2></figcaption><p class="quiet">No temperature of this line is known yet; the reasons stand below.</p></figure>;
-  const bars = barsOf(columns, falls, lifts, Math.min(...all.filter(v => v !== null)), Math.max(...all.filter(v => v !== null)));
+  const bars = barsOf(columns, falls, lifts, of.ways);
   return (
     <figure class="descent">
       <figcaption>

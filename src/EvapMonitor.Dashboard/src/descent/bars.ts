@@ -10,12 +10,17 @@ export interface Bar { column: number; fill: Fill; from: number; to: number }
 export interface Level { from: number; to: number; at: number; dotted: boolean }
 
 /** The pieces of every column, from the top down. Parts that the numbers do not give are not drawn. */
-export function barsOf(columns: Column[], falls: Map<string, Fall>, lifts: Map<string, Lift>, coldest: number, hottest: number): Bar[] {
+export function barsOf(columns: Column[], falls: Map<string, Fall>, lifts: Map<string, Lift>, ways: { from: string; to: string; kind: string }[]): Bar[] {
+  const all = [...falls.values()].flatMap(f => [f.heating, f.boiling, f.condensing]).filter(t => t !== null), hottest = Math.max(...all), coldest = Math.min(...all);
+  // A chest without a temperature is no hotter than the vapour that heats it, and a boiling liquor no colder than the chests that it heats.
+  const heatedBy = (id: string) => Math.max(...ways.filter(w => w.kind === 'vapour' && w.to === id).map(w => falls.get(w.from)?.condensing ?? -Infinity));
+  const heats = (id: string) => Math.max(...ways.filter(w => w.kind === 'vapour' && w.from === id).map(w => falls.get(w.to)?.heating ?? -Infinity));
+  const or = (t: number, other: number) => (Number.isFinite(t) ? t : other);
   return columns.flatMap((c, column): Bar[] => {
     const lift = lifts.get(c.id), f = falls.get(c.id);
     if (lift) return lift.from === null || lift.to === null ? [{ column, fill: 'unknown', from: hottest, to: coldest }] : [{ column, fill: 'lift', from: Math.max(lift.from, lift.to), to: Math.min(lift.from, lift.to) }];
     if (!f) return [];
-    if (f.heating === null || f.boiling === null) return [{ column, fill: 'unknown', from: f.heating ?? hottest, to: f.boiling ?? coldest }];
+    if (f.heating === null || f.boiling === null) return [{ column, fill: 'unknown', from: f.heating ?? or(heatedBy(c.id), hottest), to: f.boiling ?? or(heats(c.id), coldest) }];
     const bars: Bar[] = [];
     if (f.boiling < f.heating) {
       if (f.clean === null) bars.push({ column, fill: f.reason === null ? 'whole' : 'unsure', from: f.heating, to: f.boiling });

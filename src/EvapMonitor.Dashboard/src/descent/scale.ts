@@ -6,8 +6,8 @@ export function scaleOf(values: (number | null)[]): Scale | null {
   if (known.length === 0) return null;
   const most = Math.max(...known), least = Math.min(...known), span = Math.max(most - least, 1);
   const step = [0.5, 1, 2, 5, 10, 20, 50, 100].find(s => span / s <= 7) ?? 200;
-  const low = Math.floor((least - 0.02 * span) / step) * step, high = most + 0.03 * span;
+  const low = least - 0.04 * span, high = most + 0.03 * span;
   const ticks: number[] = [];
-  for (let i = 0; low + i * step <= high; i++) ticks.push(low + i * step);
+  for (let i = Math.ceil(low / step); i * step <= high; i++) ticks.push(i * step);
   return { high, low, ticks };
 }

@@ -41,7 +41,7 @@ export function LinePage({ line }: { line: string }) {
 function Head({ line }: { line: string }) {
   const now = calmNow.value, found = lines.state.value.value?.lines.find(l => l.name === line), known = found && aged(found, now);
   return (
-    <section class="line head">
+    <section class="line line-head">
       <div>
         <h1 class="line-name">{line}</h1>
         <p class="quiet"><Link href={`${pages.lines}#line.${encodeURIComponent(line)}`}>All lines</Link></p>

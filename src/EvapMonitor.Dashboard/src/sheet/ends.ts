@@ -1,5 +1,6 @@
 import type { Place, Way } from '../api/types';
 import type { Column, Graph } from './order';
+import { readingText } from './reading';
 import type { End } from './ports';
 
 /** Which run of the drawing a way belongs to: over the boxes, under them as liquor, or under that as condensate. */
@@ -20,8 +21,8 @@ export interface Plan {
   feedRight: boolean;
 }
 
-/** A heater, user, motive steam or tank: a box of its own beyond the lanes. */
-export interface Small { place: Place; column: number; keys: string[] }
+/** A heater, user, motive steam or tank: a box of its own beyond the lanes; `flow` is what it shows of its only way. */
+export interface Small { place: Place; column: number; keys: string[]; flow: string }
 
 export const endKey = (way: number, end: 'from' | 'to') => `${way} ${end}`;
 
@@ -45,7 +46,7 @@ export function planOf(graph: Graph, columns: Column[]): Plan {
     if (p.kind === 'flash vessel') column.set(p.id, column.get(p.id.replace('flash/', 'effect/')) ?? last);
   }
   const plan: Plan = { columns, column, upper: columns.map(() => []), lower: columns.map(() => []), above: [], below: [], feedRight };
-  const small = (kinds: string[]) => places.filter(p => kinds.includes(p.kind) && ways.some(w => w.from === p.id || w.to === p.id)).map((place): Small => ({ place, column: column.get(place.id)!, keys: [] }));
+  const small = (kinds: string[]) => places.filter(p => kinds.includes(p.kind) && ways.some(w => w.from === p.id || w.to === p.id)).map((place): Small => ({ place, column: column.get(place.id)!, keys: [], flow: readingOf(ways.filter(w => w.from === place.id || w.to === place.id)) }));
   plan.above = small(['heater', 'user', 'motive steam']);
   plan.below = small(['tank']);
   ways.forEach((way, i) => addEnds(plan, way, i));
@@ -78,6 +79,8 @@ function addEnds(plan: Plan, way: Way, i: number): void {
   put(from, to, way.from, endKey(i, 'from'));
   put(to, from, way.to, endKey(i, 'to'));
 }
+
+const readingOf = (ways: Way[]) => (ways.length === 1 && ways[0]!.flow ? readingText(ways[0]!.flow) ?? '' : '');
 
 const mean = (numbers: (number | undefined)[]) => {
   const known = numbers.filter(n => n !== undefined);

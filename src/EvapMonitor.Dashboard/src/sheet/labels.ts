@@ -1,7 +1,6 @@
 import type { MeasuredNow, Place, Way } from '../api/types';
-import { prettyUnit } from '../words/quantity';
-import { raw } from '../words/number';
 import type { Point, Rect, Sheet } from './layout';
+import { readingText } from './reading';
 import { textWidth } from './text';
 
 export interface Label { text: string; rect: Rect; way: Way; measured: boolean }
@@ -12,13 +11,6 @@ export const letters: Record<Way['kind'], string> = { steam: 'S', vapour: 'V', b
 export function labelText(way: Way): { text: string; measured: boolean } {
   const flow = way.flow && readingText(way.flow);
   return flow ? { text: flow, measured: true } : { text: letters[way.kind], measured: false };
-}
-
-/** A reading in few words; null when there is none. An old one says so. */
-export function readingText(m: MeasuredNow): string | null {
-  if (m.value === null) return null;
-  const value = `${raw(Number(m.value.toPrecision(3)))} ${prettyUnit(m.unit)}`.trim();
-  return m.state === 'stale' ? `was ${value}` : m.state === 'bad' ? `bad: ${value}` : value;
 }
 
 const lineHeight = 16, step = 7;
@@ -40,7 +32,7 @@ export function labelsOf(sheet: Sheet): Label[] {
   }).sort((a, b) => Number(b.measured) - Number(a.measured));
   for (const { route, at, text, measured } of wanted) {
     const w = textWidth(text, sheet.metrics.font) + 6;
-    const free = candidates(route.points, w).find(rect => inside(rect, sheet) && !sheet.nodes.some(n => overlap(rect, n.rect, 2)) && !done.some(l => overlap(rect, l.rect, 2))
+    const free = candidates(route.points, w, route.way.kind === 'condensate').find(rect => inside(rect, sheet) && !sheet.nodes.some(n => overlap(rect, n.rect, 2)) && !done.some(l => overlap(rect, l.rect, 2))
       && !sheet.routes.some((other, i) => i !== at && stretches(other.points).some(([a, b]) => overlap(rect, between(a, b), 2))));
     if (free) done.push({ text, measured, way: route.way, rect: free });
   }
@@ -55,14 +47,14 @@ export const overlap = (a: Rect, b: Rect, gap = 0) => a.x < b.x + b.w + gap && b
 
 const inside = (r: Rect, sheet: Sheet) => r.x >= 0 && r.y >= 0 && r.x + r.w <= sheet.width && r.y + r.h <= sheet.height;
 
-/** Places for a label: on the longest level stretch from its middle outwards, then on plumb ones, then beside them. */
-function candidates(points: Point[], w: number): Rect[] {
+/** Places for a label: on the longest level stretch from its middle outwards, then on plumb ones, then beside them. `late`: near the end, so that labels of neighbours stand in a row. */
+function candidates(points: Point[], w: number, late: boolean): Rect[] {
   const all = stretches(points), level = all.filter(([a, b]) => a.y === b.y).sort((p, q) => Math.abs(q[0].x - q[1].x) - Math.abs(p[0].x - p[1].x)), plumb = all.filter(([a, b]) => a.x === b.x);
   const on = (x: number, y: number): Rect => ({ x: x - w / 2, y: y - lineHeight / 2, w, h: lineHeight });
   const spread = (from: number, to: number, keep: number): number[] => {
     const low = Math.min(from, to) + keep, high = Math.max(from, to) - keep, mid = (low + high) / 2, found: number[] = [];
     for (let d = 0; mid + d <= high; d += step) found.push(mid + d, mid - d);
-    return found;
+    return late ? found.sort((a, b) => (to > from ? b - a : a - b)) : found;
   };
   const onLevel = level.flatMap(([a, b]) => spread(a.x, b.x, w / 2 + 6).map(x => on(x, a.y)));
   const onPlumb = plumb.flatMap(([a, b]) => spread(a.y, b.y, lineHeight / 2 + 6).map(y => on(a.x, y)));

@@ -29,7 +29,8 @@ export function layout(graph: Graph, wished: Metrics): Sheet {
     }
   });
   const endOf = (c: number) => startOf(c) + metrics.box + (metrics.column - metrics.box) / 2 - 3;
-  const above = rowsOf(plan.above, ports.upper, endOf, metrics), below = rowsOf(plan.below, ports.lower, endOf, metrics);
+  // Nothing passes over the columns but the ways of these boxes; under them condensate does.
+  const above = rowsOf(plan.above, ports.upper, () => metrics.gutter + columns.length * metrics.column - 2, metrics), below = rowsOf(plan.below, ports.lower, endOf, metrics);
   const flash = flashOf(graph, plan, ports.lower, startOf, metrics);
 
   const { ways } = graph, clear = metrics.turned ? 15 : 18;
@@ -98,7 +99,7 @@ export function layout(graph: Graph, wished: Metrics): Sheet {
   const point = ([along, across]: [number, number]): Point => (metrics.turned ? { x: across, y: along } : { x: along, y: across });
   const tracks: Track[] = [
     { name: 'steam, vapour', at: topOfBoxes - clear }, { name: 'liquor', at: liquorAt(0) }, { name: 'condensate', at: headerAt },
-    ...(above.rows > 0 ? [{ name: 'users of bleeds', at: 2 + metrics.small.across / 2 }] : []),
+    ...(plan.above.some(s => s.place.kind !== 'motive steam') ? [{ name: 'users of bleeds', at: 2 + metrics.small.across / 2 }] : []),
   ];
   return {
     metrics, columns, tracks, width: metrics.turned ? height : width, height: metrics.turned ? width + 24 : height,
@@ -119,7 +120,7 @@ const halfOf = (metrics: Metrics) => (metrics.turned ? metrics.box : metrics.acr
 /** Down the page a row is as high as its busiest box needs; across it, small boxes as their words need. */
 function roomy(metrics: Metrics, plan: Plan): Metrics {
   if (!metrics.turned) {
-    const words = [...plan.above, ...plan.below].some(s => s.place.kind !== 'motive steam' && textWidth(s.place.name, metrics.font) > metrics.column - 52);
+    const words = [...plan.above, ...plan.below].some(s => plan.below.includes(s) && textWidth(s.place.name, metrics.font) > metrics.column - 60);
     return words ? { ...metrics, small: { ...metrics.small, across: metrics.small.across + 16 } } : metrics;
   }
   const last = plan.columns.length - 1;

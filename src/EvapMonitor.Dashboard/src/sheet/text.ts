@@ -7,12 +7,13 @@ export function textWidth(text: string, size: number): number {
   return ems * size;
 }
 
-/** The text, or its beginning with an ellipsis, in so much width. */
+/** The text, or its beginning and its end around an ellipsis, in so much width: names often differ at their ends. */
 export function fitted(text: string, width: number, size: number): string {
   if (textWidth(text, size) <= width) return text;
-  let cut = text;
-  while (cut.length > 0 && textWidth(`${cut}…`, size) > width) cut = cut.slice(0, -1);
-  return cut === '' ? '' : `${cut}…`;
+  const end = text.length > 5 ? text.slice(-2) : '';
+  let cut = text.slice(0, text.length - end.length);
+  while (cut.length > 0 && textWidth(`${cut}…${end}`, size) > width) cut = cut.slice(0, -1);
+  return cut === '' ? '' : `${cut}…${end}`;
 }
 
 /** A name in at most two lines, broken after a hyphen or underscore where it has one. */

@@ -73,8 +73,8 @@ test('vapour that heats two chests loses most on the way to the colder', () => {
 
 test('the scale holds every value on round ticks', () => {
   const s = scaleOf([108.9, 55.6, null])!;
-  expect([s.low, s.ticks.at(-1)]).toEqual([50, 110]);
-  expect(s.high).toBeGreaterThan(108.9);
+  expect(s.ticks).toEqual([60, 70, 80, 90, 100, 110]);
+  expect([s.high > 110, s.low < 55.6]).toEqual([true, true]);
   expect(scaleOf([null])).toBeNull();
-  expect(scaleOf([60, 60])!.ticks.length).toBeGreaterThan(1);
+  expect(scaleOf([60, 60])!.ticks).toEqual([60]);
 });
