@@ -4,16 +4,16 @@ import type { Metrics } from '../sheet/metrics';
 import type { Column } from '../sheet/order';
 import { fitted } from '../sheet/text';
 import type { Fall, Lift } from './descent';
-import { descentRows, wallRows, type NumberRow } from './numbers';
+import { rowsFor, wallRows, type NumberRow } from './numbers';
 
 export interface TableProps { line: string; columns: Column[]; falls: Map<string, Fall>; lifts: Map<string, Lift>; asOf: string }
 
 /** Every number of the drawing and the descent, in the same columns. */
 export function ColumnsTable({ line, columns, falls, lifts, asOf, metrics, width }: TableProps & { metrics: Metrics; width: number }) {
   const share = (px: number) => `${(px / width) * 100}%`;
-  const rows = [...descentRows.filter(r => r.name !== 'lift, K' || lifts.size > 0), ...wallRows];
+  const rows = rowsFor(falls, lifts);
   return (
-    <table class="descent-table" style={{ width: `${width}px` }}>
+    <table class={columns.length > 8 ? 'descent-table descent-many' : 'descent-table'} style={{ width: `${width}px` }}>
       <caption class="unseen">The descent of {line} in numbers, {asOf}; ± one standard uncertainty</caption>
       <colgroup><col style={{ width: share(metrics.gutter) }} />{columns.map(c => <col key={c.id} style={{ width: share(metrics.column) }} />)}</colgroup>
       <thead><tr><th scope="col"><span class="unseen">quantity</span></th>{columns.map(c => <Head key={c.id} line={line} column={c} name={fitted(c.name, metrics.column - 10, 14.5)} />)}</tr></thead>

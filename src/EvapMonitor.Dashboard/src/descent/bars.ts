@@ -9,6 +9,9 @@ export interface Bar { column: number; fill: Fill; from: number; to: number }
 /** A level line from one column to another at a temperature; `end` when it leads to the outside. */
 export interface Level { from: number; to: number; at: number; dotted: boolean }
 
+/** Less line loss than this is not drawn, K: it is rounding. */
+const leastLoss = 0.02;
+
 /** The pieces of every column, from the top down. Parts that the numbers do not give are not drawn. */
 export function barsOf(columns: Column[], falls: Map<string, Fall>, lifts: Map<string, Lift>, ways: { from: string; to: string; kind: string }[]): Bar[] {
   const all = [...falls.values()].flatMap(f => [f.heating, f.boiling, f.condensing]).filter(t => t !== null), hottest = Math.max(...all), coldest = Math.min(...all);
@@ -25,14 +28,14 @@ export function barsOf(columns: Column[], falls: Map<string, Fall>, lifts: Map<s
     if (f.boiling < f.heating) {
       if (f.clean === null) bars.push({ column, fill: f.reason === null ? 'whole' : 'unsure', from: f.heating, to: f.boiling });
       else {
-        // Better than clean: nothing is left for scale, and the table says by how much.
-        const wall = Math.max(f.heating - f.clean, f.boiling);
+        // Better than clean, or not to be told from it: nothing is drawn as scale, and the table says why.
+        const told = f.scale !== null && f.scale > (f.scaleU ?? 0), wall = told ? f.heating - f.clean : f.boiling;
         bars.push({ column, fill: 'clean', from: f.heating, to: wall });
         if (wall > f.boiling) bars.push({ column, fill: 'scale', from: wall, to: f.boiling });
       }
     }
     if (f.condensing !== null && f.condensing < f.boiling) bars.push({ column, fill: 'elevation', from: f.boiling, to: f.condensing });
-    if (f.condensing !== null && f.loss !== null && f.loss > 0) bars.push({ column, fill: 'loss', from: f.condensing, to: f.condensing - f.loss });
+    if (f.condensing !== null && f.loss !== null && f.loss > leastLoss) bars.push({ column, fill: 'loss', from: f.condensing, to: f.condensing - f.loss });
     return bars;
   });
 }

@@ -1,9 +1,10 @@
-import type { Effect, FlowSheet } from '../api/types';
+import type { Effect, FlowSheet, Place } from '../api/types';
 
 /** How the temperature falls over one effect, K and °C. Null is not known. */
 export interface Fall {
   id: string;
   effect: Effect;
+  bodies: Place['bodies'];
   /** Saturation temperature in the chest, °C. */
   heating: number | null;
   boiling: number | null;
@@ -13,11 +14,14 @@ export interface Fall {
   /** What a clean wall would need at this heat flux, and what the deposit takes: together the drive. Scale is negative where the wall does better than its clean value. */
   clean: number | null;
   scale: number | null;
+  scaleU: number | null;
   elevation: number | null;
   /** Where its vapour condenses, °C. */
   condensing: number | null;
   /** From there to the chest that it heats; the largest where it heats several. Negative where that chest reads hotter. */
   loss: number | null;
+  /** True where the chest has no gauge, so that the loss is what the plant file states. */
+  lossStated: boolean;
   /** Why there is no coefficient; null when there is one. */
   reason: string | null;
 }
@@ -30,14 +34,15 @@ const minus = (a: number | null, b: number | null) => (a === null || b === null 
 /** The fall over every effect. The parts add up exactly: heating − clean − scale = boiling, − elevation = condensing, − loss = the next heating. */
 export function fallsOf(sheet: Pick<FlowSheet, 'places' | 'ways'>): Map<string, Fall> {
   const falls = new Map<string, Fall>();
-  for (const { id, effect } of sheet.places) {
+  for (const { id, effect, bodies } of sheet.places) {
     if (effect === null) continue;
     const n = effect.now, heating = n?.heating_temperature_c ?? null, boiling = n?.boiling_temperature_c ?? null, elevation = n?.elevation_k ?? null;
     const drive = minus(heating, boiling), share = n?.coefficient_w_m2k == null ? null : n.cleanliness;
     // Heat flux times 1/U_clean is the drive times U/U_clean: the same kelvins without rounding between them.
     const clean = drive === null || share === null ? null : drive * share;
     falls.set(id, {
-      id, effect, heating, boiling, drive, driveU: n?.driving_force_u ?? null, clean, scale: minus(drive, clean), elevation, condensing: minus(boiling, elevation), loss: null,
+      id, effect, bodies, heating, boiling, drive, driveU: n?.driving_force_u ?? null, clean, scale: minus(drive, clean), scaleU: clean === null || n?.cleanliness_u == null ? null : drive! * n.cleanliness_u,
+      elevation, condensing: minus(boiling, elevation), loss: null, lossStated: false,
       reason: n?.coefficient_w_m2k != null ? null : effect.cleaning_since !== null ? 'it is being cleaned' : n?.reason ?? (n === null ? 'no hour has a result yet' : 'the reason was not given'),
     });
   }
@@ -45,7 +50,9 @@ export function fallsOf(sheet: Pick<FlowSheet, 'places' | 'ways'>): Map<string, 
     const from = falls.get(w.from), to = falls.get(w.to);
     if (w.kind !== 'vapour' || !from || !to) continue;
     const loss = minus(from.condensing, to.heating);
-    if (loss !== null && (from.loss === null || loss > from.loss)) from.loss = loss;
+    if (loss === null || (from.loss !== null && loss <= from.loss)) continue;
+    from.loss = loss;
+    from.lossStated = to.effect.now?.heating_temperature_from === 'vapour pressure of what heats it';
   }
   return falls;
 }

@@ -81,9 +81,10 @@ function Pictures({ of }: { of: FlowSheet }) {
             </Scroller>)}
         </div>
         <Reasons falls={[...falls.values()]} />
-        <p class="legend-small">{asOf === 'no result yet' ? 'No hour has a result yet.' : `Mean of the ${asOf}; ± one standard uncertainty.`} Scale takes the heat flux times the fouling resistance: the kelvins that the deposit costs.</p>
+        <p class="legend-small">{asOf === 'no result yet' ? 'No hour has a result yet.' : `Mean of the ${asOf}; ± one standard uncertainty.`} Scale takes the heat flux times the fouling resistance: the kelvins that the deposit costs; less than their uncertainty is not drawn.
+          {[...falls.values()].some(f => f.lossStated) && ' A line loss in brackets is not measured: that chest has no gauge, and the plant file says what is lost on the way to it.'}</p>
       </section>
-      <section class="page"><Readings of={of} now={now} /></section>
+      <section class="page line-readings"><Readings of={of} now={now} /></section>
     </>
   );
 }

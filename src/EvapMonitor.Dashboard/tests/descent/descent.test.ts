@@ -1,7 +1,9 @@
 import { expect, test } from 'vitest';
 import type { Effect, FlowSheet } from '../../src/api/types';
 import { fallsOf, liftsOf } from '../../src/descent/descent';
+import { barsOf } from '../../src/descent/bars';
 import { scaleOf } from '../../src/descent/scale';
+import { columnsOf } from '../../src/sheet/order';
 import { sheet } from '../sheet/plants';
 import { effect } from '../words/sample';
 
@@ -77,4 +79,25 @@ test('the scale holds every value on round ticks', () => {
   expect([s.high > 110, s.low < 55.6]).toEqual([true, true]);
   expect(scaleOf([null])).toBeNull();
   expect(scaleOf([60, 60])!.ticks).toEqual([60]);
+});
+
+test('the pieces of a column follow each other from the chest to the next one', () => {
+  const falls = fallsOf(forward), columns = columnsOf(forward), bars = barsOf(columns, falls, new Map(), forward.ways);
+  const first = bars.filter(b => columns[b.column]!.name === 'W1');
+  expect(first.map(b => b.fill)).toEqual(['clean', 'scale', 'elevation', 'loss']);
+  expect(first[0]!.from).toBe(108.9);
+  first.slice(1).forEach((b, i) => expect(b.from).toBeCloseTo(first[i]!.to, 12));
+  expect(first.at(-1)!.to).toBeCloseTo(96.1, 12);
+});
+
+test('scale that cannot be told from clean is not drawn', () => {
+  const s = filled('one-effect', { E1: [110, 100, 0, 1990, 2000] });
+  expect(barsOf(columnsOf(s), fallsOf(s), new Map(), s.ways).map(b => b.fill)).toEqual(['clean']);
+});
+
+test('without a coefficient the column is an outline, of no more than what heats it and what it heats allow', () => {
+  const dark = filled('forward-four-effects', { W1: [108.9, 97.2, 0.7, 2552, 2900], W2: [null, null, null, null, 2500], W3: [87.6, 78.3, 1.5, null, 1900], W4: [76.3, 59.4, 3.4, 715, 960] });
+  const columns = columnsOf(dark), bars = barsOf(columns, fallsOf(dark), new Map(), dark.ways), of = (name: string) => bars.filter(b => columns[b.column]!.name === name);
+  expect(of('W2')).toEqual([{ column: 2, fill: 'unknown', from: 96.5, to: 87.6 }]);
+  expect(of('W3')[0]).toMatchObject({ fill: 'unsure', from: 87.6, to: 78.3 });
 });
