@@ -88,7 +88,7 @@ public sealed class LinePageTests(DashboardService dashboard, Chromium chromium)
             foreach (int width in new[] { 320, 1280 })
             {
                 await using OpenPage open = await chromium.OpenAsync(service.Address, width: width, height: 700);
-                await open.GoAsync($"/lines/{line}", "has no coefficient");
+                await open.GoAsync($"/lines/{line}", "have no coefficient");
                 await Assertions.Expect(open.Page.Locator("main")).ToContainTextAsync("No temperature of this line is known yet");
                 await open.NothingScrollsSidewaysAsync(example);
                 await open.AccessibleAsync(example);

@@ -19,6 +19,7 @@ import { layout } from '../sheet/layout';
 import { acrossThePage, downThePage } from '../sheet/metrics';
 import { columnsOf } from '../sheet/order';
 import { Readings } from '../sheet/Readings';
+import { every } from '../sheet/words';
 import { calmNow } from '../site/clock';
 import { cleaningsChanged, lines, resultsChanged, zone } from '../site/state';
 import { aged } from '../words/aged';
@@ -89,9 +90,10 @@ function Pictures({ of }: { of: FlowSheet }) {
   );
 }
 
-/** Why a coefficient is missing, effect by effect. */
+/** Why a coefficient is missing, said once for all effects with the same reason. */
 function Reasons({ falls }: { falls: Fall[] }) {
-  const without = falls.filter(f => f.reason !== null);
-  if (without.length === 0) return null;
-  return <ul class="reasons">{without.map(f => <li key={f.id}><b>{f.effect.name} has no coefficient</b>: {f.reason}.</li>)}</ul>;
+  const names = new Map<string, string[]>();
+  for (const f of falls) if (f.reason !== null) names.set(f.reason, [...names.get(f.reason) ?? [], f.effect.name]);
+  if (names.size === 0) return null;
+  return <ul class="reasons">{[...names].map(([reason, all]) => <li key={reason}><b>{every(all)} {all.length === 1 ? 'has' : 'have'} no coefficient</b>: {reason}.</li>)}</ul>;
 }

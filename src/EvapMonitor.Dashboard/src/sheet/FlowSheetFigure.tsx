@@ -2,7 +2,7 @@ import { useMemo } from 'preact/hooks';
 import type { FlowSheet } from '../api/types';
 import { Boxes } from './Boxes';
 import type { Sheet } from './layout';
-import { Ways } from './Ways';
+import { Stroke, Ways } from './Ways';
 import { kinds, spoken } from './words';
 
 /** The line as it runs. */
@@ -14,7 +14,7 @@ export function FlowSheetFigure({ of, sheet, stale }: { of: FlowSheet; sheet: Sh
       <figcaption>
         <h2>How it runs</h2>
         <ul class="sheet-key">{used.map(k => <li key={k.kind}>
-          <svg width="30" height="16" aria-hidden="true" focusable="false"><path d="M0 8H30" class={`way way-${k.kind}`} /></svg>{k.letter} {k.name}
+          <svg width="30" height="16" aria-hidden="true" focusable="false"><Stroke d="M0 8H30" kind={k.kind} /></svg>{k.letter} {k.name}
         </li>)}</ul>
       </figcaption>
       <svg viewBox={`0 0 ${sheet.width} ${sheet.height}`} width={sheet.width} height={sheet.height} role="img" aria-labelledby="sheet-title" aria-describedby="sheet-words" focusable="false">

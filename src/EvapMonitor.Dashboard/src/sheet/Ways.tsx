@@ -1,3 +1,4 @@
+import type { WayKind } from '../api/types';
 import { labelsOf } from './labels';
 import type { Point, Route, Sheet } from './layout';
 
@@ -17,7 +18,12 @@ export function Ways({ sheet }: { sheet: Sheet }) {
 
 function Way({ route: { way, points } }: { route: Route }) {
   const d = points.map((p, i) => `${i === 0 ? 'M' : 'L'}${p.x} ${p.y}`).join('');
-  return <><path d={d} class="sheet-gap" /><path d={d} class={`way way-${way.kind}`} /></>;
+  return <><path d={d} class="sheet-gap" /><Stroke d={d} kind={way.kind} /></>;
+}
+
+/** A way in the line of its kind; that of liquor is double. */
+export function Stroke({ d, kind }: { d: string; kind: WayKind }) {
+  return <><path d={d} class={`way way-${kind}`} />{kind === 'liquor' && <path d={d} class="way-core" />}</>;
 }
 
 /** A head at the end of the last stretch. */

@@ -7,10 +7,10 @@ export interface Label { text: string; rect: Rect; way: Way; measured: boolean }
 
 export const letters: Record<Way['kind'], string> = { steam: 'S', vapour: 'V', bleed: 'B', motive: 'M', liquor: 'L', condensate: 'C' };
 
-/** What stands on a way: its measured flow, else the letter of its kind. */
+/** What stands on a way: its measured flow, else the letter of its kind, with its stated share of the source. */
 export function labelText(way: Way): { text: string; measured: boolean } {
   const flow = way.flow && readingText(way.flow);
-  return flow ? { text: flow, measured: true } : { text: letters[way.kind], measured: false };
+  return flow ? { text: flow, measured: true } : { text: way.share === null ? letters[way.kind] : `${letters[way.kind]} ${Math.round(way.share * 100)} %`, measured: false };
 }
 
 const lineHeight = 16, step = 7;

@@ -1,5 +1,4 @@
 import type { FlowSheet, Place, WayKind } from '../api/types';
-import { list } from '../words/line';
 import type { Column } from './order';
 
 /** The kinds of ways with their letters, in the order of the drawing. */
@@ -19,6 +18,7 @@ export function spoken({ places, ways }: Pick<FlowSheet, 'places' | 'ways'>, col
   return [`${effects.length === 1 ? 'One effect' : `${effects.length} effects`} in the order of the steam: ${effects.join(', ')}.`, ...parts].filter(Boolean).join(' ');
 }
 
-const every = (names: string[]) => (names.length > 4 ? `${names.slice(0, -1).join(', ')} and ${names.at(-1)}` : list(names));
+/** All the names, however many. */
+export const every = (names: string[]) => (names.length < 2 ? names.join('') : `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`);
 
 const said = (p: Place) => (p.kind === 'heater' ? `heater ${p.name}` : p.kind === 'tank' ? `tank ${p.name}` : p.kind.endsWith('recompressor') ? `${p.kind} ${p.name}` : p.kind === 'flash vessel' ? `the vessel of the ${p.name}` : p.name);

@@ -81,3 +81,8 @@ test('the feed stands where the liquor begins', () => {
   const side = (name: string) => { const s = layout(sheet(name), acrossThePage(6, 1200)); return ends(s, 'feed').x < ends(s, 'product').x ? 'left' : 'right'; };
   expect(['forward-four-effects', 'backward-three-effects', 'mixed-seven-effects', 'own-liquor', 'one-effect'].map(side)).toEqual(['left', 'right', 'right', 'left', 'left']);
 });
+
+test('a stated share stands on its way', () => {
+  const s = layout(sheet('own-liquor'), acrossThePage(4, 1200));
+  expect(labelsOf(s).map(l => l.text)).toContain('L 60 %');
+});
