@@ -25,10 +25,10 @@ export function flowOf(sheet: Sheet, place: Place): MeasuredNow | null {
 /** Labels on their ways where they cover nothing: flows first. A flow without a place is left to the table, a letter is left out. */
 export function labelsOf(sheet: Sheet): Label[] {
   const done: Label[] = [];
-  const inBoxes = new Set(sheet.nodes.map(n => flowOf(sheet, n.place)));
+  const inBoxes = new Set(sheet.nodes.map(n => flowOf(sheet, n.place)).filter(f => f !== null));
   const wanted = sheet.routes.map((route, at) => {
     const own = labelText(route.way);
-    return { route, at, ...(sheet.metrics.turned || inBoxes.has(route.way.flow) ? { text: letters[route.way.kind], measured: false } : own) };
+    return { route, at, ...(sheet.metrics.turned || (route.way.flow !== null && inBoxes.has(route.way.flow)) ? { text: letters[route.way.kind], measured: false } : own) };
   }).sort((a, b) => Number(b.measured) - Number(a.measured));
   for (const { route, at, text, measured } of wanted) {
     const w = textWidth(text, sheet.metrics.font) + 6;
