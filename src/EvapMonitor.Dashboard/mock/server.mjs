@@ -1,6 +1,6 @@
 // The REST interface with invented data, for work on the dashboard alone. `--built` serves dist under the service's content security policy;
 // `--empty` has no readings; `--calm` has no notices; `--down-after N` stops answering after N seconds.
-// PORT (5180) serves three lines, the next port forty, the one after that a single line.
+// PORT (5180) serves three lines, the next port forty, the one after that a single line, the fourth lines that run in every way.
 import { createReadStream, existsSync, statSync } from 'node:fs';
 import { createServer } from 'node:http';
 import { extname, join, normalize } from 'node:path';
@@ -9,6 +9,7 @@ import { effectOf, lineOf } from './answers.mjs';
 import { notices, signals, sources } from './intake.mjs';
 import { cleanings, plantText, sizes, start } from './plant.mjs';
 import { trend } from './series.mjs';
+import { everyWay, sheetOf } from './sheets.mjs';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
 const option = name => process.argv.includes(name);
@@ -37,7 +38,7 @@ const body = request => new Promise(resolve => { let text = ''; request.on('data
 
 async function answer(request, response, url) {
   const path = url.pathname.replace('/api/v1', '').split('/').filter(Boolean).map(decodeURIComponent), q = url.searchParams;
-  const plant = [sizes.few, sizes.many, sizes.one][request.socket.localPort - port];
+  const plant = [sizes.few, sizes.many, sizes.one, everyWay][request.socket.localPort - port];
   const line = plant.find(l => l.name === path[1]), effect = line?.effects.find(e => e.name === path[3]);
   switch (path[0]) {
     case 'site': return json(response, 200, site());
@@ -45,6 +46,7 @@ async function answer(request, response, url) {
       if (path.length === 1) return json(response, 200, { lines: empty ? [] : plant.map(l => lineOf(l, now())) });
       if (!line) return problem(response, 404, 'Not found', `There is no line ${path[1]}.`);
       if (path.length === 2) return json(response, 200, lineOf(line, now()));
+      if (path[2] === 'flow-sheet') return json(response, 200, sheetOf(line, now()));
       if (!effect) return problem(response, 404, 'Not found', `Line ${line.name} has no effect ${path[3]}.`);
       if (path.length === 4) return json(response, 200, effectOf(line, effect));
       return answerTrend(request, response, trend(line, effect, q.get('quantity'), Date.parse(q.get('from')), Date.parse(q.get('to')), Number(q.get('points') ?? 2000)));
@@ -104,6 +106,6 @@ const serve = (request, response) => {
   if (url.pathname.startsWith('/api/')) return void answer(request, response, url);
   return vite ? vite.middlewares(request, response) : built(request, response, url);
 };
-for (const at of [port, port + 1, port + 2]) createServer(serve).listen(at, '127.0.0.1');
-console.log(`http://127.0.0.1:${port}/ with invented data${vite ? '' : ', built'}; forty lines on ${port + 1}, one on ${port + 2}`);
+for (const at of [port, port + 1, port + 2, port + 3]) createServer(serve).listen(at, '127.0.0.1');
+console.log(`http://127.0.0.1:${port}/ with invented data${vite ? '' : ', built'}; forty lines on ${port + 1}, one on ${port + 2}, every way to run on ${port + 3}`);
 setInterval(() => { if (Date.now() - begun > downAfter) { listeners.forEach(l => l.destroy()); listeners = []; } }, 500);

@@ -1,6 +1,7 @@
 import { Route, Switch, useLocation, useSearch } from 'wouter-preact';
 import { pages } from './api/addresses';
 import { Boundary } from './parts/Boundary';
+import { Later } from './parts/Later';
 import { useArrival } from './parts/use-arrival';
 import { Announcer } from './parts/Announcer';
 import { BottomBar, Header } from './parts/Header';
@@ -15,6 +16,8 @@ import { NotHere } from './pages/NotHere';
 import { Plant } from './pages/Plant';
 import { Today } from './pages/Today';
 import { Wall } from './today/Wall';
+
+const linePage = () => import('./pages/Line').then(page => page.LinePage);
 
 /** What the address names: a page in its frame, or Today for a wall screen, which has none. */
 export function App() {
@@ -44,6 +47,9 @@ function Framed({ today }: { today: boolean }) {
           <Route path={pages.lines} component={Lines} />
           <Route path="/lines/:line/effects/:effect">
             {params => <EffectPage key={`${params.line}/${params.effect}`} line={params.line} effect={params.effect} />}
+          </Route>
+          <Route path="/lines/:line">
+            {params => <Later key={params.line} load={linePage} what="The page of the line" props={{ line: params.line }} />}
           </Route>
           <Route path={pages.cleanings} component={Cleanings} />
           <Route path={pages.instruments} component={Instruments} />

@@ -14,6 +14,7 @@ internal static class Routes
         api.Get("/site", SiteHandlers.Site, "getSite", "The site and the state of its data");
         api.Get("/lines", SiteHandlers.Lines, "getLines", "All lines with their effects");
         api.Get("/lines/{line}", SiteHandlers.Line, "getLine", "One line with its effects");
+        api.Get("/lines/{line}/flow-sheet", FlowSheetStates.Handle, "getFlowSheet", "A line as places and ways, with its readings and results now");
         api.Get("/lines/{line}/effects/{effect}", SiteHandlers.Effect, "getEffect", "One effect as it is now");
         api.Get("/lines/{line}/effects/{effect}/trend", TrendHandlers.Trend, "getTrend", "A series of one quantity, as JSON columns or CSV");
         api.Get("/cleaning-due", SiteHandlers.CleaningDue, "getCleaningDue", "Effects with their due state, due ones first");

@@ -7,12 +7,12 @@ namespace EvapMonitor.Service.Tests.Browser;
 
 public sealed class DashboardTests(DashboardService dashboard, Chromium chromium) : IClassFixture<DashboardService>
 {
-    private const string Effect = "/lines/north/effects/N4";
+    private const string Effect = "/lines/north/effects/N4", Line = "/lines/north";
 
     /// <summary>Each page with a text that stands on it once it is whole.</summary>
     private static readonly (string Path, string Awaited)[] Pages =
     [
-        ("/", "Ring thickness stands for"), ("/lines", "N4"), (Effect, "Coefficient of N4"), ("/cleanings", "Log a cleaning"), ("/instruments", "N.FT-10"), ("/plant", "Revision 1"),
+        ("/", "Ring thickness stands for"), ("/lines", "N4"), (Line, "Where the kelvins go"), (Effect, "Coefficient of N4"), ("/cleanings", "Log a cleaning"), ("/instruments", "N.FT-10"), ("/plant", "Revision 1"),
     ];
 
     private RunningService Service => dashboard.Service;
@@ -122,7 +122,7 @@ public sealed class DashboardTests(DashboardService dashboard, Chromium chromium
         {
             await open.GoAsync(path, awaited);
             await open.AccessibleAsync(path);
-            if (path is "/" or Effect) await open.PictureAsync($"{(path == "/" ? "today" : "effect")}-{(dark ? "dark" : "light")}");
+            if (Pictured(path) is { } name) await open.PictureAsync($"{name}-{(dark ? "dark" : "light")}");
         }
 
         open.NothingWentWrong();
@@ -136,11 +136,13 @@ public sealed class DashboardTests(DashboardService dashboard, Chromium chromium
         {
             await open.GoAsync(path, awaited);
             await open.NothingScrollsSidewaysAsync(path);
-            if (path is "/" or Effect) await open.PictureAsync($"{(path == "/" ? "today" : "effect")}-phone");
+            if (Pictured(path) is { } name) await open.PictureAsync($"{name}-phone");
         }
 
         open.NothingWentWrong();
     }
+
+    private static string? Pictured(string path) => path switch { "/" => "today", Line => "line", Effect => "effect", _ => null };
 
     [BrowserFact]
     public async Task UnknownPage_SaysSo()

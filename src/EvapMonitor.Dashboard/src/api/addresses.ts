@@ -14,6 +14,7 @@ export const addresses = {
   events: `${base}/events`,
   /** The events missed since one are sent first. */
   eventsAfter: (id: string) => `${base}/events?last_event_id=${part(id)}`,
+  flowSheet: (line: string) => `${base}/lines/${part(line)}/flow-sheet`,
   effect: (line: string, effect: string) => `${base}/lines/${part(line)}/effects/${part(effect)}`,
   trend: (line: string, effect: string, quantity: Quantity, from: number, to: number, points: number) =>
     `${addresses.effect(line, effect)}/trend?quantity=${quantity}&from=${part(new Date(from).toISOString())}` +
@@ -35,5 +36,6 @@ export const pages = {
   cleanings: '/cleanings',
   instruments: '/instruments',
   plant: '/plant',
+  line: (line: string) => `/lines/${part(line)}`,
   effect: (line: string, effect: string) => `/lines/${part(line)}/effects/${part(effect)}`,
 };

@@ -109,6 +109,52 @@ export interface Evidence {
   since: Instant | null;
 }
 
+/** A line as places and the ways between them, with what is measured and computed there now. */
+export interface FlowSheet {
+  line: string;
+  now: Instant;
+  state: string;
+  as_of: Instant | null;
+  latest_reading_at: Instant | null;
+  readings: ReadingsState;
+  places: Place[];
+  ways: Way[];
+}
+
+export type PlaceKind = 'effect' | 'steam' | 'feed' | 'product' | 'condenser' | 'condensate' | 'tank' | 'heater' | 'user' | 'flash vessel'
+  | 'thermal recompressor' | 'mechanical recompressor' | 'motive steam';
+
+export interface Place {
+  id: string;
+  kind: PlaceKind;
+  name: string;
+  measured: MeasuredNow[];
+  effect: Effect | null;
+  bodies: { name: string; area_m2: number; serving: boolean | null }[];
+}
+
+export type WayKind = 'steam' | 'vapour' | 'bleed' | 'motive' | 'liquor' | 'condensate';
+
+export interface Way {
+  from: string;
+  to: string;
+  kind: WayKind;
+  share: number | null;
+  share_u: number | null;
+  /** Set where an instrument sees this way and no other. */
+  flow: MeasuredNow | null;
+}
+
+/** The last reading of an instrument at its place. */
+export interface MeasuredNow {
+  what: string;
+  signal: string;
+  value: number | null;
+  unit: string;
+  at: Instant | null;
+  state: 'good' | 'uncertain' | 'bad' | 'stale' | 'none';
+}
+
 export const quantities = [
   'coefficient', 'clean_coefficient', 'cleanliness', 'fouling_resistance', 'driving_force', 'duty',
   'heating_temperature', 'boiling_temperature', 'elevation', 'heat_flux',

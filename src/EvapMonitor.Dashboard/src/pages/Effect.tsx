@@ -61,7 +61,7 @@ function Head({ effect }: { effect: Effect }) {
     <section class="line head">
       <div>
         <h1 class="line-name">{effect.name}</h1>
-        <p class="quiet"><Link href={`${pages.lines}#line.${encodeURIComponent(effect.line)}`}>{effect.line}</Link></p>
+        <p class="quiet"><Link href={pages.line(effect.line)}>{effect.line}</Link></p>
       </div>
       <div>
         <Words pieces={effectWords(effect, readings, latest, now, zone.value)} />

@@ -36,7 +36,7 @@ function Ledger({ line: given }: { line: Line }) {
   const stale = line.readings !== 'live';
   return (
     <section class="line" id={`line.${line.name}`} aria-labelledby={`line-name.${line.name}`}>
-      <h2 class="line-name" id={`line-name.${line.name}`}>{line.name}</h2>
+      <h2 class="line-name" id={`line-name.${line.name}`}><Link href={pages.line(line.name)}>{line.name}</Link></h2>
       <div>
         <p class="quiet">
           {line.liquor}; {line.state === 'unknown' ? 'running state not known' : line.state}

@@ -12,7 +12,7 @@ export function DenseLine({ line, now }: { line: Line; now: number }) {
   const silent = line.readings !== 'live';
   return (
     <section class={silent ? 'dense silent' : 'dense'} id={`line.${line.name}`} aria-labelledby={`line-name.${line.name}`}>
-      <h2 id={`line-name.${line.name}`}>{line.name}</h2>
+      <h2 id={`line-name.${line.name}`}><Link href={pages.line(line.name)}>{line.name}</Link></h2>
       {silent && <p><b>{line.latest_reading_at === null ? 'no reading yet' : `silent for ${duration(now - Date.parse(line.latest_reading_at))}`}</b></p>}
       <ul>{line.effects.map(e => <li key={e.name}>
         <Link href={pages.effect(e.line, e.name)}>

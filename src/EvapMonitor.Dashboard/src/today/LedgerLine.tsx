@@ -1,3 +1,5 @@
+import { Link } from 'wouter-preact';
+import { pages } from '../api/addresses';
 import type { Line } from '../api/types';
 import { EffectCell } from '../parts/EffectCell';
 import { Evaporation } from '../parts/Evaporation';
@@ -15,7 +17,7 @@ export function LedgerLine({ line: given, weeks, told }: { line: Line; weeks: 1 
   useSaid(line.name, pieces);
   return (
     <section class="line ledger-line" id={`line.${line.name}`} aria-labelledby={`line-name.${line.name}`}>
-      <h2 id={`line-name.${line.name}`} class="line-name">{line.name}</h2>
+      <h2 id={`line-name.${line.name}`} class="line-name"><Link href={pages.line(line.name)}>{line.name}</Link></h2>
       <div class="ledger-row">
         {!told && <Words pieces={pieces} />}
         <ul class="effects">

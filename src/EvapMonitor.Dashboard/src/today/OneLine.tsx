@@ -1,3 +1,5 @@
+import { Link } from 'wouter-preact';
+import { pages } from '../api/addresses';
 import type { Line } from '../api/types';
 import { weeksPerStratum } from '../bore/deposit';
 import { EffectCell } from '../parts/EffectCell';
@@ -18,7 +20,7 @@ export function OneLine({ line: given }: { line: Line }) {
   useSaid(line.name, pieces);
   return (
     <section class="line" id={`line.${line.name}`} aria-labelledby={`line-name.${line.name}`}>
-      <h2 id={`line-name.${line.name}`} class="line-name">{line.name}</h2>
+      <h2 id={`line-name.${line.name}`} class="line-name"><Link href={pages.line(line.name)}>{line.name}</Link></h2>
       <div>
         <Words pieces={pieces} />
         <div class="line-row">
