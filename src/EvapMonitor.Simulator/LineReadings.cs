@@ -9,6 +9,9 @@ public sealed class LineReadings
     /// <summary>Scatter of a single reading as a share of the instrument's standard uncertainty.</summary>
     private const double Scatter = 0.5;
 
+    /// <summary>Scatter of a flow meter at rest, kg/s.</summary>
+    private const double Trembling = 0.004;
+
     private readonly LineSimulation _simulation;
     private readonly ILookup<string, InstrumentFault> _faults;
     private readonly ulong[] _keys;
@@ -59,8 +62,10 @@ public sealed class LineReadings
         if (gauge.Unit.Dimension == Dimension.Number || double.IsNaN(truth)) return truth;
         // An accuracy in shares of the reading is meant in °C, not in K.
         double seen = gauge.Unit.Dimension == Dimension.Temperature ? truth - 273.15 : truth;
-        double value = gauge.Unit.FromSi(truth + (Scatter * gauge.Accuracy.Standard(seen) * Noise.At(_keys[instrument], at))) + added;
-        return double.Round(value, Digits(gauge.Unit));
+        double scatter = Scatter * gauge.Accuracy.Standard(seen) * Noise.At(_keys[instrument], at);
+        // A flow meter at rest trembles a little above zero.
+        if (truth == 0 && gauge.Unit.Dimension == Dimension.MassFlow) scatter = double.Abs(Trembling * Noise.At(_keys[instrument], at));
+        return double.Round(gauge.Unit.FromSi(truth + scatter) + added, Digits(gauge.Unit));
     }
 
     private static int Digits(UnitOfMeasure unit) => unit.Dimension switch

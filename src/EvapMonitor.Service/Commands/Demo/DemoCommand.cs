@@ -42,28 +42,43 @@ internal sealed class DemoCommand : AsyncCommand<DemoCommand.Settings>
 
     private static async Task MakeReadingsAsync(ServiceHost host, ServiceOptions options, DemoRecord record, DemoClock clock, CancellationToken stop)
     {
+        using var http = new HttpClient { BaseAddress = new Uri(host.Address), Timeout = TimeSpan.FromMinutes(10) };
+        IReadOnlyList<LineReadings> lines = [];
+        bool begun = await TellingAsync("The demo makes no readings", async () =>
+        {
+            lines = DemoPlant.Readings(host.Services.GetRequiredService<Store.PlantHolder>().Current.Site, record.Start);
+            await Task.WhenAll(lines.Select(line => Task.Run(() => line.Simulation.RunTo(clock.Begin), stop)));
+            await DemoCleanings.LogAsync(http, record.Start, record.Start, clock.Begin, stop);
+        }, stop);
+        if (!begun) return;
+        BrokerSettings? broker = BrokerOf(host, options);
+        if (broker is null) Console.WriteLine("No live readings: the own MQTT broker is off and sources.json names none.");
+        await Task.WhenAll(
+            TellingAsync("The history is not whole; another start goes on with it", async () =>
+            {
+                await new DemoHistory(http, options.Data, record, lines).FillAsync(clock.Begin, stop);
+                Console.WriteLine("The history is imported; its evaluation goes on.");
+            }, stop),
+            TellingAsync("The live readings have ended", () =>
+                broker is null ? Task.CompletedTask : new DemoLive(broker, http, record, clock, lines, Console.WriteLine).RunAsync(stop), stop));
+    }
+
+    /// <summary>Does a part; where it fails, says so and leaves the rest to go on.</summary>
+    private static async Task<bool> TellingAsync(string failed, Func<Task> part, CancellationToken stop)
+    {
         try
         {
-            IReadOnlyList<LineReadings> lines = DemoPlant.Readings(host.Services.GetRequiredService<Store.PlantHolder>().Current.Site, record.Start);
-            await Task.WhenAll(lines.Select(line => Task.Run(() => line.Simulation.RunTo(clock.Begin), stop)));
-            using var http = new HttpClient { BaseAddress = new Uri(host.Address), Timeout = TimeSpan.FromMinutes(10) };
-            await DemoCleanings.LogAsync(http, record.Start, record.Start, clock.Begin, stop);
-            Task history = new DemoHistory(http, options.Data, record, lines).FillAsync(clock.Begin, stop);
-            Task live = BrokerOf(host, options) is { } broker
-                ? new DemoLive(broker, http, record, clock, lines, Tell).RunAsync(stop)
-                : Task.CompletedTask;
-            await history;
-            Tell("The history is imported; its evaluation goes on.");
-            await live;
-            if (!stop.IsCancellationRequested) Tell("No live readings: the own MQTT broker is off and sources.json names none.");
+            await part();
+            return true;
         }
         catch (OperationCanceledException) when (stop.IsCancellationRequested)
         {
-            // Another start goes on from here.
+            return false;
         }
-        catch (Exception error) when (error is HttpRequestException or InvalidOperationException or NotSupportedException or IOException)
+        catch (Exception error) when (error is HttpRequestException or OperationCanceledException or InvalidOperationException or NotSupportedException or IOException)
         {
-            Tell($"The demo makes no more readings: {error.Message}");
+            await Console.Error.WriteLineAsync($"{failed}: {error.Message}");
+            return false;
         }
     }
 
@@ -75,6 +90,4 @@ internal sealed class DemoCommand : AsyncCommand<DemoCommand.Settings>
 
     /// <summary>The story's days begin at midnight (UTC).</summary>
     private static DateTimeOffset DayOf(DateTimeOffset now) => new(now.Year, now.Month, now.Day, 0, 0, 0, TimeSpan.Zero);
-
-    private static void Tell(string what) => Console.WriteLine(what);
 }

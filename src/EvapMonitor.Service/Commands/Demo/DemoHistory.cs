@@ -14,6 +14,8 @@ namespace EvapMonitor.Service.Commands.Demo;
 /// </summary>
 internal sealed class DemoHistory(HttpClient http, string folder, DemoRecord record, IReadOnlyList<LineReadings> lines)
 {
+    private const string FilePrefix = "fennholm-";
+
     private static readonly TimeSpan First = TimeSpan.FromDays(2), Others = TimeSpan.FromDays(8);
     private static readonly JsonSerializerOptions Json = new() { PropertyNamingPolicy = JsonNamingPolicy.SnakeCaseLower };
 
@@ -21,6 +23,7 @@ internal sealed class DemoHistory(HttpClient http, string folder, DemoRecord rec
     /// <exception cref="InvalidOperationException">An import failed.</exception>
     public async Task FillAsync(DateTimeOffset end, CancellationToken stop)
     {
+        foreach (string left in Directory.GetFiles(folder, FilePrefix + "*.csv.gz")) File.Delete(left);
         var made = Channel.CreateBounded<(TimeSpanOfHistory Span, string[] Files)>(1);
         using var together = CancellationTokenSource.CreateLinkedTokenSource(stop);
         Task making = Task.Run(() => MakeAsync(Pieces(record.Missing(end)), made.Writer, together.Token), CancellationToken.None);
@@ -70,7 +73,7 @@ internal sealed class DemoHistory(HttpClient http, string folder, DemoRecord rec
 
     private string[] Make(TimeSpanOfHistory span)
     {
-        string name = Path.Combine(folder, $"fennholm-{span.From:yyyyMMdd-HHmm}");
+        string name = Path.Combine(folder, $"{FilePrefix}{span.From:yyyyMMdd-HHmm}");
         string[] files = [name + "-instruments.csv.gz", name + "-others.csv.gz"];
         using StreamWriter wide = Packed(files[0]), marked = Packed(files[1]);
         HistoryWriter.Write(wide, marked, lines, span.From, span.To);

@@ -28,16 +28,14 @@ internal sealed class DemoLive(BrokerSettings broker, HttpClient http, DemoRecor
                 }
 
                 foreach (LineReadings line in lines) line.Simulation.RunTo(next);
-                string?[] failures = await Task.WhenAll(gateways.Select((gateway, i) => gateway.PublishAsync(Known(lines[i], published, next), stop)));
-                string? failure = Array.Find(failures, failure => failure is not null);
-                if (failure != trouble && failure is not null) tell($"Readings cannot be published to {broker.Address}: {failure}. They are kept and tried again.");
+                string? failure = await TryAsync(gateways, published, next, stop);
+                if (failure is not null && failure != trouble) tell($"Readings cannot be published: {failure}. They are kept and tried again.");
                 if ((trouble = failure) is not null)
                 {
                     await Task.Delay(5 * Pause, stop);
                     continue;
                 }
 
-                await DemoCleanings.LogAsync(http, record.Start, published, next, stop);
                 published = next;
                 if (published - noted < NoteEvery) continue;
                 record.Done(new(noted, published));
@@ -48,6 +46,22 @@ internal sealed class DemoLive(BrokerSettings broker, HttpClient http, DemoRecor
         {
             if (published > noted) record.Done(new(noted, published));
             foreach (ReadingPublisher gateway in gateways) await gateway.DisposeAsync();
+        }
+    }
+
+    /// <summary>Publishes and logs what became known in a stretch; gives why that failed, or null. Done again it changes nothing.</summary>
+    private async Task<string?> TryAsync(ReadingPublisher[] gateways, DateTimeOffset from, DateTimeOffset to, CancellationToken stop)
+    {
+        string?[] failures = await Task.WhenAll(gateways.Select((gateway, i) => gateway.PublishAsync(Known(lines[i], from, to), stop)));
+        if (Array.Find(failures, failure => failure is not null) is { } failure) return $"{broker.Address}: {failure}";
+        try
+        {
+            await DemoCleanings.LogAsync(http, record.Start, from, to, stop);
+            return null;
+        }
+        catch (HttpRequestException error)
+        {
+            return error.Message;
         }
     }
 
