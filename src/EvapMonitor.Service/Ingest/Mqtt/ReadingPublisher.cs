@@ -33,6 +33,8 @@ internal sealed class ReadingPublisher(BrokerSettings broker, string topic) : IA
         }
         catch (Exception error) when (error is MqttCommunicationException or MqttProtocolViolationException or InvalidOperationException or IOException or TimeoutException)
         {
+            // The library tells a cancellation in the same ways as a failure.
+            stop.ThrowIfCancellationRequested();
             return error.GetBaseException().Message;
         }
     }
