@@ -23,7 +23,9 @@ internal sealed class Stillness(IReadOnlyList<Instrument> instruments, WindowPar
         return able > 0 && 2 * moved >= able;
     }
 
-    /// <summary>Whether a signal moved beyond its resolution within some windows; null when it was not there all the time.</summary>
+    private static bool IsFlow(Dimension dimension) => dimension is Dimension.MassFlow or Dimension.VolumeFlow or Dimension.Power;
+
+    /// <summary>Whether a signal moved beyond its resolution within some windows; null when it was not there all the time, or at rest.</summary>
     private bool? Moved(int signal, int first, int last)
     {
         WindowPartial[] windows = partials[signal];
@@ -37,6 +39,7 @@ internal sealed class Stillness(IReadOnlyList<Instrument> instruments, WindowPar
             if (highest - lowest > instruments[signal].Resolution) return true;
         }
 
-        return false;
+        // A meter with a low-flow cut-off says nothing for as long as nothing flows.
+        return IsFlow(instruments[signal].Unit.Dimension) && lowest == 0 && highest == 0 ? null : false;
     }
 }

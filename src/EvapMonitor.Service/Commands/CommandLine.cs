@@ -1,3 +1,4 @@
+using EvapMonitor.Service.Commands.Demo;
 using Spectre.Console.Cli;
 
 namespace EvapMonitor.Service.Commands;
@@ -13,7 +14,7 @@ internal static class CommandLine
         {
             commands.SetApplicationName("evapmonitor");
             commands.AddCommand<RunCommand>("run").WithDescription("Run the service, with the plant file given or the revision last accepted.");
-            commands.AddCommand<DemoCommand>("demo").WithDescription("Run the service with an invented plant and its history.");
+            commands.AddCommand<DemoCommand>("demo").WithDescription("Run the service with an invented plant: its history, then live readings over MQTT.");
             commands.AddCommand<CheckCommand>("check").WithDescription("Check a plant file; say per effect what can be computed and from which instruments.");
             commands.AddCommand<EvaluateCommand>("evaluate").WithDescription("The whole computation on files alone, without a database.");
             commands.AddCommand<ImportCommand>("import").WithDescription("Send history files to a running service and follow their import.");

@@ -28,15 +28,14 @@ internal static class FuzzProof
         proof.Say("|---|---|---|---|---|");
         var start = new DateTimeOffset(2026, 1, 1, 0, 0, 0, TimeSpan.Zero);
         string plant = DemoPlant.PlantFile(start);
-        using var history = new StringWriter();
-        DemoPlant.WriteHistory(history, start, start.AddMinutes(20));
+        string history = ImportProof.DemoHistory(start, start.AddMinutes(20));
         long threw = 0;
         var reader = new MessageReader([MessageRule.OwnBroker]);
         threw += Run(proof, "MQTT payload", inputs * 4 / 10, seed, ["12.5", """{"value":1.5,"time":"2026-03-01T14:05:00Z","quality":"good","signal":"N.FT-10"}""", """{"a":1,"b":[{"c":null}]}"""],
             text => reader.Read("N.FT-10", new ReadOnlySequence<byte>(text), 1_780_000_000_000, false, out IReadOnlyList<IncomingReading> taken, out _) == MessageVerdict.Malformed || taken.All(Sound));
         threw += Run(proof, "HTTP body", inputs * 3 / 10, seed + 1, ["""{"readings":[{"signal":"N.FT-10","at":"2026-03-01T14:05:00Z","value":1.2,"quality":"good"},{"signal":"B","at":"2026-03-01T15:05:00+01:00","value":null,"quality":"bad"}]}"""],
             text => ReadingBody.Read(text, out string? wrong) is { } taken && (wrong is not null || taken.All(Sound)));
-        threw += Run(proof, "history file", inputs * 2 / 10, seed + 2, [history.ToString(), "time;signal;value;quality\n2026-10-25 02:30:00;A;1,5;good\n2026-10-25 02:10:00;A;1,6;0x80000000\n", "time,signal,value\n2026-03-01T14:05:00Z,\"A\",1e3\n"], ReadFile);
+        threw += Run(proof, "history file", inputs * 2 / 10, seed + 2, [history, "time;signal;value;quality\n2026-10-25 02:30:00;A;1,5;good\n2026-10-25 02:10:00;A;1,6;0x80000000\n", "time,signal,value\n2026-03-01T14:05:00Z,\"A\",1e3\n"], ReadFile);
         threw += Run(proof, "plant file", inputs - (inputs * 9 / 10), seed + 3, [plant], text => PlantFileReader.Read(text) is var result && (result.Site is null) == (result.Problems.Count > 0));
         proof.Write(seed);
         return Task.FromResult(threw == 0 ? 0 : 1);

@@ -1,10 +1,9 @@
 using EvapMonitor.Service.Tests.Support;
-using EvapMonitor.Simulator;
 
 namespace EvapMonitor.Service.Tests.Browser;
 
 /// <summary>
-/// The demo plant for the browser: the floor of N4 set so high that it is due, and texts from outside that would do harm if a page took them for markup.
+/// A line of the demo plant for the browser: the floor of N4 set so high that it is due, and texts from outside that would do harm if a page took them for markup.
 /// </summary>
 public sealed class DashboardService(PostgresServer server) : IAsyncLifetime
 {
@@ -13,7 +12,7 @@ public sealed class DashboardService(PostgresServer server) : IAsyncLifetime
     private RunningService? _service;
 
     internal static string Plant { get; } = "# <script>document.title='taken'</script>" + Environment.NewLine
-        + DemoPlant.PlantFile(ApiService.Start).Replace("coefficient-below: 720", "coefficient-below: 1500", StringComparison.Ordinal);
+        + ApiService.Plant.Replace("coefficient-below: 720", "coefficient-below: 1500", StringComparison.Ordinal);
 
     public PostgresServer Server => server;
 

@@ -1,12 +1,13 @@
 using System.Net;
 using System.Net.Http.Json;
 using System.Text.Json;
+using EvapMonitor.Service.PlantFile;
 using EvapMonitor.Simulator;
 
 namespace EvapMonitor.Service.Tests.Support;
 
 /// <summary>
-/// A service with the demo plant and two days of its history, evaluated, shared by the tests of one class. Its present is just after the end of the history.
+/// A service with the north line of the demo plant and two days of its history, evaluated, shared by the tests of one class. Its present is just after the end of the history.
 /// </summary>
 public class ApiService(PostgresServer server) : IAsyncLifetime
 {
@@ -18,16 +19,18 @@ public class ApiService(PostgresServer server) : IAsyncLifetime
 
     private static readonly Lazy<string> Readings = new(() =>
     {
-        var text = new StringWriter { NewLine = "\n" };
-        DemoPlant.WriteHistory(text, Start, End);
-        return text.ToString();
+        IReadOnlyList<LineReadings> lines = DemoPlant.Readings(PlantFileReader.Read(Plant).Site!, Start);
+        foreach (LineReadings line in lines) line.Simulation.RunTo(End);
+        using StringWriter wide = new(), marked = new();
+        HistoryWriter.Write(wide, marked, lines, Start, End);
+        return wide.ToString();
     });
 
     private RunningService? _service;
 
     public static string History => Readings.Value;
 
-    public static string Plant => DemoPlant.PlantFile(Start);
+    public static string Plant => DemoPlant.PlantFile(Start, "north");
 
     public RunningService Service => _service ?? throw new InvalidOperationException("The prerequisites of the service are missing.");
 

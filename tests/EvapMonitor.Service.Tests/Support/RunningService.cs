@@ -38,11 +38,11 @@ public sealed class RunningService : IAsyncDisposable
     public static async Task<RunningService> StartAsync(PostgresServer server, string plant, DateTimeOffset? now = null) =>
         await StartAsync(await server.CreateDatabaseAsync(), plant, now);
 
-    public static async Task<RunningService> StartAsync(string connection, string plant, DateTimeOffset? now = null)
+    public static async Task<RunningService> StartAsync(string connection, string plant, DateTimeOffset? now = null, string ownBroker = "off")
     {
         string folder = TemporaryFolder.Create(), file = Path.Combine(folder, "plant.yaml");
         await File.WriteAllTextAsync(file, plant, Stop);
-        var options = new ServiceOptions { Plant = file, Data = folder, Connection = connection, Listen = "http://127.0.0.1:0", Ingest = new() { OwnBroker = "off", ReserveMebibytes = "0" } };
+        var options = new ServiceOptions { Plant = file, Data = folder, Connection = connection, Listen = "http://127.0.0.1:0", Ingest = new() { OwnBroker = ownBroker, ReserveMebibytes = "0" } };
         ServiceHost host = await ServiceHost.StartAsync(options, Stop, now is { } start ? new ShiftedClock(start) : null, LogEventLevel.Fatal);
         return new RunningService(folder, host, connection);
     }

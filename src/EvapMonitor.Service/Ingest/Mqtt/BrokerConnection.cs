@@ -94,7 +94,8 @@ internal sealed class BrokerConnection : IAsyncDisposable
         _client.Dispose();
     }
 
-    private static MqttClientOptions OptionsOf(BrokerSettings settings)
+    /// <summary>How a client connects to a broker.</summary>
+    internal static MqttClientOptions OptionsOf(BrokerSettings settings)
     {
         MqttClientOptionsBuilder options = new MqttClientOptionsBuilder()
             .WithTcpServer(settings.Host, settings.Port)
