@@ -18,6 +18,8 @@ public enum HourQuantity : short
     BoilingTemperature = 5,
     /// <summary>Boiling-point elevation, K.</summary>
     Elevation = 6,
+    /// <summary>Heat flux over the surface in service, W/m².</summary>
+    HeatFlux = 7,
 }
 
 /// <summary>One quantity of one effect over one hour of production.</summary>
@@ -59,8 +61,16 @@ public sealed record EffectHour(long Hour, HourQuantity Quantity, int Count, Mea
         HourQuantity.HeatingTemperature => window.HeatingTemperature,
         HourQuantity.BoilingTemperature => window.BoilingTemperature,
         HourQuantity.Elevation => window.Elevation,
+        HourQuantity.HeatFlux => Flux(window),
         _ => throw new ArgumentOutOfRangeException(nameof(quantity), quantity, null),
     };
+
+    /// <summary>Q/A is U·(Ts − Tb): so the surface in service counts, not all that is listed.</summary>
+    private static Measured Flux(EffectWindow window)
+    {
+        double flux = window.Coefficient.Value * window.DrivingForce.Value, share = flux / window.Duty.Value;
+        return double.IsFinite(flux) && double.IsFinite(share) ? new(flux, share * window.Duty.Systematic, share * window.Duty.Random) : Measured.Absent;
+    }
 
     private static EffectHour Summarise(long hour, HourQuantity quantity, Measured[] values)
     {

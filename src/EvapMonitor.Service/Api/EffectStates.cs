@@ -70,7 +70,7 @@ public sealed class EffectStates(TrendStore trends, CleaningStore cleanings, Tim
             Number(coefficient.Value), Number(coefficient.Standard), Number(coefficient.Random),
             Celsius(Mean(HourQuantity.HeatingTemperature).Value, lastOne.HeatingTemperature.Value), Celsius(Mean(HourQuantity.BoilingTemperature).Value, lastOne.BoilingTemperature.Value),
             Number(Mean(HourQuantity.Elevation).Value), Number(force.Value), Number(force.Standard),
-            Number(duty.Value / 1000), Number(duty.Standard / 1000), Number(duty.Value / 1000 / effect.Area),
+            Number(duty.Value / 1000), Number(duty.Standard / 1000), Number(Mean(HourQuantity.HeatFlux).Value / 1000),
             Number(cleanliness.Value), Number(cleanliness.Standard), Number(resistance.Value), Number(resistance.Standard),
             clean?.Source, Words.Of(lastOne.DutyFrom), Words.Of(lastOne.HeatingFrom), Words.Of(lastOne.BoilingFrom), reason);
     }

@@ -25,7 +25,7 @@ public sealed class Trends(TrendStore store)
         ["fouling_resistance"] = new("m2.K/W", HourQuantity.Coefficient, (value, _, clean) => CleanComparison.Resistance(value, clean)),
         ["driving_force"] = new("K", HourQuantity.DrivingForce, (value, _, _) => value),
         ["duty"] = new("kW", HourQuantity.Duty, (value, _, _) => Scaled(value, 1e-3)),
-        ["heat_flux"] = new("kW/m2", HourQuantity.Duty, (value, effect, _) => Scaled(value, 1e-3 / effect.Area)),
+        ["heat_flux"] = new("kW/m2", HourQuantity.HeatFlux, (value, _, _) => Scaled(value, 1e-3)),
         ["heating_temperature"] = new("degC", HourQuantity.HeatingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
         ["boiling_temperature"] = new("degC", HourQuantity.BoilingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
         ["elevation"] = new("K", HourQuantity.Elevation, (value, _, _) => value),
