@@ -29,7 +29,7 @@ public sealed class LineEvaluation
         _line = line;
         _instruments = new LineInstruments(line);
         _conditioned = [.. _instruments.All, .. site.Atmosphere.Measured is { } air && _instruments.All.All(instrument => instrument.Signal != air.Signal) ? [air] : Array.Empty<Instrument>()];
-        _coefficients = new ApparentCoefficients(_instruments, new LineGraph(line));
+        _coefficients = new ApparentCoefficients(_instruments, LineGraph.OfSurfaces(line));
         TimeSpan stale = _conditioned.Select(instrument => instrument.StaleAfter).DefaultIfEmpty().Max();
         TimeSpan still = _conditioned.Select(instrument => instrument.FrozenAfter).DefaultIfEmpty().Max();
         TimeSpan laboratory = LaboratoryPlaces().Select(place => place.ValidFor).DefaultIfEmpty().Max();

@@ -9,8 +9,14 @@ namespace EvapMonitor.Core.Balances;
 /// </summary>
 internal sealed class BalanceStart(LineGraph graph, LineVariables variables, LineProperties properties)
 {
-    private const double SteamTemperature = 393, LastTemperature = 330, FeedSolids = 0.14, ProductSolids = 0.55;
+    private const double FeedSolids = 0.14, ProductSolids = 0.55;
     private readonly int[] _depth = Depths(graph);
+
+    /// <summary>
+    /// Temperature of a last vapour and driving force of an effect without any instrument, K (common practice, without source): recompression works at less.
+    /// </summary>
+    private readonly (double Last, double Force) _usual = graph.Heating.Any(way => way.From == LineGraph.Steam && graph.BySteamAlone[way.To]) || graph.Line.Recompressors.Count == 0 ? (330, 9)
+        : graph.Line.Recompressors.Any(machine => machine.Kind == RecompressorKind.Mechanical) ? (373, 6) : (318, 7);
 
     /// <summary>Fills a state.</summary>
     /// <param name="x">Receives a value for each variable.</param>
@@ -20,7 +26,6 @@ internal sealed class BalanceStart(LineGraph graph, LineVariables variables, Lin
     {
         double Known(int variable, double otherwise) => variable >= 0 && double.IsFinite(known[variable]) ? known[variable] : otherwise;
         Array.Clear(x);
-        Pressures(x, known);
         double feed = double.Max(Known(variables.FeedFlow, typicalFlow), 0.05 * typicalFlow);
         double solids = Known(variables.FeedSolids, FeedSolids), thick = double.Max(Known(variables.ProductSolids, ProductSolids), solids + 0.01);
         double product = Known(variables.ProductFlow, solids > 0 ? feed * solids / thick : 0.5 * feed);
@@ -28,6 +33,7 @@ internal sealed class BalanceStart(LineGraph graph, LineVariables variables, Lin
         (x[variables.FeedFlow], x[variables.FeedSolids], x[variables.FeedTemperature]) = (feed, solids, Known(variables.FeedTemperature, 350));
         (x[variables.ProductFlow], x[variables.ProductSolids], x[variables.Evaporation]) = (product, Known(variables.ProductSolids, solids * feed / product), feed - product);
         Liquor(x, feed, solids, (feed - product) / graph.Line.Effects.Count);
+        Pressures(x, known);
         Vapour(x);
         Machines(x);
         for (int i = 0; i < known.Length; i++)
@@ -44,25 +50,34 @@ internal sealed class BalanceStart(LineGraph graph, LineVariables variables, Lin
         }
     }
 
-    /// <summary>Evenly from steam to condenser by depth, and through what is measured.</summary>
+    /// <summary>From steam to condenser by depth, each step a driving force and the elevation there, and through what is measured.</summary>
     private void Pressures(double[] x, double[] known)
     {
+        double Saturation(int variable) => variable >= 0 && known[variable] > 700 ? properties.SaturationTemperature(known[variable]).Value : double.NaN;
         int deepest = _depth.Max();
-        double top = SteamTemperature, last = LastTemperature;
-        if (variables.SteamPressure >= 0 && known[variables.SteamPressure] > 700) top = properties.SaturationTemperature(known[variables.SteamPressure]).Value;
+        double[] elevation = new double[deepest + 1];
+        (double top, double last) = (Saturation(variables.SteamPressure), double.NaN);
         for (int i = 0; i < _depth.Length; i++)
         {
-            if (_depth[i] == deepest && known[variables.Effects[i].VapourPressure] > 700) last = properties.SaturationTemperature(known[variables.Effects[i].VapourPressure]).Value;
-            if (_depth[i] == 1 && known[variables.Effects[i].ChestPressure] > 700) top = properties.SaturationTemperature(known[variables.Effects[i].ChestPressure]).Value;
+            EffectVariables at = variables.Effects[i];
+            elevation[_depth[i]] = double.Max(elevation[_depth[i]], properties.Elevation(x[at.Solids], 350, 0, out _).Value);
+            if (_depth[i] == deepest && Saturation(at.VapourPressure) is var lowest && !double.IsNaN(lowest)) last = lowest;
+            if (_depth[i] == 1 && Saturation(at.ChestPressure) is var highest && !double.IsNaN(highest)) top = highest;
         }
 
-        double step = double.Max(2, (top - last) / deepest);
+        double lost = elevation.Sum();
+        if (double.IsNaN(last)) last = double.IsNaN(top) ? _usual.Last : double.Max(300, top - lost - (deepest * _usual.Force));
+        if (double.IsNaN(top)) top = last + lost + (deepest * _usual.Force);
+        double force = double.Max(2, (top - last - lost) / deepest);
+        double[] vapour = new double[deepest + 1];
+        vapour[0] = top;
+        for (int d = 1; d <= deepest; d++) vapour[d] = vapour[d - 1] - force - elevation[d];
         if (variables.SteamPressure >= 0) x[variables.SteamPressure] = Pressure(top);
         for (int i = 0; i < _depth.Length; i++)
         {
             EffectVariables at = variables.Effects[i];
-            x[at.VapourPressure] = known[at.VapourPressure] > 700 ? known[at.VapourPressure] : Pressure(top - (_depth[i] * step));
-            x[at.ChestPressure] = Pressure(top - ((_depth[i] - 1) * step));
+            x[at.VapourPressure] = known[at.VapourPressure] > 700 ? known[at.VapourPressure] : Pressure(vapour[_depth[i]]);
+            x[at.ChestPressure] = Pressure(vapour[_depth[i] - 1]);
         }
 
         // A chest has the pressure of the vapour that heats it.

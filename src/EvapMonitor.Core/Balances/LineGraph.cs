@@ -74,6 +74,16 @@ public sealed class LineGraph
         Bodies = [.. line.Effects.Select(effect => BodiesOf(line, effect, inService))];
     }
 
+    /// <summary>
+    /// The graph of a line in which each effect is one surface, whichever bodies make it up: for a balance, which needs no surface, and in which a spare body may stand
+    /// in several places.
+    /// </summary>
+    public static LineGraph OfSurfaces(Line line)
+    {
+        ArgumentNullException.ThrowIfNull(line);
+        return new LineGraph(line, line.Effects.ToDictionary(effect => effect.Name, effect => (IReadOnlyList<string>)[effect.Name], StringComparer.Ordinal));
+    }
+
     /// <summary>The line.</summary>
     public Line Line { get; }
 

@@ -57,6 +57,30 @@ internal sealed class MeasurementEquations
         };
     }
 
+    /// <summary>What an instrument reads at a state of the line; NaN when it sees nothing of the balance.</summary>
+    public double WouldRead(int place, double[] state)
+    {
+        foreach (Equation equation in _all)
+        {
+            if (equation.Place != place && equation.Second != place) continue;
+            double at = state[equation.Variable];
+            switch (equation.Kind)
+            {
+                case Reading.Plain: return at;
+                case Reading.LiquorVolume: return at / Density(equation, state);
+                case Reading.WaterVolume: return at / Physical.WaterMassFlow(1, _at.All[place].Unit, state[equation.First]);
+                case Reading.Subcooling: return state[equation.First] - at;
+                case Reading.Superheat: return _properties.SaturationTemperature(state[equation.First]).Value + at;
+                default:
+                    // Steam before a valve or a nozzle: dry, at some pressure above the chest's.
+                    const double before = 8e5;
+                    return equation.Second == place ? _properties.SaturationTemperature(before).Value + 5 : before;
+            }
+        }
+
+        return double.NaN;
+    }
+
     /// <summary>The equations that hold while some places have a value.</summary>
     public List<Equation> Active(Func<int, bool> hasValue) => _all.FindAll(equation => (equation.Place < 0 || hasValue(equation.Place)) && (equation.Second < 0 || hasValue(equation.Second))
         && (equation.Unless < 0 || !hasValue(equation.Unless)));

@@ -84,6 +84,24 @@ internal sealed class Reconciliation
     /// <summary>What an instrument's reading says of a variable: a volume as a mass, with the density of the reconciled state.</summary>
     public double ReadingOf(int variable, int place, double reading) => _measurements.ReadingOf(variable, place, reading, State);
 
+    /// <summary>What a column of measured quantities is, in words.</summary>
+    public string NameOf(int column) => column < _instruments.All.Count ? _instruments.All[column].Signal
+        : column == _measurements.AirColumn ? "atmosphere" : _measurements.StatedOnes[column - _measurements.AirColumn - 1].Name;
+
+    /// <summary>Fills inputs with what the instruments would read at the plain state from which a window without any reading begins.</summary>
+    public void Typical(LineInputs inputs)
+    {
+        Array.Fill(_known, double.NaN);
+        _start.Fill(State, _typicalFlow, _known);
+        ReadFrom(State, inputs);
+    }
+
+    /// <summary>Fills inputs with what the instruments read at a state; absent where an instrument sees nothing of the balance.</summary>
+    public void ReadFrom(double[] state, LineInputs inputs)
+    {
+        for (int place = 0; place < inputs.Value.Length; place++) inputs.Value[place] = _measurements.WouldRead(place, state);
+    }
+
     /// <summary>Corrections of the measured quantities in their standard uncertainties, and what is left of each.</summary>
     public Redundancy Corrections => _redundancy;
 

@@ -50,6 +50,14 @@ internal sealed class BalanceQuantities(Reconciliation balance)
         return With(coefficient);
     }
 
+    /// <summary>Of the quantity asked last: the share of its variance that each measured and each stated quantity brings.</summary>
+    public IEnumerable<(string Name, double Share)> LastShares()
+    {
+        double all = 0;
+        foreach (double one in _sensitivity) all += one * one;
+        for (int column = 0; column < _sensitivity.Length && all > 0; column++) yield return (balance.NameOf(column), _sensitivity[column] * _sensitivity[column] / all);
+    }
+
     /// <summary>All that the balance shows.</summary>
     public BalanceWindow Window(LineInputs inputs, IReadOnlyList<IReadOnlyList<int>> suspects, IReadOnlyList<int> leftOut)
     {

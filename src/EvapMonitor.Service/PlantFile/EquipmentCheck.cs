@@ -5,33 +5,13 @@ namespace EvapMonitor.Service.PlantFile;
 /// <summary>What <c>evapmonitor check</c> says of bodies, tanks, flash, heaters and recompressors, and whether the line can be rated.</summary>
 internal static class EquipmentCheck
 {
-    /// <summary>The duty of an effect by the condensate of its chest.</summary>
-    public static Sourced Condensate(Line line, Effect effect)
-    {
-        string missing = $"a condensate flow of {effect.Name}";
-        string? flow = effect.Chest.CondensateFlow is { } meter ? "condensate flow " + meter.Signal : null;
-        if (line.Recompressors.FirstOrDefault(m => effect.Heating.Any(h => h.Recompressor == m.Name)) is not { } machine)
-            return flow is null ? new(null, missing) : new(flow, null);
-        if (effect.Heating.Count > 1) return new(null, $"the shares in which {machine.Name} and the other source heat {effect.Name}");
-        List<string> around = [];
-        foreach (Effect heated in line.Effects.Where(e => e != effect && e.Heating.Any(h => h.Recompressor == machine.Name)))
-        {
-            if (heated.Chest.CondensateFlow is null) around.Add($"a condensate flow of {heated.Name}");
-        }
-
-        if (flow is null) around.Insert(0, missing);
-        if (machine.Kind == RecompressorKind.Thermal && machine.Motive is not { Flow: not null, Pressure: not null }) around.Add($"flow and pressure of the motive steam of {machine.Name}");
-        if (machine.Kind == RecompressorKind.Mechanical && machine.Power is null) around.Add($"the power of {machine.Name}");
-        return around.Count == 0 ? new($"{flow} with what {machine.Name} delivers", null) : new(null, string.Join(" and ", around));
-    }
-
     /// <summary>The report, line by line; nothing for a line that has none of all this.</summary>
     public static IEnumerable<string> Report(Line line)
     {
         foreach (Body body in line.Bodies.Where(b => b.Serves.Count > 0))
             yield return Invariant($"  {body.Name}: {body.Area:0.##} m2, serves {string.Join(", ", body.Serves.Select(s => $"{s.Key} when {s.Value.Instrument.Signal} says so"))}");
         foreach (Tank tank in line.Tanks)
-            yield return $"  {tank.Name}: tank behind {tank.From ?? "the feed"}; what leaves it is not told by what enters it, so the liquor side of the effect behind it waits for the balance of the line";
+            yield return $"  {tank.Name}: tank behind {tank.From ?? "the feed"}; what leaves it is not told by what enters it";
         foreach (CondensateFlash flash in line.CondensateFlashes)
             yield return $"  condensate of {flash.From} flashes into the chest of {flash.To}" + (line.CondensateFlashes.Any(f => f.From == flash.To) ? ", and what is left goes on with its condensate" : "");
         foreach (Heater heater in line.Heaters) yield return "  " + Of(line, heater);

@@ -1,9 +1,12 @@
+using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Plant;
+using EvapMonitor.Core.Properties;
 
 namespace EvapMonitor.Service.PlantFile;
 
 /// <summary>
-/// What <c>evapmonitor check</c> says of a sound plant file: per effect what can be computed, from which instruments, and what is missing.
+/// What <c>evapmonitor check</c> says of a sound plant file: per effect how sure its coefficient will be, on which
+/// instruments that rests, and what one more would bring, at a typical state of the line.
 /// </summary>
 public static class PlantCheck
 {
@@ -24,21 +27,18 @@ public static class PlantCheck
     private static void Report(Line line, List<string> report)
     {
         report.Add("");
-        report.Add($"Line {line.Name}: {Liquor(line.Liquor)}");
-        IReadOnlyList<EffectCheck> checks = EffectCheck.Of(line);
-        foreach (EffectCheck check in checks)
+        report.Add($"Line {line.Name}: {LiquorOf(line.Liquor)}");
+        IReadOnlyList<CoefficientBasis> all = CoefficientBasis.Of(line, TypicalLiquor(line.Liquor), unit => AssumedAccuracy.For(unit, null));
+        foreach ((Effect effect, CoefficientBasis basis) in line.Effects.Zip(all))
         {
-            report.Add(Head(check.Effect));
-            report.Add("    heating temperature: " + Words(check.Heating));
-            report.Add("    boiling temperature: " + Words(check.Boiling));
-            report.Add("    duty:                " + Words(check.Duty));
-            string coefficient = check.IsComplete ? "from these" : "not from these alone; the balance of the line may still give it";
-            report.Add("    coefficient:         " + coefficient);
+            report.Add(Head(effect));
+            report.Add("    coefficient:         " + Known(basis));
+            if (OneMore(basis) is { } more) report.Add("    one more instrument: " + more);
         }
 
         report.AddRange(EquipmentCheck.Report(line));
         Assumed("  accuracy assumed", SiteInstruments.Of(line), report);
-        report.Add(Invariant($"  {checks.Count(c => c.IsComplete)} of {checks.Count} effects have a coefficient from their own instruments"));
+        report.Add(Invariant($"  {all.Count(basis => basis.RelativeStandard is not null)} of {all.Count} effects have a coefficient"));
     }
 
     private static void Assumed(string begin, IEnumerable<InstrumentAtPlace> instruments, List<string> report)
@@ -48,7 +48,7 @@ public static class PlantCheck
         if (assumed.Count > 0) report.Add($"{begin}: {string.Join(", ", assumed)}");
     }
 
-    private static string Liquor(LiquorChoice choice)
+    private static string LiquorOf(LiquorChoice choice)
     {
         if (choice.Always is { } always) return "liquor " + always.Name;
         IEnumerable<string> values = choice.ByValue.OrderBy(v => v.Key).Select(v => Invariant($"{v.Key} {v.Value.Name}"));
@@ -63,7 +63,23 @@ public static class PlantCheck
         return Invariant($"  {effect.Name}: {effect.Area:0.##} m2{bodies}, heated by {heating}, liquor from {liquor}");
     }
 
-    private static string Words(Sourced sourced) => sourced.From ?? "missing: " + sourced.Missing;
+    private static string Known(CoefficientBasis basis)
+    {
+        string rests = string.Join(", ", basis.RestsOn.Take(5).Select(one => Invariant($"{one.Name} {one.Share * 100:0} %")));
+        return basis.RelativeStandard is { } known ? Invariant($"about ±{known * 100:0.0} % (standard); its uncertainty comes from {rests}")
+            : basis.TooUncertain ? $"none: it would be uncertain by more than 25 %; that comes from {rests}"
+            : "none: it does not follow from these instruments";
+    }
+
+    private static string? OneMore(CoefficientBasis basis)
+    {
+        if (basis.OneMore.Count == 0) return basis.RelativeStandard is null ? "no single one is enough" : null;
+        return string.Join(", or ", basis.OneMore.Select(one => Invariant($"{one.Instrument} (±{one.RelativeStandard * 100:0.0} %)"))) + (basis.RelativeStandard is null ? " would give it" : " would make it surer");
+    }
+
+    /// <summary>Where a signal tells the product: the first that is not water.</summary>
+    private static Liquor TypicalLiquor(LiquorChoice choice) =>
+        choice.Always ?? choice.ByValue.OrderBy(one => one.Key).Select(one => one.Value).FirstOrDefault(one => one is not Water) ?? choice.ByValue.Values.First();
 
     private static string Names(IEnumerable<string> names) => string.Join(" and ", names);
 }

@@ -1,4 +1,5 @@
 using System.Text;
+using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Plant;
 using EvapMonitor.Service.PlantFile;
 
@@ -62,6 +63,10 @@ internal static class Examples
             yield return text.ToString();
         }
     }
+
+    /// <summary>On what the coefficients of a line rest.</summary>
+    public static IReadOnlyList<CoefficientBasis> Bases(Line line) =>
+        CoefficientBasis.Of(line, line.Liquor.Always ?? line.Liquor.ByValue.Values.Last(), unit => AssumedAccuracy.For(unit, null));
 
     public static Site Sound(string text)
     {

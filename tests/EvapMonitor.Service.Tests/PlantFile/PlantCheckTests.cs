@@ -1,3 +1,4 @@
+using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Plant;
 using EvapMonitor.Service.PlantFile;
 
@@ -6,83 +7,51 @@ namespace EvapMonitor.Service.Tests.PlantFile;
 public sealed class PlantCheckTests
 {
     [Fact]
-    public void ForwardExample_ReportsEveryWayAndWhatIsMissing()
+    public void Report_SaysOfEachEffectHowSureItIs_OnWhatThatRests_AndWhatOneMoreWouldBring()
     {
         Assert.Equal(
             """
-            Site Tarnholt (Europe/Copenhagen), windows of 5 min, history from 2024-12-31 23:00 UTC
+            Site Ostmarsch (Europe/Berlin), windows of 5 min, history from 2025-02-28 23:00 UTC
 
-            Line west: liquor told by W.PRODUCT (0 water, 1 juice)
-              W1: 1450 m2, heated by steam, liquor from the feed
-                heating temperature: chest pressure W1.PT-1; also steam main gauge W.PT-01 at the chest
-                boiling temperature: thermometer W1.TT-2 that sees flashed liquor
-                duty:                steam flow W.FT-01; also condensate flow W1.FT-3
-                coefficient:         from these
-              W2: 1300 m2, heated by vapour of W1, liquor from W1
-                heating temperature: vapour pressure W1.PT-2 of W1
-                boiling temperature: vapour pressure W2.PT-2 and elevation at solids W2.DT-2
-                duty:                condensate flow W2.FT-3
-                coefficient:         from these
-              W3: 1300 m2, heated by vapour of W2, liquor from W2
-                heating temperature: vapour pressure W2.PT-2 of W2
-                boiling temperature: missing: the solids leaving W3 (for the elevation), or a thermometer that sees flashed liquor
-                duty:                condensate flow W3.FT-3
-                coefficient:         not from these alone; the balance of the line may still give it
-              W4: 1200 m2, heated by vapour of W3, liquor from W3
-                heating temperature: vapour pressure W3.PT-2 of W3
-                boiling temperature: vapour pressure W4.PT-2 and elevation at product solids W.DT-90
-                duty:                condensate flow W4.FT-3
-                coefficient:         from these
-              accuracy assumed: W4.LT-2 ±0.125 m
-              3 of 4 effects have a coefficient from their own instruments
+            Line pilot: liquor blend
+              A: 85 m2, heated by steam, liquor from the feed
+                coefficient:         about ±3.9 % (standard); its uncertainty comes from A.PV 44 %, A.TC 33 %, elevation correlation 22 %
+                one more instrument: a thermometer in flashed liquor of A (±3.2 %) would make it surer
+              B: 85 m2, heated by vapour of A, liquor from the feed and A
+                coefficient:         about ±5.2 % (standard); its uncertainty comes from B.PV 57 %, A.PV 23 %, elevation correlation 19 %
+                one more instrument: a thermometer in flashed liquor of B (±3.6 %) would make it surer
+              accuracy assumed: FEED.T ±0.5 °C
+              2 of 2 effects have a coefficient
             """.ReplaceLineEndings("\n"),
-            string.Join('\n', PlantCheck.Report(Examples.Sound(Examples.Text("forward-four-effects.yaml")))));
-    }
-
-    [Fact]
-    public void BackwardExample_TakesTheLiquorSide()
-    {
-        IReadOnlyList<EffectCheck> checks = EffectCheck.Of(Examples.Sound(Examples.Text("backward-three-effects.yaml")).Lines[0]);
-        Assert.Equal("steam flow F101; also liquor side: flow F122 and solids A122 with product solids A190", checks[0].Duty.From);
-        Assert.Equal("liquor side: flow F132 and solids A132 with solids A122", checks[1].Duty.From);
-        Assert.Equal("liquor side: feed flow F100 and feed solids A100 with solids A132", checks[2].Duty.From);
-        Assert.Equal("vapour pressure P122 of E2", checks[2].Heating.From);
-        Assert.All(checks, check => Assert.True(check.IsComplete));
-    }
-
-    [Fact]
-    public void NoInstrumentsAtAll_NamesThoseThatWouldHelp()
-    {
-        Line line = Examples.Sound(Examples.Small).Lines[0];
-        EffectCheck second = EffectCheck.Of(line)[1];
-        Assert.Equal(new Sourced(null, "a chest pressure of E2, or a vapour pressure of E1, or a chest thermometer that sees saturation"), second.Heating);
-        Assert.Equal(new Sourced(null, "a vapour pressure of E2, or a thermometer that sees flashed liquor"), second.Boiling);
-        Assert.Equal(
-            new Sourced(null, "a condensate flow of E2, or on the liquor side the flow entering E2 and the flow or the solids leaving E2"), second.Duty);
+            string.Join('\n', PlantCheck.Report(Examples.Sound(Examples.Text("own-liquor.yaml")))));
     }
 
     [Theory]
-    [InlineData("before-valve", false)]
-    [InlineData("chest", true)]
-    public void SteamGauge_StandsForTheChestOnlyAtTheChest(string at, bool usable)
+    [InlineData("backward-three-effects.yaml")]
+    [InlineData("bleeds-and-flash.yaml")]
+    [InlineData("forward-four-effects.yaml")]
+    [InlineData("mechanical-recompression.yaml")]
+    [InlineData("mixed-seven-effects.yaml")]
+    [InlineData("thermal-recompression.yaml")]
+    public void Examples_HaveACoefficientInEveryEffect(string name) =>
+        Assert.All(Examples.Bases(Examples.Sound(Examples.Text(name)).Lines[0]), basis => Assert.InRange(basis.RelativeStandard ?? 9, 0.005, 0.25));
+
+    [Fact]
+    public void NoInstrumentsAtAll_NoSingleOneIsEnough()
     {
-        string text = Examples.With("    feed:", $"    steam: {{pressure: {{signal: P, unit: bar, at: {at}}}}}\n    feed:");
-        Assert.Equal(usable, EffectCheck.Of(Examples.Sound(text).Lines[0])[0].Heating.From is not null);
+        IReadOnlyList<string> report = PlantCheck.Report(Examples.Sound(Examples.Small));
+        Assert.Contains("    coefficient:         none: it does not follow from these instruments", report);
+        Assert.Contains("    one more instrument: no single one is enough", report);
     }
 
     [Fact]
-    public void SteamFlow_IsNoDutyWhereSteamHeatsTwoEffects()
+    public void TheMissingInstrument_IsNamed()
     {
-        string one = Examples.With("    feed:", "    steam: {flow: {signal: S, unit: t/h}}\n    feed:");
-        Assert.Equal("steam flow S", EffectCheck.Of(Examples.Sound(one).Lines[0])[0].Duty.From);
-        string two = one.Replace("heating: vapour of E1", "heating: [steam, vapour of E1]", StringComparison.Ordinal);
-        Assert.All(EffectCheck.Of(Examples.Sound(two).Lines[0]), check => Assert.Null(check.Duty.From));
+        string text = string.Join('\n', Examples.Text("own-liquor.yaml").Split('\n').Where(line => !line.Contains("B.PV,", StringComparison.Ordinal)));
+        CoefficientBasis second = Examples.Bases(Examples.Sound(text).Lines[0])[1];
+        Assert.Null(second.RelativeStandard);
+        Assert.Contains(second.OneMore, one => one.Instrument == "a vapour pressure of B");
     }
-
-    [Fact]
-    public void SplitFeed_IsNoKnownFlowIntoAnEffect() =>
-        Assert.All(EffectCheck.Of(Examples.Sound(Examples.Text("own-liquor.yaml")).Lines[0]), check =>
-            Assert.DoesNotContain("liquor side", check.Duty.From ?? "", StringComparison.Ordinal));
 
     [Fact]
     public void InstrumentsOfTheSite_AreAllListed()

@@ -97,7 +97,7 @@ public sealed class PlantFileReaderTests
         Line line = Assert.Single(site.Lines);
         Assert.Equal(new DateTimeOffset(2026, 1, 1, 0, 0, 0, TimeSpan.Zero), site.HistoryFrom);
         Assert.Equal("mixture", line.Liquor.Always!.Name);
-        Assert.All(EffectCheck.Of(line), check => Assert.True(check.IsComplete));
+        Assert.All(Examples.Bases(line), basis => Assert.NotNull(basis.RelativeStandard));
         Assert.Equal(new UncertainShare(0, 0), line.Effects[0].HeatLoss);
         Assert.Equal((0.01, 0.005), (line.Effects[1].HeatLoss.Value, line.Effects[1].Vent.Value));
         Assert.Equal("heater", Assert.Single(line.Bleeds).To);
