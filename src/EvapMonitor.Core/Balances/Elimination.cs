@@ -80,13 +80,48 @@ internal sealed class Elimination
         }
     }
 
-    /// <summary>Eliminates by pivots chosen before; false when one of them is too small here.</summary>
-    public bool Run((int Row, int Column)[] pivots)
+    /// <summary>Works out once where anything can be in each step of an elimination, whatever the numbers.</summary>
+    /// <param name="pivots">The pivots.</param>
+    /// <param name="present">By row, by column: true where an entry can be; changed here.</param>
+    public EliminationStep[] Plan((int Row, int Column)[] pivots, bool[][] present)
     {
-        foreach ((int row, int column) in pivots)
+        var steps = new EliminationStep[pivots.Length];
+        for (int p = 0; p < pivots.Length; p++)
         {
-            if (!(double.Abs(Row(row)[column]) >= LeastPivot)) return false;
-            Eliminate(row, column);
+            (int row, int column) = pivots[p];
+            bool[] its = present[row];
+            int[] entries = [.. Enumerable.Range(0, _width).Where(k => k != column && its[k])];
+            int[] rows = [.. Enumerable.Range(0, Rows).Where(other => other != row && present[other][column])];
+            foreach (int other in rows)
+            {
+                foreach (int k in entries) present[other][k] = true;
+                present[other][column] = false;
+            }
+
+            steps[p] = new EliminationStep(row, column, entries, rows);
+        }
+
+        return steps;
+    }
+
+    /// <summary>Eliminates by steps worked out before; false when a pivot is too small here.</summary>
+    public bool Run(EliminationStep[] steps)
+    {
+        foreach (EliminationStep step in steps)
+        {
+            Span<double> pivot = Row(step.Row);
+            if (!(double.Abs(pivot[step.Column]) >= LeastPivot)) return false;
+            double factor = 1 / pivot[step.Column];
+            foreach (int k in step.Entries) pivot[k] *= factor;
+            pivot[step.Column] = 1;
+            foreach (int row in step.Rows)
+            {
+                Span<double> target = Row(row);
+                double share = target[step.Column];
+                if (share == 0) continue;
+                foreach (int k in step.Entries) target[k] -= pivot[k] * share;
+                target[step.Column] = 0;
+            }
         }
 
         return true;
@@ -136,3 +171,10 @@ internal sealed class Elimination
         }
     }
 }
+
+/// <summary>One step of an elimination.</summary>
+/// <param name="Row">The pivot's row.</param>
+/// <param name="Column">Its column.</param>
+/// <param name="Entries">Other columns in which the row can have an entry.</param>
+/// <param name="Rows">Other rows that can have an entry in the column.</param>
+internal sealed record EliminationStep(int Row, int Column, int[] Entries, int[] Rows);

@@ -28,7 +28,7 @@ internal sealed class Reconciliation
     private readonly double _typicalFlow;
     private readonly ConstraintRows _rows = new();
     private readonly bool[] _hasValue, _planFor;
-    private readonly int[] _pivotRow;
+    private readonly int[] _pivotRow, _free;
     private readonly Dictionary<string, Plan> _plans = new(StringComparer.Ordinal);
     private readonly Dictionary<string, int> _ways;
     private Plan _plan = new([], [], [], [], false);
@@ -56,7 +56,7 @@ internal sealed class Reconciliation
         _redundancy = new Redundancy(_system, n, columns);
         (State, _known, _unknown, _moved, _next) = (new double[n], new double[n], new double[n], new double[n], new double[n]);
         (_measured, _reading, _standard) = (new double[columns], new double[columns], new double[columns]);
-        (_hasValue, _planFor, _pivotRow) = (new bool[instruments.All.Count], new bool[instruments.All.Count], new int[n]);
+        (_hasValue, _planFor, _pivotRow, _free) = (new bool[instruments.All.Count], new bool[instruments.All.Count], new int[n], new int[n]);
         _ways = graph.Heating.Select((way, k) => (_variables.Keys[_variables.Heating[k]].Place, k)).ToDictionary(pair => pair.Place, pair => pair.k, StringComparer.Ordinal);
     }
 
@@ -128,7 +128,9 @@ internal sealed class Reconciliation
         {
             double largest = Step(Steps < MostSteps / 2 ? longest : 1);
             if (!double.IsFinite(largest)) return false;
-            if (largest < Converged) return true;
+            if (largest >= Converged) continue;
+            _redundancy.Weigh();
+            return true;
         }
 
         return false;
@@ -151,7 +153,7 @@ internal sealed class Reconciliation
     private double Step(double longest)
     {
         Assemble();
-        if (!_system.Run(_plan.Pivots))
+        if (!_system.Run(_plan.Steps))
         {
             // The state is too far from where the order of elimination was chosen: choose one for this state alone.
             Assemble();
@@ -197,16 +199,21 @@ internal sealed class Reconciliation
     {
         Array.Fill(_pivotRow, -1);
         foreach ((int row, int column) in _pivots) _pivotRow[column] = row;
-        for (int i = 0; i < _unknown.Length; i++) _unknown[i] = _plan.Allowed[i] && _pivotRow[i] < 0 ? 1 : 0;
+        int free = 0;
+        for (int i = 0; i < _unknown.Length; i++)
+        {
+            _unknown[i] = 0;
+            if (!_plan.Allowed[i] || _pivotRow[i] >= 0) continue;
+            _unknown[i] = 1;
+            _free[free++] = i;
+        }
+
+        if (free == 0) return;
         foreach ((int row, int column) in _pivots)
         {
             ReadOnlySpan<double> entries = _system.Row(row);
             double most = 0;
-            for (int i = 0; i < _unknown.Length; i++)
-            {
-                if (_pivotRow[i] < 0 && _plan.Allowed[i]) most = double.Max(most, double.Abs(entries[i]));
-            }
-
+            foreach (int i in _free.AsSpan(0, free)) most = double.Max(most, double.Abs(entries[i]));
             _unknown[column] = most > 1e-6 ? most : 0;
         }
     }
@@ -334,7 +341,34 @@ internal sealed class Reconciliation
         _measured.CopyTo(_reading, 0);
         Assemble();
         reading.CopyTo(_reading, 0);
-        return _plan with { Pivots = _system.Choose(allowed) };
+        bool[][] present = Present();
+        (int, int)[] pivots = _system.Choose(allowed);
+        return _plan with { Pivots = pivots, Steps = _system.Plan(pivots, present) };
+    }
+
+    /// <summary>Where the system of the plan can have entries: what an equation names, whatever its slope, and what an instrument sees, however sure it is.</summary>
+    private bool[][] Present()
+    {
+        int n = _variables.Count;
+        bool[][] present = [.. Enumerable.Range(0, _system.Rows).Select(_ => new bool[_system.Right + 1])];
+        for (int at = 0; at < _plan.Rows.Length; at++)
+        {
+            foreach (int column in _rows.Columns(_plan.Rows[at])) present[at][column] = _plan.Allowed[column];
+        }
+
+        double[] x = new double[n], z = new double[_measured.Length];
+        for (int k = 0; k < _plan.Equations.Count; k++)
+        {
+            Array.Clear(x);
+            Array.Clear(z);
+            _measurements.Evaluate(_plan.Equations[k], State, _measured, x, z);
+            bool[] row = present[_plan.Rows.Length + k];
+            for (int i = 0; i < n; i++) row[i] = x[i] != 0 && _plan.Allowed[i];
+            for (int i = 0; i < z.Length; i++) row[n + i] = z[i] != 0;
+        }
+
+        foreach (bool[] row in present) row[_system.Right] = true;
+        return present;
     }
 
     private double Nominal(in MeasurementEquations.Equation equation) => equation.Kind switch
@@ -375,5 +409,8 @@ internal sealed class Reconciliation
     {
         /// <summary>The order of elimination.</summary>
         public (int Row, int Column)[] Pivots { get; init; } = [];
+
+        /// <summary>What each step of it touches.</summary>
+        public EliminationStep[] Steps { get; init; } = [];
     }
 }

@@ -76,6 +76,12 @@ internal sealed class Redundancy
         Array.Clear(_correction);
         for (int k = 0; k < n; k++) AddTo(_correction, Bound(k), _right[k]);
         SumOfSquares = Dot(_correction, _correction);
+    }
+
+    /// <summary>Prepares uncertainties and tests; to be called once, after the last step of a solution.</summary>
+    public void Weigh()
+    {
+        int n = _rows.Count;
         // Rows of S⁻¹B, column by column.
         Span<double> column = stackalloc double[n];
         for (int c = 0; c < _columns; c++)

@@ -125,6 +125,8 @@ internal static class InstrumentsProof
                 double[] off = [.. exact.Select((_, i) => standard[i] * double.Sqrt(1 - (RandomShare * RandomShare)) * RootOfThree * ((2 * random.NextDouble()) - 1))];
                 int sign = random.Next(2) == 0 ? -1 : 1;
                 var suspicions = new Suspicions(Window, TimeSpan.FromHours(1));
+                // Sound windows before it.
+                for (int k = 1; k <= 24; k++) suspicions.Keep(-k * Window, []);
                 tally.Tried++;
                 tally.Power += power;
                 for (int k = 0; k < 36; k++)
