@@ -25,7 +25,7 @@ public sealed class LineInstruments
         Effects = [.. line.Effects.Select(effect => new EffectPlaces(
             Place(effect.Chest.Pressure), Place(effect.Chest.Temperature), Place(effect.Chest.CondensateFlow), Place(effect.Chest.CondensateTemperature),
             Place(effect.Vapour.Pressure), Place(effect.Vapour.Temperature),
-            Place(effect.Leaving.Flow), Place(effect.Leaving.Solids), Place(effect.Leaving.Temperature), Place(effect.Level)))];
+            Place(effect.Leaving.Flow), Place(effect.Leaving.Solids), Place(effect.Leaving.Temperature), Place(effect.Level), Place(effect.PressureDifference)))];
         Surfaces = [.. line.Effects.Select(effect => new AreaInService(line, effect, Place))];
         Heaters = [.. line.Heaters.Select(heater => new HeaterPlaces(Place(heater.Flow), Place(heater.Solids?.Measured), Place(heater.In), Place(heater.Out)))];
         TankLevels = [.. line.Tanks.Select(tank => Place(tank.Level))];
@@ -75,6 +75,9 @@ public sealed class LineInstruments
     /// <summary>Places on the recompressors, in the order of the line's.</summary>
     public IReadOnlyList<RecompressorPlaces> Recompressors { get; }
 
+    /// <summary>True for an instrument that reads a difference of two pressures.</summary>
+    public bool IsDifference(int place) => Effects.Any(effect => effect.PressureDifference == place);
+
     private StreamPlaces Stream(LiquorStream stream) =>
         new(Place(stream.Flow), Place(stream.Solids), Place(stream.Temperature), Place(stream.Laboratory));
 
@@ -107,4 +110,5 @@ public readonly record struct EffectPlaces(
     int LeavingFlow,
     int LeavingSolids,
     int LeavingTemperature,
-    int Level);
+    int Level,
+    int PressureDifference);

@@ -69,6 +69,7 @@ internal sealed class MeasurementEquations
                 case Reading.Plain: return at;
                 case Reading.LiquorVolume: return at / Density(equation, state);
                 case Reading.WaterVolume: return at / Physical.WaterMassFlow(1, _at.All[place].Unit, state[equation.First]);
+                case Reading.Difference: return at - state[equation.First];
                 case Reading.Subcooling: return state[equation.First] - at;
                 case Reading.Superheat: return _properties.SaturationTemperature(state[equation.First]).Value + at;
                 default:
@@ -129,6 +130,10 @@ internal sealed class MeasurementEquations
                 double water = Physical.WaterMassFlow(1, _at.All[equation.Place].Unit, Here(equation.First));
                 z[equation.Place] -= water;
                 return Here(equation.Variable) - (reading * water);
+            case Reading.Difference:
+                x[equation.First] -= 1;
+                z[equation.Place] -= 1;
+                return Here(equation.Variable) - Here(equation.First) - reading;
             case Reading.Subcooling:
                 x[equation.First] -= 1;
                 z[equation.Place] += 1;
@@ -239,6 +244,7 @@ internal sealed class MeasurementEquations
         if (places.CondensateTemperature >= 0) _all.Add(new(Reading.Subcooling, at.Subcooling, places.CondensateTemperature) { First = at.Heating });
         _certain.Add((at.Subcooling, [places.CondensateTemperature]));
         Plain(at.VapourPressure, places.VapourPressure);
+        if (places.PressureDifference >= 0) _all.Add(new(Reading.Difference, at.ChestPressure, places.PressureDifference) { First = at.VapourPressure });
         Flow(at.Flow, places.LeavingFlow, at.Solids, at.Boiling, _properties.Liquor);
         if (_properties.Liquor is not Water) Plain(at.Solids, places.LeavingSolids);
         if (effect.Leaving.TemperatureSeesFlashedLiquor) Plain(at.Boiling, places.LeavingTemperature);
@@ -322,6 +328,8 @@ internal sealed class MeasurementEquations
         LiquorVolume,
         /// <summary>A mass flow by its volume and the density of condensate.</summary>
         WaterVolume,
+        /// <summary>A variable less another.</summary>
+        Difference,
         /// <summary>How far a thermometer is under saturation.</summary>
         Subcooling,
         /// <summary>How far a thermometer is over saturation.</summary>

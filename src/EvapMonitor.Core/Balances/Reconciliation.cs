@@ -374,6 +374,7 @@ internal sealed class Reconciliation
     private double Nominal(in MeasurementEquations.Equation equation) => equation.Kind switch
     {
         MeasurementEquations.Reading.LiquorVolume or MeasurementEquations.Reading.WaterVolume => State[equation.Variable] / 1000,
+        MeasurementEquations.Reading.Difference => State[equation.Variable] - State[equation.First],
         MeasurementEquations.Reading.Subcooling => State[equation.First],
         MeasurementEquations.Reading.Superheat => _properties.SaturationTemperature(State[equation.First]).Value,
         MeasurementEquations.Reading.Plain => State[equation.Variable],

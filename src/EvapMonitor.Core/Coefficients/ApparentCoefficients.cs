@@ -74,7 +74,7 @@ internal sealed class ApparentCoefficients(LineInstruments instruments, LineGrap
         var left = new List<int>();
         for (int place = 0; place < inputs.Value.Length; place++)
         {
-            if (double.IsNaN(inputs.Value[place]) || Physical.IsPossible(instruments.All[place].Unit.Dimension, inputs.Value[place])) continue;
+            if (double.IsNaN(inputs.Value[place]) || instruments.IsDifference(place) || Physical.IsPossible(instruments.All[place].Unit.Dimension, inputs.Value[place])) continue;
             inputs.Value[place] = double.NaN;
             left.Add(place);
         }

@@ -63,6 +63,9 @@ public sealed record Effect
     /// <summary>Liquor level, m; null when not measured.</summary>
     public Instrument? Level { get; init; }
 
+    /// <summary>Pressure of the chest less that of the vapour space, Pa; null when not measured.</summary>
+    public Instrument? PressureDifference { get; init; }
+
     /// <summary>When a cleaning is due; null: no limit is set.</summary>
     public DueLimits? DueWhen { get; init; }
 }

@@ -52,7 +52,7 @@ public static class SiteInstruments
         (effect.Name, "chest.condensate-temperature", effect.Chest.CondensateTemperature),
         (effect.Name, "vapour.pressure", effect.Vapour.Pressure), (effect.Name, "vapour.temperature", effect.Vapour.Temperature),
         (effect.Name, "leaving.flow", effect.Leaving.Flow), (effect.Name, "leaving.solids", effect.Leaving.Solids),
-        (effect.Name, "leaving.temperature", effect.Leaving.Temperature), (effect.Name, "level", effect.Level));
+        (effect.Name, "leaving.temperature", effect.Leaving.Temperature), (effect.Name, "level", effect.Level), (effect.Name, "pressure-difference", effect.PressureDifference));
 
     private static IEnumerable<InstrumentAtPlace> Stream(string name, LiquorStream stream) => Present(
         (null, name + ".flow", stream.Flow), (null, name + ".solids", stream.Solids),

@@ -10,7 +10,7 @@ internal static class SheetInstruments
     public static IReadOnlyList<InstrumentHere> Of(Effect effect) => Present(
         ("chest pressure", effect.Chest.Pressure), ("chest temperature", effect.Chest.Temperature), ("condensate flow", effect.Chest.CondensateFlow),
         ("condensate temperature", effect.Chest.CondensateTemperature), ("vapour pressure", effect.Vapour.Pressure), ("vapour temperature", effect.Vapour.Temperature),
-        ("flow leaving", effect.Leaving.Flow), ("solids leaving", effect.Leaving.Solids), ("temperature leaving", effect.Leaving.Temperature), ("level", effect.Level));
+        ("flow leaving", effect.Leaving.Flow), ("solids leaving", effect.Leaving.Solids), ("temperature leaving", effect.Leaving.Temperature), ("level", effect.Level), ("pressure of chest less vapour", effect.PressureDifference));
 
     public static IReadOnlyList<InstrumentHere> Of(LiquorStream stream)
     {

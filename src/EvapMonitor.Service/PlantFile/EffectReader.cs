@@ -40,11 +40,20 @@ internal sealed class EffectReader(Findings findings, InstrumentReader instrumen
             Vapour = Vapour(mapping.Take("vapour")),
             Leaving = Leaving(mapping.Take("leaving")),
             Level = instruments.Read(mapping.Take("level"), Dimension.Length),
+            PressureDifference = Difference(mapping.Take("pressure-difference")),
             DueWhen = Due(mapping.Take("due-when")),
         };
         if (Shares.Uncertain(mapping.Take("heat-loss"), findings) is { } loss) effect = effect with { HeatLoss = loss };
         if (Shares.Uncertain(mapping.Take("vent"), findings) is { } vent) effect = effect with { Vent = vent };
         return name is null ? null : new(effect, nameNode!, formerly, heatingNode, liquorNode, [.. liquor.Select(l => l.Node)]);
+    }
+
+    private Instrument? Difference(PlantNode? node)
+    {
+        Instrument? found = instruments.Read(node, Dimension.Pressure);
+        if (found is { Unit.Reference: not PressureReference.Absolute })
+            findings.Wrong(node!, $"the unit {found.Unit.Written} for a difference", "a unit of pressure without a reference, such as kPa or mbar");
+        return found;
     }
 
     /// <summary>The surface of the effect itself, or of all the bodies that it lists.</summary>

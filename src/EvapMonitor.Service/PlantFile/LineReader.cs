@@ -34,6 +34,7 @@ internal sealed class LineReader(
         {
             Formerly = Texts.Names(mapping.Take("formerly"), findings),
             Liquor = liquor ?? defaults.Liquor,
+            SuspectAfter = Quantities.Time(mapping.Take("suspect-after"), TimeSpan.FromMinutes(10), TimeSpan.FromHours(6), findings) ?? defaults.SuspectAfter,
             SettlingTime = Quantities.Time(mapping.Take("settling-time"), TimeSpan.FromMinutes(1), TimeSpan.FromHours(6), findings) ?? defaults.SettlingTime,
             ProducingAboveFeedFlow = ProducingWhen(mapping.Take("producing-when")),
             Feed = Stream(mapping.Take("feed")),

@@ -21,7 +21,7 @@ internal static class PlantFileKeys
     public static readonly KeySet LiquorChoice = new("liquor-choice", "signal", "values", "stale-after", "frozen-after");
 
     public static readonly KeySet Line = new(
-        "line", "formerly", "liquor", "settling-time", "producing-when", "feed", "product", "steam", "effects", "bleeds", "heaters",
+        "line", "formerly", "liquor", "settling-time", "suspect-after", "producing-when", "feed", "product", "steam", "effects", "bleeds", "heaters",
         "condensate", "tanks", "bodies", "recompressors", "cleaning-groups", "required-evaporation", "money");
 
     public static readonly KeySet ProducingWhen = new("producing-when", "feed-flow-above");
@@ -31,7 +31,7 @@ internal static class PlantFileKeys
 
     public static readonly KeySet Effect = new(
         "effect", "name", "formerly", "heating", "liquor", "area", "bodies", "clean-coefficient", "heat-loss", "vent", "chest", "vapour",
-        "leaving", "level", "due-when");
+        "leaving", "level", "pressure-difference", "due-when");
 
     public static readonly KeySet LiquorSource = new("liquor-source", "from", "share");
     public static readonly KeySet Chest = new("chest", "pressure", "line-loss", "temperature", "condensate-flow", "condensate-temperature");

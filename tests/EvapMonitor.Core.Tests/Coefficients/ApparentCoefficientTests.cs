@@ -153,6 +153,22 @@ public class ApparentCoefficientTests
     }
 
     [Fact]
+    public void PressureDifference_GivesTheChestWithoutAGauge_AndMakesTheDrivingForceSurerWithOne()
+    {
+        Dictionary<string, double> values = TestLine.Values;
+        values["D1"] = 40_000;
+        Line With(bool gauge) => TestLine.Line(
+            effect => effect with { Chest = new Chest(), PressureDifference = TestLine.Instrument("D1", TestLine.Pascal) }, feed: new LiquorStream(),
+            steam: new SteamMain { Flow = TestLine.Instrument("SF", TestLine.Flow), Pressure = gauge ? TestLine.Instrument("SP", TestLine.Pascal) : null, PressureAt = SteamGaugePlace.Chest });
+        EffectWindow without = TestLine.Evaluate(With(gauge: false), values).Effects[0], with = TestLine.Evaluate(With(gauge: true), values).Effects[0];
+        EffectWindow bare = TestLine.Evaluate(Bare(), values).Effects[0];
+        Assert.Equal(Steam.SaturationTemperature(150_000), without.HeatingTemperature.Value, 1e-6);
+        Assert.Equal(HeatingTemperatureSource.Balance, without.HeatingFrom);
+        Assert.True(without.DrivingForce.Standard < bare.DrivingForce.Standard, "two gauges a tenth apart know their difference worse than an instrument across");
+        Assert.True(with.DrivingForce.Standard < without.DrivingForce.Standard);
+    }
+
+    [Fact]
     public void RandomReadings_NeverThrowAndNeverGiveANumberWithAReason()
     {
         var random = new Random(20260301);

@@ -56,6 +56,7 @@ public class SteamFlowBalanceTests
 
         var redundancy = new Redundancy(system, 0, Flows.Length);
         redundancy.Project([]);
+        redundancy.Weigh();
         return redundancy;
     }
 }

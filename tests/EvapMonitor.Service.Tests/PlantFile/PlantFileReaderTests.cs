@@ -147,7 +147,7 @@ public sealed class PlantFileReaderTests
                 "plant.yaml:4:9 window: found \"7 min\"; allowed: a time such as 20 min (s, min, h, d), from 1 to 60 min, dividing an hour",
                 "plant.yaml:5:15 history-from: found \"yesterday\"; allowed: a date such as 2025-01-01 (midnight at the site) or an instant such as 2025-01-01T06:00:00Z, from 1970 to 2199",
                 "plant.yaml:8:13 lines.one.liquor: found \"syrup\"; allowed: the name of a liquor: water or {signal: N.PRODUCT, values: {1: juice, 0: water}}",
-                "plant.yaml:9:5 lines.one.feeed: found the unknown key \"feeed\"; allowed: feed (of formerly, liquor, settling-time, producing-when, feed, product, steam, effects, bleeds, heaters, condensate, tanks, bodies, recompressors, cleaning-groups, required-evaporation, money)",
+                "plant.yaml:9:5 lines.one.feeed: found the unknown key \"feeed\"; allowed: feed (of formerly, liquor, settling-time, suspect-after, producing-when, feed, product, steam, effects, bleeds, heaters, condensate, tanks, bodies, recompressors, cleaning-groups, required-evaporation, money)",
                 "plant.yaml:11:31 lines.one.feed.flow.unit: found \"degC\" (degC is the unit of a temperature); allowed: a unit of a mass flow such as 30 t/h (t/h, kg/h, kg/s, t/d, lb/h) or of a volume flow such as 30 m3/h (m3/h, m³/h, l/min, l/s)",
                 "plant.yaml:12:54 lines.one.feed.temperature.accuracy: found \"1 %\", a share of a temperature whose zero is arbitrary; allowed: an accuracy in degC such as 0.3 abs, or 1 % of range",
                 "plant.yaml:17:13 lines.one.effects[0].area: found \"1450 bars\" (unknown unit \"bars\"); allowed: an area such as 1450 m2 (m2, m², ft2), more than 0",
