@@ -10,7 +10,7 @@ namespace EvapMonitor.Core.Balances;
 /// </summary>
 internal sealed class Reconciliation
 {
-    private const int MostSteps = 30, MostPlans = 256;
+    private const int MostSteps = 30, MostWaits = 8, MostPlans = 256;
 
     /// <summary>A step under this, by the variables' scales, is the last: the next would be its square.</summary>
     private const double Converged = 1e-6;
@@ -124,13 +124,15 @@ internal sealed class Reconciliation
         _start.Fill(State, _typicalFlow, _known);
         foreach ((int variable, double value) in _plan.Fixed) State[variable] = value;
         _reading.CopyTo(_measured, 0);
+        int waited = 0;
         for (Steps = 1; Steps <= MostSteps; Steps++)
         {
-            double largest = Step(Steps < MostSteps / 2 ? longest : 1);
+            (double largest, double loose) = Step(Steps < MostSteps / 2 ? longest : 1);
             if (!double.IsFinite(largest)) return false;
-            if (largest >= Converged) continue;
+            // What does not follow from the readings should come to rest too, since the equations bend; but it need not.
+            if (largest >= Converged || (loose >= Converged && waited++ < MostWaits)) continue;
             _redundancy.Weigh();
-            return true;
+            return IsSane();
         }
 
         return false;
@@ -150,7 +152,27 @@ internal sealed class Reconciliation
         if (_pivotRow[variable] >= 0) _redundancy.AddSensitivity(_pivotRow[variable], -factor * _scale[variable], sum);
     }
 
-    private double Step(double longest)
+    /// <summary>The equations may hold at a state that no line can have: with few instruments they have more than one solution.</summary>
+    private bool IsSane()
+    {
+        for (int i = 0; i < State.Length; i++)
+        {
+            if (!IsObservable(i)) continue;
+            bool sane = _variables.Keys[i].Kind switch
+            {
+                VariableKind.VapourPressure or VariableKind.ChestPressure or VariableKind.SteamPressure or VariableKind.DischargePressure => State[i] is > 500 and < 1.7e7,
+                VariableKind.BoilingTemperature or VariableKind.HeatingTemperature => State[i] is > 270 and < 630,
+                VariableKind.LeavingSolids or VariableKind.FeedSolids or VariableKind.ProductSolids => State[i] is > -0.05 and < 1,
+                _ => true,
+            };
+            if (!sane) return false;
+        }
+
+        return true;
+    }
+
+    /// <summary>One step; gives the largest change of what follows from the readings, and of what does not.</summary>
+    private (double Largest, double Loose) Step(double longest)
     {
         Assemble();
         if (!_system.Run(_plan.Steps))
@@ -164,17 +186,18 @@ internal sealed class Reconciliation
         _redundancy.Project(_pivots);
         Observe();
         Array.Clear(_moved);
-        (double largest, double share) = (0, longest);
+        (double largest, double loose, double share) = (0, 0, longest);
         foreach ((int row, int column) in _pivots)
         {
             double change = _redundancy.Change(row);
-            if (!double.IsFinite(change)) return double.NaN;
+            if (!double.IsFinite(change)) return (double.NaN, double.NaN);
             _moved[column] = change * _scale[column];
             double allowed = _steps.Allowed(column, State[column], _moved[column]);
             if (_unknown[column] > 0)
             {
                 // What does not follow from the readings may go where it will, but it must not hold up what does.
                 _moved[column] *= allowed;
+                loose = double.Max(loose, double.Abs(change));
                 continue;
             }
 
@@ -185,13 +208,13 @@ internal sealed class Reconciliation
         _steps.Move(State, _moved, share, _next);
         foreach (double value in _next)
         {
-            if (!double.IsFinite(value)) return double.NaN;
+            if (!double.IsFinite(value)) return (double.NaN, double.NaN);
         }
 
         _next.CopyTo(State, 0);
         for (int column = 0; column < _measured.Length; column++)
             _measured[column] += share * (_reading[column] + (_standard[column] * _redundancy.Correction(column)) - _measured[column]);
-        return largest;
+        return (largest, loose);
     }
 
     /// <summary>Unknowns that were not eliminated, and those that depend on one of them.</summary>

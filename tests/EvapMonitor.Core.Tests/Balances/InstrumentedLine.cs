@@ -11,6 +11,7 @@ internal sealed class InstrumentedLine
     private readonly Dictionary<string, (VariableKey Key, double Relative, double Absolute)> _sees = [];
     private readonly Dictionary<string, double> _motive;
     private readonly LineInstruments _instruments;
+    private ApparentCoefficients? _coefficients;
 
     private InstrumentedLine(TestLines.Case one, Func<string, bool> has)
     {
@@ -110,6 +111,16 @@ internal sealed class InstrumentedLine
         }
 
         return SolveAsStated(readings);
+    }
+
+    /// <summary>Evaluates a window as the program does.</summary>
+    public LineWindow Evaluate(double[] readings)
+    {
+        var inputs = new LineInputs(_instruments);
+        readings.CopyTo(inputs.Value, 0);
+        _coefficients ??= new ApparentCoefficients(_instruments, Graph);
+        var read = new WindowReadings(RunningState.Producing, Graph.Line.Liquor.Always!, inputs, Standards(), new double[readings.Length], (0, 0));
+        return _coefficients.Evaluate(0, read, _coefficients.Suspects(read), [], place => Instruments[place].Signal + " has no reading");
     }
 
     private EffectVariables VariablesOf(string effect) => Balance.Variables.Effects[Graph.Line.Effects.Select((one, k) => (one.Name, k)).First(pair => pair.Name == effect).k];
