@@ -14,7 +14,7 @@ namespace EvapMonitor.Core;
 public sealed class LineEvaluation
 {
     /// <summary>Raised when a change to the computation may move figures; stored with every result.</summary>
-    public const int ModelNumber = 2;
+    public const int ModelNumber = 3;
 
     private readonly Site _site;
     private readonly Line _line;
