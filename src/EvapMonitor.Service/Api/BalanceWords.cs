@@ -36,7 +36,7 @@ internal static class BalanceWords
         VariableKind.CondensateFlow => "condensate flow",
         VariableKind.FlashVapour => "vapour from flashing condensate",
         VariableKind.LiquorFlow => $"liquor {key.Place}",
-        VariableKind.HeatingFlow => $"vapour or steam {key.Place}",
+        VariableKind.HeatingFlow => key.Place.StartsWith("steam to ", StringComparison.Ordinal) ? key.Place : $"vapour {key.Place}",
         VariableKind.BleedFlow => $"bleed {key.Place}",
         VariableKind.CondenserFlow => "vapour to the condenser",
         VariableKind.HeaterFlow => "flow",

@@ -28,7 +28,7 @@ function Drawn({ of, from, to }: { of: Corrections; from: number; to: number }) 
     <figure class="corrections">
       <figcaption>Correction of {of.signal} wanted by the others, {unit}, last {days} days{paths.out !== '' && '; dotted while it is left out'}</figcaption>
       <svg viewBox={`0 0 ${width} ${height}`} role="img" aria-label={words}>
-        {[...new Set([span.highest, 0, span.lowest])].map(v => <g key={v}>
+        {[0, span.highest, span.lowest].filter((v, i) => i === 0 || Math.abs(y(v) - y(0)) > 15).map(v => <g key={v}>
           <line x1={left} x2={width - 8} y1={y(v)} y2={y(v)} class={v === 0 ? 'corrections-zero' : 'corrections-edge'} />
           <text x={left - 8} y={y(v) + 4.5} text-anchor="end">{v > 0 ? '+' : ''}{significant(v, 2)}</text>
         </g>)}
