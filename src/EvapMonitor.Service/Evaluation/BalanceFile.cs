@@ -34,7 +34,6 @@ internal sealed class BalanceFile(TextWriter text) : IDisposable
             text.Write(_names[k]);
             WriteNumber(balance.Measured[k], _units[k].Offset, _units[k].Factor);
             WriteNumber(balance.Reconciled[k], _units[k].Offset, _units[k].Factor);
-            // With the figures that the store keeps, so that a file and the service's answer are alike letter for letter.
             WriteShort((float)balance.Standard[k] / _units[k].Factor);
             WriteShort(balance.InstrumentOf(k) is >= 0 and var place ? (float)balance.Correction[place] : double.NaN);
             text.Write(',');
@@ -56,7 +55,8 @@ internal sealed class BalanceFile(TextWriter text) : IDisposable
     private void WriteNumber(double si, double offset, double factor)
     {
         text.Write(',');
-        if (double.IsFinite(si)) text.Write(((si - offset) / factor).ToString("G9", CultureInfo.InvariantCulture));
+        // With the figures that the store keeps, so that a file and the service's answer are alike letter for letter.
+        if (double.IsFinite(si)) text.Write((((float)si - offset) / factor).ToString("G7", CultureInfo.InvariantCulture));
     }
 
     private void WriteShort(double value)

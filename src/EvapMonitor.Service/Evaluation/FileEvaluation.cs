@@ -63,10 +63,13 @@ internal sealed class FileEvaluation(Site site, CancellationToken stop) : IReadi
         balances.WriteHeader();
         foreach (Line line in site.Lines)
         {
-            var evaluation = new LineEvaluation(site, line);
+            var evaluation = new LineEvaluation(site, line)
+            {
+                Exclusions = _events.Where(one => one.Line == line.Name && one.Kind == EventFile.InstrumentExcluded).ToLookup(one => one.Signal!, one => (one.Start, one.End ?? long.MaxValue)),
+            };
             var own = evaluation.Signals.Select(signal => _series[signal]).Where(series => series.Count > 0).ToList();
             if (own.Count == 0) continue;
-            ILookup<string, (long, long)> cleanings = _events.Where(one => one.Line == line.Name && one.Kind == "cleaning" && one.Effect is not null)
+            ILookup<string, (long, long)> cleanings = _events.Where(one => one.Line == line.Name && one.Kind == EventFile.Cleaning && one.Effect is not null)
                 .ToLookup(one => one.Effect!, one => (one.Start, one.End ?? long.MaxValue));
             long last = own.Max(series => series.At[^1]);
             for (long day = Milliseconds.DayOf(own.Min(series => series.At[0])); day <= last; day += Milliseconds.Day)

@@ -51,7 +51,7 @@ internal static class BalanceRow
         return BinaryPrimitives.ReadInt64BigEndian(SHA256.HashData(Encoding.UTF8.GetBytes(content)));
     }
 
-    /// <summary>Numbers with seven figures, which is more than an uncertainty or a correction has.</summary>
+    /// <summary>Numbers with seven figures, which is more than any of a balance has.</summary>
     public static float[] Short(double[] values) => Array.ConvertAll(values, value => (float)value);
 
     /// <summary>Back.</summary>

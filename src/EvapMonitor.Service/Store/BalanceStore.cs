@@ -111,7 +111,7 @@ public sealed class BalanceStore(NpgsqlDataSource database)
         while (await reader.ReadAsync(stop))
         {
             rows.Add(new Row(
-                Instant.ToMilliseconds(reader.GetDateTime(0)), reader.GetInt32(1), reader.GetInt64(2), reader.GetFieldValue<double[]>(3), reader.GetFieldValue<double[]>(4),
+                Instant.ToMilliseconds(reader.GetDateTime(0)), reader.GetInt32(1), reader.GetInt64(2), reader.GetFieldValue<float[]>(3), reader.GetFieldValue<float[]>(4),
                 reader.GetFieldValue<float[]>(5), reader.GetFieldValue<byte[]>(6), reader.GetFieldValue<float[]>(7), reader.GetFieldValue<float[]>(8),
                 reader.GetFieldValue<float[]>(9), reader.GetDouble(10), reader.GetInt16(11), reader.GetFieldValue<short[]>(12), reader.GetFieldValue<short[]>(13)));
         }
@@ -122,7 +122,7 @@ public sealed class BalanceStore(NpgsqlDataSource database)
     private async Task<StoredBalance> WithLayoutAsync(NpgsqlConnection connection, int lineId, Row row, CancellationToken stop) => new(row.At, new BalanceWindow
     {
         Layout = await LayoutAsync(connection, lineId, row.Revision, row.Layout, stop),
-        Measured = row.Measured, Reconciled = row.Reconciled, Standard = BalanceRow.Long(row.Standard), Class = Array.ConvertAll(row.Class, one => (VariableClass)one),
+        Measured = BalanceRow.Long(row.Measured), Reconciled = BalanceRow.Long(row.Reconciled), Standard = BalanceRow.Long(row.Standard), Class = Array.ConvertAll(row.Class, one => (VariableClass)one),
         Correction = BalanceRow.Long(row.Correction), Wanted = BalanceRow.Long(row.Wanted), Test = BalanceRow.Long(row.Test), ChiSquare = row.ChiSquare, Degrees = row.Degrees,
         Suspects = BalanceRow.Lists(row.Suspect), LeftOut = [.. row.LeftOut.Select(one => (int)one)],
     });
@@ -143,6 +143,6 @@ public sealed class BalanceStore(NpgsqlDataSource database)
     }
 
     private sealed record Row(
-        long At, int Revision, long Layout, double[] Measured, double[] Reconciled, float[] Standard, byte[] Class, float[] Correction, float[] Wanted, float[] Test,
+        long At, int Revision, long Layout, float[] Measured, float[] Reconciled, float[] Standard, byte[] Class, float[] Correction, float[] Wanted, float[] Test,
         double ChiSquare, short Degrees, short[] Suspect, short[] LeftOut);
 }

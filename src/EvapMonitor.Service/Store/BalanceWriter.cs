@@ -43,9 +43,8 @@ internal static class BalanceWriter
             copy.Write(Instant.FromMilliseconds(window.At), NpgsqlDbType.TimestampTz);
             copy.Write(revisionId, NpgsqlDbType.Integer);
             copy.Write(layouts[balance.Layout], NpgsqlDbType.Bigint);
-            copy.Write(balance.Measured, NpgsqlDbType.Array | NpgsqlDbType.Double);
-            copy.Write(balance.Reconciled, NpgsqlDbType.Array | NpgsqlDbType.Double);
-            copy.Write(BalanceRow.Short(balance.Standard), NpgsqlDbType.Array | NpgsqlDbType.Real);
+            foreach (double[] byVariable in (ReadOnlySpan<double[]>)[balance.Measured, balance.Reconciled, balance.Standard])
+                copy.Write(BalanceRow.Short(byVariable), NpgsqlDbType.Array | NpgsqlDbType.Real);
             copy.Write(Array.ConvertAll(balance.Class, one => (byte)one), NpgsqlDbType.Bytea);
             foreach (double[] bySignal in (ReadOnlySpan<double[]>)[balance.Correction, balance.Wanted, balance.Test])
                 copy.Write(BalanceRow.Short(bySignal), NpgsqlDbType.Array | NpgsqlDbType.Real);

@@ -33,8 +33,9 @@ public sealed class FaultyService(PostgresServer server) : IAsyncLifetime
     private static string Spoilt(string row)
     {
         string[] cells = row.Split(',');
-        if (!DateTimeOffset.TryParse(cells[0], CultureInfo.InvariantCulture, out DateTimeOffset at) || at < Fault) return row;
-        cells[1] = (double.Parse(cells[1], CultureInfo.InvariantCulture) * 1.1).ToString("0.000", CultureInfo.InvariantCulture);
+        int column = Array.IndexOf(ApiService.History[..ApiService.History.IndexOf('\n', StringComparison.Ordinal)].TrimEnd('\r').Split(','), "N.FT-10");
+        if (!DateTimeOffset.TryParse(cells[0], CultureInfo.InvariantCulture, out DateTimeOffset at) || at < Fault || cells[column].Length == 0) return row;
+        cells[column] = (double.Parse(cells[column], CultureInfo.InvariantCulture) * 1.1).ToString("0.000", CultureInfo.InvariantCulture);
         return string.Join(',', cells);
     }
 }

@@ -13,13 +13,14 @@ COMMENT ON COLUMN balance_layout.unit IS 'SI units of measured, reconciled and s
 COMMENT ON COLUMN balance_layout.instruments IS 'By variable, positions in signal (from 0) of the instruments that measure it; each list ends with -1.';
 
 -- The reconciled balance of a window: arrays beside the layout, NaN is absent. Never a row for each variable.
+-- Seven figures are more than any of these numbers has, and a third less on disk.
 CREATE TABLE balance_window (
     line_id     integer            NOT NULL,
     at          timestamptz        NOT NULL,
     revision_id integer            NOT NULL,
     layout      bigint             NOT NULL,
-    measured    double precision[] NOT NULL,
-    reconciled  double precision[] NOT NULL,
+    measured    real[]             NOT NULL,
+    reconciled  real[]             NOT NULL,
     standard    real[]             NOT NULL,
     class       bytea              NOT NULL,
     correction  real[]             NOT NULL,
