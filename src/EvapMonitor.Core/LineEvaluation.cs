@@ -14,7 +14,7 @@ namespace EvapMonitor.Core;
 public sealed class LineEvaluation
 {
     /// <summary>Raised when a change to the computation may move figures; stored with every result.</summary>
-    public const int ModelNumber = 2;
+    public const int ModelNumber = 3;
 
     private readonly Site _site;
     private readonly Line _line;
@@ -43,6 +43,9 @@ public sealed class LineEvaluation
 
     /// <summary>Those of them that are laboratory values, whose samples stand for hours.</summary>
     public IEnumerable<string> LaboratorySignals => LaboratoryPlaces().Select(place => _instruments.All[place.Place].Signal);
+
+    /// <summary>When instruments are excluded by a person, by signal: start and end, ms since 1970-01-01T00:00:00Z. Their readings count as absent.</summary>
+    public ILookup<string, (long Start, long End)> Exclusions { get; init; } = Array.Empty<string>().ToLookup(signal => signal, _ => (0L, 0L));
 
     /// <summary>How far before a span its readings must reach.</summary>
     public TimeSpan LeadIn { get; }
@@ -85,6 +88,7 @@ public sealed class LineEvaluation
             signals[place] = Laboratory.Condition(_instruments.All[place], samples, validFor, grid);
         }
 
+        foreach (ConditionedSignal signal in signals) signal.Exclude(Exclusions[signal.Instrument.Signal]);
         var windows = new List<LineWindow>(grid.Count);
         for (int window = 0; window < grid.Count; window++)
         {

@@ -19,7 +19,7 @@ internal static class ServiceParts
 
     public static IServiceCollection AddStore(this IServiceCollection services) => services
         .AddSingleton<PlantHolder>().AddSingleton<PlantStore>().AddSingleton<ReadingStore>().AddSingleton<DayStore>().AddSingleton<LeaseStore>().AddSingleton<ResultStore>()
-        .AddSingleton<TrendStore>().AddSingleton<CleaningStore>().AddSingleton<ImportStore>();
+        .AddSingleton<TrendStore>().AddSingleton<BalanceStore>().AddSingleton<CleaningStore>().AddSingleton<ImportStore>();
 
     public static IServiceCollection AddEvaluation(this IServiceCollection services) => services
         .AddSingleton<LiveEvents>().AddSingleton<EvaluationSignal>()
@@ -28,7 +28,7 @@ internal static class ServiceParts
 
     public static IServiceCollection AddApi(this IServiceCollection services)
     {
-        services.AddSingleton<EffectStates>().AddSingleton<SiteStates>().AddSingleton<FlowSheetStates>().AddSingleton<SignalStates>().AddSingleton<Trends>();
+        services.AddSingleton<EffectStates>().AddSingleton<SiteStates>().AddSingleton<FlowSheetStates>().AddSingleton<SignalStates>().AddSingleton<BalanceStates>().AddSingleton<Trends>();
         services.AddProblemDetails(problems => problems.CustomizeProblemDetails = context =>
         {
             if (context.ProblemDetails.Status == StatusCodes.Status413PayloadTooLarge) context.ProblemDetails.Detail ??= $"The body is larger than is allowed here, {LargestBody >> 20} MiB.";

@@ -75,6 +75,23 @@ public class LineEvaluationTests
         Assert.True(moved[^1] < at + evaluation.Reach.TotalMilliseconds, $"moved until {(moved[^1] - at) / (double)Milliseconds.Hour} h after");
     }
 
+    [Fact]
+    public void ExcludedInstrument_IsAbsentInItsInterval_AndTheReasonSaysWho()
+    {
+        (LineEvaluation plain, Dictionary<string, ReadingSeries> all) = Noisy(4);
+        Line line = TestLine.Line();
+        var site = new Site { Name = "site", TimeZone = "UTC", Atmosphere = new(101_325, null), HistoryFrom = DateTimeOffset.UnixEpoch, Lines = [line] };
+        long day = 2 * Milliseconds.Day, from = day + Milliseconds.Hour + 1, to = day + (2 * Milliseconds.Hour);
+        var evaluation = new LineEvaluation(site, line) { Exclusions = new[] { "P2" }.ToLookup(signal => signal, _ => (from, to)) };
+        bool IsAbsent(LineWindow window) => double.IsNaN(window.Balance!.Correction[window.Balance.Layout.Signals.ToList().IndexOf("P2")]);
+        LineWindow[] without = evaluation.Evaluate(all, day, day + (3 * Milliseconds.Hour), NoCleanings), with = plain.Evaluate(all, day, day + (3 * Milliseconds.Hour), NoCleanings);
+        Assert.True(with.Count(IsAbsent) < 6);
+        foreach ((LineWindow one, LineWindow other) in without.Zip(with)) Assert.Equal((one.At + Window > from && one.At < to) || IsAbsent(other), IsAbsent(one));
+
+        var alone = new LineEvaluation(site, line) { Exclusions = TestLine.Values.Keys.Where(signal => signal != "FF").ToLookup(signal => signal, _ => (day, long.MaxValue)) };
+        Assert.Contains(alone.Evaluate(all, day, day + Milliseconds.Hour, NoCleanings).SelectMany(window => window.Effects), effect => effect.Reason?.EndsWith("is excluded by a person", StringComparison.Ordinal) == true);
+    }
+
     private static (LineEvaluation Evaluation, Dictionary<string, ReadingSeries> Readings) Noisy(int state)
     {
         var random = new Random(state);

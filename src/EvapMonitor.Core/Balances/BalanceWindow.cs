@@ -1,3 +1,5 @@
+using MathNet.Numerics.Distributions;
+
 namespace EvapMonitor.Core.Balances;
 
 /// <summary>How well a variable is known from what is measured.</summary>
@@ -19,9 +21,20 @@ public sealed class BalanceLayout
         VariableKind.FeedFlow, VariableKind.FeedSolids, VariableKind.FeedTemperature, VariableKind.ProductFlow, VariableKind.ProductSolids, VariableKind.Evaporation,
         VariableKind.SteamFlow, VariableKind.SteamPressure, VariableKind.LeavingFlow, VariableKind.LeavingSolids, VariableKind.BoilingTemperature, VariableKind.VapourFlow,
         VariableKind.VapourPressure, VariableKind.ChestPressure, VariableKind.HeatingTemperature, VariableKind.Duty, VariableKind.CondensateFlow, VariableKind.FlashVapour,
-        VariableKind.LiquorFlow, VariableKind.BleedFlow, VariableKind.HeaterFlow, VariableKind.HeaterDuty, VariableKind.SuctionFlow, VariableKind.DischargeFlow,
-        VariableKind.MotiveFlow, VariableKind.Power, VariableKind.SprayFlow,
+        VariableKind.LiquorFlow, VariableKind.HeatingFlow, VariableKind.CondenserFlow, VariableKind.BleedFlow, VariableKind.HeaterFlow, VariableKind.HeaterIn,
+        VariableKind.HeaterOut, VariableKind.HeaterDuty, VariableKind.SuctionFlow, VariableKind.DischargeFlow, VariableKind.MotiveFlow, VariableKind.Power,
+        VariableKind.SprayFlow,
     ];
+
+    /// <summary>A layout as it was kept.</summary>
+    /// <exception cref="ArgumentException">There are not as many lists of instruments as variables.</exception>
+    public BalanceLayout(IReadOnlyList<VariableKey> variables, IReadOnlyList<IReadOnlyList<int>> instruments, IReadOnlyList<string> signals)
+    {
+        ArgumentNullException.ThrowIfNull(variables);
+        ArgumentNullException.ThrowIfNull(instruments);
+        if (variables.Count != instruments.Count) throw new ArgumentException($"{variables.Count} variables and {instruments.Count} lists of instruments.", nameof(instruments));
+        (Variables, Instruments, Signals, Index) = (variables, instruments, signals, []);
+    }
 
     internal BalanceLayout(LineInstruments instruments, LineVariables variables, MeasurementEquations measurements)
     {
@@ -40,14 +53,14 @@ public sealed class BalanceLayout
     /// <summary>The signals of the line's instruments.</summary>
     public IReadOnlyList<string> Signals { get; }
 
-    /// <summary>By variable: its index in the state of the line.</summary>
+    /// <summary>By variable: its index in the state of the line; empty in a layout that was kept.</summary>
     internal int[] Index { get; }
 
     /// <summary>The SI unit of a variable as text: kg/s, kg/kg, K, Pa, W.</summary>
     public static string UnitOf(VariableKind kind) => kind switch
     {
         VariableKind.FeedSolids or VariableKind.ProductSolids or VariableKind.LeavingSolids => "kg/kg",
-        VariableKind.FeedTemperature or VariableKind.BoilingTemperature or VariableKind.HeatingTemperature => "K",
+        VariableKind.FeedTemperature or VariableKind.BoilingTemperature or VariableKind.HeatingTemperature or VariableKind.HeaterIn or VariableKind.HeaterOut => "K",
         VariableKind.SteamPressure or VariableKind.VapourPressure or VariableKind.ChestPressure => "Pa",
         VariableKind.Duty or VariableKind.HeaterDuty or VariableKind.Power => "W",
         _ => "kg/s",
@@ -60,7 +73,7 @@ public sealed record BalanceWindow
     /// <summary>What the arrays belong to.</summary>
     public required BalanceLayout Layout { get; init; }
 
-    /// <summary>By variable: what its first instrument with a value read, in the variable's unit (a volume as a mass).</summary>
+    /// <summary>By variable: what its first instrument with a value read, in the variable's unit (a volume as a mass); one that was left out speaks only where no other does.</summary>
     public required double[] Measured { get; init; }
 
     /// <summary>By variable: the reconciled value.</summary>
@@ -72,8 +85,14 @@ public sealed record BalanceWindow
     /// <summary>By variable: how well it is known.</summary>
     public required VariableClass[] Class { get; init; }
 
-    /// <summary>By signal: what the balance wants to add to the reading, in its standard uncertainty; NaN without a reading, 0 where nothing checks it.</summary>
+    /// <summary>
+    /// By signal: what the balance wants to add to the reading, in its standard uncertainty; NaN without a reading, 0 where nothing checks it. For a reading that was
+    /// left out, what is between it and the balance of the others.
+    /// </summary>
     public required double[] Correction { get; init; }
+
+    /// <summary>By signal: the same correction in the SI unit of the reading.</summary>
+    public required double[] Wanted { get; init; }
 
     /// <summary>By signal: that correction by its own standard deviation: beyond about ±4 the reading does not fit the others.</summary>
     public required double[] Test { get; init; }
@@ -89,4 +108,21 @@ public sealed record BalanceWindow
 
     /// <summary>Signals that were left out of this window, because they had been suspect for long enough.</summary>
     public required IReadOnlyList<int> LeftOut { get; init; }
+
+    /// <summary>What <see cref="ChiSquare"/> exceeds by chance once in a hundred windows of sound instruments; NaN without any check.</summary>
+    public double ChiSquareLimit => Degrees > 0 ? ChiSquared.InvCDF(Degrees, 0.99) : double.NaN;
+
+    /// <summary>The instrument whose reading stands in <see cref="Measured"/>, as an index into the layout's signals; −1 when there is none.</summary>
+    public int InstrumentOf(int variable)
+    {
+        int leftOut = -1;
+        foreach (int place in Layout.Instruments[variable])
+        {
+            if (double.IsNaN(Correction[place])) continue;
+            if (!LeftOut.Contains(place)) return place;
+            if (leftOut < 0) leftOut = place;
+        }
+
+        return leftOut;
+    }
 }

@@ -48,6 +48,7 @@ internal sealed class ApparentCoefficients(LineInstruments instruments, LineGrap
         (RunningState state, LineInputs inputs, int count) = (readings.State, readings.Inputs, graph.Line.Effects.Count);
         if (state == RunningState.Idle) return LineWindow.Absent(at, state, count, "no duty: the line is idle");
         List<int> impossible = LeaveOutImpossible(inputs);
+        double[] read = leftOut.Count == 0 ? inputs.Value : [.. inputs.Value];
         foreach (int place in leftOut) inputs.Value[place] = double.NaN;
         string WhyAbsent(int place) => impossible.Contains(place) ? $"{instruments.All[place].Signal} reads what cannot be"
             : leftOut.Contains(place) ? $"{instruments.All[place].Signal} does not fit the other readings and was left out" : whyAbsent(place);
@@ -59,7 +60,7 @@ internal sealed class ApparentCoefficients(LineInstruments instruments, LineGrap
         var quantities = new BalanceQuantities(balance);
         var effects = new EffectWindow[count];
         for (int i = 0; i < effects.Length; i++) effects[i] = Of(i, at, state, readings.Liquor, balance, quantities, inputs, WhyAbsent);
-        return new LineWindow(at, state, quantities.Of(balance.Variables.Evaporation).Value, effects) { Balance = quantities.Window(inputs, suspects, leftOut) };
+        return new LineWindow(at, state, quantities.Of(balance.Variables.Evaporation).Value, effects) { Balance = quantities.Window(readings, read, suspects, leftOut) };
     }
 
     private Reconciliation BalanceOf(Liquor liquor)

@@ -59,39 +59,49 @@ internal sealed class BalanceQuantities(Reconciliation balance)
     }
 
     /// <summary>All that the balance shows.</summary>
-    public BalanceWindow Window(LineInputs inputs, IReadOnlyList<IReadOnlyList<int>> suspects, IReadOnlyList<int> leftOut)
+    /// <param name="readings">What the balance rests on.</param>
+    /// <param name="read">What was read, with what was left out.</param>
+    /// <param name="suspects">Instruments that do not fit the others.</param>
+    /// <param name="leftOut">Instruments that do not count.</param>
+    public BalanceWindow Window(in WindowReadings readings, double[] read, IReadOnlyList<IReadOnlyList<int>> suspects, IReadOnlyList<int> leftOut)
     {
         BalanceLayout layout = balance.Layout;
         int variables = layout.Variables.Count, signals = layout.Signals.Count;
         var window = new BalanceWindow
         {
             Layout = layout, Measured = new double[variables], Reconciled = new double[variables], Standard = new double[variables], Class = new VariableClass[variables],
-            Correction = new double[signals], Test = new double[signals], ChiSquare = balance.Corrections.SumOfSquares, Degrees = balance.Corrections.Degrees,
-            Suspects = suspects, LeftOut = leftOut,
+            Correction = new double[signals], Wanted = new double[signals], Test = new double[signals], ChiSquare = balance.Corrections.SumOfSquares,
+            Degrees = balance.Corrections.Degrees, Suspects = suspects, LeftOut = leftOut,
         };
         for (int place = 0; place < signals; place++)
         {
-            bool read = !double.IsNaN(inputs.Value[place]);
-            window.Correction[place] = read ? balance.Corrections.Correction(place) : double.NaN;
-            window.Test[place] = read ? InstrumentTests.Test(balance.Corrections, place) : double.NaN;
+            bool counts = !double.IsNaN(readings.Inputs.Value[place]);
+            window.Correction[place] = counts ? balance.Corrections.Correction(place) : double.NaN;
+            window.Wanted[place] = window.Correction[place] * double.Hypot(readings.Systematic[place], readings.Random[place]);
+            window.Test[place] = counts ? InstrumentTests.Test(balance.Corrections, place) : double.NaN;
         }
 
-        for (int k = 0; k < variables; k++)
-        {
-            Measured found = Of(layout.Index[k]);
-            (window.Reconciled[k], window.Standard[k], window.Measured[k]) = (found.Value, found.Standard, double.NaN);
-            bool isChecked = false;
-            foreach (int place in layout.Instruments[k])
-            {
-                if (double.IsNaN(inputs.Value[place])) continue;
-                if (double.IsNaN(window.Measured[k])) window.Measured[k] = balance.ReadingOf(layout.Index[k], place, inputs.Value[place]);
-                isChecked |= !double.IsNaN(window.Test[place]);
-            }
-
-            window.Class[k] = !found.IsPresent ? VariableClass.Unobservable : isChecked ? VariableClass.Redundant : VariableClass.Observable;
-        }
-
+        for (int k = 0; k < variables; k++) Fill(window, k, readings, read);
         return window;
+    }
+
+    private void Fill(BalanceWindow window, int k, in WindowReadings readings, double[] read)
+    {
+        int variable = window.Layout.Index[k];
+        Measured found = Of(variable);
+        (window.Reconciled[k], window.Standard[k], window.Measured[k]) = (found.Value, found.Standard, double.NaN);
+        bool isChecked = false;
+        foreach (int place in window.Layout.Instruments[k])
+        {
+            isChecked |= !double.IsNaN(window.Test[place]);
+            if (!window.LeftOut.Contains(place) || double.IsNaN(read[place]) || !found.IsPresent) continue;
+            double says = balance.ReadingOf(variable, place, read[place]), standard = double.Hypot(readings.Systematic[place], readings.Random[place]);
+            window.Wanted[place] = (found.Value - says) * (says == 0 ? 1 : read[place] / says);
+            window.Correction[place] = window.Wanted[place] / standard;
+        }
+
+        if (window.InstrumentOf(k) is >= 0 and var shown) window.Measured[k] = balance.ReadingOf(variable, shown, read[shown]);
+        window.Class[k] = !found.IsPresent ? VariableClass.Unobservable : isChecked ? VariableClass.Redundant : VariableClass.Observable;
     }
 
     private Measured With(double value)

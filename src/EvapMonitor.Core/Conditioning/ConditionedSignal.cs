@@ -56,9 +56,27 @@ public sealed class ConditionedSignal
     /// <summary>Readings not used, by window and <see cref="Rejection"/>.</summary>
     public int[,] Rejected { get; }
 
+    private readonly HashSet<int> _excluded = [];
+
+    /// <summary>Takes its value from every window that an interval touches: a person says that the instrument is not to be believed.</summary>
+    /// <param name="intervals">Start and end, ms since 1970-01-01T00:00:00Z; the end is not in it.</param>
+    internal void Exclude(IEnumerable<(long Start, long End)> intervals)
+    {
+        foreach ((long start, long end) in intervals)
+        {
+            for (int window = 0; window < Grid.Count; window++)
+            {
+                if (Grid.StartOf(window) >= end || Grid.StartOf(window) + Grid.Step <= start) continue;
+                Mean[window] = double.NaN;
+                _excluded.Add(window);
+            }
+        }
+    }
+
     /// <summary>In plain words, why the window has no value.</summary>
     public string WhyAbsent(int window)
     {
+        if (_excluded.Contains(window)) return $"{Instrument.Signal} is excluded by a person";
         int most = -1;
         for (int reason = 0; reason < Rejected.GetLength(1); reason++)
         {

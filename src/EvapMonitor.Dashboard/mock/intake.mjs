@@ -2,7 +2,8 @@ import { start } from './plant.mjs';
 
 const iso = t => new Date(t).toISOString();
 const none = { bad: 0, not_a_number: 0, out_of_range: 0, frozen: 0 };
-const sound = (name, line, unit, at, value) => ({ name, line, unit, latest_at: at, latest_value: value, latest_quality: 'good', good_share: 0.9986, rejected: none, readings: 17_280 });
+const fits = { state: 'fits', words: 'fits the others', since: null, wanted: 0.004, unit: 'bar', wanted_in_standards: 0.4, one_of: [] };
+const sound = (name, line, unit, at, value) => ({ name, line, unit, latest_at: at, latest_value: value, latest_quality: 'good', good_share: 0.9986, rejected: none, readings: 17_280, fit: line === null ? null : { ...fits, as_of: at } });
 
 /** Signals as the interface answers them: most sound, and each way to be unsound once. */
 export function signals(plant, now) {
@@ -13,6 +14,7 @@ export function signals(plant, now) {
       if (e.unknown) Object.assign(t, { latest_at: null, latest_value: null, latest_quality: null, good_share: null, readings: 0 });
       if (e.name === 'N2') Object.assign(t, { latest_quality: 'bad', latest_value: null, good_share: 0.71, rejected: { bad: 4980, not_a_number: 12, out_of_range: 0, frozen: 0 } });
       if (e.name === 'N3') Object.assign(p, { good_share: 0.42, rejected: { bad: 0, not_a_number: 0, out_of_range: 3, frozen: 10_020 } });
+      if (e.name === 'N4') Object.assign(p, { fit: { ...p.fit, state: 'does not fit', words: 'does not fit the others: the others want +0.036 bar (6.2 standard uncertainties)', since: iso(start - 5_400_000), wanted: 0.036, wanted_in_standards: 6.2 } });
       if (e.name === 'N4') Object.assign(t, { latest_quality: 'uncertain' });
       return [p, t];
     });

@@ -32,7 +32,7 @@ export function sheetOf(line, now) {
 
 function forward({ effects }) {
   const place = (id, kind, name, measured = []) => ({ id, kind, name, measured, effect: null, bodies: [] });
-  const way = (from, to, kind, flow = null) => ({ from, to, kind, share: null, share_u: null, flow });
+  const way = (from, to, kind, flow = null) => ({ from, to, kind, share: null, share_u: null, flow, balance: { value: flow?.value ?? 43.21, standard: 0.6, unit: 't/h', as_of: iso(start), agrees: flow ? flow.what !== 'feed' : null } });
   const flow = (what, value) => ({ what, signal: `${what.toUpperCase()}.FT-1`, value, unit: 't/h', at: iso(start), state: 'good' });
   const id = e => `effect/${e.name}`, last = effects.length - 1;
   return {

@@ -12,8 +12,8 @@ internal sealed record InstrumentHere(string What, Instrument Instrument, TimeSp
 /// <summary>A place of a flow sheet; <paramref name="Effect"/> is the index of the effect, −1 for others.</summary>
 internal sealed record SheetPlace(string Id, string Kind, string Name, IReadOnlyList<InstrumentHere> Instruments, int Effect = -1);
 
-/// <summary>A way of a flow sheet; <paramref name="Flow"/> is set where an instrument sees this way and no other.</summary>
-internal sealed record SheetWay(string From, string To, string Kind, UncertainShare? Share = null, InstrumentHere? Flow = null);
+/// <summary>A way of a flow sheet; <paramref name="Flow"/> is set where an instrument sees this way and no other, <paramref name="Variable"/> is its flow in the balance.</summary>
+internal sealed record SheetWay(string From, string To, string Kind, UncertainShare? Share = null, InstrumentHere? Flow = null, VariableKey? Variable = null);
 
 /// <summary>A line as places and ways, from the graph that the balances use. Nothing depends on how many effects there are or in which order they stand.</summary>
 internal sealed class FlowSheet
@@ -65,26 +65,30 @@ internal sealed class FlowSheet
         foreach (HeatingWay way in graph.Heating)
         {
             string to = Of(line.Effects[way.To]);
-            if (way.From == LineGraph.Steam) _ways.Add(new(Steam, to, "steam", Flow: main));
-            else _ways.Add(new(way.Recompressor >= 0 ? OfMachine(line.Recompressors[way.Recompressor]) : Of(line.Effects[way.From]), to, "vapour"));
+            string from = way.From == LineGraph.Steam ? Steam : way.Recompressor >= 0 ? line.Recompressors[way.Recompressor].Name : line.Effects[way.From].Name;
+            var flow = new VariableKey(VariableKind.HeatingFlow, VariableKey.Way(from, line.Effects[way.To].Name));
+            if (way.From == LineGraph.Steam) _ways.Add(new(Steam, to, "steam", Flow: main, Variable: flow));
+            else _ways.Add(new(way.Recompressor >= 0 ? OfMachine(line.Recompressors[way.Recompressor]) : Of(line.Effects[way.From]), to, "vapour", Variable: flow));
         }
 
         for (int i = 0; i < line.Effects.Count; i++)
         {
-            if (graph.ToCondenser[i]) _ways.Add(new(Of(line.Effects[i]), Condenser, "vapour"));
+            if (graph.ToCondenser[i]) _ways.Add(new(Of(line.Effects[i]), Condenser, "vapour", Variable: new(VariableKind.CondenserFlow, line.Effects[i].Name)));
         }
 
         for (int b = 0; b < line.Bleeds.Count; b++)
         {
             Bleed bleed = line.Bleeds[b];
-            _ways.Add(new(Of(line.Effects[graph.BleedFrom[b]]), $"{(graph.BleedTo[b] < 0 ? "user" : "heater")}/{bleed.To}", "bleed", Flow: SheetInstruments.Here("flow", bleed.Flow)));
+            _ways.Add(new(Of(line.Effects[graph.BleedFrom[b]]), $"{(graph.BleedTo[b] < 0 ? "user" : "heater")}/{bleed.To}", "bleed",
+                Flow: SheetInstruments.Here("flow", bleed.Flow), Variable: new(VariableKind.BleedFlow, VariableKey.Way(bleed.From, bleed.To))));
         }
 
         for (int r = 0; r < line.Recompressors.Count; r++)
         {
             Recompressor machine = line.Recompressors[r];
-            _ways.Add(new(Of(line.Effects[graph.SuctionFrom[r]]), OfMachine(machine), "vapour"));
-            if (machine.Kind == RecompressorKind.Thermal) _ways.Add(new($"motive/{machine.Name}", OfMachine(machine), "motive", Flow: SheetInstruments.Here("flow", machine.Motive.Flow)));
+            _ways.Add(new(Of(line.Effects[graph.SuctionFrom[r]]), OfMachine(machine), "vapour", Variable: new(VariableKind.SuctionFlow, machine.Name)));
+            if (machine.Kind == RecompressorKind.Thermal) _ways.Add(new($"motive/{machine.Name}", OfMachine(machine), "motive",
+                Flow: SheetInstruments.Here("flow", machine.Motive.Flow), Variable: new(VariableKind.MotiveFlow, machine.Name)));
         }
     }
 
@@ -102,7 +106,8 @@ internal sealed class FlowSheet
             InstrumentHere? leaving = !allOfSource ? null
                 : way.From == LineGraph.Feed ? SheetInstruments.Here("flow", line.Feed.Flow)
                 : way.From < graph.FirstTank ? SheetInstruments.Here("flow leaving", line.Effects[way.From].Leaving.Flow) : null;
-            _ways.Add(new(Node(way.From), Node(way.To), "liquor", way.Share, leaving ?? (way.To == LineGraph.Product && allOfTarget ? SheetInstruments.Here("flow", line.Product.Flow) : null)));
+            _ways.Add(new(Node(way.From), Node(way.To), "liquor", way.Share, leaving ?? (way.To == LineGraph.Product && allOfTarget ? SheetInstruments.Here("flow", line.Product.Flow) : null),
+                new(VariableKind.LiquorFlow, VariableKey.Way(graph.NameOf(way.From), graph.NameOf(way.To)))));
         }
     }
 
@@ -113,12 +118,15 @@ internal sealed class FlowSheet
         foreach (int to in graph.FlashTo.Where(to => to >= 0).Distinct().Order())
         {
             _places.Add(new(Vessel(to), "flash vessel", $"flash to {line.Effects[to].Name}", []));
-            _ways.Add(new(Vessel(to), Of(line.Effects[to]), "vapour"));
+            // A vessel that several effects share has no variable of its own.
+            int[] sources = [.. Enumerable.Range(0, line.Effects.Count).Where(i => graph.FlashTo[i] == to)];
+            _ways.Add(new(Vessel(to), Of(line.Effects[to]), "vapour", Variable: sources is [var only] ? new(VariableKind.FlashVapour, line.Effects[only].Name) : null));
             _ways.Add(new(Vessel(to), After(to), Condensate));
         }
 
         for (int i = 0; i < line.Effects.Count; i++)
-            _ways.Add(new(Of(line.Effects[i]), After(i), Condensate, Flow: SheetInstruments.Here("condensate flow", line.Effects[i].Chest.CondensateFlow)));
+            _ways.Add(new(Of(line.Effects[i]), After(i), Condensate, Flow: SheetInstruments.Here("condensate flow", line.Effects[i].Chest.CondensateFlow),
+                Variable: new(VariableKind.CondensateFlow, line.Effects[i].Name)));
     }
 
     private static string Of(Effect effect) => $"effect/{effect.Name}";

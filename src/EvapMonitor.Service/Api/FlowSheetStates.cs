@@ -7,7 +7,7 @@ using Microsoft.AspNetCore.Http.HttpResults;
 namespace EvapMonitor.Service.Api;
 
 /// <summary>The flow sheet of a line with its readings and results as they are now.</summary>
-public sealed class FlowSheetStates(ReadingStore readings, SiteStates lines, TimeProvider clock)
+public sealed class FlowSheetStates(ReadingStore readings, SiteStates lines, BalanceStates balances, TimeProvider clock)
 {
     /// <summary>Answers the route.</summary>
     internal static async Task<Results<Ok<FlowSheetWire>, ProblemHttpResult>> Handle(string line, FlowSheetStates states, PlantHolder plant, CancellationToken stop)
@@ -24,6 +24,8 @@ public sealed class FlowSheetStates(ReadingStore readings, SiteStates lines, Tim
         DateTimeOffset now = clock.GetUtcNow();
         var latest = await readings.LatestAsync(inForce.Signals.Values.Where(signal => signal.Users.Contains(line.LineId)), stop);
         var sheet = new FlowSheet(line.Line);
+        LineFit fit = await balances.OfAsync(inForce, line, stop);
+        var units = new BalanceUnits(line.Line);
         MeasuredNowWire Measured(InstrumentHere here)
         {
             (DateTime At, double? Value, short Quality)? last =
@@ -38,7 +40,19 @@ public sealed class FlowSheetStates(ReadingStore readings, SiteStates lines, Tim
             [.. sheet.Places.Select(place => new PlaceWire(
                 place.Id, place.Kind, place.Name, [.. place.Instruments.Select(Measured)], place.Effect < 0 ? null : state.Effects[place.Effect],
                 place.Effect < 0 ? [] : Bodies(line.Line, line.Line.Effects[place.Effect], Measured)))],
-            [.. sheet.Ways.Select(way => new WayWire(way.From, way.To, way.Kind, way.Share?.Value, way.Share?.Standard, way.Flow is { } flow ? Measured(flow) : null))]);
+            [.. sheet.Ways.Select(way => new WayWire(way.From, way.To, way.Kind, way.Share?.Value, way.Share?.Standard, way.Flow is { } flow ? Measured(flow) : null, ByBalance(way, fit, units, inForce.Site.Window)))]);
+    }
+
+    private static BalanceFlowWire? ByBalance(SheetWay way, LineFit fit, BalanceUnits units, TimeSpan window)
+    {
+        if (fit.Last is not { } last || way.Variable is not { } variable) return null;
+        int k = last.Balance.Layout.Variables.ToList().IndexOf(variable);
+        if (k < 0 || !double.IsFinite(last.Balance.Reconciled[k])) return null;
+        UnitOfMeasure unit = units.Shown(last.Balance.Layout, k);
+        bool? agrees = way.Flow is { } flow && fit.Fits.TryGetValue(flow.Instrument.Signal, out FitWire? its) && its.State != "no reading" ? its.State is "fits" or "not checked" : null;
+        return new BalanceFlowWire(
+            double.Round(unit.FromSi(last.Balance.Reconciled[k]), 9), double.Round(last.Balance.Standard[k] / unit.Factor, 9), unit.Written,
+            DateTimeOffset.FromUnixTimeMilliseconds(last.At) + window, agrees);
     }
 
     /// <summary>The bodies that an effect lists, and those that may take its place.</summary>

@@ -15,6 +15,7 @@ internal static class Routes
         api.Get("/lines", SiteHandlers.Lines, "getLines", "All lines with their effects");
         api.Get("/lines/{line}", SiteHandlers.Line, "getLine", "One line with its effects");
         api.Get("/lines/{line}/flow-sheet", FlowSheetStates.Handle, "getFlowSheet", "A line as places and ways, with its readings and results now");
+        api.Get("/lines/{line}/balance", BalanceHandlers.Balance, "getBalance", "The reconciled balance of a line in its last window or another, as JSON or CSV");
         api.Get("/lines/{line}/effects/{effect}", SiteHandlers.Effect, "getEffect", "One effect as it is now");
         api.Get("/lines/{line}/effects/{effect}/trend", TrendHandlers.Trend, "getTrend", "A series of one quantity, as JSON columns or CSV");
         api.Get("/cleaning-due", SiteHandlers.CleaningDue, "getCleaningDue", "Effects with their due state, due ones first");
@@ -24,6 +25,7 @@ internal static class Routes
         api.MapDelete("/cleanings/{id:guid}", CleaningHandlers.Withdraw).Named("withdrawCleaning", "Withdraw a logged cleaning", Policies.Write);
 
         api.Get("/signals", SignalHandlers.List, "getSignals", "Signals with their last readings");
+        api.Get("/signals/{signal}/corrections", BalanceHandlers.Corrections, "getCorrections", "What the balance wanted to add to the readings of a signal, over time");
         api.MapPost("/readings", ReadingHandlers.Add).Named("addReadings", "Readings in batches, plain or gzip; answered once they are durable", Policies.Write)
             .AddOpenApiOperationTransformer(OpenApiText.DescribeReadings).ProducesProblem(StatusCodes.Status503ServiceUnavailable);
         api.Get("/sources", SignalHandlers.Sources, "getSources", "Where readings come from, what waits, what the database would not take");

@@ -13,7 +13,7 @@ internal static class SignalHandlers
     private const int MostUnknown = 1000, MostRefused = 100;
 
     public static async Task<Ok<SignalsWire>> List(
-        ReadingStore readings, SignalStates states, ImportStore imports, UnknownSignals unknown, PlantHolder plant, TimeProvider clock, CancellationToken stop)
+        ReadingStore readings, SignalStates states, BalanceStates balances, ImportStore imports, UnknownSignals unknown, PlantHolder plant, TimeProvider clock, CancellationToken stop)
     {
         PlantInForce inForce = plant.Current;
         var latest = await readings.LatestAsync(inForce.Signals.Values, stop);
@@ -21,6 +21,8 @@ internal static class SignalHandlers
         var units = inForce.Site.Lines.SelectMany(line => new Core.Balances.LineInstruments(line).All)
             .Concat(inForce.Site.Atmosphere.Measured is { } air ? [air] : [])
             .DistinctBy(instrument => instrument.Signal).ToDictionary(instrument => instrument.Signal, instrument => instrument.Unit.Written);
+        var fits = new Dictionary<int, IReadOnlyDictionary<string, FitWire>>();
+        foreach (LinePlace one in inForce.Lines) fits[one.LineId] = (await balances.OfAsync(inForce, one, stop)).Fits;
         var signals = new List<SignalWire>();
         foreach ((string name, SignalPlace place) in inForce.Signals)
         {
@@ -32,7 +34,7 @@ internal static class SignalHandlers
             bool came = summary is not null && (summary.Readings > 0 || summary.Rejected.Any(count => count > 0));
             signals.Add(new SignalWire(
                 name, line, units[name], any ? new DateTimeOffset(last.At, TimeSpan.Zero) : null, last.Value, any ? Words.Of((Quality)last.Quality) : null,
-                came ? summary!.GoodShare : null, rejected, summary?.Readings ?? 0));
+                came ? summary!.GoodShare : null, rejected, summary?.Readings ?? 0, fits[place.Users[0]].GetValueOrDefault(name)));
         }
 
         return TypedResults.Ok(new SignalsWire(clock.GetUtcNow(), signals, Unknown(await imports.ListAsync(stop), unknown, inForce)));

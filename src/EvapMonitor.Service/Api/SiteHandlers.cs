@@ -50,7 +50,8 @@ internal static class SiteHandlers
 }
 
 /// <summary>Puts together what is known of the site and its lines.</summary>
-public sealed class SiteStates(ReadingStore readings, TrendStore trends, ImportStore imports, DayStore days, EffectStates effects, PlantHolder plant, Live.Notices notices, TimeProvider clock)
+public sealed class SiteStates(ReadingStore readings, TrendStore trends, ImportStore imports, DayStore days, EffectStates effects, BalanceStates balances, PlantHolder plant, Live.Notices notices,
+    TimeProvider clock)
 {
     /// <summary>A youngest reading under this age is live.</summary>
     public static readonly TimeSpan LiveUnder = TimeSpan.FromMinutes(15);
@@ -83,7 +84,7 @@ public sealed class SiteStates(ReadingStore readings, TrendStore trends, ImportS
         return new SiteWire(
             now.Site.Name, now.Site.TimeZone, clock.GetUtcNow(), latest, Freshness(latest), now.RevisionId, (int)now.Site.Window.TotalSeconds, running,
             await days.WaitingAsync(clock.GetUtcNow() - (2 * now.Site.Window), stop),
-            [.. Standing()]);
+            [.. Standing(), .. await balances.NoticesAsync(now, stop)]);
     }
 
     private IEnumerable<NoticeWire> Standing() => notices.Standing.Select(notice => new NoticeWire(notice.Key, notice.Since, notice.Sentence));

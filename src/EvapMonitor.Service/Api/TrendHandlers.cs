@@ -18,26 +18,40 @@ internal static class TrendHandlers
         if (place.Find(effect) is not var (found, id)) return Problems.NoEffect(place.Line, effect);
         if (!Trends.Quantities.ContainsKey(quantity)) return Problems.Wrong($"quantity '{quantity}' is not known; allowed: {string.Join(", ", Trends.Quantities.Keys)}.");
         if (points is < 10 or > 10_000) return Problems.Wrong($"points is {points}; allowed: 10 to 10000.");
-        foreach (string name in (string[])["from", "to"])
-        {
-            string? text = context.Request.Query[name];
-            if (!Rfc3339Converter.HasOffset(text)) return Problems.Wrong($"{name} is '{text}'; allowed: an RFC 3339 time with its offset, such as 2026-03-01T14:05:00Z.");
-        }
+        if (WhyNoTime(context.Request, "from", "to") is { } wrong) return Problems.Wrong(wrong);
 
         DateTimeOffset end = to ?? clock.GetUtcNow(), start = from ?? end.AddDays(-30);
         if (start >= end) return Problems.Wrong($"from ({start:O}) must be before to ({end:O}).");
         if (end - start > Trends.LongestSpan) return Problems.Wrong($"The span is {(end - start).TotalDays:0} days; allowed: {Trends.LongestSpan.TotalDays:0}.");
 
         long version = await store.DataVersionAsync(place.LineId, stop);
-        bool csv = PrefersCsv(context.Request);
-        var tag = new EntityTagHeaderValue($"\"{inForce.RevisionId}-{version}{(csv ? "-csv" : "")}\"");
-        context.Response.GetTypedHeaders().ETag = tag;
-        context.Response.Headers.CacheControl = "no-cache";
-        context.Response.Headers.Vary = "Accept";
-        if (context.Request.GetTypedHeaders().IfNoneMatch.Any(known => known.Equals(EntityTagHeaderValue.Any) || known.Compare(tag, useStrongComparison: false))) return TypedResults.StatusCode(StatusCodes.Status304NotModified);
+        if (IsKnown(context, inForce, version, out bool csv)) return TypedResults.StatusCode(StatusCodes.Status304NotModified);
         TrendWire trend = trends.Of(place, found, id, quantity, start.ToUniversalTime(), end.ToUniversalTime(), points, inForce.Site.Window, version);
         if (!csv) return TypedResults.Ok(trend);
         return TypedResults.File(Encoding.UTF8.GetBytes(TrendCsv.Of(trend)), "text/csv; charset=utf-8", $"{place.Line.Name}-{found.Name}-{quantity}.csv");
+    }
+
+    /// <summary>Why parameters of the address are no times; null when they are, or absent.</summary>
+    public static string? WhyNoTime(HttpRequest request, params ReadOnlySpan<string> names)
+    {
+        foreach (string name in names)
+        {
+            string? text = request.Query[name];
+            if (!Rfc3339Converter.HasOffset(text)) return $"{name} is '{text}'; allowed: an RFC 3339 time with its offset, such as 2026-03-01T14:05:00Z.";
+        }
+
+        return null;
+    }
+
+    /// <summary>Tags the answer with the version of what it rests on; true when the one who asks has it already.</summary>
+    public static bool IsKnown(HttpContext context, PlantInForce plant, long version, out bool csv)
+    {
+        csv = PrefersCsv(context.Request);
+        var tag = new EntityTagHeaderValue($"\"{plant.RevisionId}-{version}{(csv ? "-csv" : "")}\"");
+        context.Response.GetTypedHeaders().ETag = tag;
+        context.Response.Headers.CacheControl = "no-cache";
+        context.Response.Headers.Vary = "Accept";
+        return context.Request.GetTypedHeaders().IfNoneMatch.Any(known => known.Equals(EntityTagHeaderValue.Any) || known.Compare(tag, useStrongComparison: false));
     }
 
     /// <summary>True when CSV is named and liked no less than JSON; whoever names neither gets JSON.</summary>

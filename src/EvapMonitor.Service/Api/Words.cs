@@ -53,6 +53,13 @@ internal static class Words
         _ => "bad",
     };
 
+    public static string Of(VariableClass known) => known switch
+    {
+        VariableClass.Redundant => "checked by others",
+        VariableClass.Observable => "follows from others",
+        _ => "cannot be told",
+    };
+
     public static string Of(DueState state) => state switch
     {
         DueState.Due => "due",

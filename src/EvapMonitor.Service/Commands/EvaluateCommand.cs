@@ -36,7 +36,7 @@ internal sealed class EvaluateCommand : AsyncCommand<EvaluateCommand.Settings>
         foreach (string file in settings.Readings) evaluation.Read(file);
         if (settings.Events is not null) evaluation.ReadEvents(settings.Events);
         Directory.CreateDirectory(settings.Out);
-        evaluation.WriteCoefficients(Path.Combine(settings.Out, "coefficients.csv"));
+        evaluation.Write(settings.Out);
         foreach (string told in evaluation.Told) await Console.Error.WriteLineAsync(told);
         Console.WriteLine(evaluation.Summary);
         return evaluation.Rejected > 0 ? Exit.DoneWithRejected : Exit.Done;

@@ -1,4 +1,5 @@
 using System.Text;
+using EvapMonitor.Core.Balances;
 using EvapMonitor.Core.Plant;
 using EvapMonitor.Service.Ingest.Files;
 using NodaTime;
@@ -10,13 +11,20 @@ namespace EvapMonitor.Service.Evaluation;
 /// <param name="End">End of an interval, ms; null without one.</param>
 /// <param name="Line">The line.</param>
 /// <param name="Effect">The effect; null for the whole line.</param>
-/// <param name="Kind">cleaning, …</param>
-internal sealed record LoggedEvent(long Start, long? End, string Line, string? Effect, string Kind);
+/// <param name="Signal">The signal of the instrument; null for others.</param>
+/// <param name="Kind">cleaning or instrument-excluded.</param>
+internal sealed record LoggedEvent(long Start, long? End, string Line, string? Effect, string? Signal, string Kind);
 
 /// <summary>Reads a file of logged events: time,end,line,effect,signal,kind,note. Every mistake ends it: a wrong log would move results in silence.</summary>
 internal static class EventFile
 {
-    private static readonly string[] Kinds = ["cleaning"];
+    /// <summary>The cleaning of an effect.</summary>
+    public const string Cleaning = "cleaning";
+
+    /// <summary>An instrument that is not to be believed for a time.</summary>
+    public const string InstrumentExcluded = "instrument-excluded";
+
+    private static readonly string[] Kinds = [Cleaning, InstrumentExcluded];
 
     public static List<LoggedEvent> Read(string path, Site site)
     {
@@ -60,10 +68,18 @@ internal static class EventFile
         if (site.Lines.FirstOrDefault(one => one.Name == cells[2]) is not { } line) return $"line '{cells[2]}' is not in the plant file";
         if (cells[3].Length > 0 && line.Effects.All(effect => effect.Name != cells[3])) return $"line {line.Name} has no effect '{cells[3]}'";
         if (!Kinds.Contains(cells[5])) return $"kind '{cells[5]}' is not supported yet; allowed: {string.Join(", ", Kinds)}";
-        if (cells[3].Length == 0) return "a cleaning needs its effect";
-        logged = new LoggedEvent(start, end, line.Name, cells[3], cells[5]);
+        if (cells[5] == Cleaning && cells[3].Length == 0) return "a cleaning needs its effect";
+        if (cells[5] == InstrumentExcluded)
+        {
+            if (cells[4].Length == 0) return "an excluded instrument needs its signal";
+            if (new LineInstruments(line).All.All(instrument => instrument.Signal != cells[4])) return $"line {line.Name} has no instrument with the signal '{cells[4]}'";
+        }
+
+        logged = new LoggedEvent(start, end, line.Name, NullIfEmpty(cells[3]), NullIfEmpty(cells[4]), cells[5]);
         return null;
     }
+
+    private static string? NullIfEmpty(string cell) => cell.Length == 0 ? null : cell;
 
     private static List<string> Cells(ReadOnlySpan<byte> line)
     {

@@ -54,26 +54,36 @@ internal sealed class FileEvaluation(Site site, CancellationToken stop) : IReadi
     /// <summary>Reads logged events.</summary>
     public void ReadEvents(string path) => _events = EventFile.Read(path, site);
 
-    /// <summary>Evaluates and writes a row for each window and effect.</summary>
-    public void WriteCoefficients(string path)
+    /// <summary>Evaluates and writes, window by window, the coefficients and the balance.</summary>
+    public void Write(string folder)
     {
+        string path = Path.Combine(folder, "coefficients.csv");
         using var writer = new CoefficientFile(path);
+        using var balances = new BalanceFile(Path.Combine(folder, "balance.csv"));
+        balances.WriteHeader();
         foreach (Line line in site.Lines)
         {
-            var evaluation = new LineEvaluation(site, line);
+            var evaluation = new LineEvaluation(site, line)
+            {
+                Exclusions = _events.Where(one => one.Line == line.Name && one.Kind == EventFile.InstrumentExcluded).ToLookup(one => one.Signal!, one => (one.Start, one.End ?? long.MaxValue)),
+            };
             var own = evaluation.Signals.Select(signal => _series[signal]).Where(series => series.Count > 0).ToList();
             if (own.Count == 0) continue;
-            ILookup<string, (long, long)> cleanings = _events.Where(one => one.Line == line.Name && one.Kind == "cleaning" && one.Effect is not null)
+            ILookup<string, (long, long)> cleanings = _events.Where(one => one.Line == line.Name && one.Kind == EventFile.Cleaning && one.Effect is not null)
                 .ToLookup(one => one.Effect!, one => (one.Start, one.End ?? long.MaxValue));
             long last = own.Max(series => series.At[^1]);
             for (long day = Milliseconds.DayOf(own.Min(series => series.At[0])); day <= last; day += Milliseconds.Day)
             {
                 stop.ThrowIfCancellationRequested();
-                foreach (LineWindow window in evaluation.Evaluate(_series, day, long.Min(day + Milliseconds.Day, EndOfWindow(last)), cleanings)) writer.Write(line, window);
+                foreach (LineWindow window in evaluation.Evaluate(_series, day, long.Min(day + Milliseconds.Day, EndOfWindow(last)), cleanings))
+                {
+                    writer.Write(line, window);
+                    if (window.Balance is { } balance) balances.Write(line.Name, window.At, balance);
+                }
             }
         }
 
-        Summary = string.Create(CultureInfo.InvariantCulture, $"{_accepted} readings used, {_repeated} repeated, {Rejected} rejected, {_unknown.Values.Sum()} of unknown signals; {writer.Rows} rows in {path}");
+        Summary = string.Create(CultureInfo.InvariantCulture, $"{_accepted} readings used, {_repeated} repeated, {Rejected} rejected, {_unknown.Values.Sum()} of unknown signals; {writer.Rows} rows in {path}, {balances.Rows} in balance.csv");
     }
 
     /// <inheritdoc/>

@@ -1,6 +1,7 @@
 using System.Security.Cryptography;
 using System.Text;
 using Dapper;
+using EvapMonitor.Core;
 using EvapMonitor.Core.Plant;
 using Npgsql;
 
@@ -18,7 +19,7 @@ public sealed class PlantStore(NpgsqlDataSource database, TimeProvider clock)
 
     /// <summary>
     /// Accepts a plant file that was read without problems. The same text as the last one is not a new revision. A new one marks every day that has
-    /// readings, so that all results are computed anew under it.
+    /// readings, so that all results are computed anew under it. With the same text, days that an older program evaluated are marked.
     /// </summary>
     public async Task<PlantInForce> AcceptAsync(Site site, string text, string author, CancellationToken stop)
     {
@@ -53,8 +54,12 @@ public sealed class PlantStore(NpgsqlDataSource database, TimeProvider clock)
             signals[signal] = new SignalPlace(signalId, home, userIds);
         }
 
-        if (isNew) await connection.ExecuteAsync(
-            "UPDATE line_day SET data_version = data_version + 1, changed_from = day::timestamp AT TIME ZONE 'UTC', changed_at = clock_timestamp()");
+        await connection.ExecuteAsync(
+            """
+            UPDATE line_day SET data_version = data_version + 1, changed_from = day::timestamp AT TIME ZONE 'UTC', changed_at = clock_timestamp()
+            WHERE @isNew OR (model < @model AND shown_revision IS NOT NULL)
+            """,
+            new { isNew, model = (short)LineEvaluation.ModelNumber });
         await transaction.CommitAsync(stop);
         return new PlantInForce(last!.RevisionId, new(last.AcceptedAt), new(last.InForceFrom), last.Author, text, site, lines, signals);
     }

@@ -15,7 +15,7 @@ namespace EvapMonitor.Service.Store;
 /// <param name="Again">From when the day must be evaluated once more though nothing new comes: values still held at the end of the last window; null when done.</param>
 public sealed record DayResult(LinePlace Line, DateOnly Day, DateTimeOffset From, IReadOnlyList<LineWindow> Windows, DateTimeOffset? Again);
 
-/// <summary>Writes the results of a day: windows, hours and the day's mark in one transaction, so that a killed run never shows half of them.</summary>
+/// <summary>Writes the results of a day: windows, balances, hours and the day's mark in one transaction, so that a killed run never shows half of them.</summary>
 public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
 {
     /// <summary>Replaces the results of a day from an hour on and gives back the mark that was taken.</summary>
@@ -29,24 +29,26 @@ public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
         DateTime from = result.From.UtcDateTime, to = result.Day.ToDateTime(TimeOnly.MinValue, DateTimeKind.Utc).AddDays(1);
         await connection.ExecuteAsync(
             """
-            SELECT ensure_month('effect_window', @from), ensure_month('line_window', @from);
+            SELECT ensure_month('effect_window', @from), ensure_month('line_window', @from), ensure_month('balance_window', @from);
             DELETE FROM effect_window WHERE line_id = @line AND at >= @from AND at < @to AND revision_id = @revision;
             DELETE FROM line_window WHERE line_id = @line AND at >= @from AND at < @to AND revision_id = @revision;
+            DELETE FROM balance_window WHERE line_id = @line AND at >= @from AND at < @to AND revision_id = @revision;
             DELETE FROM effect_hour WHERE line_id = @line AND hour >= @from AND hour < @to AND revision_id = @revision
             """,
             new { line, from, to, revision = revisionId });
         WriteLine(connection, line, revisionId, result.Windows);
         WriteWindows(connection, result.Line, revisionId, result.Windows);
         WriteHours(connection, result.Line, revisionId, result.Windows);
+        await BalanceWriter.WriteAsync(connection, line, revisionId, result.Windows);
         await connection.ExecuteAsync(
             """
             UPDATE line_day SET shown_revision = @revision, taken_from = NULL, result_version = result_version + 1, changed_from = least(changed_from, @again),
-                evaluated_through = @through
+                evaluated_through = @through, model = @model
             WHERE line_id = @line AND day = @day
             """,
             new
             {
-                line, day = result.Day, revision = revisionId, again = result.Again?.UtcDateTime,
+                line, day = result.Day, revision = revisionId, again = result.Again?.UtcDateTime, model = (short)LineEvaluation.ModelNumber,
                 through = result.Windows.Count == 0 ? from : Instant.FromMilliseconds(result.Windows[^1].At),
             });
         KillPoint.Pass("evaluation-before-commit");

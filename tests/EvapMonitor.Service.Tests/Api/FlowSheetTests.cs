@@ -96,6 +96,7 @@ public sealed class FlowSheetTests
         ["ways"] = new JsonArray([.. sheet.Ways.Select(way => new JsonObject
         {
             ["from"] = way.From, ["to"] = way.To, ["kind"] = way.Kind, ["share"] = way.Share?.Value, ["share_u"] = way.Share?.Standard, ["flow"] = way.Flow is { } flow ? JsonOf(flow) : null,
+            ["balance"] = way.Variable is null ? null : new JsonObject { ["value"] = 123.4, ["standard"] = 1.2, ["unit"] = "t/h", ["as_of"] = "2026-11-30T13:30:00Z", ["agrees"] = way.Flow is null ? null : JsonValue.Create(true) },
         })]),
     };
 

@@ -54,6 +54,32 @@ public sealed class CommandTests : IDisposable
     }
 
     [Fact]
+    public async Task Evaluate_LeavesOutExcludedInstruments()
+    {
+        string plant = Put("plant.yaml", SmallPlant.Text), output = Path.Combine(_folder, "out");
+        string readings = Put("april.csv", "time,FT-1,TT-1,FT-2,PT-2,PT-1\n" + string.Concat(Enumerable.Range(0, 180).Select(i => $"2026-04-01T{10 + (i / 60)}:{i % 60:00}:00Z,60,80,20,1.5,1.1\n")));
+        string events = Put("events.csv", "time,end,line,effect,signal,kind,note\n2026-04-01T11:00:00Z,2026-04-01T12:00:00Z,one,,FT-2,instrument-excluded,plugged\n");
+        (int exit, _, string error) = await ChildService.CommandAsync("evaluate", plant, readings, "--out", output, "--events", events);
+        Assert.Equal((0, ""), (exit, error));
+        string[][] steam = [.. (await File.ReadAllLinesAsync(Path.Combine(output, "balance.csv"), TestContext.Current.CancellationToken)).Select(row => row.Split(',')).Where(cells => cells[2] == "steam_flow")];
+        Assert.Equal(36, steam.Length);
+        Assert.All(steam, cells => Assert.Equal(cells[0].Contains("T11:", StringComparison.Ordinal), cells[4].Length == 0));
+    }
+
+    [Fact]
+    public async Task Evaluate_TellsEveryMistakeOfTheEvents()
+    {
+        string plant = Put("plant.yaml", SmallPlant.Text), readings = Put("april.csv", "time,FT-1\n2026-04-01T10:00:00Z,60\n");
+        string events = Put("events.csv", "time,end,line,effect,signal,kind,note\n2026-04-01T11:00:00Z,,one,,FT-9,instrument-excluded,\n2026-04-01T11:00:00Z,,one,,,instrument-excluded,\n2026-04-01T11:00:00Z,,one,,FT-1,recalibration,\n");
+        (int exit, _, string error) = await ChildService.CommandAsync("evaluate", plant, readings, "--out", Path.Combine(_folder, "out"), "--events", events);
+        Assert.Equal(1, exit);
+        Assert.Equal(
+            ["events.csv:2: line one has no instrument with the signal 'FT-9'", "events.csv:3: an excluded instrument needs its signal",
+                "events.csv:4: kind 'recalibration' is not supported yet; allowed: cleaning, instrument-excluded"],
+            error.Split('\n', StringSplitOptions.RemoveEmptyEntries));
+    }
+
+    [Fact]
     public async Task Evaluate_OfAGzipCutShort_Fails()
     {
         string plant = Put("plant.yaml", SmallPlant.Text), readings = Path.Combine(_folder, "cut.csv.gz");

@@ -6,7 +6,7 @@ using Microsoft.Extensions.DependencyInjection;
 
 namespace EvapMonitor.Service.Tests.Evaluation;
 
-/// <summary>The command line and the service compute the same: coefficients.csv of `evaluate` against what the service has in its database, to the last printed digit.</summary>
+/// <summary>The command line and the service compute the same: coefficients.csv and balance.csv of `evaluate` against what the service has in its database, to the last printed digit.</summary>
 public sealed class FilesAgainstServiceTests(ApiService api) : IClassFixture<ApiService>
 {
     private static CancellationToken Stop => TestContext.Current.CancellationToken;
@@ -28,11 +28,28 @@ public sealed class FilesAgainstServiceTests(ApiService api) : IClassFixture<Api
             // Of all but the coefficient the store keeps the whole uncertainty, which the file does not print: the rows must be alike letter for letter.
             Assert.Equal(rows.Order(StringComparer.Ordinal), own.Order(StringComparer.Ordinal));
             Assert.True(rows.Count(row => row.Split(',')[10].Length > 0) > 2000);
+            string[] balance = await File.ReadAllLinesAsync(Path.Combine(folder, "out", "balance.csv"), Stop);
+            Assert.Equal(await BalanceOfServiceAsync(Path.Combine(folder, "service-balance.csv")), balance);
+            Assert.True(balance.Length > 576 * 40);
+            Assert.Contains(balance, row => row.StartsWith("2026-03-02T01:00:00Z,north,leaving_solids N2,kg/kg,0.", StringComparison.Ordinal));
         }
         finally
         {
             Directory.Delete(folder, recursive: true);
         }
+    }
+
+    private async Task<string[]> BalanceOfServiceAsync(string path)
+    {
+        LinePlace place = api.Service.Services.GetRequiredService<PlantHolder>().Current.Find("north")!;
+        using (var file = new BalanceFile(path))
+        {
+            file.WriteHeader();
+            foreach (StoredBalance stored in await api.Service.Services.GetRequiredService<BalanceStore>().WindowsAsync(place.LineId, ApiService.Start, ApiService.End.AddDays(1), Stop))
+                file.Write("north", stored.At, stored.Balance);
+        }
+
+        return await File.ReadAllLinesAsync(path, Stop);
     }
 
     /// <summary>Writes the stored windows with the writer of the command line.</summary>

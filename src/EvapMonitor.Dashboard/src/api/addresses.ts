@@ -15,6 +15,9 @@ export const addresses = {
   /** The events missed since one are sent first. */
   eventsAfter: (id: string) => `${base}/events?last_event_id=${part(id)}`,
   flowSheet: (line: string) => `${base}/lines/${part(line)}/flow-sheet`,
+  balance: (line: string) => `${base}/lines/${part(line)}/balance`,
+  corrections: (signal: string, from: number, to: number, points: number) =>
+    `${base}/signals/${part(signal)}/corrections?from=${part(new Date(from).toISOString())}&to=${part(new Date(to).toISOString())}&points=${points}`,
   effect: (line: string, effect: string) => `${base}/lines/${part(line)}/effects/${part(effect)}`,
   trend: (line: string, effect: string, quantity: Quantity, from: number, to: number, points: number) =>
     `${addresses.effect(line, effect)}/trend?quantity=${quantity}&from=${part(new Date(from).toISOString())}` +

@@ -143,6 +143,72 @@ export interface Way {
   share_u: number | null;
   /** Set where an instrument sees this way and no other. */
   flow: MeasuredNow | null;
+  /** Its flow by the last balance; null where that cannot be told. `agrees`: whether the instrument on this way fits it, null without one. */
+  balance: { value: number; standard: number; unit: string; as_of: Instant; agrees: boolean | null } | null;
+}
+
+export type FitState = 'fits' | 'does not fit' | 'left out' | 'not checked' | 'no reading';
+
+/** How the readings of a signal fit those of the others. */
+export interface Fit {
+  state: FitState;
+  /** The same as the end of a sentence, without its time. */
+  words: string;
+  since: Instant | null;
+  /** What the others want to add to it, in `unit` and in standard uncertainties of the reading. */
+  wanted: number | null;
+  unit: string | null;
+  wanted_in_standards: number | null;
+  /** Signals of which one is wrong, this one among them. */
+  one_of: string[];
+  as_of: Instant;
+}
+
+export type VariableClass = 'checked by others' | 'follows from others' | 'cannot be told';
+
+export interface BalanceVariable {
+  variable: string;
+  place: string;
+  what: string;
+  unit: string;
+  measured: number | null;
+  reconciled: number | null;
+  standard: number | null;
+  correction: number | null;
+  correction_in_standards: number | null;
+  class: VariableClass;
+  signals: string[];
+  suspicion: string | null;
+}
+
+/** The reconciled balance of a line in one window. */
+export interface Balance {
+  line: string;
+  at: Instant;
+  as_of: Instant;
+  chi_square: number;
+  degrees: number;
+  chi_square_limit: number | null;
+  fits: boolean | null;
+  check: string;
+  variables: BalanceVariable[];
+  signals: { signal: string; fit: Fit }[];
+  suspects: { signals: string[]; left_out: boolean; since: Instant; sentence: string }[];
+  data_version: number;
+}
+
+/** What the balance wanted to add to the readings of a signal, as columns. */
+export interface Corrections {
+  signal: string;
+  line: string;
+  unit: string;
+  step_s: number;
+  start: Instant;
+  offset_s: number[];
+  wanted: (number | null)[];
+  in_standards: (number | null)[];
+  mark: ('' | 'left out' | 'not checked')[];
+  data_version: number;
 }
 
 /** The last reading of an instrument at its place. */
@@ -214,6 +280,8 @@ export interface SignalRow {
   good_share: number | null;
   rejected: Rejected;
   readings: number;
+  /** What the last balance of its line says of it; null when there is none. */
+  fit: Fit | null;
 }
 
 /** Readings that were not used, by what was wrong with them. */

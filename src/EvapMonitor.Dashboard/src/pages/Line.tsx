@@ -3,6 +3,7 @@ import { Link } from 'wouter-preact';
 import { addresses, pages } from '../api/addresses';
 import type { FlowSheet } from '../api/types';
 import { useResource } from '../api/use-resource';
+import { BalancePart } from '../balance/BalancePart';
 import { ColumnsTable } from '../descent/ColumnsTable';
 import { DescentFigure } from '../descent/DescentFigure';
 import { fallsOf, liftsOf, type Fall } from '../descent/descent';
@@ -85,6 +86,8 @@ function Pictures({ of }: { of: FlowSheet }) {
         <p class="legend-small">{asOf === 'no result yet' ? 'No hour has a result yet.' : `Mean of the ${asOf}; ± one standard uncertainty.`} Scale takes the heat flux times the fouling resistance: the kelvins that the deposit costs; less than their uncertainty is not drawn.
           {[...falls.values()].some(f => f.lossStated) && ' A line loss in brackets is not measured: that chest has no gauge, and the plant file says what is lost on the way to it.'}</p>
       </section>
+      {/* Without a result there is no balance either, and the reasons stand above. */}
+      {of.as_of !== null && <section class="page line-balance" aria-label="The balance of the line"><BalancePart line={of.line} changes={of.as_of} now={now} /></section>}
       <section class="page line-readings"><Readings of={of} now={now} /></section>
     </>
   );

@@ -27,8 +27,8 @@ export function NoticeLine() {
   if (all.length === 0) return null;
   const act = all.some(mustAct);
   return (
-    <div class={act ? 'notice notice-act' : 'notice'}>
+    <aside class={act ? 'notice notice-act' : 'notice'} aria-label="Notices">
       <p>{act && <Mark kind="now" />}<Link href={pages.today}>{noticeLine(all, zone.value, calmNow.value)}</Link></p>
-    </div>
+    </aside>
   );
 }

@@ -1,9 +1,9 @@
 import { useLocation } from 'wouter-preact';
 import { pages } from '../api/addresses';
 import { effectText } from './effect-text';
-import { flowOf } from './labels';
+import { onlyWay } from './labels';
 import type { Node, Rect, Sheet } from './layout';
-import { readingText } from './reading';
+import { flowTexts, readingText } from './reading';
 import { fitted, twoLines } from './text';
 
 /** The boxes of the drawing. Kinds differ by their lines, not by colour. */
@@ -17,9 +17,11 @@ function Box({ node, sheet, stale }: { node: Node; sheet: Sheet; stale: boolean 
     case 'effect': return <EffectBox node={node} stale={stale} />;
     case 'condensate': return <Header rect={r} turned={sheet.metrics.turned} />;
     default: {
-      const flow = flowOf(sheet, place), first = flow ?? (place.kind === 'heater' ? null : place.measured.find(m => m.value !== null) ?? null);
+      // The shortest of the ways to say a flow; else the first reading here.
+      const way = onlyWay(sheet, place), flow = way?.flow ? flowTexts(way).at(-1) ?? null : null;
+      const first = flow !== null || place.kind === 'heater' ? null : place.measured.find(m => m.value !== null) ?? null;
       const own = place.kind === 'flash vessel' ? ['flash'] : r.h < 34 ? [fitted(place.name, r.w - 8, 13)] : twoLines(place.name, r.w - 8, 13);
-      const reading = first && r.h >= 34 && (own.length === 1 || r.h >= 50) ? readingText(first) : null;
+      const reading = r.h >= 34 && (own.length === 1 || r.h >= 50) ? flow ?? (first && readingText(first)) : null;
       const lines = reading === null ? own : [...own, fitted(reading, r.w - 6, 13)];
       const top = r.y + r.h / 2 - (lines.length - 1) * 8 + 4.5;
       return (

@@ -1,6 +1,6 @@
 import type { Place, Way } from '../api/types';
 import type { Column, Graph } from './order';
-import { readingText } from './reading';
+import { flowTexts } from './reading';
 import type { End } from './ports';
 
 /** Which run of the drawing a way belongs to: over the boxes, under them as liquor, or under that as condensate. */
@@ -80,7 +80,7 @@ function addEnds(plan: Plan, way: Way, i: number): void {
   put(to, from, way.to, endKey(i, 'to'));
 }
 
-const readingOf = (ways: Way[]) => (ways.length === 1 && ways[0]!.flow ? readingText(ways[0]!.flow) ?? '' : '');
+const readingOf = (ways: Way[]) => (ways.length === 1 && ways[0]!.flow ? flowTexts(ways[0]!).at(-1) ?? '' : '');
 
 const mean = (numbers: (number | undefined)[]) => {
   const known = numbers.filter(n => n !== undefined);

@@ -1,25 +1,29 @@
 import type { MeasuredNow, Place, Way } from '../api/types';
 import type { Point, Rect, Sheet } from './layout';
-import { readingText } from './reading';
+import { flowTexts } from './reading';
 import { textWidth } from './text';
 
 export interface Label { text: string; rect: Rect; way: Way; measured: boolean }
 
 export const letters: Record<Way['kind'], string> = { steam: 'S', vapour: 'V', bleed: 'B', motive: 'M', liquor: 'L', condensate: 'C' };
 
-/** What stands on a way: its measured flow, else the letter of its kind, with its stated share of the source. */
-export function labelText(way: Way): { text: string; measured: boolean } {
-  const flow = way.flow && readingText(way.flow);
-  return flow ? { text: flow, measured: true } : { text: way.share === null ? letters[way.kind] : `${letters[way.kind]} ${Math.round(way.share * 100)} %`, measured: false };
+/** What stands on a way, the best first: its measured flow; its flow by balance; the letter of its kind, with its stated share of the source. */
+export function labelText(way: Way): { texts: string[]; measured: boolean } {
+  const flows = flowTexts(way), letter = way.share === null ? letters[way.kind] : `${letters[way.kind]} ${Math.round(way.share * 100)} %`;
+  return { texts: [...flows, letter], measured: way.flow !== null && flows.length > 0 };
 }
 
 const lineHeight = 16, step = 7;
 
 /** The flow that a box of its own shows: that of the only way to or from it. */
 export function flowOf(sheet: Sheet, place: Place): MeasuredNow | null {
+  return onlyWay(sheet, place)?.flow ?? null;
+}
+
+export function onlyWay(sheet: Sheet, place: Place): Way | null {
   if (place.kind === 'effect' || place.kind === 'condensate' || place.kind === 'flash vessel') return null;
   const ways = sheet.routes.filter(r => r.way.from === place.id || r.way.to === place.id);
-  return ways.length === 1 ? ways[0]!.way.flow : null;
+  return ways.length === 1 ? ways[0]!.way : null;
 }
 
 /** Labels on their ways where they cover nothing: flows first. A flow without a place is left to the table, a letter is left out. */
@@ -28,13 +32,15 @@ export function labelsOf(sheet: Sheet): Label[] {
   const inBoxes = new Set(sheet.nodes.map(n => flowOf(sheet, n.place)).filter(f => f !== null));
   const wanted = sheet.routes.map((route, at) => {
     const own = labelText(route.way);
-    return { route, at, ...(sheet.metrics.turned || (route.way.flow !== null && inBoxes.has(route.way.flow)) ? { text: letters[route.way.kind], measured: false } : own) };
-  }).sort((a, b) => Number(b.measured) - Number(a.measured));
-  for (const { route, at, text, measured } of wanted) {
+    return { route, at, ...(sheet.metrics.turned || (route.way.flow !== null && inBoxes.has(route.way.flow)) ? { texts: [letters[route.way.kind]], measured: false } : own) };
+  }).sort((a, b) => Number(b.measured) - Number(a.measured) || b.texts.length - a.texts.length);
+  for (const { route, at, texts } of wanted) for (const text of texts) {
     const w = textWidth(text, sheet.metrics.font) + 6;
     const free = candidates(route.points, w, route.way.kind === 'condensate').find(rect => inside(rect, sheet) && !sheet.nodes.some(n => overlap(rect, n.rect, 2)) && !done.some(l => overlap(rect, l.rect, 2))
       && !sheet.routes.some((other, i) => i !== at && stretches(other.points).some(([a, b]) => overlap(rect, between(a, b), 2))));
-    if (free) done.push({ text, measured, way: route.way, rect: free });
+    if (!free) continue;
+    done.push({ text, measured: text !== texts.at(-1), way: route.way, rect: free });
+    break;
   }
   return done;
 }

@@ -30,7 +30,8 @@ public sealed record PlaceWire(string Id, string Kind, string Name, IReadOnlyLis
 /// <param name="Share">Share of what leaves the source on ways of this kind, 0 to 1; null: all that the others leave.</param>
 /// <param name="ShareU">Standard uncertainty of that share.</param>
 /// <param name="Flow">Its flow, where an instrument sees this way and no other; null otherwise.</param>
-public sealed record WayWire(string From, string To, string Kind, double? Share, double? ShareU, MeasuredNowWire? Flow);
+/// <param name="Balance">Its flow by the last balance; null where that cannot be told.</param>
+public sealed record WayWire(string From, string To, string Kind, double? Share, double? ShareU, MeasuredNowWire? Flow, BalanceFlowWire? Balance);
 
 /// <summary>The last reading of an instrument at its place.</summary>
 /// <param name="What">What it measures, in words.</param>

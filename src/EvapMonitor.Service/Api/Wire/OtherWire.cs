@@ -60,8 +60,9 @@ public sealed record SignalsWire(DateTimeOffset AsOf, IReadOnlyList<SignalWire> 
 /// <param name="GoodShare">Share of the last 24 hours with a sound value, 0 to 1; null when there was no reading.</param>
 /// <param name="Rejected">Readings left out in that time, by reason.</param>
 /// <param name="Readings">Sound readings in that time.</param>
+/// <param name="Fit">What the last balance of its line says of it; null when there is none.</param>
 public sealed record SignalWire(
-    string Name, string Line, string Unit, DateTimeOffset? LatestAt, double? LatestValue, string? LatestQuality, double? GoodShare, RejectedWire Rejected, long Readings);
+    string Name, string Line, string Unit, DateTimeOffset? LatestAt, double? LatestValue, string? LatestQuality, double? GoodShare, RejectedWire Rejected, long Readings, FitWire? Fit);
 
 /// <summary>Readings left out, by reason.</summary>
 /// <param name="Bad">Bad by the source.</param>
