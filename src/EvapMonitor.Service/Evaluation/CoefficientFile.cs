@@ -40,8 +40,7 @@ internal sealed class CoefficientFile : IDisposable
         CleanExpectation? clean = CleanExpectation.Design(effect);
         Measured coefficient = window.Coefficient;
         _text.Write(DateTimeOffset.FromUnixTimeMilliseconds(window.At).ToString("yyyy-MM-ddTHH:mm:ssZ", CultureInfo.InvariantCulture));
-        // Whether the window was steady is not judged yet: an empty cell.
-        _text.Write($",{TrendCsv.Cell(line)},{TrendCsv.Cell(effect.Name)},{Words.Of(window.State)},");
+        _text.Write($",{TrendCsv.Cell(line)},{TrendCsv.Cell(effect.Name)},{Words.Of(window.State)},{Words.OfSteady(window.Steady)}");
         Write(window.HeatingTemperature.Value - 273.15, "0.0000");
         Write(window.BoilingTemperature.Value - 273.15, "0.0000");
         Write(window.Elevation.Value, "0.0000");
