@@ -22,7 +22,7 @@ internal sealed class LineSteadiness(LineMemory memory, IReadOnlyList<SwitchingS
         for (int key = 0; key < memory.Keys.Instruments.Count; key++)
         {
             ReadOnlySpan<double> samples = memory.Keys.Between(key, quietFrom - (long)LookBack.TotalMilliseconds, end, out long first);
-            bool? steady = SignalSteadiness.Judge(memory.Keys.Instruments[key], samples, first, KeySamples.NumberOf(quietFrom));
+            bool? steady = SignalSteadiness.Judge(memory.Keys.Instruments[key], samples, first, KeySamples.NumberOf(quietFrom), KeySamples.NumberOf(at));
             if (steady == false) return false;
             unknown |= steady is null;
         }

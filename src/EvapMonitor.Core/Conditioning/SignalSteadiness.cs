@@ -17,7 +17,7 @@ internal static class SignalSteadiness
     /// <summary>Samples after which the filters, started anew, say something.</summary>
     public const int WarmUp = 24;
 
-    /// <summary>Where noise is correlated over longer than one sample (φ = e⁻¹), only every one of so many samples is looked at.</summary>
+    /// <summary>Where noise is correlated over longer than one sample, only every one of so many samples is looked at.</summary>
     public const int Coarse = 5;
 
     /// <summary>A signal that has not moved for so many samples is not judged: what its filters still hold is the past.</summary>
@@ -32,15 +32,17 @@ internal static class SignalSteadiness
     /// </summary>
     public const double LeastDeparture = 1.0 / 3;
 
-    private static readonly double MostCorrelated = double.Exp(-1);
+    /// <summary>A correlation time of one sample, φ = e⁻¹, and one standard deviation of the estimate, so that it is not exceeded by chance. What is left is allowed for.</summary>
+    private const double MostCorrelated = 0.5;
 
     /// <summary>Judges a stretch.</summary>
     /// <param name="instrument">The instrument: its accuracy and resolution.</param>
     /// <param name="samples">Samples by the minute, SI units; NaN where there is none; from <see cref="WarmUp"/> times <see cref="Coarse"/> before the stretch.</param>
     /// <param name="first">Number of the first sample, counted in minutes since 1970.</param>
-    /// <param name="after">The stretch begins behind this sample and ends with the last one.</param>
-    /// <returns>True: steady all the time. False: it changed, or has changed just before. Null: not judged.</returns>
-    public static bool? Judge(Instrument instrument, ReadOnlySpan<double> samples, long first, long after)
+    /// <param name="quiet">The settling time and the window behind it begin after this sample; the window ends with the last one.</param>
+    /// <param name="window">The window begins after this sample.</param>
+    /// <returns>True: steady all the time. False: it changed in that time, or so shortly before that the window cannot be told. Null: not judged.</returns>
+    public static bool? Judge(Instrument instrument, ReadOnlySpan<double> samples, long first, long quiet, long window)
     {
         int every = 1;
         double correlation = NoiseCorrelation.Of(samples);
@@ -55,10 +57,11 @@ internal static class SignalSteadiness
             correlation = double.Min(MostCorrelated, NoiseCorrelation.Of(samples));
         }
 
-        return Walk(instrument, samples, index => first + (index * every) > after, SteadyStatistic.Expected(correlation));
+        // Negative where all samples lie behind.
+        return Walk(instrument, samples, (int)((quiet - first) / every), (int)((window - first) / every), SteadyStatistic.Expected(correlation));
     }
 
-    private static bool? Walk(Instrument instrument, ReadOnlySpan<double> samples, Func<int, bool> within, double expected)
+    private static bool? Walk(Instrument instrument, ReadOnlySpan<double> samples, int quiet, int window, double expected)
     {
         var statistic = default(SteadyStatistic);
         bool afterChange = false, changed = false, unknown = false;
@@ -68,6 +71,7 @@ internal static class SignalSteadiness
         for (int i = 0; i < samples.Length; i++)
         {
             double sample = samples[i];
+            bool found = false;
             if (double.IsNaN(sample))
             {
                 if (++missing == LongestGap + 1) (statistic, afterChange, state) = (default, false, null);
@@ -84,14 +88,14 @@ internal static class SignalSteadiness
                     // What was before the change is no part of the state that comes.
                     statistic = default;
                     statistic.Add(sample);
-                    (afterChange, state) = (true, false);
+                    (found, afterChange, state) = (true, true, false);
                 }
                 else (afterChange, state) = (false, unchanged >= LongestUnchanged || double.IsNaN(ratio) ? null : true);
             }
 
-            if (i < samples.Length - 1 && !within(i)) continue;
-            changed |= state == false;
-            unknown |= state is null;
+            bool last = i == samples.Length - 1;
+            changed |= (found && i > quiet) || (state == false && (i > window || last));
+            unknown |= state is null && (i > quiet || last);
         }
 
         return changed ? false : unknown || samples.Length == 0 ? null : true;

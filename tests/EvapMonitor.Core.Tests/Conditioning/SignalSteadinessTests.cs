@@ -58,7 +58,7 @@ public class SignalSteadinessTests
     {
         double[] signal = [.. Signal(minute => minute >= Noise ? 0.1 : 0, 2 * Noise, 0, 5).Select((value, i) => 100 + (i >= Noise ? 0.1 : 0) + (0.001 * (value - 100)))];
         Assert.True(VerdictAt(signal, Noise + 10));
-        Assert.False(SignalSteadiness.Judge(Gauge with { Accuracy = new Accuracy(0, 0, AccuracyMeaning.Standard) }, signal.AsSpan(0, Noise + 10), 0, Noise - 20));
+        Assert.False(SignalSteadiness.Judge(Gauge with { Accuracy = new Accuracy(0, 0, AccuracyMeaning.Standard) }, signal.AsSpan(0, Noise + 10), 0, Noise - 20, Noise));
     }
 
     [Fact]
@@ -107,6 +107,6 @@ public class SignalSteadinessTests
     private static bool? VerdictAt(double[] signal, int end)
     {
         int start = int.Max(0, end - LookBack - Settling - Window);
-        return SignalSteadiness.Judge(Gauge, signal.AsSpan(start, end - start), start, end - Settling - Window - 1);
+        return SignalSteadiness.Judge(Gauge, signal.AsSpan(start, end - start), start, end - Settling - Window - 1, end - Window - 1);
     }
 }
