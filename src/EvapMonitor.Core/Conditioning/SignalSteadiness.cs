@@ -17,8 +17,11 @@ internal static class SignalSteadiness
     /// <summary>Samples after which the filters, started anew, say something.</summary>
     public const int WarmUp = 24;
 
-    /// <summary>Where noise is correlated over longer than one sample, only every one of so many samples is looked at.</summary>
+    /// <summary>Where noise is correlated over longer than a minute, or readings come more rarely, the samples are five minutes apart at most.</summary>
     public const int Coarse = 5;
+
+    /// <summary>Minutes between samples: the first grid is taken that is no finer than the correlation time; the last one in any case.</summary>
+    private static readonly int[] Grids = [1, 2, Coarse];
 
     /// <summary>A signal that has not moved for so many samples is not judged: what its filters still hold is the past.</summary>
     public const int LongestUnchanged = 30;
@@ -44,21 +47,27 @@ internal static class SignalSteadiness
     /// <returns>True: steady all the time. False: it changed in that time, or so shortly before that the window cannot be told. Null: not judged.</returns>
     public static bool? Judge(Instrument instrument, ReadOnlySpan<double> samples, long first, long quiet, long window)
     {
-        int every = 1;
-        double correlation = NoiseCorrelation.Of(samples);
-        if (correlation > MostCorrelated)
+        foreach (int every in Grids)
         {
-            every = Coarse;
-            int skip = (int)((Coarse - (first % Coarse)) % Coarse);
-            var coarse = new double[int.Max(0, (samples.Length - skip + Coarse - 1) / Coarse)];
-            for (int i = 0; i < coarse.Length; i++) coarse[i] = samples[skip + (i * Coarse)];
-            samples = coarse;
-            first += skip;
-            correlation = double.Min(MostCorrelated, NoiseCorrelation.Of(samples));
+            ReadOnlySpan<double> thin = Every(every, samples, first, out long start);
+            double correlation = NoiseCorrelation.Of(thin);
+            if (correlation > MostCorrelated && every < Coarse) continue;
+            double expected = SteadyStatistic.Expected(double.Min(correlation, MostCorrelated));
+            return Walk(instrument, thin, (int)Math.Floor((quiet - start) / (double)every), (int)Math.Floor((window - start) / (double)every), expected);
         }
 
-        // Negative where all samples lie behind.
-        return Walk(instrument, samples, (int)((quiet - first) / every), (int)((window - first) / every), SteadyStatistic.Expected(correlation));
+        return null;
+    }
+
+    /// <summary>The samples at whole multiples of some minutes.</summary>
+    private static ReadOnlySpan<double> Every(int minutes, ReadOnlySpan<double> samples, long first, out long start)
+    {
+        int skip = (int)((minutes - (first % minutes)) % minutes);
+        start = first + skip;
+        if (minutes == 1) return samples;
+        var thin = new double[int.Max(0, (samples.Length - skip + minutes - 1) / minutes)];
+        for (int i = 0; i < thin.Length; i++) thin[i] = samples[skip + (i * minutes)];
+        return thin;
     }
 
     private static bool? Walk(Instrument instrument, ReadOnlySpan<double> samples, int quiet, int window, double expected)
