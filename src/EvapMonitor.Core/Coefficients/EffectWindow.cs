@@ -43,6 +43,11 @@ public sealed record EffectWindow
     /// <summary>Driving force, K.</summary>
     public required Measured DrivingForce { get; init; }
 
+    /// <summary>
+    /// Driving force with the liquor boiling at the pressure at half its height, p + ρ·g·h/2, with the elevation it has at the surface, K; absent without a level.
+    /// </summary>
+    public Measured HeadCorrectedDrivingForce { get; init; } = Measured.Absent;
+
     /// <summary>Duty, W.</summary>
     public required Measured Duty { get; init; }
 
