@@ -133,6 +133,15 @@ public sealed partial class LineEvaluation
             random[place] = signals[place].Random[window];
         }
 
+        // Of a tank's level the balance wants to know how fast it rises; a constant error of the level is none of its rate.
+        foreach ((int place, _) in _instruments.StoringLevels)
+        {
+            if (place < 0) continue;
+            double rate = inputs.Value[place] = signals[place].Rate[window];
+            systematic[place] = Tank.MassPerLevelStandard * double.Abs(rate);
+            random[place] = signals[place].RateRandom[window];
+        }
+
         return inputs;
     }
 
