@@ -11,16 +11,18 @@ namespace EvapMonitor.Core;
 /// The journey of a reading through the stations, for one line: readings → conditioned windows → reconciled balance → apparent coefficients.
 /// The result for a UTC day is a pure function of the plant, the day's readings, those of the lead-in before it, and the logged cleanings.
 /// </summary>
-public sealed class LineEvaluation
+public sealed partial class LineEvaluation
 {
     /// <summary>Raised when a change to the computation may move figures; stored with every result.</summary>
-    public const int ModelNumber = 3;
+    public const int ModelNumber = 4;
 
     private readonly Site _site;
     private readonly Line _line;
     private readonly LineInstruments _instruments;
     private readonly IReadOnlyList<Instrument> _conditioned;
     private readonly ApparentCoefficients _coefficients;
+    private readonly IReadOnlyList<Instrument> _keys;
+    private readonly IReadOnlyList<SwitchingSignal> _switches;
 
     /// <summary>Prepares the evaluation of a line. Not for use by two threads at a time.</summary>
     public LineEvaluation(Site site, Line line)
@@ -28,14 +30,18 @@ public sealed class LineEvaluation
         _site = site;
         _line = line;
         _instruments = new LineInstruments(line);
-        _conditioned = [.. _instruments.All, .. site.Atmosphere.Measured is { } air && _instruments.All.All(instrument => instrument.Signal != air.Signal) ? [air] : Array.Empty<Instrument>()];
-        _coefficients = new ApparentCoefficients(_instruments, LineGraph.OfSurfaces(line));
+        _conditioned = [.. _instruments.All.Concat(Beside(site, line)).DistinctBy(instrument => instrument.Signal)];
+        var graph = LineGraph.OfSurfaces(line);
+        _coefficients = new ApparentCoefficients(_instruments, graph);
+        _keys = [.. KeyPlaces(graph).Where(place => place >= 0).Distinct().Select(place => _instruments.All[place])];
+        _switches = [.. Switches()];
+        _lookBack = Longer(LongestSettling + LineSteadiness.LookBack, LongestFilling) + site.Window;
         TimeSpan stale = _conditioned.Select(instrument => instrument.StaleAfter).DefaultIfEmpty().Max();
         TimeSpan still = _conditioned.Select(instrument => instrument.FrozenAfter).DefaultIfEmpty().Max();
         TimeSpan laboratory = LaboratoryPlaces().Select(place => place.ValidFor).DefaultIfEmpty().Max();
         LongestStale = stale;
-        Reach = Longer(stale + Longer(still, TimeSpan.FromHours(1)), laboratory) + line.SuspectAfter;
-        LeadIn = Longer(LineConditioning.Memory + stale, laboratory) + line.SuspectAfter + site.Window;
+        Reach = Longer(Longer(stale + Longer(still, TimeSpan.FromHours(1)), laboratory) + line.SuspectAfter, stale + _lookBack);
+        LeadIn = Longer(Longer(LineConditioning.Memory + stale, laboratory) + line.SuspectAfter, stale + _lookBack) + site.Window;
     }
 
     /// <summary>The signals that the line needs, the atmosphere's among them.</summary>
@@ -57,7 +63,7 @@ public sealed class LineEvaluation
     public TimeSpan LongestStale { get; }
 
     /// <summary>A memory for evaluating this line live.</summary>
-    public LineMemory NewMemory() => new(_conditioned, _site.Window, _line.SuspectAfter);
+    public LineMemory NewMemory() => new(_conditioned, _site.Window, _line.SuspectAfter, _keys, _lookBack);
 
     /// <summary>Evaluates the windows of a span from readings alone.</summary>
     /// <param name="readings">Readings by signal, from <see cref="LeadIn"/> before the span on.</param>
@@ -89,6 +95,7 @@ public sealed class LineEvaluation
         }
 
         foreach (ConditionedSignal signal in signals) signal.Exclude(Exclusions[signal.Instrument.Signal]);
+        var steadiness = new LineSteadiness(memory, _switches);
         var windows = new List<LineWindow>(grid.Count);
         for (int window = 0; window < grid.Count; window++)
         {
@@ -98,10 +105,11 @@ public sealed class LineEvaluation
             // A window into which no signal reaches has no result, not an absent one.
             if (Array.TrueForAll(inputs.Value, double.IsNaN)) continue;
             Liquor? liquor = LiquorOf(inputs);
-            RunningState state = StateOf(inputs, liquor);
+            RunningState state = StateOf(memory, at, inputs, liquor);
             if (liquor is null)
             {
-                if (at >= from) windows.Add(Marked(LineWindow.Absent(at, state, _line.Effects.Count, $"the product is not known: {_line.Liquor.Signal!.Signal} names none"), grid.Step, cleanings));
+                LineWindow absent = LineWindow.Absent(at, state, _line.Effects.Count, $"the product is not known: {_line.Liquor.Signal!.Signal} names none");
+                if (at >= from) windows.Add(Marked(absent, SteadyOf(steadiness, at, inputs, cleanings), memory, cleanings));
                 continue;
             }
 
@@ -111,7 +119,8 @@ public sealed class LineEvaluation
             if (state != RunningState.Idle) memory.Suspicions.Keep(at, [.. suspects.Where(set => set.Count == 1).Select(set => set[0])]);
             if (at < from) continue;
             int w = window;
-            windows.Add(Marked(_coefficients.Evaluate(at, read, suspects, memory.Suspicions.LeftOutAt(at), place => signals[place].WhyAbsent(w)), grid.Step, cleanings));
+            bool? steady = SteadyOf(steadiness, at, inputs, cleanings);
+            windows.Add(Marked(_coefficients.Evaluate(at, read, suspects, memory.Suspicions.LeftOutAt(at), place => signals[place].WhyAbsent(w)), steady, memory, cleanings));
         }
 
         return [.. windows];
@@ -126,6 +135,15 @@ public sealed class LineEvaluation
             inputs.Value[place] = signals[place].Mean[window];
             systematic[place] = signals[place].Systematic[window];
             random[place] = signals[place].Random[window];
+        }
+
+        // Of a tank's level the balance wants to know how fast it rises; a constant error of the level is none of its rate.
+        foreach ((int place, _) in _instruments.StoringLevels)
+        {
+            if (place < 0) continue;
+            double rate = inputs.Value[place] = signals[place].Rate[window];
+            systematic[place] = Tank.MassPerLevelStandard * double.Abs(rate);
+            random[place] = signals[place].RateRandom[window];
         }
 
         return inputs;
@@ -150,25 +168,4 @@ public sealed class LineEvaluation
     }
 
     private static TimeSpan Longer(TimeSpan one, TimeSpan other) => one > other ? one : other;
-
-    private Liquor? LiquorOf(LineInputs inputs)
-    {
-        if (_line.Liquor.Always is { } always) return always;
-        double value = inputs.At(_instruments.LiquorSignal);
-        return double.IsFinite(value) && _line.Liquor.ByValue.TryGetValue((int)double.Round(value), out Liquor? found) ? found : null;
-    }
-
-    private RunningState StateOf(LineInputs inputs, Liquor? liquor)
-    {
-        double feed = inputs.At(_instruments.Feed.Flow);
-        if (double.IsNaN(feed)) return RunningState.Unknown;
-        if (feed <= (_line.ProducingAboveFeedFlow ?? 0)) return RunningState.Idle;
-        return liquor is Water ? RunningState.WaterRun : RunningState.Producing;
-    }
-
-    private LineWindow Marked(LineWindow window, long step, ILookup<string, (long Start, long End)> cleanings) => window with
-    {
-        Effects = [.. window.Effects.Select((effect, i) => cleanings[_line.Effects[i].Name].Any(cleaning => effect.At < cleaning.End && effect.At + step > cleaning.Start)
-            ? effect with { State = RunningState.Cleaning } : effect)],
-    };
 }

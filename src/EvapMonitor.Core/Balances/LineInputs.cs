@@ -5,7 +5,7 @@ namespace EvapMonitor.Core.Balances;
 /// <summary>What a balance reads in one window: the conditioned means.</summary>
 internal sealed class LineInputs(LineInstruments instruments)
 {
-    /// <summary>Window means by place, SI units, pressures absolute; NaN is absent.</summary>
+    /// <summary>Window means by place, SI units, pressures absolute; of a tank's level that tells what it stores, the rate, m/s. NaN is absent.</summary>
     public double[] Value { get; } = new double[instruments.All.Count];
 
     /// <summary>A place's value; NaN when the place is absent.</summary>

@@ -72,6 +72,10 @@ public sealed class LineInstruments
     /// <summary>Places of the levels, in the order of the line's tanks.</summary>
     public IReadOnlyList<int> TankLevels { get; }
 
+    /// <summary>By tank: the place of the level that tells how much it stores, and what a metre of it holds in kg; −1 and 0 where none does.</summary>
+    public IEnumerable<(int Place, double MassPerLevel)> StoringLevels => Line.Tanks.Select((tank, t) =>
+        tank.MassPerLevel is { } mass && Effects.All(effect => effect.Level != TankLevels[t]) ? (TankLevels[t], mass) : (-1, 0));
+
     /// <summary>Places on the recompressors, in the order of the line's.</summary>
     public IReadOnlyList<RecompressorPlaces> Recompressors { get; }
 

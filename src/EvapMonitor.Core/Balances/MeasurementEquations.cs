@@ -43,7 +43,7 @@ internal sealed class MeasurementEquations
 
     /// <summary>The places of the instruments that measure a variable.</summary>
     public int[] On(int variable) =>
-        [.. _all.Where(one => one.Variable == variable && one.Place >= 0 && one.Kind is (Reading.Plain or Reading.LiquorVolume or Reading.WaterVolume)).Select(one => one.Place).Distinct()];
+        [.. _all.Where(one => one.Variable == variable && one.Place >= 0 && one.Kind is (Reading.Plain or Reading.LiquorVolume or Reading.WaterVolume or Reading.Stored)).Select(one => one.Place).Distinct()];
 
     /// <summary>What an instrument's reading says of a variable at a state of the line.</summary>
     public double ReadingOf(int variable, int place, double reading, double[] state)
@@ -51,6 +51,7 @@ internal sealed class MeasurementEquations
         Equation equation = _all.Find(one => one.Variable == variable && one.Place == place);
         return equation.Kind switch
         {
+            Reading.Stored => reading * equation.Factor,
             Reading.LiquorVolume => reading * Density(equation, state),
             Reading.WaterVolume => Physical.WaterMassFlow(reading, _at.All[place].Unit, state[equation.First]),
             _ => reading,
@@ -121,6 +122,9 @@ internal sealed class MeasurementEquations
                 if (equation.BySign == 0) return Here(equation.Variable) - reading;
                 z[AirColumn] -= 1;
                 return Here(equation.Variable) - reading - measured[AirColumn];
+            case Reading.Stored:
+                z[equation.Place] -= equation.Factor;
+                return Here(equation.Variable) - (reading * equation.Factor);
             case Reading.LiquorVolume:
                 // Density moves by less than a thousandth with what is corrected here, so that its slopes are left out; its value is followed.
                 double density = Density(equation, state);
@@ -262,6 +266,13 @@ internal sealed class MeasurementEquations
                 Stated(_variables.Liquor[k].Share, share, $"share of {_graph.NameOf(_graph.Liquor[k].From)} to {_graph.NameOf(_graph.Liquor[k].To)}");
         }
 
+        int tank = 0;
+        foreach ((int place, double mass) in _at.StoringLevels)
+        {
+            int stored = _variables.Tanks[tank++].Accumulation;
+            if (place >= 0) _all.Add(new(Reading.Stored, stored, place) { Factor = mass });
+        }
+
         for (int b = 0; b < line.Bleeds.Count; b++) Plain(_variables.Bleeds[b], _at.BleedFlows[b]);
         for (int h = 0; h < line.Heaters.Count; h++)
         {
@@ -324,6 +335,8 @@ internal sealed class MeasurementEquations
     {
         /// <summary>The variable itself; a gauge pressure with the error of the atmosphere.</summary>
         Plain,
+        /// <summary>What is stored, by how fast a level rises.</summary>
+        Stored,
         /// <summary>A mass flow by its volume and the density of the liquor.</summary>
         LiquorVolume,
         /// <summary>A mass flow by its volume and the density of condensate.</summary>
@@ -366,6 +379,9 @@ internal sealed class MeasurementEquations
 
         /// <summary>The column of a stated quantity.</summary>
         public int Column { get; init; } = -1;
+
+        /// <summary>What a unit of the reading stands for, in the unit of the variable.</summary>
+        public double Factor { get; init; }
 
         /// <summary>1 for a gauge pressure.</summary>
         public int BySign { get; init; }

@@ -59,7 +59,7 @@ internal sealed class ApparentCoefficients(LineInstruments instruments, LineGrap
             return LineWindow.Absent(at, state, count, "no balance: the readings of the line fit no state in which it could run");
         var quantities = new BalanceQuantities(balance);
         var effects = new EffectWindow[count];
-        for (int i = 0; i < effects.Length; i++) effects[i] = Of(i, at, state, readings.Liquor, balance, quantities, inputs, WhyAbsent);
+        for (int i = 0; i < effects.Length; i++) effects[i] = Of(i, at, readings, balance, quantities, WhyAbsent);
         return new LineWindow(at, state, quantities.Of(balance.Variables.Evaporation).Value, effects) { Balance = quantities.Window(readings, read, suspects, leftOut) };
     }
 
@@ -84,8 +84,9 @@ internal sealed class ApparentCoefficients(LineInstruments instruments, LineGrap
     }
 
     private EffectWindow Of(
-        int i, long at, RunningState state, Liquor liquor, Reconciliation balance, BalanceQuantities quantities, LineInputs inputs, Func<int, string> whyAbsent)
+        int i, long at, in WindowReadings readings, Reconciliation balance, BalanceQuantities quantities, Func<int, string> whyAbsent)
     {
+        (RunningState state, Liquor liquor, LineInputs inputs) = (readings.State, readings.Liquor, readings.Inputs);
         EffectVariables its = balance.Variables.Effects[i];
         Measured heating = quantities.Of(its.Heating), boiling = quantities.Of(its.Boiling), duty = quantities.Of(its.Duty);
         Measured force = quantities.Difference(its.Heating, its.Boiling), solids = quantities.Of(its.Solids);
@@ -100,6 +101,7 @@ internal sealed class ApparentCoefficients(LineInstruments instruments, LineGrap
             BoilingTemperature = boiling,
             Elevation = quantities.Elevation(its),
             DrivingForce = force,
+            HeadCorrectedDrivingForce = quantities.HeadCorrectedDifference(its, LevelOf(i, readings), readings.Liquor),
             Duty = duty,
             Coefficient = reason is null ? coefficient : Measured.Absent,
             Solids = solids.Value,
@@ -110,6 +112,9 @@ internal sealed class ApparentCoefficients(LineInstruments instruments, LineGrap
             Reason = reason,
         };
     }
+
+    private Measured LevelOf(int i, in WindowReadings readings) => instruments.Effects[i].Level is >= 0 and var level
+        ? new Measured(readings.Inputs.Value[level], readings.Systematic[level], readings.Random[level]) : Measured.Absent;
 
     /// <summary>The surest of the instruments that tell the heating temperature, by the order of the method.</summary>
     private HeatingTemperatureSource HeatingFrom(int i, LineInputs inputs)

@@ -1,10 +1,14 @@
 using EvapMonitor.Core.Balances;
+using EvapMonitor.Core.Properties;
 
 namespace EvapMonitor.Core.Coefficients;
 
 /// <summary>Quantities of a reconciled window with their standard uncertainties, each by how it follows the readings (JCGM 100, 5.2: what is shared cancels).</summary>
 internal sealed class BalanceQuantities(Reconciliation balance)
 {
+    /// <summary>Standard acceleration of free fall, m/s² (3rd General Conference on Weights and Measures, 1901).</summary>
+    private const double StandardGravity = 9.80665;
+
     private readonly double[] _sensitivity = new double[balance.Measurements.Columns];
 
     /// <summary>A variable; absent when it does not follow from what is measured.</summary>
@@ -35,6 +39,34 @@ internal sealed class BalanceQuantities(Reconciliation balance)
         balance.AddSensitivity(its.Boiling, 1, _sensitivity);
         balance.AddSensitivity(its.VapourPressure, -saturation.First, _sensitivity);
         return With(balance.State[its.Boiling] - saturation.Value);
+    }
+
+    /// <summary>
+    /// Ts − Tb with the saturation temperature taken at half the liquor's height: (Ts − Tb) − [Tsat(p + ρ·g·h/2) − Tsat(p)]. The elevation stays that of the
+    /// surface. Absent without a level, and where a height under zero is read.
+    /// </summary>
+    /// <param name="its">Variables of the effect.</param>
+    /// <param name="height">Its level, m: no part of the balance, so that its error is independent of it.</param>
+    /// <param name="liquor">What boils.</param>
+    public Measured HeadCorrectedDifference(in EffectVariables its, Measured height, Liquor liquor)
+    {
+        if (!(height.Value >= 0) || !balance.IsObservable(its.Heating) || !balance.IsObservable(its.Boiling) || !balance.IsObservable(its.VapourPressure)) return Measured.Absent;
+        // Without solids the liquor counts as water: density enters the small term only.
+        double solids = balance.IsObservable(its.Solids) ? double.Clamp(balance.State[its.Solids], 0, 0.95) : 0;
+        PropertyValue density = liquor.Density(solids, balance.State[its.Boiling]);
+        double pressure = balance.State[its.VapourPressure], half = StandardGravity / 2;
+        Sloped above = balance.Properties.SaturationTemperature(pressure), within = balance.Properties.SaturationTemperature(pressure + (density.Value * half * height.Value));
+        Array.Clear(_sensitivity);
+        balance.AddSensitivity(its.Heating, 1, _sensitivity);
+        balance.AddSensitivity(its.Boiling, -1, _sensitivity);
+        balance.AddSensitivity(its.VapourPressure, above.First - within.First, _sensitivity);
+        Measured found = With(balance.State[its.Heating] - balance.State[its.Boiling] - (within.Value - above.Value));
+        double perMetre = within.First * half * density.Value, ofDensity = within.First * half * height.Value * density.Standard;
+        return found with
+        {
+            Systematic = double.Sqrt((found.Systematic * found.Systematic) + (perMetre * height.Systematic * perMetre * height.Systematic) + (ofDensity * ofDensity)),
+            Random = double.Sqrt((found.Random * found.Random) + (perMetre * height.Random * perMetre * height.Random)),
+        };
     }
 
     /// <summary>Q/(A·(Ts − Tb)).</summary>

@@ -2,7 +2,7 @@ using EvapMonitor.Core.Balances;
 
 namespace EvapMonitor.Core.Coefficients;
 
-/// <summary>What the line was doing in a window.</summary>
+/// <summary>What the line was doing in a window. The numbers are stored: never renumber.</summary>
 public enum RunningState : byte
 {
     /// <summary>It cannot be told.</summary>
@@ -15,6 +15,8 @@ public enum RunningState : byte
     WaterRun,
     /// <summary>Being cleaned.</summary>
     Cleaning,
+    /// <summary>Feed flows after a stop, but no product leaves yet.</summary>
+    Filling,
 }
 
 /// <summary>What evaluation leaves of one effect and one window. Values are SI; an absent one is NaN and <see cref="Reason"/> says why there is no coefficient.</summary>
@@ -25,6 +27,9 @@ public sealed record EffectWindow
 
     /// <summary>What the line was doing.</summary>
     public required RunningState State { get; init; }
+
+    /// <summary>True: the line was steady and the effect not being cleaned. False: it was not. Null: it could not be judged.</summary>
+    public bool? Steady { get; init; }
 
     /// <summary>Heating temperature, K.</summary>
     public required Measured HeatingTemperature { get; init; }
@@ -37,6 +42,11 @@ public sealed record EffectWindow
 
     /// <summary>Driving force, K.</summary>
     public required Measured DrivingForce { get; init; }
+
+    /// <summary>
+    /// Driving force with the liquor boiling at the pressure at half its height, p + ρ·g·h/2, with the elevation it has at the surface, K; absent without a level.
+    /// </summary>
+    public Measured HeadCorrectedDrivingForce { get; init; } = Measured.Absent;
 
     /// <summary>Duty, W.</summary>
     public required Measured Duty { get; init; }
@@ -89,6 +99,9 @@ public sealed record EffectWindow
 /// <param name="Effects">The effects in plant-file order.</param>
 public sealed record LineWindow(long At, RunningState State, double Evaporation, IReadOnlyList<EffectWindow> Effects)
 {
+    /// <summary>True: the line was steady. False: it was not. Null: it could not be judged.</summary>
+    public bool? Steady { get; init; }
+
     /// <summary>The reconciled balance; null when there is none.</summary>
     public BalanceWindow? Balance { get; init; }
 

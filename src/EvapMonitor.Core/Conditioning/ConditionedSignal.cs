@@ -27,6 +27,8 @@ public sealed class ConditionedSignal
         Mean = new double[grid.Count];
         Systematic = new double[grid.Count];
         Random = new double[grid.Count];
+        Rate = new double[grid.Count];
+        RateRandom = new double[grid.Count];
         GoodShare = new float[grid.Count];
         Rejected = new int[grid.Count, Enum.GetValues<Rejection>().Length];
         Samples = new int[grid.Count];
@@ -46,6 +48,12 @@ public sealed class ConditionedSignal
 
     /// <summary>Random standard uncertainty of the mean, SI units.</summary>
     public double[] Random { get; }
+
+    /// <summary>How fast the value rises within the window, SI units per s: the straight line through its readings by least squares; NaN with fewer than three.</summary>
+    public double[] Rate { get; }
+
+    /// <summary>Random standard uncertainty of the rate, from the scatter of the readings.</summary>
+    public double[] RateRandom { get; }
 
     /// <summary>Share of the window in which the signal was good, 0 to 1.</summary>
     public float[] GoodShare { get; }

@@ -36,6 +36,7 @@ public static class Laboratory
             bool stands = sampledAt != long.MinValue && grid.StartOf(window) - sampledAt < valid;
             result.Mean[window] = stands ? value : double.NaN;
             result.Systematic[window] = stands ? instrument.Accuracy.Standard(value) : double.NaN;
+            result.Rate[window] = result.RateRandom[window] = double.NaN;
             result.GoodShare[window] = stands ? 1 : 0;
         }
 

@@ -10,7 +10,7 @@ namespace EvapMonitor.Core.Conditioning;
 public sealed class LineMemory
 {
     private readonly IReadOnlyList<Instrument> _instruments;
-    private readonly long _step, _suspectAfter;
+    private readonly long _step, _suspectAfter, _lookBack;
     private WindowGrid _grid;
     private WindowPartial[][] _partials;
 
@@ -18,8 +18,12 @@ public sealed class LineMemory
     /// <param name="instruments">The instruments, one for each signal.</param>
     /// <param name="window">Length of a window.</param>
     /// <param name="suspectAfter">How long an instrument must have been suspect to be left out.</param>
-    public LineMemory(IReadOnlyList<Instrument> instruments, TimeSpan window, TimeSpan suspectAfter)
+    /// <param name="keys">Those whose samples tell whether the line is steady; null: none.</param>
+    /// <param name="lookBack">How far before a window the verdicts on what the line was doing look.</param>
+    public LineMemory(IReadOnlyList<Instrument> instruments, TimeSpan window, TimeSpan suspectAfter, IReadOnlyList<Instrument>? keys = null, TimeSpan lookBack = default)
     {
+        Keys = new KeySamples(keys ?? []);
+        _lookBack = (long)lookBack.TotalMilliseconds;
         (_instruments, _suspectAfter) = (instruments, (long)suspectAfter.TotalMilliseconds);
         Suspicions = new Suspicions((long)window.TotalMilliseconds, suspectAfter);
         _step = (long)window.TotalMilliseconds;
@@ -32,6 +36,9 @@ public sealed class LineMemory
 
     /// <summary>Partials by signal and window of <see cref="Grid"/>.</summary>
     internal WindowPartial[][] Partials => _partials;
+
+    /// <summary>Samples of the key signals over the same span.</summary>
+    internal KeySamples Keys { get; }
 
     /// <summary>The verdicts on instruments.</summary>
     internal Suspicions Suspicions { get; }
@@ -63,6 +70,7 @@ public sealed class LineMemory
         Keep(start, missing);
         var added = WindowGrid.Between(missing, to, TimeSpan.FromMilliseconds(_step));
         if (added.Count == 0) return;
+        Keys.Add(readings, added.End);
         for (int i = 0; i < _partials.Length; i++)
         {
             ReadingSeries series = readings.TryGetValue(_instruments[i].Signal, out ReadingSeries? found) ? found : new ReadingSeries();
@@ -74,12 +82,13 @@ public sealed class LineMemory
 
     private long StartFor(long from)
     {
-        long start = JudgedFrom(from) - (long)LineConditioning.Memory.TotalMilliseconds;
+        long start = long.Min(JudgedFrom(from) - (long)LineConditioning.Memory.TotalMilliseconds, from - _lookBack);
         return start - Milliseconds.Modulo(start, _step);
     }
 
     private void Keep(long start, long end)
     {
+        Keys.Keep(start, end);
         if (_grid.Count == 0 || start >= _grid.End || end <= _grid.Start || start < _grid.Start)
         {
             _partials = [.. _instruments.Select(_ => Array.Empty<WindowPartial>())];

@@ -9,6 +9,11 @@ internal static class SignalConditioning
     /// <summary>Least share of good time for a window to have a value.</summary>
     public const double MinimumGoodShare = 0.6;
 
+    private const double PerSecond = 1000;
+
+    /// <summary>Fewest readings in a window that tell how fast a signal rises.</summary>
+    private const int FewestForRate = 3;
+
     /// <summary>Conditions one signal.</summary>
     /// <param name="instrument">The instrument.</param>
     /// <param name="partials">Its partials on the memory's grid.</param>
@@ -33,7 +38,7 @@ internal static class SignalConditioning
             result.Rejected[window, (int)Rejection.Frozen] = frozen ? int.Max(1, partial.Samples) : 0;
             if (frozen || share < MinimumGoodShare)
             {
-                result.Mean[window] = result.Systematic[window] = result.Random[window] = double.NaN;
+                result.Mean[window] = result.Systematic[window] = result.Random[window] = result.Rate[window] = result.RateRandom[window] = double.NaN;
                 continue;
             }
 
@@ -43,6 +48,8 @@ internal static class SignalConditioning
             result.Random[window] = Scatter(instrument, partials, at, grid.PerHour, mean)
                 / double.Sqrt(int.Max(1, partial.Samples))
                 * (1 + (2 * partial.UncertainTime / partial.GoodTime));
+            (result.Rate[window], result.RateRandom[window]) = partial.Samples < FewestForRate ? (double.NaN, double.NaN)
+                : (partial.Slope * PerSecond, result.Random[window] / double.Sqrt(partial.TimeVariance) * PerSecond);
         }
 
         return result;

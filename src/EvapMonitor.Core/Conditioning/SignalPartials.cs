@@ -64,7 +64,7 @@ internal sealed class SignalPartials
             if (window >= 0)
             {
                 ref WindowPartial partial = ref _windows[window];
-                partial.Samples++;
+                partial.Count(value, at - _grid.StartOf(window) - (_grid.Step / 2.0));
                 if (at - previousAt <= stale && double.IsFinite(previous))
                 {
                     partial.Squares += (value - previous) * (value - previous);

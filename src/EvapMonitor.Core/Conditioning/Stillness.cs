@@ -15,7 +15,7 @@ internal sealed class Stillness(IReadOnlyList<Instrument> instruments, WindowPar
         int moved = 0, able = 0;
         for (int other = 0; other < partials.Length; other++)
         {
-            if (other == signal || Moved(other, first, window) is not { } has) continue;
+            if (other == signal || instruments[other].Unit.Dimension == Dimension.Number || Moved(other, first, window) is not { } has) continue;
             able++;
             if (has) moved++;
         }

@@ -12,6 +12,18 @@ internal struct WindowPartial
     /// <summary>Good time, ms.</summary>
     public double GoodTime;
 
+    /// <summary>Sum of the good readings, SI units.</summary>
+    public double Values;
+
+    /// <summary>Sum of their times from the middle of the window, ms.</summary>
+    public double Times;
+
+    /// <summary>Sum of those times squared, ms².</summary>
+    public double TimesSquared;
+
+    /// <summary>Sum of value times time, SI units · ms.</summary>
+    public double Moment;
+
     /// <summary>Good time of uncertain quality, ms.</summary>
     public double UncertainTime;
 
@@ -38,6 +50,24 @@ internal struct WindowPartial
 
     /// <summary>Readings left out as outside the range.</summary>
     public int OutOfRange;
+
+    /// <summary>Takes a good reading into the sums over readings.</summary>
+    /// <param name="value">Its value.</param>
+    /// <param name="time">Its time from the middle of the window, ms.</param>
+    public void Count(double value, double time)
+    {
+        Samples++;
+        Values += value;
+        Times += time;
+        TimesSquared += time * time;
+        Moment += value * time;
+    }
+
+    /// <summary>Mean square distance of the times of the good readings from their mean, ms².</summary>
+    public readonly double TimeVariance => (TimesSquared / Samples) - (Times / Samples * (Times / Samples));
+
+    /// <summary>Slope of the straight line through the good readings by least squares, SI units per ms; NaN for fewer than two.</summary>
+    public readonly double Slope => ((Moment / Samples) - (Values / Samples * (Times / Samples))) / TimeVariance;
 
     /// <summary>Takes a good value into the extremes. Called before its time is added.</summary>
     public void Extend(double value)

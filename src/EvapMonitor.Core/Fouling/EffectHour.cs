@@ -34,7 +34,7 @@ public sealed record EffectHour(long Hour, HourQuantity Quantity, int Count, Mea
 {
     private static readonly HourQuantity[] Quantities = Enum.GetValues<HourQuantity>();
 
-    /// <summary>Sums up the windows of an effect by the hour. Windows that are idle or being cleaned, or have no coefficient, do not enter.</summary>
+    /// <summary>Sums up the windows of an effect by the hour. Only windows that <see cref="Counts">count</see> enter.</summary>
     /// <param name="windows">Windows in ascending order; whole hours.</param>
     public static IEnumerable<EffectHour> Summarise(IEnumerable<EffectWindow> windows)
     {
@@ -48,9 +48,9 @@ public sealed record EffectHour(long Hour, HourQuantity Quantity, int Count, Mea
         }
     }
 
-    /// <summary>True when a window speaks of the surface: in production (or not known to be otherwise), with a coefficient.</summary>
+    /// <summary>True when a window speaks of the surface: in production and steady (or not known to be otherwise), with a coefficient.</summary>
     public static bool Counts(EffectWindow window) =>
-        window.State is RunningState.Producing or RunningState.Unknown && window.Coefficient.IsPresent;
+        window.State is RunningState.Producing or RunningState.Unknown && window.Steady != false && window.Coefficient.IsPresent;
 
     /// <summary>The quantity of a window.</summary>
     public static Measured Of(EffectWindow window, HourQuantity quantity) => quantity switch

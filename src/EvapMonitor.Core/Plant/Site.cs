@@ -45,8 +45,17 @@ public sealed record Line
     /// <summary>What the line boils.</summary>
     public required LiquorChoice Liquor { get; init; }
 
-    /// <summary>How long the line needs to settle after a change. Default 20 min.</summary>
-    public TimeSpan SettlingTime { get; init; } = TimeSpan.FromMinutes(20);
+    /// <summary>
+    /// How long the line needs to settle after a change; at most 6 h. Null: three times what its tanks hold over the feed flow, but no less than
+    /// <see cref="LeastSettlingTime"/>, which also stands where no hold-up is known.
+    /// </summary>
+    public TimeSpan? SettlingTime { get; init; }
+
+    /// <summary>Settling time where nothing else is known.</summary>
+    public static TimeSpan LeastSettlingTime { get; } = TimeSpan.FromMinutes(20);
+
+    /// <summary>The longest settling time that a line may have.</summary>
+    public static TimeSpan LongestSettlingTime { get; } = TimeSpan.FromHours(6);
 
     /// <summary>How long an instrument must have been suspect before its readings are left out. Default 1 h; at most 6 h.</summary>
     public TimeSpan SuspectAfter { get; init; } = TimeSpan.FromHours(1);

@@ -56,7 +56,7 @@ export function trend(line, effect, quantity, from, to, points) {
   const n = Math.max(0, Math.floor((last - first) / step));
   const every = Math.max(1, Math.ceil(n / points));
   const out = { line: line.name, effect: effect.name, quantity, unit: units[quantity], resolution: hourly ? 'hour' : 'window', step_s: step / 1000, start: new Date(first).toISOString(),
-    offset_s: [], value: [], u: [], u_random: [], mark: [], reasons: [], reason: [], data_version: 1 };
+    offset_s: [], value: [], u: [], u_random: [], mark: [], steady: [], reasons: [], reason: [], data_version: 1 };
   for (let i = 0; i < n; i += every) {
     const t = first + i * step, s = at(line, effect, t), [v, u] = value(quantity, line, effect, s, t);
     out.offset_s.push((i * step) / 1000);
@@ -64,6 +64,7 @@ export function trend(line, effect, quantity, from, to, points) {
     out.u.push(u);
     out.u_random.push(u === null ? null : u / 4);
     out.mark.push(v === null ? '' : s.mark);
+    out.steady.push(v === null ? null : s.mark !== 'not producing');
     if (s.reason && !out.reasons.includes(s.reason)) out.reasons.push(s.reason);
     out.reason.push(v === null && s.reason ? out.reasons.indexOf(s.reason) : -1);
   }

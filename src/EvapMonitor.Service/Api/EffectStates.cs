@@ -64,7 +64,7 @@ public sealed class EffectStates(TrendStore trends, CleaningStore cleanings, Tim
         // The day may be rewritten between the two questions.
         if (windows.Count == 0) return null;
         EffectWindow lastOne = windows[^1];
-        string? reason = coefficient.IsPresent ? null : lastOne.Reason ?? NotProducing(lastOne.State);
+        string? reason = coefficient.IsPresent ? null : lastOne.Reason ?? NotCounting(lastOne);
         return new EffectNowWire(
             Utc(windows[0].At), 1,
             Number(coefficient.Value), Number(coefficient.Standard), Number(coefficient.Random),
@@ -75,11 +75,13 @@ public sealed class EffectStates(TrendStore trends, CleaningStore cleanings, Tim
             clean?.Source, Words.Of(lastOne.DutyFrom), Words.Of(lastOne.HeatingFrom), Words.Of(lastOne.BoilingFrom), reason);
     }
 
-    private static string NotProducing(RunningState state) => state switch
+    private static string NotCounting(EffectWindow last) => last.State switch
     {
         RunningState.Idle => "the line is idle: no feed",
         RunningState.Cleaning => "the effect is being cleaned",
         RunningState.WaterRun => "the line runs on water",
+        RunningState.Filling => "the line is filling: no product leaves yet",
+        _ when last.Steady == false => "the line has not been steady in the last hour",
         _ => "no coefficient in the last hour",
     };
 

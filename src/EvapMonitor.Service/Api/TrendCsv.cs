@@ -9,12 +9,12 @@ internal static class TrendCsv
 {
     public static string Of(TrendWire trend)
     {
-        var text = new StringBuilder("time,line,effect,quantity,unit,value,u,u_random,mark,reason\r\n");
+        var text = new StringBuilder("time,line,effect,quantity,unit,value,u,u_random,mark,reason,steady\r\n");
         for (int i = 0; i < trend.Value.Count; i++)
         {
             string reason = trend.Reason[i] < 0 ? "" : trend.Reasons[trend.Reason[i]];
             text.Append(CultureInfo.InvariantCulture, $"{trend.Start.AddSeconds(trend.OffsetS[i]):yyyy-MM-ddTHH:mm:ssZ},{Cell(trend.Line)},{Cell(trend.Effect)},{trend.Quantity},{trend.Unit},")
-                .Append(CultureInfo.InvariantCulture, $"{trend.Value[i]:R},{trend.U[i]:R},{trend.URandom[i]:R},{trend.Mark[i]},{Cell(reason)}\r\n");
+                .Append(CultureInfo.InvariantCulture, $"{trend.Value[i]:R},{trend.U[i]:R},{trend.URandom[i]:R},{trend.Mark[i]},{Cell(reason)},{Words.OfSteady(trend.Steady[i])}\r\n");
         }
 
         return text.ToString();

@@ -38,7 +38,7 @@ public sealed class Trends(TrendStore store)
         CleanExpectation? clean = CleanExpectation.Design(effect);
         bool byHour = to - from > LongestByWindow;
         List<Point> all = byHour
-            ? [.. store.Hours(line.LineId, effectId, quantity.Hours, from, to).Select(hour => new Point(hour.Hour, quantity.From(hour.Mean, effect, clean), "", null))]
+            ? [.. store.Hours(line.LineId, effectId, quantity.Hours, from, to).Select(hour => new Point(hour.Hour, quantity.From(hour.Mean, effect, clean), "", null, null))]
             : [.. store.Windows(line.LineId, effectId, from, to).Select(one => PointOf(one, quantity, effect, clean))];
         long step = byHour ? Milliseconds.Hour : (long)window.TotalMilliseconds;
         return Wire(line, effect, name, quantity.Unit, byHour, step, Thin(WithGaps(all, step), points), from, dataVersion);
@@ -50,7 +50,7 @@ public sealed class Trends(TrendStore store)
     {
         Measured value = quantity.From(EffectHour.Of(window, quantity.Hours), effect, clean);
         bool producing = window.State is RunningState.Producing or RunningState.Unknown;
-        return new Point(window.At, value, producing ? window.Extrapolated ? "extrapolated" : "" : "not producing", value.IsPresent ? null : window.Reason);
+        return new Point(window.At, value, producing ? window.Extrapolated ? "extrapolated" : "" : "not producing", value.IsPresent ? null : window.Reason, window.Steady);
     }
 
     /// <summary>Where steps are missing altogether, one absent point breaks the line.</summary>
@@ -59,7 +59,7 @@ public sealed class Trends(TrendStore store)
         var result = new List<Point>(points.Count);
         foreach (Point point in points)
         {
-            if (result.Count > 0 && point.At - result[^1].At > step) result.Add(new Point(result[^1].At + step, Measured.Absent, "", "no readings"));
+            if (result.Count > 0 && point.At - result[^1].At > step) result.Add(new Point(result[^1].At + step, Measured.Absent, "", "no readings", null));
             result.Add(point);
         }
 
@@ -116,6 +116,7 @@ public sealed class Trends(TrendStore store)
             [.. points.Select(point => Number(point.Value.Standard))],
             [.. points.Select(point => Number(point.Value.Random))],
             [.. points.Select(point => point.Mark)],
+            [.. points.Select(point => point.Steady)],
             reasons,
             [.. points.Select(point => IndexOf(point.Reason))],
             dataVersion);
@@ -123,7 +124,7 @@ public sealed class Trends(TrendStore store)
 
     private static double? Number(double value) => double.IsFinite(value) ? double.Round(value, 12) : null;
 
-    private readonly record struct Point(long At, Measured Value, string Mark, string? Reason);
+    private readonly record struct Point(long At, Measured Value, string Mark, string? Reason, bool? Steady);
 }
 
 /// <summary>A quantity that can be charted.</summary>

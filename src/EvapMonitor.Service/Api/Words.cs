@@ -15,7 +15,16 @@ internal static class Words
         RunningState.Producing => "producing",
         RunningState.WaterRun => "water run",
         RunningState.Cleaning => "cleaning",
+        RunningState.Filling => "filling",
         _ => "unknown",
+    };
+
+    /// <summary>Whether a window was steady; empty where it was not judged.</summary>
+    public static string OfSteady(bool? steady) => steady switch
+    {
+        true => "yes",
+        false => "no",
+        null => "",
     };
 
     public static string? Of(HeatingTemperatureSource source) => source switch

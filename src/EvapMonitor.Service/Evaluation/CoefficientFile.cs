@@ -11,7 +11,7 @@ internal sealed class CoefficientFile : IDisposable
 {
     private const string Header =
         "time,line,effect,state,steady,heating_temperature_c,boiling_temperature_c,elevation_k,driving_force_k,duty_kw,coefficient_w_m2k,coefficient_u,coefficient_u_random,"
-        + "clean_coefficient_w_m2k,cleanliness,fouling_resistance_m2k_w,reason,flags";
+        + "clean_coefficient_w_m2k,cleanliness,fouling_resistance_m2k_w,reason,flags,head_corrected_driving_force_k,head_corrected_driving_force_u";
 
     private readonly StreamWriter _text;
 
@@ -40,8 +40,7 @@ internal sealed class CoefficientFile : IDisposable
         CleanExpectation? clean = CleanExpectation.Design(effect);
         Measured coefficient = window.Coefficient;
         _text.Write(DateTimeOffset.FromUnixTimeMilliseconds(window.At).ToString("yyyy-MM-ddTHH:mm:ssZ", CultureInfo.InvariantCulture));
-        // Whether the window was steady is not judged yet: an empty cell.
-        _text.Write($",{TrendCsv.Cell(line)},{TrendCsv.Cell(effect.Name)},{Words.Of(window.State)},");
+        _text.Write($",{TrendCsv.Cell(line)},{TrendCsv.Cell(effect.Name)},{Words.Of(window.State)},{Words.OfSteady(window.Steady)}");
         Write(window.HeatingTemperature.Value - 273.15, "0.0000");
         Write(window.BoilingTemperature.Value - 273.15, "0.0000");
         Write(window.Elevation.Value, "0.0000");
@@ -54,7 +53,10 @@ internal sealed class CoefficientFile : IDisposable
         Write(CleanComparison.Cleanliness(coefficient, clean).Value, "0.000000");
         Write(CleanComparison.Resistance(coefficient, clean).Value, "0.000000000");
         string flags = string.Join(' ', Flags(window));
-        _text.WriteLine($",{TrendCsv.Cell(window.Reason ?? "")},{flags}");
+        _text.Write($",{TrendCsv.Cell(window.Reason ?? "")},{flags}");
+        Write(window.HeadCorrectedDrivingForce.Value, "0.0000");
+        Write(window.HeadCorrectedDrivingForce.Standard, "0.0000");
+        _text.WriteLine();
     }
 
     private static IEnumerable<string> Flags(EffectWindow window)

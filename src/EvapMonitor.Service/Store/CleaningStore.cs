@@ -34,7 +34,7 @@ public enum LogOutcome
     KeyTaken,
 }
 
-/// <summary>Logged cleanings. Logging or withdrawing one marks the days it covers, so that their results are computed anew.</summary>
+/// <summary>Logged cleanings. Logging or withdrawing one marks the days it covers or unsettles, so that their results are computed anew.</summary>
 public sealed class CleaningStore(NpgsqlDataSource database, TimeProvider clock)
 {
     private const string Columns = "cleaning_id, line_id, effect_id, starts_at, ends_at, kind, note, logged_at";
@@ -81,7 +81,7 @@ public sealed class CleaningStore(NpgsqlDataSource database, TimeProvider clock)
                 cleaning.LineId, cleaning.EffectId, cleaning.Id, cleaning.Kind, cleaning.Note, requestKey,
                 start = cleaning.Start.UtcDateTime, end = cleaning.End?.UtcDateTime, logged = cleaning.LoggedAt.UtcDateTime,
             });
-        await DayStore.MarkAsync(connection, cleaning.LineId, cleaning.Start, cleaning.End ?? clock.GetUtcNow());
+        await MarkAsync(connection, cleaning);
         await transaction.CommitAsync(stop);
         return (LogOutcome.Logged, cleaning);
     }
@@ -96,10 +96,14 @@ public sealed class CleaningStore(NpgsqlDataSource database, TimeProvider clock)
             $"UPDATE cleaning SET withdrawn_at = @now WHERE cleaning_id = @id AND withdrawn_at IS NULL RETURNING {Columns}", new { id, now = clock.GetUtcNow().UtcDateTime });
         if (row is null) return null;
         LoggedCleaning cleaning = row.ToCleaning();
-        await DayStore.MarkAsync(connection, cleaning.LineId, cleaning.Start, cleaning.End ?? clock.GetUtcNow());
+        await MarkAsync(connection, cleaning);
         await transaction.CommitAsync(stop);
         return cleaning;
     }
+
+    /// <summary>Marks the days of a cleaning, and of the time in which the line settles after it.</summary>
+    private Task MarkAsync(NpgsqlConnection connection, LoggedCleaning cleaning) =>
+        DayStore.MarkAsync(connection, cleaning.LineId, cleaning.Start, (cleaning.End ?? clock.GetUtcNow()) + Core.Plant.Line.LongestSettlingTime);
 
     private sealed record Row(Guid cleaning_id, int line_id, int effect_id, DateTime starts_at, DateTime? ends_at, string kind, string note, DateTime logged_at)
     {

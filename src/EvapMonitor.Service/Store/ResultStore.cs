@@ -77,7 +77,7 @@ public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
             """
             COPY effect_window (line_id, effect_id, at, revision_id, model, state, heating_temperature_k, heating_temperature_u, boiling_temperature_k,
                 boiling_temperature_u, elevation_k, elevation_u, driving_force_k, driving_force_u, duty_w, duty_u, coefficient_w_m2k, coefficient_systematic,
-                coefficient_random, solids, heating_from, boiling_from, duty_from, extrapolated, reason) FROM STDIN (FORMAT BINARY)
+                coefficient_random, solids, heating_from, boiling_from, duty_from, extrapolated, reason, steady) FROM STDIN (FORMAT BINARY)
             """);
         foreach (LineWindow window in windows)
         {
@@ -112,6 +112,8 @@ public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
         copy.Write(window.Extrapolated, NpgsqlDbType.Boolean);
         if (window.Reason is null) copy.WriteNull();
         else copy.Write(window.Reason, NpgsqlDbType.Text);
+        if (window.Steady is { } steady) copy.Write(steady, NpgsqlDbType.Boolean);
+        else copy.WriteNull();
     }
 
     private static void WriteHours(NpgsqlConnection connection, LinePlace line, int revisionId, IReadOnlyList<LineWindow> windows)

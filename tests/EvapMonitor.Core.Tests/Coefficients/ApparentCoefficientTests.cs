@@ -24,6 +24,30 @@ public class ApparentCoefficientTests
     }
 
     [Fact]
+    public void Level_GivesTheDrivingForceAtHalfTheHeightOfTheLiquor()
+    {
+        var metre = new UnitOfMeasure("m", Dimension.Length, 1);
+        Line line = TestLine.Line(effect => effect with { Chest = new Chest(), Level = TestLine.Instrument("L1", metre) }, feed: new LiquorStream());
+        EffectWindow without = TestLine.Evaluate(line, TestLine.Values).Effects[0];
+        EffectWindow first = TestLine.Evaluate(line, new Dictionary<string, double>(TestLine.Values) { ["L1"] = 1.6 }).Effects[0];
+        Assert.Equal(Measured.Absent, without.HeadCorrectedDrivingForce);
+        // By hand: 110 kPa and half of 1.6 m of liquor; near 960 kg/m³ that is 7.5 kPa, 1.9 K at 27 K/bar or so.
+        double density = TestLine.Liquor.Density(0.124, first.BoilingTemperature.Value).Value;
+        double lost = Steam.SaturationTemperature(110_000 + (density * 9.80665 * 0.8)) - Steam.SaturationTemperature(110_000);
+        Assert.InRange(lost, 1.7, 2.1);
+        Assert.Equal(first.DrivingForce.Value - lost, first.HeadCorrectedDrivingForce.Value, 1e-9);
+        // The level's 1 % beside what the driving force has; its pressures and elevation are the same ones, so that nothing else grows.
+        Assert.InRange(first.HeadCorrectedDrivingForce.Standard, 0.9 * first.DrivingForce.Standard, 1.01 * first.DrivingForce.Standard);
+        double byLevel = 0.01 * 0.8 * density * 9.80665 * Steam.SaturationTemperatureSlope(110_000 + (density * 9.80665 * 0.8));
+        EffectWindow sharp = TestLine.Evaluate(
+            TestLine.Line(effect => effect with { Chest = new Chest(), Level = TestLine.Instrument("L1", metre) with { Accuracy = new Accuracy(0, 0, AccuracyMeaning.Standard) } }, feed: new LiquorStream()),
+            new Dictionary<string, double>(TestLine.Values) { ["L1"] = 1.6 }).Effects[0];
+        double of(Measured one) => one.Systematic * one.Systematic;
+        Assert.Equal(byLevel, double.Sqrt(of(first.HeadCorrectedDrivingForce) - of(sharp.HeadCorrectedDrivingForce)), 1e-3 * byLevel);
+        Assert.Equal(first.Coefficient, without.Coefficient);
+    }
+
+    [Fact]
     public void SecondEffect_IsHeatedAtSaturationWithSuperheatedVapour()
     {
         EffectWindow second = TestLine.Evaluate(Bare(), TestLine.Values).Effects[1];

@@ -26,6 +26,16 @@ public class SignalConditioningTests
         Assert.Equal(2.4, signal.Mean[0], 12);
     }
 
+    [Fact]
+    public void RisingSignal_RateIsItsSlope()
+    {
+        // 0.02 a second, from minute to minute.
+        Assert.Equal(0.02, Condition(Flow(), (0, 0), (1, 1.2), (2, 2.4), (3, 3.6), (4, 4.8)).Rate[0], 1e-12);
+        Assert.Equal(0.02, Condition(Flow() with { Interpolation = Interpolation.Linear }, (0, 0), (1, 1.2), (3, 3.6), (4, 4.8)).Rate[0], 1e-12);
+        Assert.Equal(0, Condition(Flow(), (0, 7), (2, 7), (3, 7)).Rate[0], 1e-12);
+        Assert.True(double.IsNaN(Condition(Flow(), (0, 7), (3, 8)).Rate[0]));
+    }
+
     [Theory]
     [InlineData(Interpolation.Step)]
     [InlineData(Interpolation.Linear)]

@@ -20,7 +20,7 @@ public sealed class TrendTests(ApiService api) : IClassFixture<ApiService>
         Assert.Equal(ApiService.Start, trend.Start);
         Assert.Equal(576, trend.Value.Count);
         Assert.Equal(Enumerable.Range(0, 576).Select(i => 300L * i), trend.OffsetS);
-        Assert.All([trend.U.Count, trend.URandom.Count, trend.Mark.Count, trend.Reason.Count], count => Assert.Equal(576, count));
+        Assert.All([trend.U.Count, trend.URandom.Count, trend.Mark.Count, trend.Reason.Count, trend.Steady.Count], count => Assert.Equal(576, count));
         // The demo's last effect has 980 W/(m²·K) clean and fouls from its first day on; the uncertainty of one window is a few per cent.
         Assert.All(trend.Value.OfType<double>(), value => Assert.InRange(value, 850, 1100));
         Assert.All(trend.U.OfType<double>(), u => Assert.InRange(u, 1, 120));
@@ -99,9 +99,9 @@ public sealed class TrendTests(ApiService api) : IClassFixture<ApiService>
         using HttpResponseMessage answer = await AskAsync($"{Path}?{Span}", "text/csv");
         string[] rows = (await answer.Content.ReadAsStringAsync(Stop)).Split("\r\n", StringSplitOptions.RemoveEmptyEntries);
         Assert.Equal("north-N4-coefficient.csv", answer.Content.Headers.ContentDisposition?.FileName);
-        Assert.Equal("time,line,effect,quantity,unit,value,u,u_random,mark,reason", rows[0]);
+        Assert.Equal("time,line,effect,quantity,unit,value,u,u_random,mark,reason,steady", rows[0]);
         Assert.Equal(577, rows.Length);
-        Assert.Equal(FormattableString.Invariant($"2026-03-02T01:00:00Z,north,N4,coefficient,W/(m2.K),{trend.Value[12]},{trend.U[12]},{trend.URandom[12]},,"), rows[13]);
+        Assert.Equal(FormattableString.Invariant($"2026-03-02T01:00:00Z,north,N4,coefficient,W/(m2.K),{trend.Value[12]},{trend.U[12]},{trend.URandom[12]},,,"), rows[13]);
     }
 
     [Theory]

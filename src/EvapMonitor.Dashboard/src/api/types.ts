@@ -30,7 +30,7 @@ export interface Notice {
 export interface Line {
   name: string;
   liquor: string;
-  state: 'producing' | 'idle' | 'unknown';
+  state: 'producing' | 'filling' | 'idle' | 'water run' | 'unknown';
   as_of: Instant | null;
   latest_reading_at: Instant | null;
   readings: ReadingsState;
@@ -243,6 +243,8 @@ export interface Trend {
   u: (number | null)[];
   u_random: (number | null)[];
   mark: Mark[];
+  /** Null: not judged. */
+  steady: (boolean | null)[];
   reasons: string[];
   reason: number[];
   data_version: number;

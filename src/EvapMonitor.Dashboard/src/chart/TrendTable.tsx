@@ -18,7 +18,7 @@ export function TrendTable({ columns: c, span, zone, what }: { columns: Columns;
         <thead><tr><th scope="col">time</th><th scope="col">value</th><th scope="col">remark</th></tr></thead>
         <tbody>{rows.map(i => {
           const v = c.value[i] ?? c.idle[i] ?? null;
-          const remark = v === null ? c.reason[i] : c.extrapolated[i] ? 'extrapolated' : (c.idle[i] ?? null) !== null ? 'not producing' : null;
+          const remark = v === null ? c.reason[i] : c.extrapolated[i] ? 'extrapolated' : c.unsteady[i] ? 'not steady' : (c.idle[i] ?? null) !== null ? 'not producing' : null;
           return <tr key={i}><th scope="row">{fullMoment(c.x[i]! * 1000, zone)}</th><td>{v === null ? 'none' : measured(v, c.u[i] ?? null)}</td><td>{remark}</td></tr>;
         })}</tbody>
       </table>

@@ -13,7 +13,7 @@ export function valueWords(c: Columns, clean: Columns | null, index: number | nu
     when: fullMoment(x * 1000, zone),
     value: v === null ? 'no value' : `${measured(v, c.u[i] ?? null)} ${c.unit}`,
     more: [
-      v === null ? c.reason[i] : null, c.extrapolated[i] ? 'extrapolated' : null, idle !== null ? 'not producing' : null,
+      v === null ? c.reason[i] : null, c.extrapolated[i] ? 'extrapolated' : null, c.unsteady[i] ? 'not steady' : idle !== null ? 'not producing' : null,
       v !== null && expected !== null ? `if clean ${significant(expected, 3)}` : null,
     ].filter(Boolean).join(', '),
   };

@@ -74,14 +74,15 @@ function level(u: uPlot, value: number, colour: string, px: number): void {
   ctx.fillRect(bbox.left, y - 0.75 * px, bbox.width, 1.5 * px);
 }
 
-/** Extrapolated points are hollow, thinned so that each can be seen as one. */
+/** Points that are extrapolated or not steady are hollow, thinned so that each can be seen as one. */
 function hollow(u: uPlot, m: ChartModel, px: number): void {
   const { ctx } = u;
   let last = -Infinity;
   ctx.lineWidth = 1.2 * px;
   ctx.strokeStyle = m.palette.water;
   ctx.fillStyle = m.palette.card;
-  m.columns.extrapolated.forEach((is, i) => {
+  m.columns.extrapolated.forEach((extrapolated, i) => {
+    const is = extrapolated || m.columns.unsteady[i];
     const v = m.columns.value[i] ?? m.columns.idle[i] ?? null;
     if (!is || v === null) return;
     const x = u.valToPos(m.columns.x[i]!, 'x', true);

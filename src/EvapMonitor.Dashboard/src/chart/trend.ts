@@ -11,36 +11,38 @@ export interface Columns {
   upper: (number | null)[];
   /** Joined values with a gap on both sides: a line would not show them. */
   alone: (number | null)[];
-  /** Values while the line did not produce: never joined. */
+  /** Values while the line did not produce or was not steady: never joined. */
   idle: (number | null)[];
+  unsteady: boolean[];
   extrapolated: boolean[];
   u: (number | null)[];
   reason: (string | null)[];
 }
 
-/** Maps a trend. Gaps: a null, a value while not producing, and a hole in time wider than thinning explains. */
+/** Maps a trend. Gaps: a null, a value while not producing or not steady, and a hole in time wider than thinning explains. */
 export function columns(trend: Trend): Columns {
   const { factor, unit } = shownAs(trend.quantity, trend.unit);
   const start = Date.parse(trend.start) / 1000;
-  const out: Columns = { unit, x: [], value: [], lower: [], upper: [], alone: [], idle: [], extrapolated: [], u: [], reason: [] };
+  const out: Columns = { unit, x: [], value: [], lower: [], upper: [], alone: [], idle: [], unsteady: [], extrapolated: [], u: [], reason: [] };
   const hole = holeWiderThan(trend.offset_s, trend.step_s);
-  const push = (x: number, value: number | null, u: number | null, mark: string, reason: string | null) => {
-    const idle = mark === 'not producing';
+  const push = (x: number, value: number | null, u: number | null, mark: string, steady: boolean | null, reason: string | null) => {
+    const unsteady = steady === false && mark !== 'not producing', idle = unsteady || mark === 'not producing';
     const joined = idle ? null : value;
     out.x.push(x);
     out.value.push(joined);
     out.lower.push(joined === null || u === null ? null : joined - u);
     out.upper.push(joined === null || u === null ? null : joined + u);
     out.idle.push(idle ? value : null);
+    out.unsteady.push(unsteady && value !== null);
     out.extrapolated.push(mark === 'extrapolated' && value !== null);
     out.u.push(u);
     out.reason.push(reason);
   };
   trend.offset_s.forEach((offset, i) => {
     const before = trend.offset_s[i - 1];
-    if (before !== undefined && offset - before > hole) push(start + (before + offset) / 2, null, null, '', 'no result stored here');
+    if (before !== undefined && offset - before > hole) push(start + (before + offset) / 2, null, null, '', null, 'no result stored here');
     const value = trend.value[i] ?? null, u = trend.u[i] ?? null, reason = trend.reasons[trend.reason[i] ?? -1] ?? null;
-    push(start + offset, value === null ? null : value * factor, u === null ? null : u * factor, trend.mark[i] ?? '', reason);
+    push(start + offset, value === null ? null : value * factor, u === null ? null : u * factor, trend.mark[i] ?? '', trend.steady[i] ?? null, reason);
   });
   out.alone = out.value.map((v, i) => (v !== null && (out.value[i - 1] ?? null) === null && (out.value[i + 1] ?? null) === null ? v : null));
   return out;

@@ -4,7 +4,7 @@ import { columns, extent, holeWiderThan, reasonsIn } from '../../src/chart/trend
 
 const trend = (part: Partial<Trend>): Trend => ({
   line: 'north', effect: 'N4', quantity: 'coefficient', unit: 'W/(m2.K)', resolution: 'window', step_s: 300, start: '2026-11-01T00:00:00Z',
-  offset_s: [0, 300, 600, 900], value: [731, 730, null, 728], u: [17, 17, null, 17], u_random: [4, 4, null, 4], mark: ['', '', '', ''],
+  offset_s: [0, 300, 600, 900], value: [731, 730, null, 728], u: [17, 17, null, 17], u_random: [4, 4, null, 4], mark: ['', '', '', ''], steady: [true, true, null, null],
   reasons: ['no driving force'], reason: [-1, -1, 0, -1], data_version: 1, ...part,
 });
 const start = Date.parse('2026-11-01T00:00:00Z') / 1000;
@@ -33,6 +33,12 @@ describe('trend', () => {
     expect(c.idle).toEqual([null, 500, 510, null]);
     expect(c.upper[1]).toBeNull();
   });
+  test('NotSteady_IsHollowAndNeverJoined', () => {
+    const c = columns(trend({ value: [731, 700, 705, 728], u: [17, 17, 17, 17], mark: ['', '', 'not producing', ''], steady: [true, false, false, null] }));
+    expect(c.value).toEqual([731, null, null, 728]);
+    expect(c.idle).toEqual([null, 700, 705, null]);
+    expect(c.unsteady).toEqual([false, true, false, false]);
+  });
   test('ValueBetweenGaps_StandsAlone', () => {
     expect(columns(trend({})).alone).toEqual([null, null, null, 728]);
   });
@@ -51,7 +57,7 @@ describe('trend', () => {
     expect(c.upper[0]).toBeCloseTo(0.33, 10);
   });
   test('Empty_NothingBreaks', () => {
-    const c = columns(trend({ offset_s: [], value: [], u: [], u_random: [], mark: [], reason: [] }));
+    const c = columns(trend({ offset_s: [], value: [], u: [], u_random: [], mark: [], steady: [], reason: [] }));
     expect(c.x).toEqual([]);
     expect(extent(c, 0, Infinity)).toBeNull();
   });

@@ -5,7 +5,7 @@ namespace EvapMonitor.Service.Api.Wire;
 /// <summary>A line as places and the ways between them, with what is measured and computed there now.</summary>
 /// <param name="Line">Name of the line.</param>
 /// <param name="Now">The service's clock: the instant of the reading states, UTC.</param>
-/// <param name="State">producing, idle, water run, cleaning, unknown.</param>
+/// <param name="State">producing, filling, idle, water run, cleaning, unknown.</param>
 /// <param name="AsOf">End of the last evaluated window; null when there is none.</param>
 /// <param name="LatestReadingAt">Instant of the line's youngest reading; null when there is none.</param>
 /// <param name="Readings">live, stale, none.</param>

@@ -13,12 +13,14 @@ namespace EvapMonitor.Service.Api.Wire;
 /// <param name="U">Standard uncertainties, both parts.</param>
 /// <param name="URandom">The random parts.</param>
 /// <param name="Mark">"", "extrapolated" or "not producing".</param>
+/// <param name="Steady">Whether the line was steady and the effect not being cleaned; null: not judged. An hour is made of windows that are not false.</param>
 /// <param name="Reasons">Reasons for gaps.</param>
 /// <param name="Reason">Index into <paramref name="Reasons"/>; −1 for none.</param>
 /// <param name="DataVersion">Grows when results of the line change.</param>
 public sealed record TrendWire(
     string Line, string Effect, string Quantity, string Unit, string Resolution, int StepS, DateTimeOffset Start, IReadOnlyList<long> OffsetS, IReadOnlyList<double?> Value,
-    IReadOnlyList<double?> U, IReadOnlyList<double?> URandom, IReadOnlyList<string> Mark, IReadOnlyList<string> Reasons, IReadOnlyList<int> Reason, long DataVersion);
+    IReadOnlyList<double?> U, IReadOnlyList<double?> URandom, IReadOnlyList<string> Mark, IReadOnlyList<bool?> Steady,
+    IReadOnlyList<string> Reasons, IReadOnlyList<int> Reason, long DataVersion);
 
 /// <summary>A logged cleaning.</summary>
 /// <param name="Id">Key.</param>

@@ -24,7 +24,7 @@ public sealed record LinesWire(IReadOnlyList<LineWire> Lines);
 /// <summary>A line and its effects as they are now.</summary>
 /// <param name="Name">Name of the line.</param>
 /// <param name="Liquor">What it boils; null when a signal tells.</param>
-/// <param name="State">producing, idle, water run, cleaning, unknown.</param>
+/// <param name="State">producing, filling, idle, water run, cleaning, unknown.</param>
 /// <param name="AsOf">End of the last evaluated window.</param>
 /// <param name="LatestReadingAt">Instant of its youngest reading.</param>
 /// <param name="Readings">live, stale, none.</param>

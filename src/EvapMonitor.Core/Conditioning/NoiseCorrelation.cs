@@ -1,0 +1,43 @@
+namespace EvapMonitor.Core.Conditioning;
+
+/// <summary>How far the noise of neighbouring samples of a signal is correlated, whatever the signal itself does meanwhile.</summary>
+internal static class NoiseCorrelation
+{
+    /// <summary>Differences beyond this many standard deviations are steps of the process and count as that many.</summary>
+    private const double Clip = 3;
+
+    /// <summary>
+    /// Correlation φ of neighbouring samples of a first-order process, from that of their differences, ρ = −(1 − φ)/2: a ramp adds a constant to the differences,
+    /// which their median takes away, and a step is one difference, which is clipped. 0 to 1; 0 when nothing moves.
+    /// </summary>
+    /// <param name="samples">Evenly spaced samples; NaN where there is none.</param>
+    public static double Of(ReadOnlySpan<double> samples)
+    {
+        if (samples.Length < 3) return 0;
+        var differences = new double[samples.Length - 1];
+        for (int i = 0; i < differences.Length; i++) differences[i] = samples[i + 1] - samples[i];
+        double[] sorted = Array.FindAll(differences, double.IsFinite);
+        double middle = Median(sorted);
+        // 1.4826: from median absolute deviation to standard deviation of a normal distribution.
+        double limit = Clip * 1.4826 * Median(Array.ConvertAll(sorted, one => double.Abs(one - middle)));
+        if (!(limit > 0)) limit = double.PositiveInfinity;
+        double squares = 0, products = 0, previous = double.NaN;
+        foreach (double difference in differences)
+        {
+            double one = double.Clamp(difference - middle, -limit, limit);
+            if (double.IsFinite(one)) squares += one * one;
+            if (double.IsFinite(one * previous)) products += one * previous;
+            previous = one;
+        }
+
+        return squares > 0 ? double.Clamp(1 + (2 * products / squares), 0, 1) : 0;
+    }
+
+    private static double Median(double[] values)
+    {
+        if (values.Length == 0) return 0;
+        Array.Sort(values);
+        int half = values.Length / 2;
+        return values.Length % 2 == 1 ? values[half] : (values[half - 1] + values[half]) / 2;
+    }
+}
