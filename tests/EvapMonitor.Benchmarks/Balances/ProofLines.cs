@@ -7,7 +7,7 @@ internal static class ProofLines
 {
     public static IEnumerable<(string Line, string Set, Func<InstrumentedLine> Make)> All()
     {
-        foreach ((string name, string title) in new[] { ("forward", "forward, 4 effects, bleeds, flash"), ("backward", "backward, 3 effects"), ("cascade", "forward, 5 effects, bleeds to heaters, flash cascade"), ("mechanical", "1 effect, mechanical recompression") })
+        foreach ((string name, string title) in new[] { ("forward", "forward, 4 effects, bleeds, flash"), ("backward", "backward, 3 effects"), ("mixed-five", "mixed, 5 effects, bleeds to heaters, flash cascade"), ("mechanical", "1 effect, mechanical recompression") })
         {
             TestLines.Case one = TestLines.Named(name);
             yield return (title, "all", () => InstrumentedLine.Of(one));

@@ -49,7 +49,7 @@ internal static class TestLines
     public static IReadOnlyList<Case> All { get; } =
     [
         ForwardWithBleedsAndFlash(), Backward(), ParallelFeed(), MixedSevenWithBodies(), SharesTankAndTwoOnSteam(), ThermalWithFinisher(), MechanicalAlone(), MechanicalSprayed(),
-        FiveWithCascade(),
+        FiveWithCascade(), FiveMixed(),
     ];
 
     public static Case Named(string name) => All.First(one => one.Name == name);
@@ -148,5 +148,14 @@ internal static class TestLines
             Bleeds = new Dictionary<string, double> { ["E3 to pans"] = 3 },
             Heaters = new Dictionary<string, HeaterConditions> { ["H1"] = new(60, 0.14, 370, 385), ["H2"] = new(60, 0.14, 355, 370) },
         });
+    }
+
+    /// <summary>The same five effects with the liquor entering in the middle and the thickest leaving the hottest.</summary>
+    private static Case FiveMixed()
+    {
+        Case forward = FiveWithCascade();
+        string?[] from = ["E2", "E5", null, "E3", "E4"];
+        Line line = forward.Graph.Line with { Effects = [.. forward.Graph.Line.Effects.Select((effect, i) => effect with { Liquor = [From(from[i])] })] };
+        return new("mixed-five", new(line), forward.Conditions);
     }
 }
