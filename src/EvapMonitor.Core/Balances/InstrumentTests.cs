@@ -3,8 +3,8 @@ using MathNet.Numerics.Distributions;
 namespace EvapMonitor.Core.Balances;
 
 /// <summary>
-/// Names readings that do not fit the others: the measurement test on each correction (Mah and Tamhane 1982), one after the other until the rest fits. Where two
-/// corrections are wanted in step, nothing can tell which of the readings is wrong, and both are named together.
+/// Names readings that do not fit the others: the measurement test on each correction (Mah and Tamhane 1982), one after the other until the rest fits. Where
+/// another reading at fault would explain the window nearly as well, nothing can tell which is wrong, and both are named together.
 /// </summary>
 internal sealed class InstrumentTests
 {
@@ -17,8 +17,11 @@ internal sealed class InstrumentTests
     /// <summary>Most that are named at a time: beyond it the readings as a whole are in doubt.</summary>
     private const int Most = 4;
 
-    /// <summary>Corrections that move together more closely than this cannot be told apart.</summary>
-    private const double InStep = 0.999;
+    /// <summary>
+    /// Two readings are told apart when one of them at fault explains the window better than the other by this much of chi-square (95 % with one degree of freedom):
+    /// the square of its test is what the sum of squares loses without it.
+    /// </summary>
+    private const double ClearlyBetter = 3.84;
 
     /// <summary>A reading whose correction has less spread than this is hardly checked at all.</summary>
     private const double LeastSpread = 0.02;
@@ -52,7 +55,7 @@ internal sealed class InstrumentTests
         {
             (int worst, double size) = Worst(balance.Corrections);
             if (!(size > Critical)) break;
-            suspects.Add([.. Enumerable.Range(0, _places).Where(place => place == worst || InStepWith(balance.Corrections, worst, place))]);
+            suspects.Add([.. Enumerable.Range(0, _places).Where(place => place == worst || (size * size) - Square(balance.Corrections, place) < ClearlyBetter)]);
             taken.Add((worst, inputs.Value[worst]));
             inputs.Value[worst] = double.NaN;
             if (!solve()) break;
@@ -73,6 +76,5 @@ internal sealed class InstrumentTests
         return (worst, size);
     }
 
-    private static bool InStepWith(Redundancy corrections, int worst, int place) =>
-        corrections.Spread(place) > LeastSpread && double.Abs(corrections.Correlation(worst, place)) > InStep;
+    private static double Square(Redundancy corrections, int place) => Test(corrections, place) is var test && double.IsNaN(test) ? 0 : test * test;
 }
