@@ -24,7 +24,7 @@ export function FlowSheetFigure({ of, sheet, stale }: { of: FlowSheet; sheet: Sh
         <Boxes sheet={sheet} stale={stale} />
       </svg>
       <p class="unseen" id="sheet-words">{words}</p>
-      <p class="legend-small">In each effect: heating temperature over the wall, boiling temperature under it, then the apparent coefficient, W/(m²·K). Flows as measured now, in the plant's units; where nothing measures a flow, or its reading does not fit, “by balance” says what the other readings make it.</p>
+      <p class="legend-small">In each effect: heating temperature over the wall, boiling temperature under it, then the apparent coefficient, W/(m²·K). Flows as measured now, in the plant's units. * By balance: nothing measures this flow, or its reading does not fit, and this is what the other readings make it.</p>
     </figure>
   );
 }

@@ -9,10 +9,10 @@ export function readingText(m: MeasuredNow): string | null {
   return m.state === 'stale' ? `was ${value}` : m.state === 'bad' ? `bad: ${value}` : value;
 }
 
-/** The flow of a way, at most so wordy: as read, where the balance agrees or says nothing; else by balance, with what was read. Null when nobody knows it. */
+/** The flow of a way, at most so wordy: as read, where the balance agrees or says nothing; else by balance, with a star and what was read. Null when nobody knows it. */
 export function flowTexts({ flow, balance }: Way): string[] {
   const read = flow && readingText(flow);
   if (balance === null || (read && (balance.agrees !== false || flow.state === 'stale'))) return read ? [read] : [];
   const value = raw(Number(balance.value.toPrecision(3))), unit = prettyUnit(balance.unit);
-  return [...(read ? [`read ${read}, by balance ${value}`] : []), `${value} ${unit} by balance`, `${value} by balance`];
+  return [...(read ? [`read ${read}, ${value}*`] : []), `${value} ${unit}*`, `${value}*`];
 }
