@@ -36,23 +36,23 @@ internal static class InstrumentsProof
     {
         proof.Say($"{weeks} weeks of sound lines, each with its own accuracies (rectangular, constant over the week) and noise (Gaussian, {RandomShare:0.0} of the standard uncertainty) in each of {WindowsOfWeek:N0} windows. An alarm is an instrument left out; for good when it is so in the last window.");
         proof.Say("");
-        proof.Say("| line | instruments | alarms a line and week | lines alarmed for good, % |");
-        proof.Say("|---|---|---|---|");
+        proof.Say("| line | instruments | alarms a line and week | lines alarmed for good, % | windows without a balance |");
+        proof.Say("|---|---|---|---|---|");
         foreach ((string name, string set, Func<InstrumentedLine> make) in ProofLines.All().Where(one => one.Set == "usual"))
         {
-            (int alarms, int forGood) = (0, 0);
+            (int alarms, int forGood, int without) = (0, 0, 0);
             object gate = new();
             Parallel.For(0, weeks, new ParallelOptions { MaxDegreeOfParallelism = 2 }, make, (week, _, line) =>
             {
-                (int raised, bool last) = Week(line, State + (1000 * week));
-                lock (gate) (alarms, forGood) = (alarms + raised, forGood + (last ? 1 : 0));
+                (int raised, bool last, int missing) = Week(line, State + (1000 * week));
+                lock (gate) (alarms, forGood, without) = (alarms + raised, forGood + (last ? 1 : 0), without + missing);
                 return line;
             }, _ => { });
-            proof.Say($"| {name} | {set} | {alarms / (double)weeks:0.000} | {100.0 * forGood / weeks:0.0} |");
+            proof.Say($"| {name} | {set} | {alarms / (double)weeks:0.000} | {100.0 * forGood / weeks:0.0} | {without} |");
         }
     }
 
-    private static (int Alarms, bool ForGood) Week(InstrumentedLine line, int state)
+    private static (int Alarms, bool ForGood, int Without) Week(InstrumentedLine line, int state)
     {
         var noise = new Gaussian(state);
         var random = new Random(state);
@@ -60,32 +60,34 @@ internal static class InstrumentsProof
         double[] off = [.. exact.Select((_, i) => standard[i] * double.Sqrt(1 - (RandomShare * RandomShare)) * RootOfThree * ((2 * random.NextDouble()) - 1))];
         var suspicions = new Suspicions(Window, TimeSpan.FromHours(1));
         var before = new HashSet<int>();
-        int alarms = 0;
+        (int alarms, int without) = (0, 0);
         for (int k = 0; k < WindowsOfWeek; k++)
         {
             for (int i = 0; i < read.Length; i++) read[i] = exact[i] + off[i] + (RandomShare * standard[i] * noise.Next());
-            suspicions.Keep(k * Window, [.. line.Suspects(read).Where(set => set.Count == 1).Select(set => set[0])]);
+            // A window without a balance judges nobody.
+            if (line.Suspects(read) is { } suspects) suspicions.Keep(k * Window, [.. suspects.Where(set => set.Count == 1).Select(set => set[0])]);
+            else without++;
             IReadOnlyList<int> now = suspicions.LeftOutAt(k * Window);
             alarms += now.Count(place => !before.Contains(place));
             before = [.. now];
             suspicions.Forget(long.MaxValue, (k - 24) * Window);
         }
 
-        return (alarms, before.Count > 0);
+        return (alarms, before.Count > 0, without);
     }
 
     private static void Faulty(Proof proof)
     {
         proof.Say($"Each instrument in turn off by 5 and by 10 of its standard uncertainties, on {Lines} lines each with accuracies and noise as above. Found: named in the window. Theory: the power of a test on that correction alone. Instruments that nothing checks are left out of the count. Alone: named as the only one, else with those that the readings cannot tell from it.");
         proof.Say("");
-        proof.Say("| line | instruments | off by | checked | found, % | theory, % | found rightly, of those found, % | alone, of those, % | windows until left out, median |");
-        proof.Say("|---|---|---|---|---|---|---|---|---|");
+        proof.Say("| line | instruments | off by | checked | found, % | theory, % | found rightly, of those found, % | alone, of those, % | windows until left out, median | no balance at all |");
+        proof.Say("|---|---|---|---|---|---|---|---|---|---|");
         foreach ((string name, string set, Func<InstrumentedLine> make) in ProofLines.All().Where(one => one.Set != "few"))
         {
             foreach (double size in new[] { 5.0, 10.0 })
             {
                 Tally all = Try(make(), size);
-                proof.Say($"| {name} | {set} | {size:0} u | {all.Instruments} | {100.0 * all.Found / all.Tried:0.0} | {100 * all.Power / all.Tried:0.0} | {100.0 * all.Right / int.Max(1, all.Found):0.0} | {100.0 * all.Alone / int.Max(1, all.Right):0.0} | {(all.Until.Count > 0 ? all.Until.Order().ElementAt(all.Until.Count / 2) : double.NaN)} |");
+                proof.Say($"| {name} | {set} | {size:0} u | {all.Instruments} | {100.0 * all.Found / all.Tried:0.0} | {100 * all.Power / all.Tried:0.0} | {100.0 * all.Right / int.Max(1, all.Found):0.0} | {100.0 * all.Alone / int.Max(1, all.Right):0.0} | {(all.Until.Count > 0 ? all.Until.Order().ElementAt(all.Until.Count / 2) : double.NaN)} | {all.Without} |");
             }
         }
     }
@@ -103,6 +105,8 @@ internal static class InstrumentsProof
         public int Alone { get; set; }
 
         public double Power { get; set; }
+
+        public int Without { get; set; }
     }
 
     private static Tally Try(InstrumentedLine line, double size)
@@ -133,7 +137,12 @@ internal static class InstrumentsProof
                 {
                     for (int i = 0; i < read.Length; i++) read[i] = exact[i] + off[i] + (RandomShare * standard[i] * noise.Next());
                     read[place] += sign * size * standard[place];
-                    IReadOnlyList<IReadOnlyList<int>> suspects = line.Suspects(read);
+                    if (line.Suspects(read) is not { } suspects)
+                    {
+                        tally.Without++;
+                        break;
+                    }
+
                     if (k == 0)
                     {
                         if (suspects.Count > 0) tally.Found++;

@@ -15,11 +15,15 @@ public class InstrumentTestsTests
         double[] readings = line.Exact();
         int steam = line.PlaceOf("steam");
         readings[steam] *= 1.12;
-        Assert.Equal([[steam]], line.Suspects(readings));
+        Assert.Equal([[steam]], line.Suspects(readings)!);
     }
 
     [Fact]
-    public void ReadingsThatFit_AreNotNamed() => Assert.Empty(InstrumentedLine.Of(TestLines.Named("mixed")) is var line ? line.Suspects(line.Exact()) : []);
+    public void ReadingsThatFit_AreNotNamed()
+    {
+        InstrumentedLine line = InstrumentedLine.Of(TestLines.Named("mixed"));
+        Assert.Empty(line.Suspects(line.Exact())!);
+    }
 
     [Fact]
     public void TwoFaults_AreFoundOneAfterTheOther()
@@ -29,7 +33,7 @@ public class InstrumentTestsTests
         int product = line.PlaceOf("product"), condensate = line.PlaceOf("N3-condensate");
         readings[product] *= 0.85;
         readings[condensate] *= 1.2;
-        Assert.Equal([product, condensate], line.Suspects(readings).Select(set => Assert.Single(set)).Order());
+        Assert.Equal([product, condensate], line.Suspects(readings)!.Select(set => Assert.Single(set)).Order());
     }
 
     [Fact]
@@ -42,7 +46,7 @@ public class InstrumentTestsTests
             name => has.Contains(name) || name.EndsWith("-vapour", StringComparison.Ordinal));
         double[] readings = line.Exact();
         readings[line.PlaceOf("product")] *= 1.2;
-        IReadOnlyList<int> together = Assert.Single(line.Suspects(readings));
+        IReadOnlyList<int> together = Assert.Single(line.Suspects(readings)!);
         Assert.Equal(new[] { "feed", "feed-solids", "product-solids", "product" }.Order(), together.Select(place => line.Instruments[place].Signal).Order());
     }
 

@@ -51,14 +51,14 @@ internal sealed class InstrumentedLine
 
     public int PlaceOf(string name) => Enumerable.Range(0, Instruments.Count).First(place => Instruments[place].Signal == name);
 
-    /// <summary>Instruments that do not fit the others; none where no state fits the readings at all.</summary>
-    public IReadOnlyList<IReadOnlyList<int>> Suspects(double[] readings)
+    /// <summary>Instruments that do not fit the others; null where no state fits the readings at all.</summary>
+    public IReadOnlyList<IReadOnlyList<int>>? Suspects(double[] readings)
     {
         var inputs = new LineInputs(_instruments);
         readings.CopyTo(inputs.Value, 0);
         double[] standards = Standards(), none = new double[readings.Length];
         bool Again() => Balance.Solve(inputs, standards, none, (0, 0));
-        if (!Again()) return [];
+        if (!Again()) return null;
         return new InstrumentTests(_instruments).Find(Balance, inputs, Again);
     }
 

@@ -70,7 +70,8 @@ public class ReconciliationTests
             foreach (string name in stated.Keys) squares[name] += double.Pow(line[VariableKind.Duty, name] - line.Point[VariableKind.Duty, name], 2);
         }
 
-        // Chi-square has the mean of its degrees of freedom; 400 draws know a spread to 3.5 %, so 4 of those are allowed.
+        // Chi-square has the mean of its degrees of freedom, known by 400 draws to √(2/(400·degrees)), 2.4 % at nine: more than three of those are allowed. The draws
+        // know a spread to 1/√(2·400) = 3.5 %: four of those.
         Assert.Equal(1, checks / draws / line.Balance.Corrections.Degrees, 0.08);
         Assert.All(stated, pair => Assert.Equal(1, double.Sqrt(squares[pair.Key] / draws) / pair.Value, 0.14));
     }

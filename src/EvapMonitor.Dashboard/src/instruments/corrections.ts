@@ -23,7 +23,7 @@ export function correctionPaths(of: Corrections, x: (t: number) => number, y: (v
   return paths;
 }
 
-/** The course in a sentence. */
+/** What the corrections did over the time shown, in a sentence. */
 export function spokenCorrections(of: Corrections, days: number): string {
   const known = of.wanted.filter(v => v !== null), unit = prettyUnit(of.unit), say = (v: number) => `${v > 0 ? '+' : ''}${significant(v, 2)} ${unit}`;
   if (known.length === 0) return `No correction of ${of.signal} is known in the last ${days} days.`;
