@@ -180,7 +180,7 @@ internal sealed class BalanceStart(LineGraph graph, LineVariables variables, Lin
 
         foreach (HeaterVariables heater in variables.Heaters)
         {
-            (x[heater.In], x[heater.Out]) = (330, 345);
+            (x[heater.In], x[heater.Out], x[heater.Solids]) = (330, 345, x[variables.FeedSolids]);
             x[heater.Flow] = x[heater.Duty] / (4000 * 15);
         }
     }

@@ -94,6 +94,8 @@ internal sealed partial class MeasurementEquations
             HeaterPlaces places = _at.Heaters[h];
             Flow(at.Flow, places.Flow, at.Solids, at.In, line.Heaters[h].Liquor);
             if (line.Heaters[h].Liquor is not Water) Plain(at.Solids, places.Solids);
+            // As the plant file says: without a word about its solids, what is heated has those of the feed.
+            if (line.Heaters[h].Solids is null && line.Heaters[h].Liquor is not Water) _all.Add(new(Reading.Same, at.Solids, -1) { First = _variables.FeedSolids });
             Plain(at.In, places.In);
             Plain(at.Out, places.Out);
         }

@@ -105,7 +105,7 @@ internal sealed partial class MeasurementEquations
         {
             Heater heater = _graph.Line.Heaters[h];
             if (heater.Solids?.Fixed is { } solids) yield return (_variables.Heaters[h].Solids, solids);
-            else if (heater.Solids is null || heater.Liquor is Water) yield return (_variables.Heaters[h].Solids, 0);
+            else if (heater.Liquor is Water) yield return (_variables.Heaters[h].Solids, 0);
         }
     }
 
@@ -138,6 +138,9 @@ internal sealed partial class MeasurementEquations
                 x[equation.First] -= 1;
                 z[equation.Place] -= 1;
                 return Here(equation.Variable) - Here(equation.First) - reading;
+            case Reading.Same:
+                x[equation.First] -= 1;
+                return Here(equation.Variable) - Here(equation.First);
             case Reading.Subcooling:
                 x[equation.First] -= 1;
                 z[equation.Place] += 1;
@@ -203,6 +206,8 @@ internal sealed partial class MeasurementEquations
         LiquorVolume,
         /// <summary>A mass flow by its volume and the density of condensate.</summary>
         WaterVolume,
+        /// <summary>Nothing: a variable is what another is.</summary>
+        Same,
         /// <summary>A variable less another.</summary>
         Difference,
         /// <summary>How far a thermometer is under saturation.</summary>

@@ -181,7 +181,7 @@ internal sealed class InstrumentedLine
             Heaters = [.. line.Heaters.Select(heater => heater with
             {
                 Flow = Flow(heater.Name, VariableKind.HeaterFlow, heater.Name), In = Temperature(heater.Name + "-in", VariableKind.HeaterIn, heater.Name),
-                Solids = heater.Liquor is Core.Properties.Water ? null : new FixedOrMeasured(null, Solids(heater.Name + "-solids", VariableKind.HeaterSolids, heater.Name)),
+                Solids = heater.Liquor is not Core.Properties.Water && Solids(heater.Name + "-solids", VariableKind.HeaterSolids, heater.Name) is { } meter ? new FixedOrMeasured(null, meter) : null,
                 Out = Temperature(heater.Name + "-out", VariableKind.HeaterOut, heater.Name),
             })],
             Recompressors = [.. line.Recompressors.Select(machine => machine.Kind == RecompressorKind.Thermal

@@ -26,6 +26,16 @@ public class ReconciliationTests
         Assert.True(line.Balance.Corrections.SumOfSquares < 1e-9, $"sum of squares {line.Balance.Corrections.SumOfSquares}");
     }
 
+    [Fact]
+    public void HeaterWithoutAWordAboutItsSolids_HeatsWhatHasThoseOfTheFeed()
+    {
+        InstrumentedLine line = InstrumentedLine.Of(TestLines.Named("cascade"), name => name is not ("H1-solids" or "H2-solids"));
+        Assert.True(line.Solve(line.Exact()));
+        Assert.Equal(0.14, line[VariableKind.HeaterSolids, "H1"], 1e-9);
+        Near(line.Point[VariableKind.HeaterDuty, "H1"], line[VariableKind.HeaterDuty, "H1"]);
+        Assert.True(line.Balance.Corrections.SumOfSquares < 1e-9, $"sum of squares {line.Balance.Corrections.SumOfSquares}");
+    }
+
     /// <summary>The counts of the method: four effects in forward feed with their pressures known.</summary>
     [Theory]
     [InlineData("feed feed-solids feed-temperature product-solids", 0)]
