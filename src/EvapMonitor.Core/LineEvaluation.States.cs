@@ -20,9 +20,10 @@ public sealed partial class LineEvaluation
 
     private readonly TimeSpan _lookBack;
 
-    private bool HasHoldUp => _line.Tanks.Any(tank => tank.HoldUp is not null);
+    /// <summary>Liquor that the line holds, kg; 0 where nothing is said of it.</summary>
+    private double LineHoldUp => _line.Tanks.Sum(tank => tank.HoldUp ?? 0) + _line.Effects.Sum(effect => effect.HoldUp ?? 0);
 
-    private TimeSpan LongestSettling => _line.SettlingTime ?? (HasHoldUp ? Line.LongestSettlingTime : Line.LeastSettlingTime);
+    private TimeSpan LongestSettling => _line.SettlingTime ?? (LineHoldUp > 0 ? Line.LongestSettlingTime : Line.LeastSettlingTime);
 
     /// <summary>Signals that no balance needs: the atmosphere's, and those that tell of cleanings.</summary>
     private static IEnumerable<Instrument> Beside(Site site, Line line) =>
@@ -106,12 +107,12 @@ public sealed partial class LineEvaluation
     /// <summary>A flow as mass; a volume counts as that of water, which is near enough to tell whether anything flows.</summary>
     private double MassFlow(int place, double flow) => place >= 0 && _instruments.All[place].Unit.Dimension == Dimension.VolumeFlow ? 1000 * flow : flow;
 
-    private bool? SteadyOf(LineSteadiness steadiness, long at, LineInputs inputs, ILookup<string, (long Start, long End)> cleanings)
+    private bool? SteadyOf(LineSteadiness steadiness, long at, LineInputs inputs, LineLog log)
     {
         long settling = (long)SettlingTime(inputs).TotalMilliseconds, end = at + (long)_site.Window.TotalMilliseconds;
         bool Lately(long instant) => instant >= at - settling && instant < end;
         // An effect that is taken out of the line or put back disturbs all of them; one that is out does not.
-        if (cleanings.Any(effect => effect.Any(cleaning => Lately(cleaning.Start) || Lately(cleaning.End)))) return false;
+        if (log.Cleanings.Any(effect => effect.Any(cleaning => Lately(cleaning.Start) || Lately(cleaning.End)))) return false;
         return steadiness.Of(at, settling);
     }
 
@@ -119,13 +120,13 @@ public sealed partial class LineEvaluation
     {
         if (_line.SettlingTime is { } given) return given;
         double feed = MassFlow(_instruments.Feed.Flow, inputs.At(_instruments.Feed.Flow));
-        if (!HasHoldUp || !(feed > 0)) return Line.LeastSettlingTime;
-        double seconds = SettlingInResidenceTimes * _line.Tanks.Sum(tank => tank.HoldUp ?? 0) / feed;
+        if (LineHoldUp == 0 || !(feed > 0)) return Line.LeastSettlingTime;
+        double seconds = SettlingInResidenceTimes * LineHoldUp / feed;
         return TimeSpan.FromSeconds(double.Clamp(seconds, Line.LeastSettlingTime.TotalSeconds, Line.LongestSettlingTime.TotalSeconds));
     }
 
-    /// <summary>Writes into a window whether it was steady, and marks the effects that were being cleaned: by the log, or by the signal of their group.</summary>
-    private LineWindow Marked(LineWindow window, bool? steady, LineMemory memory, ILookup<string, (long Start, long End)> cleanings)
+    /// <summary>Writes into a window whether it was steady, what boiled on which surface, and marks the effects that were being cleaned: by the log, or by the signal of their group.</summary>
+    private LineWindow Marked(LineWindow window, bool? steady, LineMemory memory, LineInputs inputs, LineLog log)
     {
         int index = (int)((window.At - memory.Grid.Start) / memory.Grid.Step);
         long end = window.At + memory.Grid.Step;
@@ -136,13 +137,22 @@ public sealed partial class LineEvaluation
             return partial.GoodTime > 0 && (signal.IsActive(partial.Lowest) || signal.IsActive(partial.Highest));
         }
 
-        bool IsCleaned(string effect) => cleanings[effect].Any(cleaning => window.At < cleaning.End && end > cleaning.Start)
+        bool IsCleaned(string effect) => log.Cleanings[effect].Any(cleaning => window.At < cleaning.End && end > cleaning.Start)
             || _line.CleaningGroups.Any(group => group.Effects.Contains(effect) && Signalled(group));
+        string? product = LiquorOf(inputs)?.Name;
+        double feed = MassFlow(_instruments.Feed.Flow, inputs.At(_instruments.Feed.Flow));
         return window with
         {
             Steady = steady,
-            Effects = [.. window.Effects.Select((effect, i) => IsCleaned(_line.Effects[i].Name)
-                ? effect with { State = RunningState.Cleaning, Steady = false } : effect with { Steady = steady })],
+            Effects = [.. window.Effects.Select((effect, i) =>
+            {
+                bool cleaned = IsCleaned(_line.Effects[i].Name);
+                return effect with
+                {
+                    State = cleaned ? RunningState.Cleaning : effect.State, Steady = cleaned ? false : steady, Product = product, FeedFlow = feed,
+                    Bodies = _instruments.Surfaces[i].NamesAt(inputs),
+                };
+            })],
         };
     }
 }

@@ -14,7 +14,7 @@ namespace EvapMonitor.Core;
 public sealed partial class LineEvaluation
 {
     /// <summary>Raised when a change to the computation may move figures; stored with every result.</summary>
-    public const int ModelNumber = 4;
+    public const int ModelNumber = 5;
 
     private readonly Site _site;
     private readonly Line _line;
@@ -50,9 +50,6 @@ public sealed partial class LineEvaluation
     /// <summary>Those of them that are laboratory values, whose samples stand for hours.</summary>
     public IEnumerable<string> LaboratorySignals => LaboratoryPlaces().Select(place => _instruments.All[place.Place].Signal);
 
-    /// <summary>When instruments are excluded by a person, by signal: start and end, ms since 1970-01-01T00:00:00Z. Their readings count as absent.</summary>
-    public ILookup<string, (long Start, long End)> Exclusions { get; init; } = Array.Empty<string>().ToLookup(signal => signal, _ => (0L, 0L));
-
     /// <summary>How far before a span its readings must reach.</summary>
     public TimeSpan LeadIn { get; }
 
@@ -69,19 +66,19 @@ public sealed partial class LineEvaluation
     /// <param name="readings">Readings by signal, from <see cref="LeadIn"/> before the span on.</param>
     /// <param name="from">Start of the span, ms since 1970-01-01T00:00:00Z; on the window grid.</param>
     /// <param name="to">End of the span; on the window grid.</param>
-    /// <param name="cleanings">Logged cleanings by effect name: start and end, ms; the end is <see cref="long.MaxValue"/> while one goes on.</param>
+    /// <param name="log">What people have logged.</param>
     public LineWindow[] Evaluate(
-        IReadOnlyDictionary<string, ReadingSeries> readings, long from, long to, ILookup<string, (long Start, long End)> cleanings) =>
-        Evaluate(NewMemory(), readings, from, to, cleanings);
+        IReadOnlyDictionary<string, ReadingSeries> readings, long from, long to, LineLog log) =>
+        Evaluate(NewMemory(), readings, from, to, log);
 
     /// <summary>Evaluates the windows of a span with what a memory knows already; the result has the same bits as without.</summary>
     /// <param name="memory">Made by <see cref="NewMemory"/>; filled here.</param>
     /// <param name="readings">Readings by signal, from <see cref="LongestStale"/> before <see cref="LineMemory.MissingFrom"/>; laboratory values from <see cref="LeadIn"/> before the span.</param>
     /// <param name="from">Start of the span.</param>
     /// <param name="to">End of the span.</param>
-    /// <param name="cleanings">As above.</param>
+    /// <param name="log">As above.</param>
     public LineWindow[] Evaluate(
-        LineMemory memory, IReadOnlyDictionary<string, ReadingSeries> readings, long from, long to, ILookup<string, (long Start, long End)> cleanings)
+        LineMemory memory, IReadOnlyDictionary<string, ReadingSeries> readings, long from, long to, LineLog log)
     {
         memory.Fill(readings, from, to);
         // Windows before the span are judged too: an instrument is left out once it has been suspect for long enough.
@@ -94,7 +91,7 @@ public sealed partial class LineEvaluation
             signals[place] = Laboratory.Condition(_instruments.All[place], samples, validFor, grid);
         }
 
-        foreach (ConditionedSignal signal in signals) signal.Exclude(Exclusions[signal.Instrument.Signal]);
+        foreach (ConditionedSignal signal in signals) signal.Exclude(log.Exclusions[signal.Instrument.Signal]);
         var steadiness = new LineSteadiness(memory, _switches);
         var windows = new List<LineWindow>(grid.Count);
         for (int window = 0; window < grid.Count; window++)
@@ -109,7 +106,7 @@ public sealed partial class LineEvaluation
             if (liquor is null)
             {
                 LineWindow absent = LineWindow.Absent(at, state, _line.Effects.Count, $"the product is not known: {_line.Liquor.Signal!.Signal} names none");
-                if (at >= from) windows.Add(Marked(absent, SteadyOf(steadiness, at, inputs, cleanings), memory, cleanings));
+                if (at >= from) windows.Add(Marked(absent, SteadyOf(steadiness, at, inputs, log), memory, inputs, log));
                 continue;
             }
 
@@ -119,8 +116,8 @@ public sealed partial class LineEvaluation
             if (state != RunningState.Idle) memory.Suspicions.Keep(at, [.. suspects.Where(set => set.Count == 1).Select(set => set[0])]);
             if (at < from) continue;
             int w = window;
-            bool? steady = SteadyOf(steadiness, at, inputs, cleanings);
-            windows.Add(Marked(_coefficients.Evaluate(at, read, suspects, memory.Suspicions.LeftOutAt(at), place => signals[place].WhyAbsent(w)), steady, memory, cleanings));
+            bool? steady = SteadyOf(steadiness, at, inputs, log);
+            windows.Add(Marked(_coefficients.Evaluate(at, read, suspects, memory.Suspicions.LeftOutAt(at), place => signals[place].WhyAbsent(w)), steady, memory, inputs, log));
         }
 
         return [.. windows];
@@ -137,12 +134,17 @@ public sealed partial class LineEvaluation
             random[place] = signals[place].Random[window];
         }
 
-        // Of a tank's level the balance wants to know how fast it rises; a constant error of the level is none of its rate.
+        for (int i = 0; i < inputs.Heights.Length; i++)
+        {
+            if (_instruments.Effects[i].Level is >= 0 and var level) inputs.Heights[i] = new Measured(inputs.Value[level], systematic[level], random[level]);
+        }
+
+        // Of a level that tells what is stored the balance wants to know how fast it rises; a constant error of the level is none of its rate.
         foreach ((int place, _) in _instruments.StoringLevels)
         {
             if (place < 0) continue;
             double rate = inputs.Value[place] = signals[place].Rate[window];
-            systematic[place] = Tank.MassPerLevelStandard * double.Abs(rate);
+            systematic[place] = HoldUp.MassPerLevelStandard * double.Abs(rate);
             random[place] = signals[place].RateRandom[window];
         }
 

@@ -9,7 +9,6 @@ namespace EvapMonitor.Core.Tests;
 public class LineEvaluationTests
 {
     private const long Window = 5 * Milliseconds.Minute;
-    private static readonly ILookup<string, (long, long)> NoCleanings = Enumerable.Empty<int>().ToLookup(_ => "", _ => (0L, 0L));
 
     [Theory]
     [InlineData(1)]
@@ -19,7 +18,7 @@ public class LineEvaluationTests
     {
         (LineEvaluation evaluation, Dictionary<string, ReadingSeries> all) = Noisy(state);
         long day = 2 * Milliseconds.Day;
-        LineWindow[] whole = evaluation.Evaluate(all, day, day + Milliseconds.Day, NoCleanings);
+        LineWindow[] whole = evaluation.Evaluate(all, day, day + Milliseconds.Day, LineLog.Empty);
 
         // The same day as it comes: readings up to the end of each window, some of them an hour late.
         var random = new Random(state);
@@ -50,7 +49,7 @@ public class LineEvaluationTests
             }
 
             memory.Forget(changed);
-            foreach (LineWindow window in evaluation.Evaluate(memory, arrived, changed, end, NoCleanings)) live[window.At] = window;
+            foreach (LineWindow window in evaluation.Evaluate(memory, arrived, changed, end, LineLog.Empty)) live[window.At] = window;
         }
 
         Assert.Equal(whole.Length, live.Count);
@@ -66,9 +65,9 @@ public class LineEvaluationTests
     {
         (LineEvaluation evaluation, Dictionary<string, ReadingSeries> all) = Noisy(9);
         long day = 2 * Milliseconds.Day, at = day + (6 * Milliseconds.Hour);
-        LineWindow[] before = evaluation.Evaluate(all, day, day + Milliseconds.Day, NoCleanings);
+        LineWindow[] before = evaluation.Evaluate(all, day, day + Milliseconds.Day, LineLog.Empty);
         foreach (ReadingSeries series in all.Values) series.Add(new Reading(at + 7, 1e3, Quality.Good));
-        LineWindow[] after = evaluation.Evaluate(all, day, day + Milliseconds.Day, NoCleanings);
+        LineWindow[] after = evaluation.Evaluate(all, day, day + Milliseconds.Day, LineLog.Empty);
         long[] moved = [.. before.Zip(after).Where(pair => !pair.First.Effects.SequenceEqual(pair.Second.Effects)).Select(pair => pair.First.At)];
         Assert.NotEmpty(moved);
         Assert.True(moved[0] >= at - Window);
@@ -82,14 +81,14 @@ public class LineEvaluationTests
         Line line = TestLine.Line();
         var site = new Site { Name = "site", TimeZone = "UTC", Atmosphere = new(101_325, null), HistoryFrom = DateTimeOffset.UnixEpoch, Lines = [line] };
         long day = 2 * Milliseconds.Day, from = day + Milliseconds.Hour + 1, to = day + (2 * Milliseconds.Hour);
-        var evaluation = new LineEvaluation(site, line) { Exclusions = new[] { "P2" }.ToLookup(signal => signal, _ => (from, to)) };
+        LineLog log = LineLog.Empty with { Exclusions = new[] { "P2" }.ToLookup(signal => signal, _ => (from, to)) };
         bool IsAbsent(LineWindow window) => double.IsNaN(window.Balance!.Correction[window.Balance.Layout.Signals.ToList().IndexOf("P2")]);
-        LineWindow[] without = evaluation.Evaluate(all, day, day + (3 * Milliseconds.Hour), NoCleanings), with = plain.Evaluate(all, day, day + (3 * Milliseconds.Hour), NoCleanings);
+        LineWindow[] without = new LineEvaluation(site, line).Evaluate(all, day, day + (3 * Milliseconds.Hour), log), with = plain.Evaluate(all, day, day + (3 * Milliseconds.Hour), LineLog.Empty);
         Assert.True(with.Count(IsAbsent) < 6);
         foreach ((LineWindow one, LineWindow other) in without.Zip(with)) Assert.Equal((one.At + Window > from && one.At < to) || IsAbsent(other), IsAbsent(one));
 
-        var alone = new LineEvaluation(site, line) { Exclusions = TestLine.Values.Keys.Where(signal => signal != "FF").ToLookup(signal => signal, _ => (day, long.MaxValue)) };
-        Assert.Contains(alone.Evaluate(all, day, day + Milliseconds.Hour, NoCleanings).SelectMany(window => window.Effects), effect => effect.Reason?.EndsWith("is excluded by a person", StringComparison.Ordinal) == true);
+        LineLog alone = LineLog.Empty with { Exclusions = TestLine.Values.Keys.Where(signal => signal != "FF").ToLookup(signal => signal, _ => (day, long.MaxValue)) };
+        Assert.Contains(plain.Evaluate(all, day, day + Milliseconds.Hour, alone).SelectMany(window => window.Effects), effect => effect.Reason?.EndsWith("is excluded by a person", StringComparison.Ordinal) == true);
     }
 
     private static (LineEvaluation Evaluation, Dictionary<string, ReadingSeries> Readings) Noisy(int state)

@@ -12,7 +12,6 @@ public class LineStateTests
 {
     private const long Window = 5 * Milliseconds.Minute, Day = 2 * Milliseconds.Day;
     private static readonly UnitOfMeasure Number = new("1", Dimension.Number, 1);
-    private static readonly ILookup<string, (long, long)> NoCleanings = Enumerable.Empty<int>().ToLookup(_ => "", _ => (0L, 0L));
 
     [Fact]
     public void NoiseAroundAPoint_IsSteadyAllDay() =>
@@ -55,7 +54,7 @@ public class LineStateTests
         LineEvaluation evaluation = Evaluation(TestLine.Line());
         LineWindow[] day = Evaluate(TestLine.Line(), readings);
         long from = Day + (7 * Milliseconds.Hour);
-        LineWindow[] part = evaluation.Evaluate(From(readings, from - (long)evaluation.LeadIn.TotalMilliseconds), from, from + Milliseconds.Hour, NoCleanings);
+        LineWindow[] part = evaluation.Evaluate(From(readings, from - (long)evaluation.LeadIn.TotalMilliseconds), from, from + Milliseconds.Hour, LineLog.Empty);
         Assert.Equal(day[84..96].SelectMany(window => window.Effects), part.SelectMany(window => window.Effects));
     }
 
@@ -101,8 +100,8 @@ public class LineStateTests
     [Fact]
     public void LoggedCleaning_UnsettlesTheLineAtItsBeginAndEnd()
     {
-        ILookup<string, (long, long)> cleanings = new[] { 0 }.ToLookup(_ => "E2", _ => (Day + (3 * Milliseconds.Hour), Day + (5 * Milliseconds.Hour)));
-        LineWindow[] windows = Evaluation(TestLine.Line()).Evaluate(Readings(), Day, Day + (12 * Milliseconds.Hour), cleanings);
+        LineLog log = LineLog.Empty with { Cleanings = new[] { 0 }.ToLookup(_ => "E2", _ => (Day + (3 * Milliseconds.Hour), Day + (5 * Milliseconds.Hour))) };
+        LineWindow[] windows = Evaluation(TestLine.Line()).Evaluate(Readings(), Day, Day + (12 * Milliseconds.Hour), log);
         Assert.All([.. windows[36..41], .. windows[60..65]], window => Assert.False(window.Effects[0].Steady));
         Mostly(true, [.. windows[..36], .. windows[41..60], .. windows[65..]]);
         Assert.All(windows[36..65], window => Assert.False(window.Effects[1].Steady));
@@ -139,7 +138,7 @@ public class LineStateTests
         Assert.True(windows.Count(window => window.Steady == steady) >= 0.95 * windows.Length, $"{windows.Count(window => window.Steady == steady)} of {windows.Length}");
 
     private static LineWindow[] Evaluate(Line line, Dictionary<string, ReadingSeries> readings, long day = Day) =>
-        Evaluation(line).Evaluate(readings, day, day + (12 * Milliseconds.Hour), NoCleanings);
+        Evaluation(line).Evaluate(readings, day, day + (12 * Milliseconds.Hour), LineLog.Empty);
 
     private static LineEvaluation Evaluation(Line line) =>
         new(new Site { Name = "site", TimeZone = "UTC", Atmosphere = new(101_325, null), HistoryFrom = DateTimeOffset.UnixEpoch, Lines = [line] }, line);

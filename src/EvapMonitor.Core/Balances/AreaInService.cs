@@ -6,7 +6,7 @@ namespace EvapMonitor.Core.Balances;
 internal sealed class AreaInService
 {
     private readonly double _own;
-    private readonly (double Area, int Signal, ActiveSignal? Active)[] _bodies;
+    private readonly (string Name, double Area, int Signal, ActiveSignal? Active)[] _bodies;
 
     /// <summary>Gathers the bodies of an effect.</summary>
     /// <param name="line">The line.</param>
@@ -16,7 +16,7 @@ internal sealed class AreaInService
     {
         _own = effect.Bodies.Count == 0 ? effect.Area : 0;
         _bodies = [.. line.Bodies.Where(body => effect.Bodies.Contains(body.Name) || body.Serves.ContainsKey(effect.Name))
-            .Select(body => body.Serves.TryGetValue(effect.Name, out ActiveSignal? active) ? (body.Area, place(active.Instrument), active) : (body.Area, -1, null))];
+            .Select(body => body.Serves.TryGetValue(effect.Name, out ActiveSignal? active) ? (body.Name, body.Area, place(active.Instrument), active) : (body.Name, body.Area, -1, null))];
     }
 
     /// <summary>Places of the signals that tell it.</summary>
@@ -26,7 +26,7 @@ internal sealed class AreaInService
     public double At(LineInputs inputs)
     {
         double area = 0;
-        foreach ((double surface, int signal, ActiveSignal? active) in _bodies)
+        foreach ((_, double surface, int signal, ActiveSignal? active) in _bodies)
         {
             double value = inputs.At(signal);
             if (active is not null && double.IsNaN(value)) return double.NaN;
@@ -35,5 +35,19 @@ internal sealed class AreaInService
 
         // A body that serves an effect of one surface takes the place of that surface.
         return area > 0 ? area : _own;
+    }
+
+    /// <summary>Names of the bodies in service, joined by +; empty for the effect's own surface; null when a signal that tells it is absent, or none serves.</summary>
+    public string? NamesAt(LineInputs inputs)
+    {
+        string names = "";
+        foreach ((string name, _, int signal, ActiveSignal? active) in _bodies)
+        {
+            double value = inputs.At(signal);
+            if (active is not null && double.IsNaN(value)) return null;
+            if (active is null || active.IsActive(value)) names = names.Length == 0 ? name : names + "+" + name;
+        }
+
+        return names.Length > 0 || _own > 0 ? names : null;
     }
 }

@@ -1,12 +1,15 @@
-using EvapMonitor.Core.Plant;
+using EvapMonitor.Core.Coefficients;
 
 namespace EvapMonitor.Core.Balances;
 
 /// <summary>What a balance reads in one window: the conditioned means.</summary>
 internal sealed class LineInputs(LineInstruments instruments)
 {
-    /// <summary>Window means by place, SI units, pressures absolute; of a tank's level that tells what it stores, the rate, m/s. NaN is absent.</summary>
+    /// <summary>Window means by place, SI units, pressures absolute; of a level that tells what is stored, the rate, m/s. NaN is absent.</summary>
     public double[] Value { get; } = new double[instruments.All.Count];
+
+    /// <summary>By effect: height of its liquor, m.</summary>
+    public Measured[] Heights { get; } = [.. Enumerable.Repeat(Measured.Absent, instruments.Effects.Count)];
 
     /// <summary>A place's value; NaN when the place is absent.</summary>
     public double At(int place) => place < 0 ? double.NaN : Value[place];

@@ -29,6 +29,7 @@ public sealed class LineInstruments
         Surfaces = [.. line.Effects.Select(effect => new AreaInService(line, effect, Place))];
         Heaters = [.. line.Heaters.Select(heater => new HeaterPlaces(Place(heater.Flow), Place(heater.Solids?.Measured), Place(heater.In), Place(heater.Out)))];
         TankLevels = [.. line.Tanks.Select(tank => Place(tank.Level))];
+        StoringLevels = [.. line.Effects.Select((effect, i) => Storing(effect.HoldUp, effect.Level, Effects[i].Level)), .. line.Tanks.Select((tank, t) => Storing(tank.HoldUp, tank.Level, TankLevels[t]))];
         Recompressors = [.. line.Recompressors.Select(machine => new RecompressorPlaces(
             Place(machine.Motive.Flow), Place(machine.Motive.Pressure), Place(machine.Motive.Temperature), Place(machine.Power), Place(machine.Spray)))];
     }
@@ -72,15 +73,20 @@ public sealed class LineInstruments
     /// <summary>Places of the levels, in the order of the line's tanks.</summary>
     public IReadOnlyList<int> TankLevels { get; }
 
-    /// <summary>By tank: the place of the level that tells how much it stores, and what a metre of it holds in kg; −1 and 0 where none does.</summary>
-    public IEnumerable<(int Place, double MassPerLevel)> StoringLevels => Line.Tanks.Select((tank, t) =>
-        tank.MassPerLevel is { } mass && Effects.All(effect => effect.Level != TankLevels[t]) ? (TankLevels[t], mass) : (-1, 0));
+    /// <summary>
+    /// By effect, then by tank: the place of the level that tells how much it stores, and what a metre of it holds in kg; −1 and 0 where none does. A level that
+    /// two vessels name tells of neither.
+    /// </summary>
+    public IReadOnlyList<(int Place, double MassPerLevel)> StoringLevels { get; }
 
     /// <summary>Places on the recompressors, in the order of the line's.</summary>
     public IReadOnlyList<RecompressorPlaces> Recompressors { get; }
 
     /// <summary>True for an instrument that reads a difference of two pressures.</summary>
     public bool IsDifference(int place) => Effects.Any(effect => effect.PressureDifference == place);
+
+    private (int Place, double MassPerLevel) Storing(double? holdUp, Instrument? level, int place) =>
+        HoldUp.MassPerLevel(holdUp, level) is { } mass && Effects.Select(effect => effect.Level).Concat(TankLevels).Count(other => other == place) == 1 ? (place, mass) : (-1, 0);
 
     private StreamPlaces Stream(LiquorStream stream) =>
         new(Place(stream.Flow), Place(stream.Solids), Place(stream.Temperature), Place(stream.Laboratory));

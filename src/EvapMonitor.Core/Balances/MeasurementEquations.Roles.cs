@@ -66,7 +66,9 @@ internal sealed partial class MeasurementEquations
         Flow(at.Flow, places.LeavingFlow, at.Solids, at.Boiling, _properties.Liquor);
         if (_properties.Liquor is not Water) Plain(at.Solids, places.LeavingSolids);
         if (effect.Leaving.TemperatureSeesFlashedLiquor) Plain(at.Boiling, places.LeavingTemperature);
-        _certain.Add((at.Accumulation, []));
+        Stored(i, at.Accumulation);
+        // Without a level that tells, an effect stores nothing.
+        _certain.Add((at.Accumulation, [_at.StoringLevels[i].Place]));
         Stated(at.HeatLoss, effect.HeatLoss, "heat loss of " + effect.Name);
         Stated(at.Vent, effect.Vent, "vent of " + effect.Name);
     }
@@ -80,13 +82,7 @@ internal sealed partial class MeasurementEquations
                 Stated(_variables.Liquor[k].Share, share, $"share of {_graph.NameOf(_graph.Liquor[k].From)} to {_graph.NameOf(_graph.Liquor[k].To)}");
         }
 
-        int tank = 0;
-        foreach ((int place, double mass) in _at.StoringLevels)
-        {
-            int stored = _variables.Tanks[tank++].Accumulation;
-            if (place >= 0) _all.Add(new(Reading.Stored, stored, place) { Factor = mass });
-        }
-
+        for (int t = 0; t < line.Tanks.Count; t++) Stored(line.Effects.Count + t, _variables.Tanks[t].Accumulation);
         for (int b = 0; b < line.Bleeds.Count; b++) Plain(_variables.Bleeds[b], _at.BleedFlows[b]);
         for (int h = 0; h < line.Heaters.Count; h++)
         {
@@ -122,6 +118,12 @@ internal sealed partial class MeasurementEquations
             if (machine.Spray is null) _certain.Add((at.Spray, []));
             Stated(at.Efficiency, machine.Efficiency, "efficiency of " + machine.Name);
         }
+    }
+
+    private void Stored(int vessel, int variable)
+    {
+        (int place, double mass) = _at.StoringLevels[vessel];
+        if (place >= 0) _all.Add(new(Reading.Stored, variable, place) { Factor = mass });
     }
 
     private void Flow(int variable, int place, int solids, int temperature, Liquor liquor)

@@ -101,7 +101,7 @@ internal sealed class ApparentCoefficients(LineInstruments instruments, LineGrap
             BoilingTemperature = boiling,
             Elevation = quantities.Elevation(its),
             DrivingForce = force,
-            HeadCorrectedDrivingForce = quantities.HeadCorrectedDifference(its, LevelOf(i, readings), readings.Liquor),
+            HeadCorrectedDrivingForce = quantities.HeadCorrectedDifference(its, inputs.Heights[i], liquor),
             Duty = duty,
             Coefficient = reason is null ? coefficient : Measured.Absent,
             Solids = solids.Value,
@@ -112,9 +112,6 @@ internal sealed class ApparentCoefficients(LineInstruments instruments, LineGrap
             Reason = reason,
         };
     }
-
-    private Measured LevelOf(int i, in WindowReadings readings) => instruments.Effects[i].Level is >= 0 and var level
-        ? new Measured(readings.Inputs.Value[level], readings.Systematic[level], readings.Random[level]) : Measured.Absent;
 
     /// <summary>The surest of the instruments that tell the heating temperature, by the order of the method.</summary>
     private HeatingTemperatureSource HeatingFrom(int i, LineInputs inputs)

@@ -31,6 +31,15 @@ public sealed record EffectWindow
     /// <summary>True: the line was steady and the effect not being cleaned. False: it was not. Null: it could not be judged.</summary>
     public bool? Steady { get; init; }
 
+    /// <summary>What boiled, by its name in the plant file; null when not known.</summary>
+    public string? Product { get; init; }
+
+    /// <summary>Names of the bodies in service, joined by +; empty for the effect's own surface; null when not known.</summary>
+    public string? Bodies { get; init; }
+
+    /// <summary>Feed of the line as read, kg/s (a volume counts as that of water); NaN without a reading.</summary>
+    public double FeedFlow { get; init; } = double.NaN;
+
     /// <summary>Heating temperature, K.</summary>
     public required Measured HeatingTemperature { get; init; }
 

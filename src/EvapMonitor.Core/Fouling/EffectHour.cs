@@ -20,6 +20,14 @@ public enum HourQuantity : short
     Elevation = 6,
     /// <summary>Heat flux over the surface in service, W/m².</summary>
     HeatFlux = 7,
+    /// <summary>Driving force with boiling at half the liquor's height, K.</summary>
+    HeadCorrectedDrivingForce = 8,
+    /// <summary>Dissolved solids of the leaving liquor, mass fraction.</summary>
+    Solids = 9,
+    /// <summary>Feed of the line as read, kg/s.</summary>
+    FeedFlow = 10,
+    /// <summary>Apparent coefficient on a run with water, W/(m²·K).</summary>
+    WaterRunCoefficient = 11,
 }
 
 /// <summary>One quantity of one effect over one hour of production.</summary>
@@ -38,11 +46,13 @@ public sealed record EffectHour(long Hour, HourQuantity Quantity, int Count, Mea
     /// <param name="windows">Windows in ascending order; whole hours.</param>
     public static IEnumerable<EffectHour> Summarise(IEnumerable<EffectWindow> windows)
     {
-        foreach (IGrouping<long, EffectWindow> hour in windows.Where(Counts).GroupBy(window => window.At - Milliseconds.Modulo(window.At, Milliseconds.Hour)))
+        foreach (IGrouping<long, EffectWindow> hour in windows.Where(window => Counts(window) || IsWaterTest(window))
+            .GroupBy(window => window.At - Milliseconds.Modulo(window.At, Milliseconds.Hour)))
         {
             foreach (HourQuantity quantity in Quantities)
             {
-                Measured[] values = [.. hour.Select(window => Of(window, quantity)).Where(value => value.IsPresent)];
+                bool water = quantity == HourQuantity.WaterRunCoefficient;
+                Measured[] values = [.. hour.Where(window => IsWaterTest(window) == water).Select(window => Of(window, quantity)).Where(value => value.IsPresent)];
                 if (values.Length > 0) yield return Summarise(hour.Key, quantity, values);
             }
         }
@@ -51,6 +61,9 @@ public sealed record EffectHour(long Hour, HourQuantity Quantity, int Count, Mea
     /// <summary>True when a window speaks of the surface: in production and steady (or not known to be otherwise), with a coefficient.</summary>
     public static bool Counts(EffectWindow window) =>
         window.State is RunningState.Producing or RunningState.Unknown && window.Steady != false && window.Coefficient.IsPresent;
+
+    /// <summary>True for a window on water, which tells of the surface without solids or elevation.</summary>
+    public static bool IsWaterTest(EffectWindow window) => window.State is RunningState.WaterRun && window.Steady != false && window.Coefficient.IsPresent;
 
     /// <summary>The quantity of a window.</summary>
     public static Measured Of(EffectWindow window, HourQuantity quantity) => quantity switch
@@ -62,6 +75,10 @@ public sealed record EffectHour(long Hour, HourQuantity Quantity, int Count, Mea
         HourQuantity.BoilingTemperature => window.BoilingTemperature,
         HourQuantity.Elevation => window.Elevation,
         HourQuantity.HeatFlux => Flux(window),
+        HourQuantity.HeadCorrectedDrivingForce => window.HeadCorrectedDrivingForce,
+        HourQuantity.Solids => new Measured(window.Solids, 0, 0),
+        HourQuantity.FeedFlow => new Measured(window.FeedFlow, 0, 0),
+        HourQuantity.WaterRunCoefficient => window.Coefficient,
         _ => throw new ArgumentOutOfRangeException(nameof(quantity), quantity, null),
     };
 

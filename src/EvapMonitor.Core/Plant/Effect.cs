@@ -63,6 +63,9 @@ public sealed record Effect
     /// <summary>Liquor level, m; null when not measured.</summary>
     public Instrument? Level { get; init; }
 
+    /// <summary>Liquor that it holds over the range of its level, kg; null when not given: then it stores nothing.</summary>
+    public double? HoldUp { get; init; }
+
     /// <summary>Pressure of the chest less that of the vapour space, Pa; null when not measured.</summary>
     public Instrument? PressureDifference { get; init; }
 

@@ -37,14 +37,7 @@ public sealed record CondensateFlash(string From, string To);
 /// <param name="From">Name of the effect whose liquor it takes; null: the feed of the line.</param>
 /// <param name="HoldUp">What it holds when full, kg; null when not given.</param>
 /// <param name="Level">Its level, m; null when not measured.</param>
-public sealed record Tank(string Name, string? From, double? HoldUp, Instrument? Level)
-{
-    /// <summary>Standard uncertainty of <see cref="MassPerLevel"/>, as a share: vessels are not quite upright and contents not always the same (stated here).</summary>
-    public const double MassPerLevelStandard = 0.05;
-
-    /// <summary>What a metre of level holds, kg/m: the hold-up over the range of the level; null when one of them is not given.</summary>
-    public double? MassPerLevel => HoldUp is { } mass && Level?.Range is { } range && range.High > range.Low && double.IsFinite(range.High - range.Low) ? mass / (range.High - range.Low) : null;
-}
+public sealed record Tank(string Name, string? From, double? HoldUp, Instrument? Level);
 
 /// <summary>
 /// A body: a vessel with a heating surface of its own, which serves one effect or another. Area, campaign and cleaning belong to it.

@@ -13,10 +13,14 @@ namespace EvapMonitor.Service.Api;
 /// <param name="Last">The balance; null when the line has none.</param>
 /// <param name="Suspects">Sets of instruments of which one is wrong, and those left out.</param>
 /// <param name="Fits">By signal: how it fits.</param>
-public sealed record LineFit(long Version, StoredBalance? Last, IReadOnlyList<SuspectsWire> Suspects, IReadOnlyDictionary<string, FitWire> Fits);
+public sealed record LineFit(long Version, StoredBalance? Last, IReadOnlyList<SuspectsWire> Suspects, IReadOnlyDictionary<string, FitWire> Fits)
+{
+    /// <summary>By signal: how it has changed against the others; those that have not are absent.</summary>
+    public IReadOnlyDictionary<string, ChangeWire> Changes { get; init; } = new Dictionary<string, ChangeWire>();
+}
 
 /// <summary>Puts together what is known of the balance of each line now. Kept until the line has new results.</summary>
-public sealed class BalanceStates(BalanceStore balances, TrendStore trends, TimeProvider clock)
+public sealed class BalanceStates(BalanceStore balances, TrendStore trends, InstrumentLogStore log, TimeProvider clock)
 {
     /// <summary>How far back the beginning of a suspicion is looked for.</summary>
     private static readonly TimeSpan LookBack = TimeSpan.FromDays(30);
@@ -37,7 +41,7 @@ public sealed class BalanceStates(BalanceStore balances, TrendStore trends, Time
         StoredBalance? last = await balances.LastAsync(line.LineId, DateTimeOffset.MaxValue, DateTimeOffset.MinValue, stop);
         LineFit fit = last is null
             ? new LineFit(version, null, [], new Dictionary<string, FitWire>())
-            : Judge(plant, line, version, last, await SinceAsync(line.LineId, last, stop));
+            : Judge(plant, line, version, last, await SinceAsync(line.LineId, last, stop)) with { Changes = await ChangesAsync(plant, line, last, stop) };
         _known[line.LineId] = (plant, fit);
         return fit;
     }
@@ -87,6 +91,43 @@ public sealed class BalanceStates(BalanceStore balances, TrendStore trends, Time
         IEnumerable<SuspectsWire> suspects = balance.Suspects.Where(set => !set.Any(balance.LeftOut.Contains))
             .Select(set => new SuspectsWire(Names(set), false, Utc(set.Max(place => Since(place).Suspect)), BalanceWords.Set(Names(set))));
         return new LineFit(version, stored, [.. leftOut, .. suspects], fits);
+    }
+
+    /// <summary>How instruments have changed against the others, from the hours of the last weeks.</summary>
+    private async Task<IReadOnlyDictionary<string, ChangeWire>> ChangesAsync(PlantInForce plant, LinePlace line, StoredBalance last, CancellationToken stop)
+    {
+        DateTimeOffset end = Utc(last.At) + plant.Site.Window, from = end - LookBack - TimeSpan.FromDays(CorrectionChange.Baseline);
+        var hours = new Dictionary<string, List<(long, double)>>();
+        foreach (CorrectionHour hour in await balances.HoursAsync(line.LineId, from, end, stop))
+        {
+            for (int i = 0; i < hour.Signals.Count; i++)
+            {
+                if (!hours.TryGetValue(hour.Signals[i], out List<(long, double)>? own)) hours[hour.Signals[i]] = own = [];
+                own.Add((hour.Hour, hour.Difference[i]));
+            }
+        }
+
+        string[] signals = [.. hours.Keys.Where(plant.Signals.ContainsKey)];
+        ILookup<int, InstrumentEvent> logged = (await log.ListAsync(signals.Select(signal => plant.Signals[signal]), stop)).ToLookup(one => one.SignalId);
+        var units = new BalanceUnits(line.Line);
+        var changes = new Dictionary<string, ChangeWire>();
+        foreach (string signal in signals)
+        {
+            long? recalibrated = logged[plant.Signals[signal].SignalId].FirstOrDefault(one => one.Kind == InstrumentLogStore.Recalibrated)?.Start.ToUnixTimeMilliseconds();
+            if (CorrectionChange.Find(hours[signal], StandardOf(last.Balance, signal), recalibrated, signals.Length) is not { } change) continue;
+            if (units.Difference(signal, change.Change) is not var (value, unit)) continue;
+            changes[signal] = new ChangeWire(Utc(change.Since), value, unit, $"has changed: the others want {Signed(value)} {unit} more than before");
+        }
+
+        return changes;
+    }
+
+    /// <summary>Standard uncertainty of a reading, as a size; 0 when the last balance has none.</summary>
+    private static double StandardOf(BalanceWindow balance, string signal)
+    {
+        int place = balance.Layout.Signals.ToList().IndexOf(signal);
+        double standard = place < 0 ? 0 : double.Abs(balance.Wanted[place] / balance.Correction[place]);
+        return double.IsFinite(standard) ? standard : 0;
     }
 
     private static FitWire FitOf(BalanceWindow balance, int place, BalanceUnits units, (long Suspect, long LeftOut) since, DateTimeOffset end)

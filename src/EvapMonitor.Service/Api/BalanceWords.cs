@@ -67,8 +67,11 @@ internal static class BalanceWords
     {
         if (balance.Degrees == 0) return "Nothing checks the readings: there are just as many as the balance needs.";
         string checks = balance.Degrees == 1 ? "1 independent check" : $"{balance.Degrees} independent checks";
+        // The sum over all is blunt: an instrument's own test may find what it does not.
+        string verdict = balance.ChiSquare > balance.ChiSquareLimit ? "The readings do not fit together"
+            : balance.Suspects.Count > 0 ? "Taken all together the readings show nothing unusual, but not one by one" : "The readings fit together";
         return string.Create(CultureInfo.InvariantCulture,
-            $"The readings {(balance.ChiSquare > balance.ChiSquareLimit ? "do not fit" : "fit")} together: chi-square {balance.ChiSquare:0.0} from {checks}; as good as the plant file says, they exceed {balance.ChiSquareLimit:0.0} once in a hundred windows.");
+            $"{verdict}: chi-square {balance.ChiSquare:0.0} from {checks}; as good as the plant file says, they exceed {balance.ChiSquareLimit:0.0} once in a hundred windows.");
     }
 
     private static string Of(BalanceWindow balance, int place)

@@ -59,7 +59,7 @@ public sealed class EffectStates(TrendStore trends, CleaningStore cleanings, Tim
         DateTimeOffset from = lastWindow.AddHours(-1).AddMilliseconds(1);
         IReadOnlyList<EffectWindow> windows = trends.Windows(line.LineId, effectId, from, lastWindow.AddMilliseconds(1));
         Measured Mean(HourQuantity quantity) => MeanOf([.. windows.Where(EffectHour.Counts).Select(window => EffectHour.Of(window, quantity)).Where(value => value.IsPresent)]);
-        Measured coefficient = Mean(HourQuantity.Coefficient), duty = Mean(HourQuantity.Duty), force = Mean(HourQuantity.DrivingForce);
+        Measured coefficient = Mean(HourQuantity.Coefficient), duty = Mean(HourQuantity.Duty), force = Mean(HourQuantity.DrivingForce), corrected = Mean(HourQuantity.HeadCorrectedDrivingForce);
         Measured cleanliness = CleanComparison.Cleanliness(coefficient, clean), resistance = CleanComparison.Resistance(coefficient, clean);
         // The day may be rewritten between the two questions.
         if (windows.Count == 0) return null;
@@ -69,7 +69,7 @@ public sealed class EffectStates(TrendStore trends, CleaningStore cleanings, Tim
             Utc(windows[0].At), 1,
             Number(coefficient.Value), Number(coefficient.Standard), Number(coefficient.Random),
             Celsius(Mean(HourQuantity.HeatingTemperature).Value, lastOne.HeatingTemperature.Value), Celsius(Mean(HourQuantity.BoilingTemperature).Value, lastOne.BoilingTemperature.Value),
-            Number(Mean(HourQuantity.Elevation).Value), Number(force.Value), Number(force.Standard),
+            Number(Mean(HourQuantity.Elevation).Value), Number(force.Value), Number(force.Standard), Number(corrected.Value), Number(corrected.Standard),
             Number(duty.Value / 1000), Number(duty.Standard / 1000), Number(Mean(HourQuantity.HeatFlux).Value / 1000),
             Number(cleanliness.Value), Number(cleanliness.Standard), Number(resistance.Value), Number(resistance.Standard),
             clean?.Source, Words.Of(lastOne.DutyFrom), Words.Of(lastOne.HeatingFrom), Words.Of(lastOne.BoilingFrom), reason);

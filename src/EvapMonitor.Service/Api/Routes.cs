@@ -24,6 +24,10 @@ internal static class Routes
         api.MapPost("/cleanings", CleaningHandlers.Log).Named("logCleaning", "Log a cleaning; the same Idempotency-Key never logs twice", Policies.Write);
         api.MapDelete("/cleanings/{id:guid}", CleaningHandlers.Withdraw).Named("withdrawCleaning", "Withdraw a logged cleaning", Policies.Write);
 
+        api.Get("/instrument-log", InstrumentLogHandlers.List, "getInstrumentLog", "What was logged of instruments: excluded for a time, recalibrated; newest first");
+        api.MapPost("/instrument-log", InstrumentLogHandlers.Log).Named("logInstrument", "Log that an instrument is not to be believed, or was set right", Policies.Write);
+        api.MapDelete("/instrument-log/{id:guid}", InstrumentLogHandlers.Withdraw).Named("withdrawInstrumentEvent", "Withdraw an entry of the log of instruments", Policies.Write);
+
         api.Get("/signals", SignalHandlers.List, "getSignals", "Signals with their last readings");
         api.Get("/signals/{signal}/corrections", BalanceHandlers.Corrections, "getCorrections", "What the balance wanted to add to the readings of a signal, over time");
         api.MapPost("/readings", ReadingHandlers.Add).Named("addReadings", "Readings in batches, plain or gzip; answered once they are durable", Policies.Write)
@@ -34,7 +38,7 @@ internal static class Routes
         api.MapPost("/imports", ImportHandlers.Upload).Named("uploadHistory", "Upload a CSV of history, plain or gzip", Policies.Write);
         api.MapPost("/imports/{id}/cancel", ImportHandlers.Cancel).Named("cancelImport", "Stop an import; what is stored stays", Policies.Write);
         api.Get("/plant", SiteHandlers.Plant, "getPlant", "The plant file in force");
-        api.Get("/events", EventHandlers.Stream, "getEvents", "Server-sent events: windows, import, cleanings, site");
+        api.Get("/events", EventHandlers.Stream, "getEvents", "Server-sent events: windows, import, cleanings, instruments, site");
 
         app.MapMethods("/health/live", GetAndHead, HealthHandlers.Live).RequireAuthorization(Policies.Read).ExcludeFromDescription();
         app.MapMethods("/health/ready", GetAndHead, HealthHandlers.Ready).RequireAuthorization(Policies.Read).ExcludeFromDescription();

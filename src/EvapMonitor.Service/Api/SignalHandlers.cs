@@ -21,8 +21,8 @@ internal static class SignalHandlers
         var units = inForce.Site.Lines.SelectMany(line => new Core.Balances.LineInstruments(line).All)
             .Concat(inForce.Site.Atmosphere.Measured is { } air ? [air] : [])
             .DistinctBy(instrument => instrument.Signal).ToDictionary(instrument => instrument.Signal, instrument => instrument.Unit.Written);
-        var fits = new Dictionary<int, IReadOnlyDictionary<string, FitWire>>();
-        foreach (LinePlace one in inForce.Lines) fits[one.LineId] = (await balances.OfAsync(inForce, one, stop)).Fits;
+        var fits = new Dictionary<int, LineFit>();
+        foreach (LinePlace one in inForce.Lines) fits[one.LineId] = await balances.OfAsync(inForce, one, stop);
         var signals = new List<SignalWire>();
         foreach ((string name, SignalPlace place) in inForce.Signals)
         {
@@ -34,7 +34,8 @@ internal static class SignalHandlers
             bool came = summary is not null && (summary.Readings > 0 || summary.Rejected.Any(count => count > 0));
             signals.Add(new SignalWire(
                 name, line, units[name], any ? new DateTimeOffset(last.At, TimeSpan.Zero) : null, last.Value, any ? Words.Of((Quality)last.Quality) : null,
-                came ? summary!.GoodShare : null, rejected, summary?.Readings ?? 0, fits[place.Users[0]].GetValueOrDefault(name)));
+                came ? summary!.GoodShare : null, rejected, summary?.Readings ?? 0, fits[place.Users[0]].Fits.GetValueOrDefault(name),
+                fits[place.Users[0]].Changes.GetValueOrDefault(name)));
         }
 
         return TypedResults.Ok(new SignalsWire(clock.GetUtcNow(), signals, Unknown(await imports.ListAsync(stop), unknown, inForce)));

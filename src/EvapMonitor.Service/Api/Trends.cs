@@ -24,11 +24,14 @@ public sealed class Trends(TrendStore store)
         ["cleanliness"] = new("1", HourQuantity.Coefficient, (value, _, clean) => CleanComparison.Cleanliness(value, clean)),
         ["fouling_resistance"] = new("m2.K/W", HourQuantity.Coefficient, (value, _, clean) => CleanComparison.Resistance(value, clean)),
         ["driving_force"] = new("K", HourQuantity.DrivingForce, (value, _, _) => value),
+        ["head_corrected_driving_force"] = new("K", HourQuantity.HeadCorrectedDrivingForce, (value, _, _) => value),
         ["duty"] = new("kW", HourQuantity.Duty, (value, _, _) => Scaled(value, 1e-3)),
         ["heat_flux"] = new("kW/m2", HourQuantity.HeatFlux, (value, _, _) => Scaled(value, 1e-3)),
         ["heating_temperature"] = new("degC", HourQuantity.HeatingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
         ["boiling_temperature"] = new("degC", HourQuantity.BoilingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
         ["elevation"] = new("K", HourQuantity.Elevation, (value, _, _) => value),
+        ["solids"] = new("%", HourQuantity.Solids, (value, _, _) => Scaled(value, 100)),
+        ["feed_flow"] = new("kg/s", HourQuantity.FeedFlow, (value, _, _) => value),
     };
 
     /// <summary>One series.</summary>

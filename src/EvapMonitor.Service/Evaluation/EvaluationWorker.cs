@@ -15,7 +15,7 @@ public sealed record WindowsChanged(string Line, DateTimeOffset From, DateTimeOf
 /// A line is evaluated by the one process that holds its lease.
 /// </summary>
 public sealed class EvaluationWorker(
-    DayStore days, ReadingStore readings, ResultStore results, CleaningStore cleanings, LeaseStore leases, PlantHolder plant, EvaluationSignal signal, LiveEvents events,
+    DayStore days, ReadingStore readings, ResultStore results, LineLogs logs, LeaseStore leases, PlantHolder plant, EvaluationSignal signal, LiveEvents events,
     TimeProvider clock, ILogger<EvaluationWorker> log)
     : BackgroundService
 {
@@ -78,7 +78,7 @@ public sealed class EvaluationWorker(
         try
         {
             long began = clock.GetTimestamp();
-            DayResult result = work.Evaluate(taken, closed, await CleaningsAsync(line, stop));
+            DayResult result = work.Evaluate(taken, closed, await logs.OfAsync(inForce, line, stop));
             await results.WriteAsync(result, inForce.RevisionId, _fences[line.LineId], stop);
             log.DayEvaluated(line.Line.Name, taken.Day, result.Windows.Count, clock.GetElapsedTime(began).TotalMilliseconds);
             DateTimeOffset to = result.Windows.Count == 0 ? result.From : DateTimeOffset.FromUnixTimeMilliseconds(result.Windows[^1].At) + inForce.Site.Window;
@@ -98,14 +98,6 @@ public sealed class EvaluationWorker(
             work.Forget();
             return false;
         }
-    }
-
-    private async Task<ILookup<string, (long Start, long End)>> CleaningsAsync(LinePlace line, CancellationToken stop)
-    {
-        var names = line.EffectIds.Zip(line.Line.Effects, (id, effect) => (id, effect.Name)).ToDictionary(pair => pair.id, pair => pair.Name);
-        return (await cleanings.ListAsync(line.LineId, null, stop))
-            .Where(cleaning => names.ContainsKey(cleaning.EffectId))
-            .ToLookup(cleaning => names[cleaning.EffectId], cleaning => (cleaning.Start.ToUnixTimeMilliseconds(), cleaning.End?.ToUnixTimeMilliseconds() ?? long.MaxValue));
     }
 
     private async Task ReleaseAsync()

@@ -2,6 +2,7 @@ using System.Text;
 using EvapMonitor.Core.Balances;
 using EvapMonitor.Core.Plant;
 using EvapMonitor.Service.Ingest.Files;
+using EvapMonitor.Service.Store;
 using NodaTime;
 
 namespace EvapMonitor.Service.Evaluation;
@@ -12,7 +13,7 @@ namespace EvapMonitor.Service.Evaluation;
 /// <param name="Line">The line.</param>
 /// <param name="Effect">The effect; null for the whole line.</param>
 /// <param name="Signal">The signal of the instrument; null for others.</param>
-/// <param name="Kind">cleaning or instrument-excluded.</param>
+/// <param name="Kind">cleaning, rejected-cleaning, instrument-excluded or recalibration.</param>
 internal sealed record LoggedEvent(long Start, long? End, string Line, string? Effect, string? Signal, string Kind);
 
 /// <summary>Reads a file of logged events: time,end,line,effect,signal,kind,note. Every mistake ends it: a wrong log would move results in silence.</summary>
@@ -21,10 +22,10 @@ internal static class EventFile
     /// <summary>The cleaning of an effect.</summary>
     public const string Cleaning = "cleaning";
 
-    /// <summary>An instrument that is not to be believed for a time.</summary>
-    public const string InstrumentExcluded = "instrument-excluded";
+    /// <summary>A rise of the coefficient in this time was no cleaning.</summary>
+    public const string RejectedCleaning = "rejected-cleaning";
 
-    private static readonly string[] Kinds = [Cleaning, InstrumentExcluded];
+    private static readonly string[] Kinds = [Cleaning, RejectedCleaning, InstrumentLogStore.Excluded, InstrumentLogStore.Recalibrated];
 
     public static List<LoggedEvent> Read(string path, Site site)
     {
@@ -67,11 +68,11 @@ internal static class EventFile
 
         if (site.Lines.FirstOrDefault(one => one.Name == cells[2]) is not { } line) return $"line '{cells[2]}' is not in the plant file";
         if (cells[3].Length > 0 && line.Effects.All(effect => effect.Name != cells[3])) return $"line {line.Name} has no effect '{cells[3]}'";
-        if (!Kinds.Contains(cells[5])) return $"kind '{cells[5]}' is not supported yet; allowed: {string.Join(", ", Kinds)}";
-        if (cells[5] == Cleaning && cells[3].Length == 0) return "a cleaning needs its effect";
-        if (cells[5] == InstrumentExcluded)
+        if (!Kinds.Contains(cells[5])) return $"kind '{cells[5]}' is not known; allowed: {string.Join(", ", Kinds)}";
+        if (cells[5] is Cleaning or RejectedCleaning && cells[3].Length == 0) return $"{cells[5]} needs its effect";
+        if (cells[5] is InstrumentLogStore.Excluded or InstrumentLogStore.Recalibrated)
         {
-            if (cells[4].Length == 0) return "an excluded instrument needs its signal";
+            if (cells[4].Length == 0) return $"{cells[5]} needs the signal of its instrument";
             if (new LineInstruments(line).All.All(instrument => instrument.Signal != cells[4])) return $"line {line.Name} has no instrument with the signal '{cells[4]}'";
         }
 

@@ -4,6 +4,7 @@ using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Plant;
 using EvapMonitor.Core.Readings;
 using EvapMonitor.Service.Ingest.Files;
+using EvapMonitor.Service.Store;
 using NodaTime;
 
 namespace EvapMonitor.Service.Evaluation;
@@ -15,8 +16,8 @@ internal sealed class FileEvaluation(Site site, CancellationToken stop) : IReadi
 {
     private const int MostTold = 100;
 
-    private readonly Dictionary<string, int> _keys = Store.PlantInForce.SignalsOf(site).Select((signal, i) => (signal.Signal, i)).ToDictionary(pair => pair.Signal, pair => pair.i);
-    private readonly Dictionary<string, ReadingSeries> _series = Store.PlantInForce.SignalsOf(site).ToDictionary(signal => signal.Signal, _ => new ReadingSeries());
+    private readonly Dictionary<string, int> _keys = PlantInForce.SignalsOf(site).Select((signal, i) => (signal.Signal, i)).ToDictionary(pair => pair.Signal, pair => pair.i);
+    private readonly Dictionary<string, ReadingSeries> _series = PlantInForce.SignalsOf(site).ToDictionary(signal => signal.Signal, _ => new ReadingSeries());
     private readonly List<string> _told = [];
     private readonly Dictionary<string, long> _unknown = [];
     private ReadingSeries[] _byKey = [];
@@ -63,19 +64,15 @@ internal sealed class FileEvaluation(Site site, CancellationToken stop) : IReadi
         balances.WriteHeader();
         foreach (Line line in site.Lines)
         {
-            var evaluation = new LineEvaluation(site, line)
-            {
-                Exclusions = _events.Where(one => one.Line == line.Name && one.Kind == EventFile.InstrumentExcluded).ToLookup(one => one.Signal!, one => (one.Start, one.End ?? long.MaxValue)),
-            };
+            var evaluation = new LineEvaluation(site, line);
             var own = evaluation.Signals.Select(signal => _series[signal]).Where(series => series.Count > 0).ToList();
             if (own.Count == 0) continue;
-            ILookup<string, (long, long)> cleanings = _events.Where(one => one.Line == line.Name && one.Kind == EventFile.Cleaning && one.Effect is not null)
-                .ToLookup(one => one.Effect!, one => (one.Start, one.End ?? long.MaxValue));
+            LineLog log = LogOf(line);
             long last = own.Max(series => series.At[^1]);
             for (long day = Milliseconds.DayOf(own.Min(series => series.At[0])); day <= last; day += Milliseconds.Day)
             {
                 stop.ThrowIfCancellationRequested();
-                foreach (LineWindow window in evaluation.Evaluate(_series, day, long.Min(day + Milliseconds.Day, EndOfWindow(last)), cleanings))
+                foreach (LineWindow window in evaluation.Evaluate(_series, day, long.Min(day + Milliseconds.Day, EndOfWindow(last)), log))
                 {
                     writer.Write(line, window);
                     if (window.Balance is { } balance) balances.Write(line.Name, window.At, balance);
@@ -114,6 +111,14 @@ internal sealed class FileEvaluation(Site site, CancellationToken stop) : IReadi
     {
         stop.ThrowIfCancellationRequested();
         return true;
+    }
+
+    private LineLog LogOf(Line line)
+    {
+        IEnumerable<LoggedEvent> its = _events.Where(one => one.Line == line.Name);
+        return new LineLog(
+            its.Where(one => one.Kind == EventFile.Cleaning).ToLookup(one => one.Effect!, one => (one.Start, one.End ?? long.MaxValue)),
+            its.Where(one => one.Kind == InstrumentLogStore.Excluded).ToLookup(one => one.Signal!, one => (one.Start, one.End ?? long.MaxValue)));
     }
 
     private long EndOfWindow(long at)

@@ -22,8 +22,8 @@ internal sealed class LineWork(PlantInForce plant, LinePlace line, ReadingStore 
     /// <summary>Evaluates what has changed of a day, by whole hours, up to the last closed window.</summary>
     /// <param name="taken">The day and since when it changed.</param>
     /// <param name="closed">End of the last closed window, ms.</param>
-    /// <param name="cleanings">Logged cleanings by effect name.</param>
-    public DayResult Evaluate(TakenDay taken, long closed, ILookup<string, (long Start, long End)> cleanings)
+    /// <param name="log">What people have logged.</param>
+    public DayResult Evaluate(TakenDay taken, long closed, LineLog log)
     {
         long day = Instant.ToMilliseconds(taken.Day.ToDateTime(TimeOnly.MinValue, DateTimeKind.Utc)), end = day + Milliseconds.Day;
         long changed = long.Max(day, Instant.ToMilliseconds(taken.From));
@@ -31,10 +31,10 @@ internal sealed class LineWork(PlantInForce plant, LinePlace line, ReadingStore 
         bool live = to < end;
         LineMemory memory = live ? LiveMemory(day, changed) : _evaluation.NewMemory();
         Dictionary<string, ReadingSeries> readings = Read(memory, from, to);
-        LineWindow[] windows = _evaluation.Evaluate(memory, readings, from, to, cleanings);
+        LineWindow[] windows = _evaluation.Evaluate(memory, readings, from, to, log);
         long last = readings.Values.Select(series => series.Count == 0 ? long.MinValue : series.At[^1]).DefaultIfEmpty(long.MinValue).Max();
         bool held = live && last > long.MinValue && last + (long)_evaluation.LongestStale.TotalMilliseconds > to;
-        return new DayResult(line, taken.Day, Utc(from), windows, held ? Utc(to) : null);
+        return new DayResult(line, taken.Day, Utc(from), windows, held ? Utc(to) : null, plant.Site.Window);
     }
 
     /// <summary>End of the last closed window: a window closes a second after its end.</summary>

@@ -40,6 +40,7 @@ internal sealed class EffectReader(Findings findings, InstrumentReader instrumen
             Vapour = Vapour(mapping.Take("vapour")),
             Leaving = Leaving(mapping.Take("leaving")),
             Level = instruments.Read(mapping.Take("level"), Dimension.Length),
+            HoldUp = Quantities.Read(mapping.Take("hold-up"), Dimension.Mass, m => m > 0, "more than 0", findings),
             PressureDifference = Difference(mapping.Take("pressure-difference")),
             DueWhen = Due(mapping.Take("due-when")),
         };

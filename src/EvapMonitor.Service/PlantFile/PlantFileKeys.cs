@@ -31,7 +31,7 @@ internal static class PlantFileKeys
 
     public static readonly KeySet Effect = new(
         "effect", "name", "formerly", "heating", "liquor", "area", "bodies", "clean-coefficient", "heat-loss", "vent", "chest", "vapour",
-        "leaving", "level", "pressure-difference", "due-when");
+        "leaving", "level", "hold-up", "pressure-difference", "due-when");
 
     public static readonly KeySet LiquorSource = new("liquor-source", "from", "share");
     public static readonly KeySet Chest = new("chest", "pressure", "line-loss", "temperature", "condensate-flow", "condensate-temperature");

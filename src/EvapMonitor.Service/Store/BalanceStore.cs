@@ -104,6 +104,28 @@ public sealed class BalanceStore(NpgsqlDataSource database)
         return all;
     }
 
+    /// <summary>What the others wanted to add to the readings of each signal of a line, by the hour, in [from, to), ascending.</summary>
+    public async Task<IReadOnlyList<CorrectionHour>> HoursAsync(int lineId, DateTimeOffset from, DateTimeOffset to, CancellationToken stop)
+    {
+        await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
+        await using var command = new NpgsqlCommand(
+            """
+            SELECT h.hour, signal, n, difference FROM balance_hour h
+            JOIN line_day d ON d.line_id = h.line_id AND d.day = (h.hour AT TIME ZONE 'UTC')::date AND d.shown_revision = h.revision_id
+            WHERE h.line_id = $1 AND h.hour >= $2 AND h.hour < $3 ORDER BY h.hour
+            """, connection) { Parameters = { new() { Value = lineId }, new() { Value = from.UtcDateTime }, new() { Value = to.UtcDateTime } } };
+        await using NpgsqlDataReader reader = await command.ExecuteReaderAsync(stop);
+        var hours = new List<CorrectionHour>();
+        while (await reader.ReadAsync(stop))
+        {
+            hours.Add(new CorrectionHour(
+                Instant.ToMilliseconds(reader.GetDateTime(0)), reader.GetFieldValue<string[]>(1), [.. reader.GetFieldValue<short[]>(2).Select(count => (int)count)],
+                BalanceRow.Long(reader.GetFieldValue<float[]>(3))));
+        }
+
+        return hours;
+    }
+
     private static async Task<List<Row>> ReadAsync(NpgsqlCommand command, CancellationToken stop)
     {
         await using NpgsqlDataReader reader = await command.ExecuteReaderAsync(stop);

@@ -14,6 +14,24 @@ internal static class BalanceWriter
         Dictionary<BalanceLayout, long> layouts = windows.Select(window => window.Balance?.Layout).OfType<BalanceLayout>().Distinct().ToDictionary(layout => layout, BalanceRow.KeyOf);
         foreach ((BalanceLayout layout, long key) in layouts) await WriteLayoutAsync(connection, lineId, revisionId, layout, key);
         if (layouts.Count > 0) WriteWindows(connection, lineId, revisionId, windows, layouts);
+        WriteHours(connection, lineId, revisionId, windows);
+    }
+
+    private static void WriteHours(NpgsqlConnection connection, int lineId, int revisionId, IReadOnlyList<LineWindow> windows)
+    {
+        using NpgsqlBinaryImporter copy = connection.BeginBinaryImport("COPY balance_hour (line_id, hour, revision_id, signal, n, difference) FROM STDIN (FORMAT BINARY)");
+        foreach (CorrectionHour hour in CorrectionHour.Summarise(windows))
+        {
+            copy.StartRow();
+            copy.Write(lineId, NpgsqlDbType.Integer);
+            copy.Write(Instant.FromMilliseconds(hour.Hour), NpgsqlDbType.TimestampTz);
+            copy.Write(revisionId, NpgsqlDbType.Integer);
+            copy.Write(hour.Signals.ToArray(), NpgsqlDbType.Array | NpgsqlDbType.Text);
+            copy.Write(hour.Count.Select(count => (short)count).ToArray(), NpgsqlDbType.Array | NpgsqlDbType.Smallint);
+            copy.Write(BalanceRow.Short([.. hour.Difference]), NpgsqlDbType.Array | NpgsqlDbType.Real);
+        }
+
+        copy.Complete();
     }
 
     private static Task<int> WriteLayoutAsync(NpgsqlConnection connection, int lineId, int revisionId, BalanceLayout layout, long key) => connection.ExecuteAsync(

@@ -13,7 +13,8 @@ namespace EvapMonitor.Service.Store;
 /// <param name="From">Start of the first hour that is replaced; everything of the day from here on is.</param>
 /// <param name="Windows">The windows, whole hours but for the last.</param>
 /// <param name="Again">From when the day must be evaluated once more though nothing new comes: values still held at the end of the last window; null when done.</param>
-public sealed record DayResult(LinePlace Line, DateOnly Day, DateTimeOffset From, IReadOnlyList<LineWindow> Windows, DateTimeOffset? Again);
+/// <param name="Step">Length of a window.</param>
+public sealed record DayResult(LinePlace Line, DateOnly Day, DateTimeOffset From, IReadOnlyList<LineWindow> Windows, DateTimeOffset? Again, TimeSpan Step);
 
 /// <summary>Writes the results of a day: windows, balances, hours and the day's mark in one transaction, so that a killed run never shows half of them.</summary>
 public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
@@ -33,12 +34,14 @@ public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
             DELETE FROM effect_window WHERE line_id = @line AND at >= @from AND at < @to AND revision_id = @revision;
             DELETE FROM line_window WHERE line_id = @line AND at >= @from AND at < @to AND revision_id = @revision;
             DELETE FROM balance_window WHERE line_id = @line AND at >= @from AND at < @to AND revision_id = @revision;
-            DELETE FROM effect_hour WHERE line_id = @line AND hour >= @from AND hour < @to AND revision_id = @revision
+            DELETE FROM effect_hour WHERE line_id = @line AND hour >= @from AND hour < @to AND revision_id = @revision;
+            DELETE FROM balance_hour WHERE line_id = @line AND hour >= @from AND hour < @to AND revision_id = @revision
             """,
             new { line, from, to, revision = revisionId });
         WriteLine(connection, line, revisionId, result.Windows);
         WriteWindows(connection, result.Line, revisionId, result.Windows);
         WriteHours(connection, result.Line, revisionId, result.Windows);
+        StretchWriter.Write(connection, result, revisionId);
         await BalanceWriter.WriteAsync(connection, line, revisionId, result.Windows);
         await connection.ExecuteAsync(
             """
@@ -77,7 +80,8 @@ public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
             """
             COPY effect_window (line_id, effect_id, at, revision_id, model, state, heating_temperature_k, heating_temperature_u, boiling_temperature_k,
                 boiling_temperature_u, elevation_k, elevation_u, driving_force_k, driving_force_u, duty_w, duty_u, coefficient_w_m2k, coefficient_systematic,
-                coefficient_random, solids, heating_from, boiling_from, duty_from, extrapolated, reason, steady) FROM STDIN (FORMAT BINARY)
+                coefficient_random, solids, heating_from, boiling_from, duty_from, extrapolated, reason, steady,
+                head_corrected_driving_force_k, head_corrected_driving_force_u) FROM STDIN (FORMAT BINARY)
             """);
         foreach (LineWindow window in windows)
         {
@@ -114,6 +118,8 @@ public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
         else copy.Write(window.Reason, NpgsqlDbType.Text);
         if (window.Steady is { } steady) copy.Write(steady, NpgsqlDbType.Boolean);
         else copy.WriteNull();
+        WriteNumber(copy, window.HeadCorrectedDrivingForce.Value);
+        WriteNumber(copy, window.HeadCorrectedDrivingForce.Standard);
     }
 
     private static void WriteHours(NpgsqlConnection connection, LinePlace line, int revisionId, IReadOnlyList<LineWindow> windows)

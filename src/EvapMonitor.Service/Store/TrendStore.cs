@@ -16,7 +16,7 @@ public sealed class TrendStore(NpgsqlDataSource database)
             """
             SELECT w.at, w.state, heating_temperature_k, heating_temperature_u, boiling_temperature_k, boiling_temperature_u, elevation_k, elevation_u,
                 driving_force_k, driving_force_u, duty_w, duty_u, coefficient_w_m2k, coefficient_systematic, coefficient_random, solids,
-                heating_from, boiling_from, duty_from, extrapolated, reason, steady
+                heating_from, boiling_from, duty_from, extrapolated, reason, steady, head_corrected_driving_force_k, head_corrected_driving_force_u
             FROM effect_window w JOIN line_day d ON d.line_id = w.line_id AND d.day = (w.at AT TIME ZONE 'UTC')::date AND d.shown_revision = w.revision_id
             WHERE w.line_id = $1 AND w.effect_id = $2 AND w.at >= $3 AND w.at < $4 ORDER BY w.at
             """, connection);
@@ -119,6 +119,7 @@ public sealed class TrendStore(NpgsqlDataSource database)
             Extrapolated = reader.GetBoolean(19),
             Reason = reader.IsDBNull(20) ? null : reader.GetString(20),
             Steady = reader.IsDBNull(21) ? null : reader.GetBoolean(21),
+            HeadCorrectedDrivingForce = Whole(22),
         };
     }
 }

@@ -21,7 +21,7 @@ public class StoredLiquorTests
         // 40 t over 4 m: 10 t a metre. Five readings of 0.2 mm in 5 min tell a slope to 0.2 mm/(√5·85 s), which is 0.011 kg/s; and 5 % of what is stored.
         BalanceWindow balance = Evaluate(kilogramsPerSecond, 0.0002, (0, 4), without: "X2").Balance!;
         double stored = Flow(balance, "E1 to T") - Flow(balance, "T to E2");
-        double within = 3 * double.Hypot(0.011, Tank.MassPerLevelStandard * kilogramsPerSecond);
+        double within = 3 * double.Hypot(0.011, HoldUp.MassPerLevelStandard * kilogramsPerSecond);
         Assert.InRange(stored, kilogramsPerSecond - within, kilogramsPerSecond + within);
     }
 
@@ -62,6 +62,6 @@ public class StoredLiquorTests
         }
 
         long from = Milliseconds.Day + (90 * Milliseconds.Minute);
-        return new LineEvaluation(site, line).Evaluate(readings, from, from + Window, Enumerable.Empty<int>().ToLookup(_ => "", _ => (0L, 0L))).Single();
+        return new LineEvaluation(site, line).Evaluate(readings, from, from + Window, LineLog.Empty).Single();
     }
 }

@@ -58,7 +58,7 @@ internal static class TestLine
             return series;
         });
         long from = Milliseconds.Day + (90 * Milliseconds.Minute);
-        return new LineEvaluation(site, line).Evaluate(readings, from, from + (5 * Milliseconds.Minute), Enumerable.Empty<int>().ToLookup(_ => "", _ => (0L, 0L))).Single();
+        return new LineEvaluation(site, line).Evaluate(readings, from, from + (5 * Milliseconds.Minute), LineLog.Empty).Single();
     }
 
     public static Liquor Liquor { get; } = CustomLiquor.Create("it", new SolidsPolynomial([0, 0.05]), new SolidsPolynomial([4180, -20]), new SolidsPolynomial([998]));

@@ -13,7 +13,6 @@ public sealed class DemoTests
 {
     private static readonly DateTimeOffset Start = new(2026, 3, 2, 0, 0, 0, TimeSpan.Zero);
 
-    private static readonly ILookup<string, (long, long)> NoCleanings = Array.Empty<string>().ToLookup(name => name, _ => (0L, 0L));
 
     private static Site Plant { get; } = PlantFileReader.Read(DemoPlant.PlantFile(Start)).Site!;
 
@@ -50,7 +49,7 @@ public sealed class DemoTests
             }
         }
 
-        return evaluation.Evaluate(series, from.ToUnixTimeMilliseconds(), to.ToUnixTimeMilliseconds(), NoCleanings);
+        return evaluation.Evaluate(series, from.ToUnixTimeMilliseconds(), to.ToUnixTimeMilliseconds(), LineLog.Empty);
     }
 
     [Fact]

@@ -63,8 +63,10 @@ public sealed record SignalsWire(DateTimeOffset AsOf, IReadOnlyList<SignalWire> 
 /// <param name="Rejected">Readings left out in that time, by reason.</param>
 /// <param name="Readings">Sound readings in that time.</param>
 /// <param name="Fit">What the last balance of its line says of it; null when there is none.</param>
+/// <param name="Changed">How it has changed against the others over the last weeks; null when it has not, or it cannot be told.</param>
 public sealed record SignalWire(
-    string Name, string Line, string Unit, DateTimeOffset? LatestAt, double? LatestValue, string? LatestQuality, double? GoodShare, RejectedWire Rejected, long Readings, FitWire? Fit);
+    string Name, string Line, string Unit, DateTimeOffset? LatestAt, double? LatestValue, string? LatestQuality, double? GoodShare, RejectedWire Rejected, long Readings, FitWire? Fit,
+    ChangeWire? Changed);
 
 /// <summary>Readings left out, by reason.</summary>
 /// <param name="Bad">Bad by the source.</param>

@@ -69,6 +69,8 @@ public sealed record EffectWire(
 /// <param name="ElevationK">Boiling-point elevation, K.</param>
 /// <param name="DrivingForceK">Driving force, K.</param>
 /// <param name="DrivingForceU">Its standard uncertainty.</param>
+/// <param name="HeadCorrectedDrivingForceK">Driving force with boiling at half the liquor's height, K; null without a level.</param>
+/// <param name="HeadCorrectedDrivingForceU">Its standard uncertainty.</param>
 /// <param name="DutyKw">Duty, kW.</param>
 /// <param name="DutyU">Its standard uncertainty.</param>
 /// <param name="HeatFluxKwM2">Duty by surface, kW/m².</param>
@@ -92,6 +94,8 @@ public sealed record EffectNowWire(
     double? ElevationK,
     double? DrivingForceK,
     double? DrivingForceU,
+    double? HeadCorrectedDrivingForceK,
+    double? HeadCorrectedDrivingForceU,
     double? DutyKw,
     double? DutyU,
     [property: JsonPropertyName("heat_flux_kw_m2")] double? HeatFluxKwM2,

@@ -1,0 +1,22 @@
+using EvapMonitor.Core;
+using EvapMonitor.Service.Store;
+
+namespace EvapMonitor.Service.Evaluation;
+
+/// <summary>Gathers what people have logged of a line and its instruments.</summary>
+public sealed class LineLogs(CleaningStore cleanings, InstrumentLogStore instruments)
+{
+    /// <summary>What stands in the log for a line.</summary>
+    public async Task<LineLog> OfAsync(PlantInForce plant, LinePlace line, CancellationToken stop)
+    {
+        var effects = line.EffectIds.Zip(line.Line.Effects, (id, effect) => (id, effect.Name)).ToDictionary(pair => pair.id, pair => pair.Name);
+        var signals = plant.Signals.Where(signal => signal.Value.Users.Contains(line.LineId)).ToDictionary(signal => signal.Value.SignalId, signal => signal.Key);
+        IReadOnlyList<InstrumentEvent> logged = await instruments.ListAsync(signals.Values.Select(name => plant.Signals[name]), stop);
+        return new LineLog(
+            (await cleanings.ListAsync(line.LineId, null, stop)).Where(cleaning => effects.ContainsKey(cleaning.EffectId))
+                .ToLookup(cleaning => effects[cleaning.EffectId], cleaning => Interval(cleaning.Start, cleaning.End)),
+            logged.Where(one => one.Kind == InstrumentLogStore.Excluded).ToLookup(one => signals[one.SignalId], one => Interval(one.Start, one.End)));
+    }
+
+    private static (long Start, long End) Interval(DateTimeOffset start, DateTimeOffset? end) => (start.ToUnixTimeMilliseconds(), end?.ToUnixTimeMilliseconds() ?? long.MaxValue);
+}
