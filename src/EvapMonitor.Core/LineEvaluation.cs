@@ -136,7 +136,7 @@ public sealed partial class LineEvaluation
 
         for (int i = 0; i < inputs.Heights.Length; i++)
         {
-            if (_instruments.Effects[i].Level is >= 0 and var level) inputs.Heights[i] = new Measured(inputs.Value[level], systematic[level], random[level]);
+            if (_instruments.Effects[i].Level is >= 0 and var level) inputs.Heights[i] = (inputs.Value[level], systematic[level], random[level]);
         }
 
         // Of a level that tells what is stored the balance wants to know how fast it rises; a constant error of the level is none of its rate.

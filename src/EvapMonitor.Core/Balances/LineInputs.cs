@@ -1,4 +1,4 @@
-using EvapMonitor.Core.Coefficients;
+using EvapMonitor.Core.Plant;
 
 namespace EvapMonitor.Core.Balances;
 
@@ -8,8 +8,8 @@ internal sealed class LineInputs(LineInstruments instruments)
     /// <summary>Window means by place, SI units, pressures absolute; of a level that tells what is stored, the rate, m/s. NaN is absent.</summary>
     public double[] Value { get; } = new double[instruments.All.Count];
 
-    /// <summary>By effect: height of its liquor, m.</summary>
-    public Measured[] Heights { get; } = [.. Enumerable.Repeat(Measured.Absent, instruments.Effects.Count)];
+    /// <summary>By effect: height of its liquor, m, with the two parts of its standard uncertainty; NaN is absent.</summary>
+    public (double Value, double Systematic, double Random)[] Heights { get; } = [.. Enumerable.Repeat((double.NaN, double.NaN, double.NaN), instruments.Effects.Count)];
 
     /// <summary>A place's value; NaN when the place is absent.</summary>
     public double At(int place) => place < 0 ? double.NaN : Value[place];

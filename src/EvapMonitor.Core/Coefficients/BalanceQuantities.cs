@@ -48,7 +48,7 @@ internal sealed class BalanceQuantities(Reconciliation balance)
     /// <param name="its">Variables of the effect.</param>
     /// <param name="height">Its level, m: no part of the balance, so that its error is independent of it.</param>
     /// <param name="liquor">What boils.</param>
-    public Measured HeadCorrectedDifference(in EffectVariables its, Measured height, Liquor liquor)
+    public Measured HeadCorrectedDifference(in EffectVariables its, (double Value, double Systematic, double Random) height, Liquor liquor)
     {
         if (!(height.Value >= 0) || !balance.IsObservable(its.Heating) || !balance.IsObservable(its.Boiling) || !balance.IsObservable(its.VapourPressure)) return Measured.Absent;
         // Without solids the liquor counts as water: density enters the small term only.

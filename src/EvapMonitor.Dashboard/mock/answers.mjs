@@ -26,7 +26,7 @@ export function effectOf(line, e) {
     name: e.name, line: line.name, area_m2: e.area, clean_coefficient_w_m2k: e.clean,
     now: {
       at: iso(Math.floor((t - 3_600_000) / 3_600_000) * 3_600_000), hours: 1, coefficient_w_m2k: coefficient, coefficient_u: coefficient && s.u, coefficient_u_random: coefficient && s.u / 4,
-      heating_temperature_c: e.unknown ? null : e.Ts, boiling_temperature_c: e.Ts - e.force - e.elevation, elevation_k: e.elevation, driving_force_k: e.unknown ? null : e.force, driving_force_u: e.unknown ? null : 0.4,
+      heating_temperature_c: e.unknown ? null : e.Ts, boiling_temperature_c: e.Ts - e.force - e.elevation, elevation_k: e.elevation, driving_force_k: e.unknown ? null : e.force, driving_force_u: e.unknown ? null : 0.4, head_corrected_driving_force_k: null, head_corrected_driving_force_u: null,
       duty_kw: e.duty, duty_u: e.duty * 0.018, heat_flux_kw_m2: e.duty / e.area, cleanliness: coefficient && coefficient / clean, cleanliness_u: coefficient && 0.02,
       fouling_resistance_m2k_w: r, fouling_resistance_u: r === null ? null : 0.02 / clean * 1.1,
       clean_from: 'design value', duty_from: 'condensate', heating_temperature_from: 'chest pressure', boiling_temperature_from: 'vapour pressure and elevation', reason: s.reason,

@@ -3,7 +3,7 @@ import { start } from './plant.mjs';
 const iso = t => new Date(t).toISOString();
 const none = { bad: 0, not_a_number: 0, out_of_range: 0, frozen: 0 };
 const fits = { state: 'fits', words: 'fits the others', since: null, wanted: 0.004, unit: 'bar', wanted_in_standards: 0.4, one_of: [] };
-const sound = (name, line, unit, at, value) => ({ name, line, unit, latest_at: at, latest_value: value, latest_quality: 'good', good_share: 0.9986, rejected: none, readings: 17_280, fit: line === null ? null : { ...fits, as_of: at } });
+const sound = (name, line, unit, at, value) => ({ name, line, unit, latest_at: at, latest_value: value, latest_quality: 'good', good_share: 0.9986, rejected: none, readings: 17_280, changed: null, fit: line === null ? null : { ...fits, as_of: at } });
 
 /** Signals as the interface answers them: most sound, and each way to be unsound once. */
 export function signals(plant, now) {

@@ -1,6 +1,7 @@
 using System.Collections.Concurrent;
 using System.Globalization;
 using EvapMonitor.Core.Balances;
+using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Plant;
 using EvapMonitor.Core.Readings;
 using EvapMonitor.Service.Api.Wire;

@@ -69,7 +69,7 @@ internal static class BalanceWords
         string checks = balance.Degrees == 1 ? "1 independent check" : $"{balance.Degrees} independent checks";
         // The sum over all is blunt: an instrument's own test may find what it does not.
         string verdict = balance.ChiSquare > balance.ChiSquareLimit ? "The readings do not fit together"
-            : balance.Suspects.Count > 0 ? "Taken all together the readings show nothing unusual, but not one by one" : "The readings fit together";
+            : balance.Suspects.Any(set => !set.Any(balance.LeftOut.Contains)) ? "Taken all together the readings show nothing unusual, but not one by one" : "The readings fit together";
         return string.Create(CultureInfo.InvariantCulture,
             $"{verdict}: chi-square {balance.ChiSquare:0.0} from {checks}; as good as the plant file says, they exceed {balance.ChiSquareLimit:0.0} once in a hundred windows.");
     }

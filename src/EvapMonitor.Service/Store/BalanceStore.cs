@@ -1,5 +1,6 @@
 using System.Collections.Concurrent;
 using EvapMonitor.Core.Balances;
+using EvapMonitor.Core.Coefficients;
 using Npgsql;
 
 namespace EvapMonitor.Service.Store;

@@ -25,6 +25,20 @@ public class StoredLiquorTests
         Assert.InRange(stored, kilogramsPerSecond - within, kilogramsPerSecond + within);
     }
 
+    [Theory]
+    [InlineData(0)]
+    [InlineData(0.4)]
+    public void RisingLevelOfAnEffect_IsLiquorThatItKeeps(double kilogramsPerSecond)
+    {
+        LineWindow window = Evaluate(kilogramsPerSecond, 0.0002, (0, 4), without: "X2", inEffect: true);
+        BalanceWindow balance = window.Balance!;
+        double kept = Flow(balance, "feed to E1") - Flow(balance, "E1 to E2") - Value(balance, VariableKind.VapourFlow, "E1");
+        double within = 3 * double.Hypot(0.011, HoldUp.MassPerLevelStandard * kilogramsPerSecond);
+        Assert.InRange(kept, kilogramsPerSecond - within, kilogramsPerSecond + within);
+        // The height, not its rate, corrects the driving force: about 2 m of liquor.
+        Assert.InRange(window.Effects[0].DrivingForce.Value - window.Effects[0].HeadCorrectedDrivingForce.Value, 1, 6);
+    }
+
     [Fact]
     public void LevelWithoutARange_LeavesUnknownWhatGoesOn() => Assert.True(double.IsNaN(Flow(Evaluate(0.5, 0.0002, null, without: "X2").Balance!, "T to E2")));
 
@@ -36,15 +50,18 @@ public class StoredLiquorTests
         Assert.True(filling < still - 1e4, $"{filling} W against {still} W");
     }
 
-    private static double Flow(BalanceWindow balance, string way) =>
-        balance.Reconciled[balance.Layout.Variables.ToList().FindIndex(key => key == new VariableKey(VariableKind.LiquorFlow, way))];
+    private static double Flow(BalanceWindow balance, string way) => Value(balance, VariableKind.LiquorFlow, way);
 
-    private static LineWindow Evaluate(double kilogramsPerSecond, double scatter, (double, double)? range, string without = "")
+    private static double Value(BalanceWindow balance, VariableKind kind, string place) =>
+        balance.Reconciled[balance.Layout.Variables.ToList().FindIndex(key => key == new VariableKey(kind, place))];
+
+    private static LineWindow Evaluate(double kilogramsPerSecond, double scatter, (double, double)? range, string without = "", bool inEffect = false)
     {
         Line plain = TestLine.Line();
-        Line line = plain with
+        Instrument level = TestLine.Instrument("LT", Metre) with { Range = range };
+        Line line = inEffect ? plain with { Effects = [plain.Effects[0] with { Level = level, HoldUp = 40_000 }, plain.Effects[1] with { Chest = new Chest() }] } : plain with
         {
-            Tanks = [new Tank("T", "E1", 40_000, TestLine.Instrument("LT", Metre) with { Range = range })],
+            Tanks = [new Tank("T", "E1", 40_000, level)],
             Effects = [plain.Effects[0], plain.Effects[1] with { Liquor = [new LiquorSource("T")], Chest = new Chest() }],
         };
         var site = new Site { Name = "site", TimeZone = "UTC", Atmosphere = new(101_325, null), HistoryFrom = DateTimeOffset.UnixEpoch, Lines = [line] };

@@ -70,12 +70,12 @@ public sealed class CommandTests : IDisposable
     public async Task Evaluate_TellsEveryMistakeOfTheEvents()
     {
         string plant = Put("plant.yaml", SmallPlant.Text), readings = Put("april.csv", "time,FT-1\n2026-04-01T10:00:00Z,60\n");
-        string events = Put("events.csv", "time,end,line,effect,signal,kind,note\n2026-04-01T11:00:00Z,,one,,FT-9,instrument-excluded,\n2026-04-01T11:00:00Z,,one,,,instrument-excluded,\n2026-04-01T11:00:00Z,,one,,FT-1,recalibration,\n");
+        string events = Put("events.csv", "time,end,line,effect,signal,kind,note\n2026-04-01T11:00:00Z,,one,,FT-9,instrument-excluded,\n2026-04-01T11:00:00Z,,one,,,instrument-excluded,\n2026-04-01T11:00:00Z,,one,,FT-1,repair,\n");
         (int exit, _, string error) = await ChildService.CommandAsync("evaluate", plant, readings, "--out", Path.Combine(_folder, "out"), "--events", events);
         Assert.Equal(1, exit);
         Assert.Equal(
-            ["events.csv:2: line one has no instrument with the signal 'FT-9'", "events.csv:3: an excluded instrument needs its signal",
-                "events.csv:4: kind 'recalibration' is not supported yet; allowed: cleaning, instrument-excluded"],
+            ["events.csv:2: line one has no instrument with the signal 'FT-9'", "events.csv:3: instrument-excluded needs the signal of its instrument",
+                "events.csv:4: kind 'repair' is not known; allowed: cleaning, rejected-cleaning, instrument-excluded, recalibration"],
             error.Split('\n', StringSplitOptions.RemoveEmptyEntries));
     }
 

@@ -27,6 +27,8 @@ export const addresses = {
     return `${base}/cleanings${filter && `?${filter}`}`;
   },
   cleaning: (id: string) => `${base}/cleanings/${part(id)}`,
+  instrumentLog: (signal?: string) => `${base}/instrument-log${signal === undefined ? '' : `?signal=${part(signal)}`}`,
+  instrumentEvent: (id: string) => `${base}/instrument-log/${part(id)}`,
   upload: (name: string) => `${base}/imports?name=${part(name)}`,
   cancelImport: (id: string) => `${base}/imports/${part(id)}/cancel`,
 };

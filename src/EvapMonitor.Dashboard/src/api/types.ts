@@ -67,6 +67,9 @@ export interface HourResult {
   elevation_k: number | null;
   driving_force_k: number | null;
   driving_force_u: number | null;
+  /** With boiling at half the liquor's height; null without a level. */
+  head_corrected_driving_force_k: number | null;
+  head_corrected_driving_force_u: number | null;
   duty_kw: number | null;
   duty_u: number | null;
   heat_flux_kw_m2: number | null;
@@ -284,7 +287,21 @@ export interface SignalRow {
   readings: number;
   /** What the last balance of its line says of it; null when there is none. */
   fit: Fit | null;
+  /** How it has changed against the others over the last weeks; null when it has not, or it cannot be told. */
+  changed: { since: Instant; change: number; unit: string; words: string } | null;
 }
+
+/** What was logged of an instrument. */
+export interface InstrumentEvent {
+  id: string;
+  signal: string;
+  kind: InstrumentEventKind;
+  start: Instant;
+  end: Instant | null;
+  note: string;
+  logged_at: Instant;
+}
+export type InstrumentEventKind = 'instrument-excluded' | 'recalibration';
 
 /** Readings that were not used, by what was wrong with them. */
 export interface Rejected {

@@ -7,6 +7,7 @@ import { prettyUnit } from '../words/quantity';
 import { ageWords, attentionFirst, rejectedWords, shareWords, signalsWords, troubleOf } from '../words/signal';
 import { moment } from '../words/time';
 import { CorrectionChart } from './CorrectionChart';
+import { InstrumentLog } from './InstrumentLog';
 import '../styles/balance.css';
 
 /** The signals of a line; in the plant file's order, or with what asks for attention first. */
@@ -41,9 +42,9 @@ function Row({ signal: s, now }: { signal: SignalRow; now: number }) {
       <td data-name="age" title={s.latest_at === null ? undefined : moment(Date.parse(s.latest_at), zone.value, now)}>{strong(ageWords(s, now), trouble === 'silent' || trouble === 'never read')}</td>
       <td class="number" data-name="good, last 24 h">{strong(shareWords(s.good_share), trouble === 'often unsound')}</td>
       <td data-name="rejected, last 24 h" class="rejected">{rejected === '' ? <span class="quiet">none</span> : rejected}</td>
-      <td class="fit">{strong(fitWords(s.fit, zone.value, now), misfit(s.fit))}
-        {s.fit !== null && <> <button type="button" class="plain" aria-expanded={open} onClick={() => setOpen(!open)}>30 days<span class="unseen"> of {s.name}</span></button></>}</td>
+      <td class="fit">{strong(fitWords(s.fit, zone.value, now), misfit(s.fit))}{s.changed && <>; <b>{s.changed.words}</b>, since {moment(Date.parse(s.changed.since), zone.value, now)}</>}
+        {s.fit !== null && <> <button type="button" class="plain" aria-expanded={open} onClick={() => setOpen(!open)}>30 days, log<span class="unseen"> of {s.name}</span></button></>}</td>
     </tr>
-    {open && <tr class="more"><td colSpan={8}><CorrectionChart signal={s.name} /></td></tr>}</>
+    {open && <tr class="more"><td colSpan={8}><CorrectionChart signal={s.name} /><InstrumentLog signal={s.name} now={now} /></td></tr>}</>
   );
 }

@@ -10,6 +10,9 @@ const rows = (n: HourResult): Row[] => [
   { name: 'cleanliness', value: n.cleanliness, u: n.cleanliness_u, unit: '%', factor: 100, from: n.clean_from && `against the ${n.clean_from}` },
   { name: 'fouling resistance', value: n.fouling_resistance_m2k_w, u: n.fouling_resistance_u, unit: 'm²·K/kW', factor: 1000 },
   { name: 'driving force', value: n.driving_force_k, u: n.driving_force_u, unit: 'K' },
+  ...(n.head_corrected_driving_force_k === null ? [] : [{
+    name: 'driving force at half the liquor’s height', value: n.head_corrected_driving_force_k, u: n.head_corrected_driving_force_u, unit: 'K',
+  }]),
   { name: 'duty', value: n.duty_kw, u: n.duty_u, unit: 'kW', from: n.duty_from },
   { name: 'heat flux', value: n.heat_flux_kw_m2, u: null, unit: 'kW/m²', decimals: 1 },
   { name: 'heating temperature', value: n.heating_temperature_c, u: null, unit: '°C', decimals: 1, from: n.heating_temperature_from },

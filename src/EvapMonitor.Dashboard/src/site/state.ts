@@ -19,6 +19,8 @@ export const zone = computed(() => usableZone(site.state.value.value?.time_zone)
 export const resultsChanged = signal<Readonly<Record<string, number>>>({});
 /** Grows when cleanings were logged or taken back. */
 export const cleaningsChanged = signal(0);
+/** Grows when something was logged of an instrument, or taken back. */
+export const instrumentsChanged = signal(0);
 /** Grows when events were missed for good: everything shown is to be fetched anew. */
 export const eventsMissed = signal(0);
 
@@ -53,6 +55,7 @@ export function startState(): () => void {
     for (const line of lines.state.peek().value?.lines ?? []) changedLines.add(line.name);
     publish();
     cleaningsChanged.value++;
+    instrumentsChanged.value++;
     eventsMissed.value++;
   };
   all();
@@ -66,6 +69,7 @@ export function startState(): () => void {
     site: data => site.put(data as Site),
     windows: data => { changedLines.add((data as { line: string }).line); publish(); },
     import: data => mergeImport(data as Import),
+    instruments: () => { instrumentsChanged.value++; },
     cleanings: () => { cleaningsChanged.value++; void lines.load(); },
   }, everything);
   return () => { forget(); clearInterval(regular); close(); };

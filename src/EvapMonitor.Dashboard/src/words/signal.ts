@@ -10,14 +10,15 @@ const silentAfter = 15 * 60_000;
 const leastGoodShare = 0.9;
 
 /** What is wrong with a signal, the gravest first; null when nothing asks for attention. */
-export type Trouble = 'never read' | 'silent' | 'bad now' | 'does not fit' | 'often unsound' | null;
-const gravity: Trouble[] = ['silent', 'never read', 'bad now', 'does not fit', 'often unsound', null];
+export type Trouble = 'never read' | 'silent' | 'bad now' | 'does not fit' | 'changed' | 'often unsound' | null;
+const gravity: Trouble[] = ['silent', 'never read', 'bad now', 'does not fit', 'changed', 'often unsound', null];
 
 export function troubleOf(s: SignalRow, now: number): Trouble {
   if (s.latest_at === null) return 'never read';
   if (now - Date.parse(s.latest_at) > silentAfter) return 'silent';
   if (s.latest_quality === 'bad') return 'bad now';
   if (misfit(s.fit)) return 'does not fit';
+  if (s.changed) return 'changed';
   return s.good_share !== null && s.good_share < leastGoodShare ? 'often unsound' : null;
 }
 
@@ -60,7 +61,7 @@ export function attentionFirst(signals: readonly SignalRow[], now: number): Sign
 /** The state of a line's signals in a sentence. */
 export function signalsWords(signals: readonly SignalRow[], now: number): { head: string; bold: string } {
   const of = (...kinds: Trouble[]) => signals.filter(s => kinds.includes(troubleOf(s, now))).length;
-  const parts = [[of('silent', 'never read'), 'without a reading in the last 15 min'], [of('bad now'), 'bad now'], [of('does not fit'), 'not fitting the others'], [of('often unsound'), 'sound for less than 90 % of the last 24 h']] as const;
+  const parts = [[of('silent', 'never read'), 'without a reading in the last 15 min'], [of('bad now'), 'bad now'], [of('does not fit'), 'not fitting the others'], [of('changed'), 'changed against the others'], [of('often unsound'), 'sound for less than 90 % of the last 24 h']] as const;
   const bold = parts.filter(([n]) => n > 0).map(([n, what]) => `${n} ${what}`).join(', ');
   const head = `${signals.length} ${signals.length === 1 ? 'signal' : 'signals'}`;
   return { head: bold === '' ? `${head}, ${signals.length === 1 ? '' : 'every one '}with a sound reading in the last 15 min.` : `${head}: `, bold };

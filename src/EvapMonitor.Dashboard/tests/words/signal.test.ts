@@ -5,7 +5,7 @@ import { now } from './sample';
 
 const none = { bad: 0, not_a_number: 0, out_of_range: 0, frozen: 0 };
 const signal = (name: string, part: Partial<SignalRow> = {}): SignalRow => ({
-  name, line: 'north', unit: 'bar', latest_at: '2026-11-30T13:31:57Z', latest_value: 1.2, latest_quality: 'good', good_share: 0.98, rejected: none, readings: 1440, fit: null, ...part,
+  name, line: 'north', unit: 'bar', latest_at: '2026-11-30T13:31:57Z', latest_value: 1.2, latest_quality: 'good', good_share: 0.98, rejected: none, readings: 1440, fit: null, changed: null, ...part,
 });
 const silent = signal('silent', { latest_at: '2026-11-30T10:08:00Z' });
 const never = signal('never', { latest_at: null, latest_value: null, latest_quality: null, good_share: null, readings: 0 });

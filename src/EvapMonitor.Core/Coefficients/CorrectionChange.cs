@@ -1,9 +1,9 @@
 using EvapMonitor.Core.Readings;
 
-namespace EvapMonitor.Core.Balances;
+namespace EvapMonitor.Core.Coefficients;
 
 /// <summary>An instrument that no longer agrees with the others as it used to.</summary>
-/// <param name="Since">First day of the change, ms since 1970-01-01T00:00:00Z.</param>
+/// <param name="Since">About the first day of the change, some days early where it is small, ms since 1970-01-01T00:00:00Z.</param>
 /// <param name="Change">By how much more (or less) the others now want to add than before, SI unit.</param>
 /// <param name="Scatter">Day-to-day standard deviation of that before the change, same unit.</param>
 public sealed record CorrectionChange(long Since, double Change, double Scatter)
@@ -12,7 +12,7 @@ public sealed record CorrectionChange(long Since, double Change, double Scatter)
     public const int Baseline = 30;
 
     /// <summary>Days that there must be before anything is said.</summary>
-    public const int LeastDays = 10;
+    public const int LeastDays = 15;
 
     /// <summary>Hours that make a day.</summary>
     public const int LeastHours = 4;
@@ -22,6 +22,11 @@ public sealed record CorrectionChange(long Since, double Change, double Scatter)
 
     /// <summary>Reference value of the cumulative sum, in standard deviations: half of the change that it finds soonest.</summary>
     private const double Reference = 0.5;
+
+    /// <summary>
+    /// A scatter and a median of n days are uncertain themselves, which shortens the runs between false alarms: the scatter is widened by 1 + 4/n, found by simulation.
+    /// </summary>
+    private const double FewDays = 4;
 
     /// <summary>1 % of a reading's uncertainty is the least scatter that is believed: a smaller one is rounding.</summary>
     private const double LeastScatterShare = 0.01;
@@ -47,7 +52,7 @@ public sealed record CorrectionChange(long Since, double Change, double Scatter)
         {
             double[] past = [.. days[..i].Where(day => day.Day >= days[i].Day - (Baseline * Milliseconds.Day)).Select(day => day.Median)];
             if (past.Length < LeastDays) continue;
-            double middle = Median(past), scatter = double.Max(ScatterOf(past, middle), LeastScatterShare * standard);
+            double middle = Median(past), scatter = double.Max(ScatterOf(past, middle) * (1 + (FewDays / past.Length)), LeastScatterShare * standard);
             double off = double.Clamp((days[i].Median - middle) / scatter, -MostInStandards, MostInStandards);
             if (up == 0) (upSince, upBefore, scatterBefore) = (days[i].Day, middle, scatter);
             if (down == 0) (downSince, downBefore, scatterBefore) = (days[i].Day, middle, up == 0 ? scatter : scatterBefore);

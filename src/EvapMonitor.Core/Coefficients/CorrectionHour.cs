@@ -1,7 +1,7 @@
-using EvapMonitor.Core.Coefficients;
+using EvapMonitor.Core.Balances;
 using EvapMonitor.Core.Readings;
 
-namespace EvapMonitor.Core.Balances;
+namespace EvapMonitor.Core.Coefficients;
 
 /// <summary>What the other instruments wanted to add to the readings of each over one hour of steady production.</summary>
 /// <param name="Hour">Start of the hour, ms since 1970-01-01T00:00:00Z.</param>
