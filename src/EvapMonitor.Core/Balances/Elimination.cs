@@ -19,6 +19,7 @@ internal sealed class Elimination
     private readonly int _unknowns, _width;
     private readonly int[] _entries;
     private double[] _a = [];
+    private int[]? _touched;
 
     /// <summary>Prepares a system.</summary>
     /// <param name="unknowns">How many unknowns there are.</param>
@@ -37,11 +38,15 @@ internal sealed class Elimination
     public int Rows { get; private set; }
 
     /// <summary>Clears the system for a number of rows.</summary>
-    public void Clear(int rows)
+    /// <param name="rows">How many.</param>
+    /// <param name="filled">Where the rows to come and their elimination by steps can leave entries; empty: anywhere.</param>
+    public void Clear(int rows, int[] filled)
     {
         Rows = rows;
         if (_a.Length < rows * _width) _a = new double[rows * _width];
-        _a.AsSpan(0, rows * _width).Clear();
+        if (_touched is null) _a.AsSpan().Clear();
+        else foreach (int at in _touched) _a[at] = 0;
+        _touched = filled.Length == 0 ? null : filled;
     }
 
     /// <summary>A row.</summary>
@@ -52,6 +57,7 @@ internal sealed class Elimination
     /// <returns>Row and column of each pivot, in order.</returns>
     public (int Row, int Column)[] Choose(bool[] allowed)
     {
+        _touched = null;
         var pivots = new List<(int, int)>();
         bool[] done = new bool[Rows];
         while (true)
@@ -83,8 +89,10 @@ internal sealed class Elimination
     /// <summary>Works out once where anything can be in each step of an elimination, whatever the numbers.</summary>
     /// <param name="pivots">The pivots.</param>
     /// <param name="present">By row, by column: true where an entry can be; changed here.</param>
-    public EliminationStep[] Plan((int Row, int Column)[] pivots, bool[][] present)
+    /// <param name="filled">Places in the system where an entry can ever be.</param>
+    public EliminationStep[] Plan((int Row, int Column)[] pivots, bool[][] present, out int[] filled)
     {
+        bool[][] ever = [.. present.Select(row => (bool[])row.Clone())];
         var steps = new EliminationStep[pivots.Length];
         for (int p = 0; p < pivots.Length; p++)
         {
@@ -94,12 +102,14 @@ internal sealed class Elimination
             int[] rows = [.. Enumerable.Range(0, Rows).Where(other => other != row && present[other][column])];
             foreach (int other in rows)
             {
-                foreach (int k in entries) present[other][k] = true;
+                foreach (int k in entries) present[other][k] = ever[other][k] = true;
                 present[other][column] = false;
             }
 
             steps[p] = new EliminationStep(row, column, entries, rows);
         }
+
+        filled = [.. ever.SelectMany((row, r) => Enumerable.Range(0, _width).Where(k => row[k]).Select(k => (r * _width) + k))];
 
         return steps;
     }

@@ -29,8 +29,8 @@ public class LineProperties(Liquor liquor)
     {
         double p = double.Clamp(pressure, LowestPressure, HighestPressure);
         double t = double.Clamp(temperature, double.Max(LowestTemperature, Steam.SaturationTemperature(p) - Wetness), HighestVapourTemperature);
-        double byPressure = Steam.VapourEnthalpyByPressure(p, t), byTemperature = Steam.VapourHeatCapacity(p, t);
-        return new(Steam.VapourEnthalpy(p, t) + (byPressure * (pressure - p)) + (byTemperature * (temperature - t)), byPressure, byTemperature);
+        (double value, double byPressure, double byTemperature) = Steam.VapourEnthalpyWithSlopes(p, t);
+        return new(value + (byPressure * (pressure - p)) + (byTemperature * (temperature - t)), byPressure, byTemperature);
     }
 
     /// <summary>Enthalpy of condensate, J/kg, by pressure and temperature.</summary>
@@ -38,8 +38,8 @@ public class LineProperties(Liquor liquor)
     {
         double p = double.Clamp(pressure, LowestPressure, HighestPressure);
         double t = double.Clamp(temperature, LowestTemperature, double.Min(Steam.SaturationTemperature(p) + Wetness, HighestLiquidTemperature));
-        double byPressure = Steam.LiquidEnthalpyByPressure(p, t), byTemperature = Steam.LiquidHeatCapacity(p, t);
-        return new(Steam.LiquidEnthalpy(p, t) + (byPressure * (pressure - p)) + (byTemperature * (temperature - t)), byPressure, byTemperature);
+        (double value, double byPressure, double byTemperature) = Steam.LiquidEnthalpyWithSlopes(p, t);
+        return new(value + (byPressure * (pressure - p)) + (byTemperature * (temperature - t)), byPressure, byTemperature);
     }
 
     /// <summary>Boiling-point elevation, K, by solids and the boiling temperature of water.</summary>

@@ -65,7 +65,8 @@ internal sealed partial class Reconciliation
         reading.CopyTo(_reading, 0);
         bool[][] present = Present();
         (int, int)[] pivots = _system.Choose(allowed);
-        return _plan with { Pivots = pivots, Steps = _system.Plan(pivots, present) };
+        EliminationStep[] steps = _system.Plan(pivots, present, out int[] filled);
+        return _plan with { Pivots = pivots, Steps = steps, Filled = filled };
     }
 
     /// <summary>Where the system of the plan can have entries: what an equation names, whatever its slope, and what an instrument sees, however sure it is.</summary>
@@ -135,5 +136,8 @@ internal sealed partial class Reconciliation
 
         /// <summary>What each step of it touches.</summary>
         public EliminationStep[] Steps { get; init; } = [];
+
+        /// <summary>Where it leaves entries.</summary>
+        public int[] Filled { get; init; } = [];
     }
 }

@@ -13,7 +13,7 @@ internal sealed partial class Reconciliation
     private const int MostSteps = 30, MostWaits = 8, MostPlans = 256;
 
     /// <summary>A step under this, by the variables' scales, is the last: the next would be its square.</summary>
-    private const double Converged = 1e-6;
+    private const double Converged = 1e-4;
 
     private readonly LineInstruments _instruments;
     private readonly LineEquations _equations;
@@ -152,6 +152,9 @@ internal sealed partial class Reconciliation
         if (_pivotRow[variable] >= 0) _redundancy.AddSensitivity(_pivotRow[variable], -factor * _scale[variable], sum);
     }
 
+    /// <summary>Standard uncertainty of a variable that follows from what is measured, in its own unit.</summary>
+    public double Standard(int variable) => _pivotRow[variable] >= 0 ? _scale[variable] * _redundancy.Standard(_pivotRow[variable]) : 0;
+
     /// <summary>The equations may hold at a state that no line can have: with few instruments they have more than one solution.</summary>
     private bool IsSane()
     {
@@ -244,7 +247,7 @@ internal sealed partial class Reconciliation
     private void Assemble()
     {
         _equations.Evaluate(State, _rows);
-        _system.Clear(_plan.Rows.Length + _plan.Equations.Count);
+        _system.Clear(_plan.Rows.Length + _plan.Equations.Count, _plan.Filled);
         int at = 0;
         foreach (int row in _plan.Rows)
         {

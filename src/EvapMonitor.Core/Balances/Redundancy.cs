@@ -1,4 +1,5 @@
 using System.Numerics;
+using System.Runtime.Intrinsics;
 
 namespace EvapMonitor.Core.Balances;
 
@@ -12,7 +13,7 @@ internal sealed class Redundancy
     private readonly int _unknowns, _columns;
     private readonly double[] _correction, _systematicShare, _randomShare;
     private readonly List<int> _rows = [];
-    private double[] _factor = [], _weighed = [], _right = [];
+    private double[] _factor = [], _white = [], _right = [];
 
     /// <summary>Prepares it.</summary>
     /// <param name="system">The system from which the unknowns are eliminated.</param>
@@ -44,15 +45,15 @@ internal sealed class Redundancy
     public double Spread(int column)
     {
         double sum = 0;
-        for (int k = 0; k < _rows.Count; k++) sum += Entry(k, column) * _weighed[(k * _columns) + column];
-        return double.Sqrt(double.Max(0, sum));
+        for (int k = 0; k < _rows.Count; k++) sum += _white[(k * _columns) + column] * _white[(k * _columns) + column];
+        return double.Sqrt(sum);
     }
 
     /// <summary>Correlation of the corrections of two readings: at ±1 nothing can tell which of the two is wrong.</summary>
     public double Correlation(int column, int other)
     {
         double sum = 0, both = Spread(column) * Spread(other);
-        for (int k = 0; k < _rows.Count; k++) sum += Entry(k, column) * _weighed[(k * _columns) + other];
+        for (int k = 0; k < _rows.Count; k++) sum += _white[(k * _columns) + column] * _white[(k * _columns) + other];
         return both > 0 ? sum / both : 0;
     }
 
@@ -63,7 +64,7 @@ internal sealed class Redundancy
         int n = _rows.Count;
         if (_factor.Length < n * n) _factor = new double[n * n];
         if (_right.Length < n) _right = new double[n];
-        if (_weighed.Length < n * _columns) _weighed = new double[n * _columns];
+        if (_white.Length < n * _columns) _white = new double[n * _columns];
         for (int i = 0; i < n; i++)
         {
             ReadOnlySpan<double> one = Bound(i);
@@ -81,14 +82,20 @@ internal sealed class Redundancy
     /// <summary>Prepares uncertainties and tests; to be called once, after the last step of a solution.</summary>
     public void Weigh()
     {
+        // L⁻¹B, L the Cholesky factor of B·Bᵀ: its rows bind the measured quantities as B's do, and are at right angles and of length 1.
         int n = _rows.Count;
-        // Rows of S⁻¹B, column by column.
-        Span<double> column = stackalloc double[n];
-        for (int c = 0; c < _columns; c++)
+        for (int k = 0; k < n; k++)
         {
-            for (int k = 0; k < n; k++) column[k] = Entry(k, c);
-            if (column.ContainsAnyExcept(0)) Solve(column, n);
-            for (int k = 0; k < n; k++) _weighed[(k * _columns) + c] = column[k];
+            Span<double> white = _white.AsSpan(k * _columns, _columns);
+            double pivot = _factor[(k * n) + k];
+            white.Clear();
+            if (pivot == 0) continue;
+            AddTo(white, Bound(k), 1 / pivot);
+            for (int j = 0; j < k; j++)
+            {
+                double factor = _factor[(k * n) + j];
+                if (factor != 0) AddTo(white, White(j), -factor / pivot);
+            }
         }
     }
 
@@ -102,9 +109,23 @@ internal sealed class Redundancy
         AddTo(sum, entries, factor);
         for (int k = 0; k < _rows.Count; k++)
         {
-            double along = Dot(entries, Bound(k));
-            if (along != 0) AddTo(sum, _weighed.AsSpan(k * _columns, _columns), -factor * along);
+            double along = Dot(entries, White(k));
+            if (along != 0) AddTo(sum, White(k), -factor * along);
         }
+    }
+
+    /// <summary>Standard uncertainty of the unknown of a row, with the corrections made, both parts together.</summary>
+    public double Standard(int row)
+    {
+        ReadOnlySpan<double> entries = Measured(row);
+        double sum = Dot(entries, entries);
+        for (int k = 0; k < _rows.Count; k++)
+        {
+            double along = Dot(entries, White(k));
+            sum -= along * along;
+        }
+
+        return double.Sqrt(double.Max(0, sum));
     }
 
     /// <summary>Standard uncertainty, systematic and random part, of what follows the readings in a known way.</summary>
@@ -121,7 +142,7 @@ internal sealed class Redundancy
         return (double.Sqrt(systematic), double.Sqrt(random));
     }
 
-    private double Entry(int k, int column) => _system.Row(_rows[k])[_unknowns + column];
+    private ReadOnlySpan<double> White(int k) => _white.AsSpan(k * _columns, _columns);
 
     private ReadOnlySpan<double> Bound(int k) => Measured(_rows[k]);
 
@@ -181,18 +202,12 @@ internal sealed class Redundancy
     /// <summary>Four sums side by side: faster, and the same on every machine.</summary>
     private static double Dot(ReadOnlySpan<double> a, ReadOnlySpan<double> b)
     {
-        (double first, double second, double third, double fourth) = (0, 0, 0, 0);
+        Vector256<double> sums = Vector256<double>.Zero;
         int i = 0;
-        for (; i <= a.Length - 4; i += 4)
-        {
-            first += a[i] * b[i];
-            second += a[i + 1] * b[i + 1];
-            third += a[i + 2] * b[i + 2];
-            fourth += a[i + 3] * b[i + 3];
-        }
-
-        for (; i < a.Length; i++) first += a[i] * b[i];
-        return first + second + (third + fourth);
+        for (; i <= a.Length - Vector256<double>.Count; i += Vector256<double>.Count) sums += Vector256.Create(a[i..]) * Vector256.Create(b[i..]);
+        double sum = Vector256.Sum(sums);
+        for (; i < a.Length; i++) sum += a[i] * b[i];
+        return sum;
     }
 
     private static void AddTo(Span<double> sum, ReadOnlySpan<double> one, double factor)

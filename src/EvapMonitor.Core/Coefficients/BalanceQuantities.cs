@@ -120,20 +120,21 @@ internal sealed class BalanceQuantities(Reconciliation balance)
     private void Fill(BalanceWindow window, int k, in WindowReadings readings, double[] read)
     {
         int variable = window.Layout.Index[k];
-        Measured found = Of(variable);
-        (window.Reconciled[k], window.Standard[k], window.Measured[k]) = (found.Value, found.Standard, double.NaN);
+        bool isPresent = balance.IsObservable(variable);
+        double value = isPresent ? balance.State[variable] : double.NaN;
+        (window.Reconciled[k], window.Standard[k], window.Measured[k]) = (value, isPresent ? balance.Standard(variable) : double.NaN, double.NaN);
         bool isChecked = false;
         foreach (int place in window.Layout.Instruments[k])
         {
             isChecked |= !double.IsNaN(window.Test[place]);
-            if (!window.LeftOut.Contains(place) || double.IsNaN(read[place]) || !found.IsPresent) continue;
+            if (!window.LeftOut.Contains(place) || double.IsNaN(read[place]) || !isPresent) continue;
             double says = balance.ReadingOf(variable, place, read[place]), standard = double.Hypot(readings.Systematic[place], readings.Random[place]);
-            window.Wanted[place] = (found.Value - says) * (says == 0 ? 1 : read[place] / says);
+            window.Wanted[place] = (value - says) * (says == 0 ? 1 : read[place] / says);
             window.Correction[place] = window.Wanted[place] / standard;
         }
 
         if (window.InstrumentOf(k) is >= 0 and var shown) window.Measured[k] = balance.ReadingOf(variable, shown, read[shown]);
-        window.Class[k] = !found.IsPresent ? VariableClass.Unobservable : isChecked ? VariableClass.Redundant : VariableClass.Observable;
+        window.Class[k] = !isPresent ? VariableClass.Unobservable : isChecked ? VariableClass.Redundant : VariableClass.Observable;
     }
 
     private Measured With(double value)

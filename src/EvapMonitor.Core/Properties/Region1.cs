@@ -70,6 +70,15 @@ internal static class Region1
     public static double EnthalpyByPressure(double pressure, double temperature) =>
         Steam.GasConstant * TemperatureScale / PressureScale * Gibbs(pressure, temperature).ByBoth;
 
+    /// <summary>Specific enthalpy with its slopes by pressure and temperature: R·T·τ·γτ, and those above.</summary>
+    public static (double Value, double ByPressure, double ByTemperature) EnthalpyWithSlopes(double pressure, double temperature)
+    {
+        GibbsEnergy gibbs = Gibbs(pressure, temperature);
+        double tau = TemperatureScale / temperature;
+        return (Steam.GasConstant * TemperatureScale * gibbs.ByTemperature, Steam.GasConstant * TemperatureScale / PressureScale * gibbs.ByBoth,
+            -Steam.GasConstant * tau * tau * gibbs.ByTemperatureTwice);
+    }
+
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private static double Sum(double factor, double other, double addend) => double.MultiplyAddEstimate(factor, other, addend);
 }

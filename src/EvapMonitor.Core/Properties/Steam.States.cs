@@ -18,6 +18,13 @@ public static partial class Steam
         return Region1.Enthalpy(pressure, temperature);
     }
 
+    /// <summary>Specific enthalpy of liquid water with ∂h/∂p and ∂h/∂T, in one go: J/kg, J/(kg·Pa), J/(kg·K). Range as for <see cref="LiquidEnthalpy"/>.</summary>
+    public static (double Value, double ByPressure, double ByTemperature) LiquidEnthalpyWithSlopes(double pressure, double temperature)
+    {
+        RequireLiquid(pressure, temperature);
+        return Region1.EnthalpyWithSlopes(pressure, temperature);
+    }
+
     /// <summary>Specific volume of liquid water, m³/kg: equation 7. Range as for <see cref="LiquidEnthalpy"/>.</summary>
     public static double LiquidVolume(double pressure, double temperature)
     {
@@ -55,6 +62,13 @@ public static partial class Steam
     {
         RequireVapour(pressure, temperature);
         return Region2.Enthalpy(pressure, temperature);
+    }
+
+    /// <summary>Specific enthalpy of vapour with ∂h/∂p and ∂h/∂T, in one go: J/kg, J/(kg·Pa), J/(kg·K). Range as for <see cref="VapourEnthalpy"/>.</summary>
+    public static (double Value, double ByPressure, double ByTemperature) VapourEnthalpyWithSlopes(double pressure, double temperature)
+    {
+        RequireVapour(pressure, temperature);
+        return Region2.EnthalpyWithSlopes(pressure, temperature);
     }
 
     /// <summary>Specific volume of vapour, m³/kg: equations 15 to 17. Range as for <see cref="VapourEnthalpy"/>.</summary>

@@ -52,6 +52,20 @@ public sealed class Sucrose : Liquor
     }
 
     /// <inheritdoc/>
+    /// <remarks>The elevation differentiated.</remarks>
+    public override (double BySolids, double ByTemperature, double StandardBySolids, double StandardByTemperature) ElevationSlopes(double solids, double waterBoilingPoint)
+    {
+        double x = CorrelationRange.Solids(solids), w = 100 * x, share = double.Clamp((w - BlendFrom) / (Branching - BlendFrom), 0, 1);
+        double weight = share * share * (3 - (2 * share)), weightSlope = 6 * share * (1 - share) / (Branching - BlendFrom);
+        double thin = _thin.At(w), thick = _thick.At(w), shape = double.Lerp(thin, thick, weight);
+        double shapeSlope = double.Lerp(_thin.Slope(w), _thick.Slope(w), weight) + ((thick - thin) * weightSlope);
+        double below = 374.3 - (waterBoilingPoint - CorrelationRange.IcePoint), byShape = waterBoilingPoint * waterBoilingPoint / double.Pow(below, 0.38);
+        // Beyond the range the standard uncertainty is twice that within.
+        double wider = _range.Answer(0, 1, x, waterBoilingPoint).Standard;
+        return (100 * shapeSlope * byShape, shape * byShape * ((2 / waterBoilingPoint) + (0.38 / below)), wider * 1.25 * double.Sqrt(x / 0.6), 0);
+    }
+
+    /// <inheritdoc/>
     /// <remarks>4.1868 - w(0.0297 - 4.6e-5 q) + 7.5e-5 w t kJ/(kg·K), w solids and q purity in %, t in °C. Standard uncertainty 1.5 % (judged from the
     /// spread between published forms).</remarks>
     public override PropertyValue HeatCapacity(double solids, double temperature)
@@ -96,5 +110,7 @@ public sealed class Sucrose : Liquor
     private readonly record struct Branch(double Middle, double A, double B, double C)
     {
         public double At(double w) => A * w * w * (B * (w - Middle) * (w - Middle) + C);
+
+        public double Slope(double w) => A * w * ((2 * (B * (w - Middle) * (w - Middle) + C)) + (2 * B * w * (w - Middle)));
     }
 }

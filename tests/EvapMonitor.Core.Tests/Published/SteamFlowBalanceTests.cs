@@ -44,7 +44,7 @@ public class SteamFlowBalanceTests
     private static Redundancy Solve()
     {
         var system = new Elimination(0, Flows.Length);
-        system.Clear(Balances.Length);
+        system.Clear(Balances.Length, []);
         for (int row = 0; row < Balances.Length; row++)
         {
             for (int i = 0; i < Flows.Length; i++)
