@@ -7,7 +7,7 @@ namespace EvapMonitor.Core.Fouling;
 /// clean expectation: instruments that are off by a constant are off by the same share on both sides, and cancel.
 /// </summary>
 /// <param name="Hour">Start of the hour, ms since 1970-01-01T00:00:00Z.</param>
-/// <param name="Campaign">Index of its campaign; -1 inside a logged cleaning.</param>
+/// <param name="Campaign">Index of its campaign. An hour within an interruption belongs to the campaign that ended.</param>
 /// <param name="Reference">Index of the clean expectation; -1 when there is none.</param>
 /// <param name="CleanCoefficient">What a clean surface would do at the conditions of the hour, W/(m²·K).</param>
 /// <param name="Cleanliness">U/U_clean.</param>

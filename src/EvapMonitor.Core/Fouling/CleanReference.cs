@@ -17,13 +17,22 @@ public enum ReferenceBasis
 /// <param name="LogSolids">Natural logarithm of the mass fraction of dissolved solids; NaN when not known.</param>
 /// <param name="BoilingTemperature">K; NaN when not known.</param>
 /// <param name="LogFlux">Natural logarithm of the heat flux in W/m²; NaN when not known.</param>
-public readonly record struct SurfaceConditions(double LogSolids, double BoilingTemperature, double LogFlux);
+public readonly record struct SurfaceConditions(double LogSolids, double BoilingTemperature, double LogFlux)
+{
+    /// <summary>The conditions of solids (mass fraction), boiling temperature (K) and heat flux (W/m²); what is not above 0 is not known.</summary>
+    public static SurfaceConditions Of(double solids, double boilingTemperature, double flux) =>
+        new(solids > 0 ? double.Log(solids) : double.NaN, boilingTemperature, flux > 0 ? double.Log(flux) : double.NaN);
+
+    internal double this[int term] => term == 0 ? LogSolids : term == 1 ? BoilingTemperature : LogFlux;
+
+    internal static SurfaceConditions From(IReadOnlyList<double> terms) => new(terms[0], terms[1], terms[2]);
+}
 
 /// <summary>
 /// What a clean surface would do: ln U = level + b1 (ln solids − ref) + b2 (Tb − ref) + b3 (ln flux − ref), for one effect and product of one campaign. It is learnt
 /// from what was before the campaign and from the campaign's own first hours, and then stays as it is.
 /// </summary>
-public sealed record CleanReference
+public sealed partial record CleanReference
 {
     /// <summary>Index of the campaign.</summary>
     public required int Campaign { get; init; }
@@ -58,7 +67,7 @@ public sealed record CleanReference
     /// <summary>Which slopes were learnt; the others are 0 and carry the width of what is usual as their uncertainty.</summary>
     public required IReadOnlyList<bool> Learnt { get; init; }
 
-    /// <summary>The conditions at which the level holds.</summary>
+    /// <summary>The conditions at which the level holds; NaN where the level does not follow a condition.</summary>
     public required SurfaceConditions At { get; init; }
 
     /// <summary>Lowest conditions learnt.</summary>
@@ -67,7 +76,7 @@ public sealed record CleanReference
     /// <summary>Highest conditions learnt.</summary>
     public required SurfaceConditions Highest { get; init; }
 
-    /// <summary>Scatter of an hour about the fit, as a share of the coefficient.</summary>
+    /// <summary>Scatter of an hour about the fit, as a share of the coefficient; 0 until it is learnt.</summary>
     public required double HourScatter { get; init; }
 
     /// <summary>Correlation of that scatter from one hour to the next.</summary>
