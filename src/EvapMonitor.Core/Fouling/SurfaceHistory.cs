@@ -7,7 +7,7 @@ namespace EvapMonitor.Core.Fouling;
 /// <param name="Hours">One for each producing hour, in order of time.</param>
 /// <param name="References">The clean expectations that the hours were held against.</param>
 /// <param name="WaterTests">Runs on water, in order of time.</param>
-public sealed partial record SurfaceHistory(
+public sealed record SurfaceHistory(
     IReadOnlyList<Campaign> Campaigns, IReadOnlyList<SurfaceCleaning> Cleanings, IReadOnlyList<SurfaceStop> Stops,
     IReadOnlyList<CleanHour> Hours, IReadOnlyList<CleanReference> References, IReadOnlyList<WaterTest> WaterTests)
 {
@@ -21,5 +21,5 @@ public sealed partial record SurfaceHistory(
     public static SurfaceHistory Of(
         SurfaceSettings settings, IReadOnlyList<SurfaceHour> producing, IReadOnlyList<SurfaceHour> water,
         IReadOnlyList<SurfaceSpan> spans, IReadOnlyList<SurfaceEvent> events) =>
-        throw new NotSupportedException();
+        new CampaignWalk(settings, producing, spans, events).Run(WaterRuns.TestsOf(water, CampaignWalk.Recalibrations(events)));
 }
