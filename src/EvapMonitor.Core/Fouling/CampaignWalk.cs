@@ -1,0 +1,232 @@
+using EvapMonitor.Core.Coefficients;
+using EvapMonitor.Core.Readings;
+
+namespace EvapMonitor.Core.Fouling;
+
+/// <summary>
+/// Walks through the interruptions of a surface in order of time. At each one everything before it is known and nothing after it but the hours by which it is judged:
+/// so no number of a day moves because of what came after its campaign.
+/// </summary>
+internal sealed partial class CampaignWalk
+{
+    /// <summary>Chance of taking a stop for a cleaning: with a hundred stops a year, one in twenty years.</summary>
+    private const double Recognised = 5e-4;
+
+    /// <summary>Least rise of ln U that is worth the name of a cleaning nobody logged.</summary>
+    private const double LeastRise = 0.01;
+
+    /// <summary>Chance of taking a logged or signalled cleaning that did nothing for one that cleaned.</summary>
+    private const double Confirmed = 0.01;
+
+    /// <summary>Share of the fall of ln U, and the least of it, that a cleaning must bring back before it is said not to have failed.</summary>
+    private const double WorthwhileShare = 0.2, WorthwhileRise = 0.02;
+
+    private readonly SurfaceSettings _settings;
+    private readonly SurfaceTable _table;
+    private readonly IReadOnlyList<SurfaceHour> _hours;
+    private readonly IReadOnlyList<Interruption> _interruptions;
+    private readonly long[] _recalibrations;
+    private readonly int[] _segment;
+    private readonly bool[] _settled;
+    private readonly List<OpenCampaign> _campaigns = [];
+    private readonly List<SurfaceCleaning> _cleanings = [];
+    private readonly List<SurfaceStop> _stops = [];
+
+    public CampaignWalk(SurfaceSettings settings, IReadOnlyList<SurfaceHour> hours, IReadOnlyList<SurfaceSpan> spans, IReadOnlyList<SurfaceEvent> events)
+    {
+        _settings = settings;
+        _hours = hours;
+        _table = new SurfaceTable(hours, spans);
+        _interruptions = Interruption.Find(_table, settings, spans, events);
+        _recalibrations = Recalibrations(events);
+        foreach (SurfaceEvent one in Interruption.NotBegun(_table, settings, spans, events))
+            _cleanings.Add(Cleaning(new Interruption { Start = one.Start, End = long.MaxValue, CleaningStart = one.Start, CleaningEnd = long.MaxValue, Logged = true, Words = [one.Word], Ids = one.Id is { } id ? [id] : [] }, null, Recovery.NotComparable(""), CleaningVerdict.AwaitingHours, "it goes on, but the surface has not stopped"));
+        _segment = new int[_table.Count];
+        _settled = [.. _table.Whole];
+        _share = new double[_table.Count];
+        Array.Fill(_share, 1);
+        _results = new CleanHour[_table.Count];
+        Divide();
+    }
+
+    /// <summary>When instruments were recalibrated: at the end, where it took time.</summary>
+    public static long[] Recalibrations(IEnumerable<SurfaceEvent> events) =>
+        [.. events.Where(one => one.Kind == SurfaceEventKind.Recalibration).Select(one => one.End == long.MaxValue ? one.Start : long.Max(one.Start, one.End)).Order()];
+
+    /// <summary>Goes through all interruptions.</summary>
+    public SurfaceHistory Run(IReadOnlyList<WaterTest> waterTests)
+    {
+        if (_table.Count > 0)
+        {
+            _campaigns.Add(new OpenCampaign(_table.At[0], 0, 0, CleaningSource.FirstData, 1));
+            for (int k = 0; k < _interruptions.Count; k++) Judge(k);
+            Extend(_table.Count);
+        }
+
+        return new SurfaceHistory(Summaries(), [.. _cleanings.OrderBy(cleaning => cleaning.Start)], _stops, _results, _references, waterTests);
+    }
+
+    private void Judge(int k)
+    {
+        Interruption interruption = _interruptions[k];
+        bool final = k + 1 < _interruptions.Count;
+        int first = _table.FirstFrom(interruption.End), until = final ? _table.FirstFrom(_interruptions[k + 1].Start - Milliseconds.Hour + 1) : _table.Count;
+        Extend(first);
+        int from = int.Max(_campaigns[^1].From, _table.FirstFrom(Baseline(interruption.Start)));
+        Recovery Compare(Func<SurfaceUse, CleanReference> expectation) => Recovery.Compare(_table, _settled, interruption, from, until, final, expectation);
+        Recovery recovery = Recalibrated(interruption) is { } when
+            ? Recovery.NotComparable($"an instrument was recalibrated on {CleanLevels.Day(when)}")
+            : Compare(use => Expectation(use, interruption));
+        if (!interruption.IsCleaning && !IsRecognised(interruption, recovery))
+        {
+            string reason = interruption.Rejected ? "rejected as a cleaning" : recovery.Test is null ? recovery.Reason : "nothing recovered";
+            _stops.Add(new SurfaceStop(interruption.Start, interruption.End, recovery.Test, reason));
+            return;
+        }
+
+        End(interruption, first);
+        bool goesOn = interruption.End == long.MaxValue;
+        if (!goesOn)
+        {
+            Begin(interruption, recovery, first);
+            Extend(until);
+        }
+
+        // The same comparison, against the level in which this cleaning has its share.
+        Recovery told = goesOn || recovery.Test is null ? recovery : Compare(use => ReferenceOf(_campaigns.Count - 1, use, first));
+        (CleaningVerdict verdict, string reasonGiven) = Verdict(interruption, recovery);
+        _cleanings.Add(Cleaning(interruption, recovery.Test, told, verdict, reasonGiven));
+        if (goesOn) return;
+        _campaigns[^1].RemovedShare = _cleanings[^1].Removed.Value / _cleanings[^1].Before.Value;
+        _campaigns[^1].DidNotClean = verdict == CleaningVerdict.DidNotClean;
+    }
+
+    private static bool IsRecognised(Interruption interruption, Recovery recovery) =>
+        !interruption.Rejected && recovery.Test is { } test && test.Significance < Recognised && test.Rise.Value > LeastRise;
+
+    private void End(Interruption interruption, int first)
+    {
+        _campaigns[^1].End = interruption.IsCleaning ? interruption.CleaningStart : interruption.Start;
+        // Before the first hour of all there was no campaign to end.
+        if (first == 0) _campaigns.RemoveAt(0);
+    }
+
+    private void Begin(Interruption interruption, Recovery recovery, int first)
+    {
+        bool known = interruption.IsCleaning;
+        double origin = first < _table.Count ? _table.Served[first] - 0.5 : double.NaN;
+        _campaigns.Add(new OpenCampaign(known ? interruption.CleaningEnd : interruption.End, first, origin, interruption.Source, known ? 1 : 1 - recovery.Test!.Significance));
+    }
+
+    private static SurfaceCleaning Cleaning(Interruption interruption, RecoveryTest? test, Recovery told, CleaningVerdict verdict, string reason) => new()
+    {
+        Start = interruption.IsCleaning ? interruption.CleaningStart : interruption.Start,
+        End = interruption.IsCleaning ? (interruption.CleaningEnd == long.MaxValue ? null : interruption.CleaningEnd) : interruption.End,
+        Source = interruption.Source,
+        Word = string.Join(", ", interruption.Words),
+        Ids = interruption.Ids,
+        Verdict = verdict,
+        Reason = reason,
+        Test = test,
+        Before = Less(told.Before, told.Clean),
+        Left = Less(told.After, told.Clean),
+        Removed = Less(told.Before, told.After),
+    };
+
+    private static (CleaningVerdict Verdict, string Reason) Verdict(Interruption interruption, Recovery recovery)
+    {
+        if (interruption.End == long.MaxValue) return (CleaningVerdict.AwaitingHours, interruption.CleaningEnd == long.MaxValue ? "it goes on" : "nothing was produced since");
+        if (recovery.Awaiting) return (CleaningVerdict.AwaitingHours, recovery.Reason);
+        if (recovery.Test is not { } test) return (CleaningVerdict.CannotBeTold, recovery.Reason);
+        if (test.Significance < Confirmed) return (CleaningVerdict.Cleaned, "");
+        double fall = double.Log(recovery.Before.Value / recovery.Clean.Value), width = double.Hypot(recovery.Before.Random / recovery.Before.Value, recovery.Clean.Random / recovery.Clean.Value);
+        if (fall < double.Max(WorthwhileRise, 2 * width)) return (CleaningVerdict.CannotBeTold, "the surface was clean before, as far as can be told");
+        double worthwhile = double.Max(WorthwhileRise, double.IsFinite(fall) ? WorthwhileShare * fall : 0);
+        return test.Rise.Value + (1.645 * test.Rise.Random) < worthwhile
+            ? (CleaningVerdict.DidNotClean, "")
+            : (CleaningVerdict.CannotBeTold, FormattableString.Invariant($"the hours scatter too much: ln U rose by {test.Rise.Value:0.000} ± {test.Rise.Random:0.000}"));
+    }
+
+    private long Baseline(long at) => _recalibrations.LastOrDefault(one => one <= at, long.MinValue);
+
+    private long? Recalibrated(Interruption interruption)
+    {
+        // One during the first hours of production counts as well: those hours are left out of the comparison anyway.
+        long until = interruption.End == long.MaxValue ? interruption.End : interruption.End + (LevelSample.StartUp * Milliseconds.Hour);
+        foreach (long at in _recalibrations)
+        {
+            if (at > interruption.Start && at < until) return at;
+        }
+
+        return null;
+    }
+
+    private static Measured Less(Measured one, Measured other) =>
+        one.IsPresent && other.IsPresent ? new(one.Value - other.Value, 0, double.Hypot(one.Random, other.Random)) : Measured.Absent;
+
+    /// <summary>Numbers the stretches of hours between interruptions and recalibrations, and marks the hours that do not tell of the surface.</summary>
+    private void Divide()
+    {
+        foreach (Interruption interruption in _interruptions)
+        {
+            int inside = _table.FirstFrom(interruption.Start - Milliseconds.Hour + 1), first = _table.FirstFrom(interruption.End);
+            for (int i = inside; i < int.Min(first + LevelSample.StartUp, _table.Count); i++) _settled[i] = false;
+            if (first < _table.Count) _segment[first]++;
+        }
+
+        foreach (long at in _recalibrations)
+        {
+            int first = _table.FirstFrom(at);
+            if (first < _table.Count) _segment[first]++;
+        }
+
+        for (int i = 1; i < _table.Count; i++) _segment[i] += _segment[i - 1];
+    }
+}
+
+/// <summary>A campaign as far as it is known.</summary>
+internal sealed class OpenCampaign(long start, int from, double origin, CleaningSource startedBy, double confidence)
+{
+    public long Start { get; } = start;
+
+    /// <summary>Its first hour.</summary>
+    public int From { get; } = from;
+
+    /// <summary>Hours of service at its start.</summary>
+    public double Origin { get; } = origin;
+
+    public CleaningSource StartedBy { get; } = startedBy;
+
+    public double Confidence { get; } = confidence;
+
+    public double RemovedShare { get; set; } = double.NaN;
+
+    public bool DidNotClean { get; set; }
+
+    public long? End { get; set; }
+
+    /// <summary>First hour that is not of it, as far as is known.</summary>
+    public int Limit { get; set; }
+
+    /// <summary>The slopes of each use, learnt from what was before it.</summary>
+    public Dictionary<SurfaceUse, ConditionSlopes> Slopes { get; } = [];
+
+    /// <summary>The first hours after its start, by use.</summary>
+    public Dictionary<SurfaceUse, LevelSample> Samples { get; private set; } = [];
+
+    /// <summary>Its clean expectations: where they stand in the list.</summary>
+    public Dictionary<(SurfaceUse Use, long From), int> References { get; } = [];
+
+    /// <summary>Takes the first hours after its start as far as they are known; true when there are more than before.</summary>
+    public bool Sample(SurfaceTable table, bool[] settled, long recalibrated)
+    {
+        if (StartedBy == CleaningSource.FirstData) return false;
+        int had = Samples.Values.Sum(sample => sample.Hours.Length);
+        if (had >= LevelSample.Most) return false;
+        long start = From < table.Count ? table.At[From] : Start;
+        int[] hours = [.. Enumerable.Range(From, Limit - From).Where(i => settled[i] && table.At[i] < start + LevelSample.Within && table.At[i] < recalibrated).Take(LevelSample.Most)];
+        if (hours.Length == had) return false;
+        Samples = hours.GroupBy(i => table.Use[i]).ToDictionary(group => group.Key, group => new LevelSample(Start, [.. group], Origin));
+        return true;
+    }
+}

@@ -1,0 +1,216 @@
+using MathNet.Numerics.Distributions;
+
+namespace EvapMonitor.Core.Fouling;
+
+/// <summary>How a clean coefficient follows its conditions, as far as the hours before an instant show it.</summary>
+internal sealed class ConditionSlopes
+{
+    /// <summary>Days within which hours must differ before a slope is believed.</summary>
+    public const int FewestDays = 10;
+
+    /// <summary>Hours that must be there before a slope is believed.</summary>
+    public const int FewestHours = 100;
+
+    /// <summary>First-stage F under which an instrument is weak (Staiger and Stock 1997).</summary>
+    public const double WeakInstrument = 10;
+
+    /// <summary>
+    /// What slopes are like before anything is learnt, as a standard deviation about 0: solids (per ln), boiling temperature (per K), flux (per ln). Half of what is
+    /// usual at the most, so that the width covers it: a coefficient that falls with the solids, rises by one or two per cent per kelvin, and by flux to a power up to 0.7.
+    /// </summary>
+    private static readonly double[] Usual = [0.5, 0.01, 0.3];
+
+    /// <summary>A condition that moves less than this within days (standard deviation) teaches nothing.</summary>
+    private static readonly double[] LeastMovement = [0.005, 0.1, 0.005];
+
+    private static readonly double[] Lower = [double.NegativeInfinity, 0, 0], Upper = [0, double.PositiveInfinity, 0.7];
+
+    private ConditionSlopes(HourNoise noise, int hours, int days)
+    {
+        Noise = noise;
+        Hours = hours;
+        Days = days;
+        for (int t = 0; t < SurfaceTable.Terms; t++) Covariance[t, t] = Usual[t] * Usual[t];
+    }
+
+    /// <summary>b1, b2, b3.</summary>
+    public double[] Slopes { get; } = new double[SurfaceTable.Terms];
+
+    /// <summary>Their covariance; for a slope that was not learnt the square of what is usual.</summary>
+    public double[,] Covariance { get; } = new double[SurfaceTable.Terms, SurfaceTable.Terms];
+
+    /// <summary>True for slopes that the hours told, be it that they are 0.</summary>
+    public bool[] Learnt { get; } = new bool[SurfaceTable.Terms];
+
+    /// <summary>Why a slope was not learnt, or held at a bound; empty otherwise.</summary>
+    public string[] Remarks { get; } = ["", "", ""];
+
+    /// <summary>Lowest conditions of the hours learnt from; NaN without.</summary>
+    public double[] Lowest { get; } = [double.NaN, double.NaN, double.NaN];
+
+    /// <summary>Highest conditions.</summary>
+    public double[] Highest { get; } = [double.NaN, double.NaN, double.NaN];
+
+    /// <summary>Scatter of hours.</summary>
+    public HourNoise Noise { get; private set; }
+
+    /// <summary>Hours learnt from.</summary>
+    public int Hours { get; }
+
+    /// <summary>Days learnt from.</summary>
+    public int Days { get; }
+
+    /// <summary>True when there were days and hours enough.</summary>
+    public bool Enough => Days >= FewestDays && Hours >= FewestHours;
+
+    /// <summary>Before anything is known.</summary>
+    public static ConditionSlopes Nothing { get; } = new(HourNoise.Assumed, 0, 0);
+
+    /// <summary>Learns from the hours of one use before a limit.</summary>
+    public static ConditionSlopes Learn(SurfaceTable table, SurfaceUse use, int from, int limit, int[] segment, bool[] settled, double[] share)
+    {
+        bool[] active = Present(table, use, from, limit);
+        WithinDays days = WithinDays.Collect(table, use, from, limit, segment, settled, share, active);
+        var learnt = new ConditionSlopes(HourNoise.Assumed, days.Rows, days.Days);
+        for (int t = 0; t < SurfaceTable.Terms; t++) learnt.Remarks[t] = active[t] ? "" : "not measured";
+        if (!learnt.Enough)
+        {
+            if (days.Estimate([false, false, false], learnt.Slopes) is { } level) learnt.Noise = level.Noise;
+            return learnt;
+        }
+
+        learnt.Range(table, use, from, limit, settled);
+        for (int t = 0; t < SurfaceTable.Terms; t++)
+        {
+            if (!active[t] || days.Movement(t) >= LeastMovement[t]) continue;
+            active[t] = false;
+            learnt.Remarks[t] = "hardly moved";
+        }
+
+        learnt.Choose(days, active);
+        return learnt;
+    }
+
+    /// <summary>Takes terms out, one at a time, until all that are left are told by the hours and possible.</summary>
+    private void Choose(WithinDays days, bool[] active)
+    {
+        double critical = StudentT.InvCDF(0, 1, Days - 1, 0.975);
+        while (true)
+        {
+            if (days.Estimate(active, Slopes) is not { } found)
+            {
+                int last = Array.FindLastIndex(active, one => one);
+                if (last < 0) return;
+                Leave(active, last, "not told from the other conditions");
+                continue;
+            }
+
+            int worst = -1;
+            double ratio = 1;
+            for (int t = 0; t < SurfaceTable.Terms; t++)
+            {
+                double standard = double.Sqrt(found.Covariance[t, t]);
+                if (!active[t] || standard / Usual[t] <= ratio) continue;
+                ratio = standard / Usual[t];
+                worst = t;
+            }
+
+            if (active[2] && found.FirstStage < WeakInstrument) Leave(active, 2, "the feed flow says too little of the flux");
+            else if (worst >= 0) Leave(active, worst, "too little movement to tell");
+            else if (active[2] && double.Abs(found.Slopes[2]) <= critical * double.Sqrt(found.Covariance[2, 2])) Hold(active, 2, 0, found, "not told from 0");
+            else if (Beyond(active, found) is (>= 0, var bound) beyond) Hold(active, beyond.Term, bound, found, "held at its bound");
+            else
+            {
+                Keep(active, found);
+                return;
+            }
+        }
+    }
+
+    private static (int Term, double Bound) Beyond(bool[] active, SlopeEstimate found)
+    {
+        (int Term, double Bound) worst = (-1, 0);
+        double most = 0;
+        for (int t = 0; t < SurfaceTable.Terms; t++)
+        {
+            if (!active[t]) continue;
+            double bound = double.Clamp(found.Slopes[t], Lower[t], Upper[t]), by = double.Abs(found.Slopes[t] - bound) / double.Sqrt(found.Covariance[t, t]);
+            if (!(by > most)) continue;
+            most = by;
+            worst = (t, bound);
+        }
+
+        return worst;
+    }
+
+    private void Leave(bool[] active, int term, string why)
+    {
+        active[term] = false;
+        Remarks[term] = why;
+    }
+
+    /// <summary>A slope put at a value: its uncertainty is that of the estimate, and the estimate's distance from 0 where 0 was chosen for want of evidence.</summary>
+    private void Hold(bool[] active, int term, double value, SlopeEstimate found, string why)
+    {
+        active[term] = false;
+        Remarks[term] = why;
+        Learnt[term] = true;
+        Slopes[term] = value;
+        double distance = value == 0 && double.Clamp(found.Slopes[term], Lower[term], Upper[term]) == found.Slopes[term] ? found.Slopes[term] : 0;
+        Covariance[term, term] = found.Covariance[term, term] + (distance * distance);
+    }
+
+    private void Keep(bool[] active, SlopeEstimate found)
+    {
+        Noise = found.Noise;
+        for (int i = 0; i < SurfaceTable.Terms; i++)
+        {
+            if (!active[i]) continue;
+            Learnt[i] = true;
+            Slopes[i] = found.Slopes[i];
+            for (int j = 0; j < SurfaceTable.Terms; j++)
+            {
+                if (active[j]) Covariance[i, j] = found.Covariance[i, j];
+            }
+        }
+    }
+
+    private void Range(SurfaceTable table, SurfaceUse use, int from, int limit, bool[] settled)
+    {
+        for (int t = 0; t < SurfaceTable.Terms; t++)
+        {
+            var values = new List<double>(limit - from);
+            for (int i = from; i < limit; i++)
+            {
+                if (settled[i] && table.Use[i] == use && double.IsFinite(table.Condition[t][i])) values.Add(table.Condition[t][i]);
+            }
+
+            if (values.Count == 0) continue;
+            values.Sort();
+            // One hour in 200 at either end is no experience.
+            Lowest[t] = values[values.Count / 200];
+            Highest[t] = values[^(1 + (values.Count / 200))];
+        }
+    }
+
+    private static bool[] Present(SurfaceTable table, SurfaceUse use, int from, int limit)
+    {
+        int all = 0, feed = 0;
+        int[] known = new int[SurfaceTable.Terms];
+        for (int i = from; i < limit; i++)
+        {
+            if (table.Use[i] != use) continue;
+            all++;
+            if (double.IsFinite(table.LogFeed[i])) feed++;
+            for (int t = 0; t < SurfaceTable.Terms; t++)
+            {
+                if (double.IsFinite(table.Condition[t][i])) known[t]++;
+            }
+        }
+
+        // A term that is missing in many hours would cost the others those hours.
+        bool[] present = [.. known.Select(count => count > 0 && count >= 0.8 * all)];
+        present[2] &= feed >= 0.8 * all;
+        return present;
+    }
+}
