@@ -80,4 +80,10 @@ internal static partial class LogMessages
 
     [LoggerMessage(604, LogLevel.Warning, "The own MQTT broker dropped a message for {Client}, which reads too slowly")]
     public static partial void OwnBrokerDropped(this ILogger log, string client);
+
+    [LoggerMessage(700, LogLevel.Debug, "Line {Line}: surfaces computed in {Milliseconds:0} ms")]
+    public static partial void SurfacesComputed(this ILogger log, string line, double milliseconds);
+
+    [LoggerMessage(701, LogLevel.Error, "Line {Line}: its surfaces could not be computed; they are tried again in a minute")]
+    public static partial void SurfacesFailed(this ILogger log, Exception error, string line);
 }

@@ -11,6 +11,10 @@ namespace EvapMonitor.Core.Fouling;
 /// <param name="Bodies">Bodies in service, joined by +; empty for the effect's own surface; null when not known.</param>
 public sealed record EffectStretch(long Start, long End, RunningState State, string? Product, string? Bodies)
 {
+    /// <summary>Name of the surface that served: the bodies, or the effect's own; null when not known.</summary>
+    /// <param name="effect">Name of the effect.</param>
+    public string? SurfaceIn(string effect) => Bodies is "" ? effect : Bodies;
+
     /// <summary>The stretches of an effect's windows. None crosses an hour.</summary>
     /// <param name="windows">Windows in ascending order.</param>
     /// <param name="step">Length of a window, ms.</param>

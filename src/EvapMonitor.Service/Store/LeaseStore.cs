@@ -32,6 +32,14 @@ public sealed class LeaseStore(NpgsqlDataSource database)
         return held.ToDictionary(lease => lease.Line, lease => lease.Fence);
     }
 
+    /// <summary>True while this process holds the lease of a line.</summary>
+    public async Task<bool> IsOursAsync(int lineId, CancellationToken stop)
+    {
+        await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
+        return await connection.ExecuteScalarAsync<int?>(new CommandDefinition(
+            "SELECT 1 FROM line_lease WHERE line_id = @lineId AND owner = @owner AND until > clock_timestamp()", new { lineId, owner = _owner }, cancellationToken: stop)) is not null;
+    }
+
     /// <summary>Gives all leases back, so that another process need not wait for them to run out.</summary>
     public async Task ReleaseAsync()
     {
