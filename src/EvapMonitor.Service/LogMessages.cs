@@ -6,6 +6,9 @@ internal static partial class LogMessages
     [LoggerMessage(100, LogLevel.Information, "Serving {Site}, plant revision {Revision}, at {Address}")]
     public static partial void Serving(this ILogger log, string site, int revision, string address);
 
+    [LoggerMessage(103, LogLevel.Information, "The plant file given is revision {Given}, which another one follows: revision {InForce} is in force now")]
+    public static partial void EarlierPlantGiven(this ILogger log, int given, int inForce);
+
     [LoggerMessage(101, LogLevel.Information, "Stopping")]
     public static partial void Stopping(this ILogger log);
 
@@ -36,11 +39,17 @@ internal static partial class LogMessages
     [LoggerMessage(401, LogLevel.Warning, "Line {Line} is evaluated by another process now")]
     public static partial void LeaseLost(this ILogger log, string line);
 
-    [LoggerMessage(402, LogLevel.Error, "The evaluation of line {Line} failed; it is tried again")]
-    public static partial void EvaluationFailed(this ILogger log, Exception error, string line);
+    [LoggerMessage(402, LogLevel.Error, "{Line} {Day} could not be evaluated; it is tried again in {Seconds} s")]
+    public static partial void DayBroke(this ILogger log, Exception error, string line, DateOnly day, double seconds);
 
-    [LoggerMessage(401, LogLevel.Error, "{Line} {Day} could not be evaluated; it has no results until its readings change")]
-    public static partial void DayBroke(this ILogger log, Exception error, string line, DateOnly day);
+    [LoggerMessage(405, LogLevel.Error, "A plant revision that another program accepted cannot be read by this one; nothing is evaluated until it can")]
+    public static partial void RevisionUnreadable(this ILogger log, Exception error);
+
+    [LoggerMessage(403, LogLevel.Information, "Recomputation {Id} is done: {Cause}, {Days} days")]
+    public static partial void RecomputationDone(this ILogger log, int id, string cause, int days);
+
+    [LoggerMessage(404, LogLevel.Information, "Windows of superseded results of {Days} days were deleted; their hours stay")]
+    public static partial void SupersededDeleted(this ILogger log, int days);
 
     [LoggerMessage(500, LogLevel.Error, "The spool could not be read and was set aside as {Path}; readings that waited in it are missing")]
     public static partial void SpoolSetAside(this ILogger log, string path);

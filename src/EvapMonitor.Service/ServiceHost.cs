@@ -62,7 +62,8 @@ public sealed class ServiceHost : IAsyncDisposable
                 database = NpgsqlDataSource.Create(connection);
                 app = Build(options, database, clock ?? TimeProvider.System, logLevel, server);
                 if (scripts.Count > 0) app.Logger.SchemaUpgraded(string.Join(", ", scripts));
-                app.Services.GetRequiredService<PlantHolder>().Current = await AcceptAsync(app.Services.GetRequiredService<PlantStore>(), plant, stop);
+                app.Services.GetRequiredService<PlantHolder>().Timeline = await AcceptAsync(app, plant, stop);
+                await app.Services.GetRequiredService<RecomputationStore>().StartForModelAsync(Environment.UserName, stop);
                 await app.StartAsync(stop);
                 var host = new ServiceHost(folderLock, server, database, app);
                 PlantInForce inForce = app.Services.GetRequiredService<PlantHolder>().Current;
@@ -140,12 +141,15 @@ public sealed class ServiceHost : IAsyncDisposable
         return result.Site is { } site ? (site, text) : throw new StartException([.. result.Problems.Select(problem => problem.ToLine(Path.GetFileName(path)))]);
     }
 
-    private static async Task<PlantInForce> AcceptAsync(PlantStore store, (Core.Plant.Site Site, string Text)? given, CancellationToken stop)
+    private static async Task<PlantTimeline> AcceptAsync(WebApplication app, (Core.Plant.Site Site, string Text)? given, CancellationToken stop)
     {
-        if (given is var (site, text)) return await store.AcceptAsync(site, text, Environment.UserName, stop);
-        string last = await store.LastAcceptedTextAsync(stop)
+        PlantStore store = app.Services.GetRequiredService<PlantStore>();
+        int? accepted = given is var (site, text) ? await store.AcceptAtStartAsync(site, text, Environment.UserName, stop) : null;
+        PlantTimeline timeline = await store.LoadAsync(null, stop)
             ?? throw new StartException(["No plant file was accepted before; give one: evapmonitor run PLANT (docs/plant-file.md says how to write it)."]);
-        return await store.AcceptAsync(ReadPlant("accepted revision", last).Site, last, Environment.UserName, stop);
+        PlantInForce now = timeline.At(app.Services.GetRequiredService<TimeProvider>().GetUtcNow());
+        if (accepted is { } revision && revision != now.RevisionId) app.Logger.EarlierPlantGiven(revision, now.RevisionId);
+        return timeline;
     }
 
     private static FileStream LockFolder(string folder)

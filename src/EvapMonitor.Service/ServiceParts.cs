@@ -19,13 +19,15 @@ internal static class ServiceParts
 
     public static IServiceCollection AddStore(this IServiceCollection services) => services
         .AddSingleton<PlantHolder>().AddSingleton<PlantStore>().AddSingleton<ReadingStore>().AddSingleton<DayStore>().AddSingleton<LeaseStore>().AddSingleton<ResultStore>()
-        .AddSingleton<TrendStore>().AddSingleton<BalanceStore>().AddSingleton<CleaningStore>().AddSingleton<InstrumentLogStore>()
-        .AddSingleton<SurfaceInputs>().AddSingleton<SurfaceStore>().AddSingleton<ImportStore>();
+        .AddSingleton<TrendStore>().AddSingleton<BalanceStore>().AddSingleton<CleaningStore>().AddSingleton<InstrumentLogStore>().AddSingleton<ImportStore>()
+        .AddSingleton<SurfaceInputs>().AddSingleton<SurfaceStore>().AddSingleton<RecomputationStore>().AddSingleton<SupersededWindows>();
 
     public static IServiceCollection AddEvaluation(this IServiceCollection services) => services
         .AddSingleton<LiveEvents>().AddSingleton<EvaluationSignal>().AddSingleton<LineLogs>()
         .AddSingleton<ImportWorker>().AddHostedService(provider => provider.GetRequiredService<ImportWorker>())
-        .AddHostedService<EvaluationWorker>().AddHostedService<SurfaceWorker>();
+        .AddSingleton<LineTurns>().AddHostedService<EvaluationWorker>()
+        .AddSingleton<RecomputationSignal>().AddSingleton<RecomputationWatch>().AddHostedService(provider => provider.GetRequiredService<RecomputationWatch>())
+        .AddHostedService<SupersededWindowsDeletion>().AddHostedService<SurfaceWorker>();
 
     public static IServiceCollection AddApi(this IServiceCollection services)
     {

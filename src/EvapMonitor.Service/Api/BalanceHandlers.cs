@@ -15,22 +15,31 @@ internal static class BalanceHandlers
     private static readonly TimeSpan LongestSpan = TimeSpan.FromDays(400);
 
     public static async Task<Results<Ok<BalanceWire>, FileContentHttpResult, StatusCodeHttpResult, ProblemHttpResult>> Balance(
-        string line, HttpContext context, BalanceStates states, BalanceStore balances, TrendStore trends, PlantHolder plant, CancellationToken stop, DateTimeOffset? at = null)
+        string line, HttpContext context, BalanceStates states, BalanceStore balances, TrendStore trends, PlantHolder plant, PlantStore plants, CancellationToken stop,
+        DateTimeOffset? at = null, int? revision = null)
     {
         PlantInForce inForce = plant.Current;
         if (inForce.Find(line) is not { } place) return Problems.NoLine(inForce, line);
         if (TrendHandlers.WhyNoTime(context.Request, "at") is { } wrong) return Problems.Wrong(wrong);
+        if (revision is not null && at is null) return Problems.Wrong("revision needs at: the window whose balance under that revision is asked for.");
         LineFit now = await states.OfAsync(inForce, place, stop);
         if (TrendHandlers.IsKnown(context, inForce, now.Version, out bool csv)) return TypedResults.StatusCode(StatusCodes.Status304NotModified);
         LineFit? asked = now.Last is null ? null : now;
         if (at is { } instant)
         {
+            // In the units, and by the instruments, of the plant as it was then.
+            if (revision is null) inForce = plant.Timeline.On(DateOnly.FromDateTime(instant.UtcDateTime));
+            else if (await RevisionHandlers.AskedAsync(plant, plants, revision, stop) is { Plant: { } wantedOne }) inForce = wantedOne;
+            else return RevisionHandlers.NoRevision(revision.Value);
+            place = inForce.Lines.FirstOrDefault(one => one.LineId == place.LineId) ?? place;
             long step = (long)inForce.Site.Window.TotalMilliseconds, wanted = instant.ToUnixTimeMilliseconds();
             wanted -= Milliseconds.Modulo(wanted, step);
             DateTimeOffset start = DateTimeOffset.FromUnixTimeMilliseconds(wanted);
-            StoredBalance? then = await balances.LastAsync(place.LineId, start, start.AddMilliseconds(-1), stop);
+            StoredBalance? then = await balances.LastAsync(place.LineId, start, start.AddMilliseconds(-1), stop, revision);
             if (then is null) return Problems.NotFound($"Line {line} has no balance at {start:yyyy-MM-ddTHH:mm:ssZ}: {WhyNone(trends, place, start)}.");
-            asked = then.At == now.Last!.At ? now : BalanceStates.Judge(inForce, place, now.Version, then, await states.SinceAsync(place.LineId, then, stop));
+            // Since when something is suspect is only told of what is shown.
+            asked = revision is not null ? BalanceStates.Judge(inForce, place, now.Version, then, new Dictionary<string, (long, long)>())
+                : then.At == now.Last?.At ? now : BalanceStates.Judge(inForce, place, now.Version, then, await states.SinceAsync(place.LineId, then, stop));
         }
 
         if (asked is null) return Problems.NotFound($"Line {line} has no balance yet: no window of it could be evaluated.");

@@ -5,6 +5,7 @@ using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Evaluation;
 using EvapMonitor.Service.Ingest.Files;
 using EvapMonitor.Service.Live;
+using EvapMonitor.Service.Store;
 using Microsoft.AspNetCore.Http.HttpResults;
 using Microsoft.AspNetCore.Mvc;
 using Microsoft.Extensions.Options;
@@ -17,16 +18,16 @@ internal static class EventHandlers
     private static readonly TimeSpan SiteEvery = TimeSpan.FromSeconds(15);
 
     public static Results<ServerSentEventsResult<string>, ProblemHttpResult> Stream(
-        LiveEvents events, SiteStates states, TimeProvider clock, IOptions<Microsoft.AspNetCore.Http.Json.JsonOptions> json, IHostApplicationLifetime host,
+        LiveEvents events, SiteStates states, PlantHolder plant, TimeProvider clock, IOptions<Microsoft.AspNetCore.Http.Json.JsonOptions> json, IHostApplicationLifetime host,
         [FromHeader(Name = "Last-Event-ID")] string? lastEventId, [FromQuery(Name = "last_event_id")] string? lastEventIdAsked, CancellationToken stop)
     {
         LiveEvents.Listening? listening = events.Listen(lastEventId ?? lastEventIdAsked);
         if (listening is null) return TypedResults.Problem($"{LiveEvents.MostListeners} pages listen already.", statusCode: StatusCodes.Status503ServiceUnavailable);
-        return TypedResults.ServerSentEvents(Items(listening, states, clock, json.Value.SerializerOptions, host.ApplicationStopping, stop));
+        return TypedResults.ServerSentEvents(Items(listening, states, plant, clock, json.Value.SerializerOptions, host.ApplicationStopping, stop));
     }
 
     private static async IAsyncEnumerable<SseItem<string>> Items(
-        LiveEvents.Listening listening, SiteStates states, TimeProvider clock, JsonSerializerOptions json, CancellationToken stopping, [EnumeratorCancellation] CancellationToken stop)
+        LiveEvents.Listening listening, SiteStates states, PlantHolder plant, TimeProvider clock, JsonSerializerOptions json, CancellationToken stopping, [EnumeratorCancellation] CancellationToken stop)
     {
         using LiveEvents.Listening hold = listening;
         using var end = CancellationTokenSource.CreateLinkedTokenSource(stop, stopping);
@@ -40,7 +41,7 @@ internal static class EventHandlers
             using var wait = CancellationTokenSource.CreateLinkedTokenSource(end.Token, period.Token);
             while (await NextAsync(listening, wait.Token) is { } happened)
             {
-                yield return new SseItem<string>(JsonSerializer.Serialize(WireOf(happened.Body), json), happened.Kind)
+                yield return new SseItem<string>(JsonSerializer.Serialize(WireOf(happened.Body, plant), json), happened.Kind)
                 {
                     EventId = happened.Id,
                 };
@@ -72,9 +73,10 @@ internal static class EventHandlers
         }
     }
 
-    private static object WireOf(object body) => body switch
+    private static object WireOf(object body, PlantHolder plant) => body switch
     {
         ImportPace pace => ImportHandlers.WireOf(pace),
+        RecomputationPace pace => RecomputationHandlers.WireOf(pace, plant.Timeline),
         WindowsChanged changed => new WindowsChangedWire(changed.Line, changed.From, changed.To),
         _ => body,
     };

@@ -29,6 +29,17 @@ internal static class OpenApiText
         return Task.CompletedTask;
     });
 
+    /// <summary>Describes the body of a plant file, which is read as it comes.</summary>
+    public static Task DescribePlantFile(OpenApiOperation operation, OpenApiOperationTransformerContext context, CancellationToken stop)
+    {
+        operation.RequestBody = new OpenApiRequestBody
+        {
+            Required = true, Description = "The plant file.",
+            Content = new Dictionary<string, OpenApiMediaType> { ["application/yaml"] = new() { Schema = new OpenApiSchema { Type = JsonSchemaType.String } } },
+        };
+        return Task.CompletedTask;
+    }
+
     /// <summary>
     /// Describes the body of readings by hand: said on the route itself, the router would send other content to the pages of the dashboard instead of a 415.
     /// </summary>

@@ -38,7 +38,17 @@ internal static class Routes
         api.MapPost("/imports", ImportHandlers.Upload).Named("uploadHistory", "Upload a CSV of history, plain or gzip", Policies.Write);
         api.MapPost("/imports/{id}/cancel", ImportHandlers.Cancel).Named("cancelImport", "Stop an import; what is stored stays", Policies.Write);
         api.Get("/plant", SiteHandlers.Plant, "getPlant", "The plant file in force");
-        api.Get("/events", EventHandlers.Stream, "getEvents", "Server-sent events: windows, import, cleanings, instruments, site");
+        api.Get("/plant/revisions", RevisionHandlers.List, "getRevisions", "All accepted plant revisions, newest first");
+        api.Get("/plant/revisions/{id:int}", RevisionHandlers.Find, "getRevision", "One plant revision with its text");
+        api.Get("/plant/revisions/{id:int}/differences", RevisionHandlers.Differences, "getDifferences", "How a plant revision differs from another, line by line");
+        api.MapPost("/plant/revisions", RevisionHandlers.Accept).Named("acceptRevision", "A plant file from an instant on; the same file again changes nothing", Policies.Configure)
+            .AddOpenApiOperationTransformer(OpenApiText.DescribePlantFile).ProducesProblem(StatusCodes.Status422UnprocessableEntity);
+        api.Get("/recomputations", RecomputationHandlers.List, "getRecomputations", "Days computed anew and why, newest first");
+        api.Get("/recomputations/{id:int}", RecomputationHandlers.Find, "getRecomputation", "One recomputation");
+        api.MapPost("/recomputations", RecomputationHandlers.Begin).Named("recompute", "Compute days anew from their stored readings", Policies.Write);
+        api.MapPost("/recomputations/{id:int}/cancel", RecomputationHandlers.Cancel).Named("cancelRecomputation", "Stop a recomputation; the days left keep their results", Policies.Write);
+        api.MapPost("/recomputations/{id:int}/resume", RecomputationHandlers.Resume).Named("resumeRecomputation", "Go on with a stopped recomputation", Policies.Write);
+        api.Get("/events", EventHandlers.Stream, "getEvents", "Server-sent events: windows, import, cleanings, instruments, recomputation, plant, site");
 
         app.MapMethods("/health/live", GetAndHead, HealthHandlers.Live).RequireAuthorization(Policies.Read).ExcludeFromDescription();
         app.MapMethods("/health/ready", GetAndHead, HealthHandlers.Ready).RequireAuthorization(Policies.Read).ExcludeFromDescription();

@@ -10,10 +10,10 @@ namespace EvapMonitor.Service.Api;
 internal static class TrendHandlers
 {
     public static async Task<Results<Ok<TrendWire>, FileContentHttpResult, StatusCodeHttpResult, ProblemHttpResult>> Trend(
-        string line, string effect, HttpContext context, Trends trends, TrendStore store, PlantHolder plant, TimeProvider clock, CancellationToken stop,
-        string quantity = "coefficient", DateTimeOffset? from = null, DateTimeOffset? to = null, int points = 2000)
+        string line, string effect, HttpContext context, Trends trends, TrendStore store, PlantHolder plant, PlantStore plants, TimeProvider clock, CancellationToken stop,
+        string quantity = "coefficient", DateTimeOffset? from = null, DateTimeOffset? to = null, int points = 2000, int? revision = null)
     {
-        PlantInForce inForce = plant.Current;
+        if (await RevisionHandlers.AskedAsync(plant, plants, revision, stop) is not { Plant: { } inForce } asked) return RevisionHandlers.NoRevision(revision!.Value);
         if (inForce.Find(line) is not { } place) return Problems.NoLine(inForce, line);
         if (place.Find(effect) is not var (found, id)) return Problems.NoEffect(place.Line, effect);
         if (!Trends.Quantities.ContainsKey(quantity)) return Problems.Wrong($"quantity '{quantity}' is not known; allowed: {string.Join(", ", Trends.Quantities.Keys)}.");
@@ -26,7 +26,7 @@ internal static class TrendHandlers
 
         long version = await store.DataVersionAsync(place.LineId, stop);
         if (IsKnown(context, inForce, version, out bool csv)) return TypedResults.StatusCode(StatusCodes.Status304NotModified);
-        TrendWire trend = trends.Of(place, found, id, quantity, start.ToUniversalTime(), end.ToUniversalTime(), points, inForce.Site.Window, version);
+        TrendWire trend = trends.Of(place, new EffectInTime(asked.Eras, place, found, id), quantity, start.ToUniversalTime(), end.ToUniversalTime(), points, revision, version);
         if (!csv) return TypedResults.Ok(trend);
         return TypedResults.File(Encoding.UTF8.GetBytes(TrendCsv.Of(trend)), "text/csv; charset=utf-8", $"{place.Line.Name}-{found.Name}-{quantity}.csv");
     }

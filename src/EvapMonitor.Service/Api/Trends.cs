@@ -35,23 +35,37 @@ public sealed class Trends(TrendStore store)
     };
 
     /// <summary>One series.</summary>
-    internal TrendWire Of(LinePlace line, Effect effect, int effectId, string name, DateTimeOffset from, DateTimeOffset to, int points, TimeSpan window, long dataVersion)
+    /// <param name="line">The line.</param>
+    /// <param name="effect">The effect in time.</param>
+    /// <param name="name">Name of the quantity.</param>
+    /// <param name="from">Begin of the span.</param>
+    /// <param name="to">Its end.</param>
+    /// <param name="points">Wanted number of points.</param>
+    /// <param name="revision">Results of this plant revision, where they still stand; null: those that are shown. Its windows may be gone: then the hours tell.</param>
+    /// <param name="dataVersion">Version of the line's results.</param>
+    internal TrendWire Of(LinePlace line, EffectInTime effect, string name, DateTimeOffset from, DateTimeOffset to, int points, int? revision, long dataVersion)
     {
         TrendQuantity quantity = Quantities[name];
-        CleanExpectation? clean = CleanExpectation.Design(effect);
         bool byHour = to - from > LongestByWindow;
+        IReadOnlyList<EffectWindow> windows = byHour ? [] : store.Windows(line.LineId, effect.EffectId, from, to, revision);
+        byHour |= revision is not null && windows.Count == 0;
         List<Point> all = byHour
-            ? [.. store.Hours(line.LineId, effectId, quantity.Hours, from, to).Select(hour => new Point(hour.Hour, quantity.From(hour.Mean, effect, clean), "", null, null))]
-            : [.. store.Windows(line.LineId, effectId, from, to).Select(one => PointOf(one, quantity, effect, clean))];
-        long step = byHour ? Milliseconds.Hour : (long)window.TotalMilliseconds;
-        return Wire(line, effect, name, quantity.Unit, byHour, step, Thin(WithGaps(all, step), points), from, dataVersion);
+            ? [.. store.Hours(line.LineId, effect.EffectId, quantity.Hours, from, to, revision).Select(hour =>
+            {
+                (Effect then, CleanExpectation? clean) = effect.At(hour.Hour);
+                return new Point(hour.Hour, quantity.From(hour.Mean, then, clean), "", null, null);
+            })]
+            : [.. windows.Select(one => PointOf(one, quantity, effect))];
+        long step = byHour ? Milliseconds.Hour : (long)effect.LongestWindow.TotalMilliseconds;
+        return Wire(line, effect.Now, name, quantity.Unit, byHour, step, Thin(WithGaps(all, step), points), from, dataVersion);
     }
 
     private static Measured Scaled(Measured value, double factor) => new(value.Value * factor, value.Systematic * factor, value.Random * factor);
 
-    private static Point PointOf(EffectWindow window, TrendQuantity quantity, Effect effect, CleanExpectation? clean)
+    private static Point PointOf(EffectWindow window, TrendQuantity quantity, EffectInTime effect)
     {
-        Measured value = quantity.From(EffectHour.Of(window, quantity.Hours), effect, clean);
+        (Effect then, CleanExpectation? clean) = effect.At(window.At);
+        Measured value = quantity.From(EffectHour.Of(window, quantity.Hours), then, clean);
         bool producing = window.State is RunningState.Producing or RunningState.Unknown;
         return new Point(window.At, value, producing ? window.Extrapolated ? "extrapolated" : "" : "not producing", value.IsPresent ? null : window.Reason, window.Steady);
     }

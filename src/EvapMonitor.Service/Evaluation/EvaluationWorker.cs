@@ -1,53 +1,62 @@
-using EvapMonitor.Service.Live;
+using EvapMonitor.Core.Readings;
 using EvapMonitor.Service.Store;
 using Npgsql;
 
 namespace EvapMonitor.Service.Evaluation;
 
-/// <summary>What open pages are told when results have changed.</summary>
-/// <param name="Line">Name of the line.</param>
-/// <param name="From">First window that may have changed.</param>
-/// <param name="To">End of the last.</param>
-public sealed record WindowsChanged(string Line, DateTimeOffset From, DateTimeOffset To);
-
 /// <summary>
-/// Turns stored readings into stored results. Live, late, imported, recomputed: all of it comes as marked days, one at a time for each line, today first.
-/// A line is evaluated by the one process that holds its lease.
+/// Turns stored readings into stored results. Live, late, imported, recomputed: all of it comes as marked days. Each line has one day at a time under evaluation, as
+/// many lines as the machine has cores, lines with today's day first. A line is evaluated by the one process that holds its lease.
 /// </summary>
 public sealed class EvaluationWorker(
-    DayStore days, ReadingStore readings, ResultStore results, LineLogs logs, LeaseStore leases, PlantHolder plant, EvaluationSignal signal, LiveEvents events,
-    TimeProvider clock, ILogger<EvaluationWorker> log)
+    DayStore days, LineTurns turns, LeaseStore leases, PlantStore plants, PlantHolder plant, EvaluationSignal signal, TimeProvider clock, ILogger<EvaluationWorker> log)
     : BackgroundService
 {
     private static readonly TimeSpan Pause = TimeSpan.FromMilliseconds(500);
     private static readonly TimeSpan Rest = TimeSpan.FromSeconds(1);
     private static readonly TimeSpan RenewEvery = TimeSpan.FromSeconds(5);
+    private static readonly TimeSpan WhenUnreadable = TimeSpan.FromMinutes(1);
 
-    private readonly Dictionary<int, LineWork> _work = [];
+    /// <summary>A window closes this long after its end.</summary>
+    private static readonly TimeSpan Closing = TimeSpan.FromSeconds(1);
+
+    private readonly DaysSetAside _aside = new(clock);
+    private readonly Dictionary<int, Task<LineTurn>> _running = [];
+    private readonly Dictionary<int, long> _servedAt = [];
+    private readonly HashSet<int> _resting = [];
     private Dictionary<int, long> _fences = [];
     private long _renewed;
+    private bool _away;
 
     /// <inheritdoc/>
     protected override async Task ExecuteAsync(CancellationToken stoppingToken)
     {
-        bool away = false;
+        Task bell = Task.CompletedTask;
         while (!stoppingToken.IsCancellationRequested)
         {
             try
             {
-                PlantInForce inForce = plant.Current;
-                await RenewAsync(inForce, stoppingToken);
-                bool any = false;
-                foreach (LinePlace line in inForce.Lines.Where(line => _fences.ContainsKey(line.LineId))) any |= await EvaluateNextAsync(inForce, line, stoppingToken);
-                away = false;
-                if (!any) await signal.WaitAsync(Pause, stoppingToken);
+                if (bell.IsCompleted)
+                {
+                    bell = signal.WaitAsync(Pause, stoppingToken);
+                    _resting.Clear();
+                }
+
+                await RenewAsync(stoppingToken);
+                await GiveTurnsAsync(stoppingToken);
+                if (_running.Count == 0) _away = false;
+                await Task.WhenAny([bell, .. _running.Values]);
+                foreach (Task<LineTurn> ended in _running.Values.Where(turn => turn.IsCompleted).ToList()) Judge(await ended);
             }
             catch (NpgsqlException error)
             {
-                // Once for each absence: it may last for hours.
-                if (!away) log.DatabaseAway(error, "evaluation");
-                away = true;
-                await Task.Delay(RenewEvery, clock, stoppingToken).ConfigureAwait(ConfigureAwaitOptions.SuppressThrowing);
+                await AwayAsync(error, stoppingToken);
+            }
+            catch (UnreadableRevisionException error)
+            {
+                // A later program accepted it. Nothing is computed under a revision that no longer holds.
+                log.RevisionUnreadable(error);
+                await Task.Delay(WhenUnreadable, clock, stoppingToken).ConfigureAwait(ConfigureAwaitOptions.SuppressThrowing);
             }
             catch (OperationCanceledException) when (stoppingToken.IsCancellationRequested)
             {
@@ -55,50 +64,83 @@ public sealed class EvaluationWorker(
             }
         }
 
+        await ((Task)Task.WhenAll(_running.Values)).ConfigureAwait(ConfigureAwaitOptions.SuppressThrowing);
+        await bell.ConfigureAwait(ConfigureAwaitOptions.SuppressThrowing);
         await ReleaseAsync();
     }
 
-    private async Task RenewAsync(PlantInForce inForce, CancellationToken stop)
+    private async Task RenewAsync(CancellationToken stop)
     {
         if (_renewed != 0 && clock.GetElapsedTime(_renewed) < RenewEvery) return;
-        Dictionary<int, long> held = await leases.HoldAsync(inForce.Lines.Select(line => line.LineId), stop);
+        // Another process may have accepted a revision.
+        if (await plants.NewestAsync(stop) != plant.Timeline.Newest && await plants.LoadAsync(plant.Timeline, stop) is { } timeline) plant.Timeline = timeline;
+        Dictionary<int, long> held = await leases.HoldAsync(plant.Timeline.LineIds, stop);
         foreach ((int line, long fence) in held)
         {
-            if (_fences.GetValueOrDefault(line) != fence) _work.Remove(line);
+            if (_fences.GetValueOrDefault(line) != fence) turns.Forget(line);
         }
 
         (_fences, _renewed) = (held, clock.GetTimestamp());
     }
 
-    private async Task<bool> EvaluateNextAsync(PlantInForce inForce, LinePlace line, CancellationToken stop)
+    /// <summary>Gives free cores to lines that have a day to evaluate: those with today's first, then whoever has waited longest.</summary>
+    private async Task GiveTurnsAsync(CancellationToken stop)
     {
-        if (!_work.TryGetValue(line.LineId, out LineWork? work) || work.Plant != inForce) work = _work[line.LineId] = new LineWork(inForce, line, readings);
-        long closed = work.ClosedAt(clock.GetUtcNow());
-        if (await days.TakeAsync(line.LineId, DateTimeOffset.FromUnixTimeMilliseconds(closed), Rest, stop) is not { } taken) return false;
-        try
+        int free = Environment.ProcessorCount - _running.Count;
+        int[] idle = [.. _fences.Keys.Where(line => !_running.ContainsKey(line) && !_resting.Contains(line))];
+        if (free <= 0 || idle.Length == 0) return;
+        DateTimeOffset closed = Closed();
+        IReadOnlyList<(int Line, bool Today)> waiting = await days.WaitingLinesAsync(idle, closed, Rest, stop);
+        foreach ((int line, _) in waiting.OrderByDescending(one => one.Today).ThenBy(one => _servedAt.GetValueOrDefault(one.Line)).Take(free))
         {
-            long began = clock.GetTimestamp();
-            DayResult result = work.Evaluate(taken, closed, await logs.OfAsync(inForce, line, stop));
-            await results.WriteAsync(result, inForce.RevisionId, _fences[line.LineId], stop);
-            log.DayEvaluated(line.Line.Name, taken.Day, result.Windows.Count, clock.GetElapsedTime(began).TotalMilliseconds);
-            DateTimeOffset to = result.Windows.Count == 0 ? result.From : DateTimeOffset.FromUnixTimeMilliseconds(result.Windows[^1].At) + inForce.Site.Window;
-            events.Publish("windows", new WindowsChanged(line.Line.Name, result.From, to));
-            return true;
-        }
-        catch (LeaseLostException)
-        {
-            log.LeaseLost(line.Line.Name);
-            _fences.Remove(line.LineId);
-            return false;
-        }
-        catch (Exception error) when (error is not NpgsqlException and not OperationCanceledException)
-        {
-            // One line that fails must not stop the others; its mark stays, so that it is tried again.
-            log.EvaluationFailed(error, line.Line.Name);
-            work.Forget();
-            return false;
+            (long fence, IReadOnlyCollection<DateOnly> aside) = (_fences[line], _aside.Of(line));
+            _servedAt[line] = clock.GetTimestamp();
+            _running[line] = Task.Run(() => turns.NextAsync(line, fence, closed, Rest, aside, stop), CancellationToken.None);
         }
     }
+
+    private void Judge(LineTurn turn)
+    {
+        _running.Remove(turn.LineId);
+        // A line with nothing to do, or in trouble, is asked again after the pause.
+        if (turn.End != TurnEnd.Done) _resting.Add(turn.LineId);
+        switch (turn.End)
+        {
+            case TurnEnd.Done:
+                _aside.Remove(turn.LineId, turn.Day!.Value);
+                _away = false;
+                break;
+            case TurnEnd.LeaseLost:
+                log.LeaseLost(NameOf(turn.LineId));
+                _fences.Remove(turn.LineId);
+                break;
+            case TurnEnd.Broke when turn.Day is { } day:
+                log.DayBroke(turn.Error!, NameOf(turn.LineId), day, _aside.Add(turn.LineId, day).TotalSeconds);
+                break;
+            case TurnEnd.Broke or TurnEnd.Away:
+                if (!_away) log.DatabaseAway(turn.Error!, "evaluation");
+                _away = true;
+                break;
+            default:
+                break;
+        }
+    }
+
+    private async Task AwayAsync(NpgsqlException error, CancellationToken stop)
+    {
+        // Once for each absence: it may last for hours.
+        if (!_away) log.DatabaseAway(error, "evaluation");
+        _away = true;
+        await Task.Delay(RenewEvery, clock, stop).ConfigureAwait(ConfigureAwaitOptions.SuppressThrowing);
+    }
+
+    private DateTimeOffset Closed()
+    {
+        long at = (clock.GetUtcNow() - Closing).ToUnixTimeMilliseconds();
+        return DateTimeOffset.FromUnixTimeMilliseconds(at - Milliseconds.Modulo(at, (long)plant.Timeline.At(DateTimeOffset.FromUnixTimeMilliseconds(at)).Site.Window.TotalMilliseconds));
+    }
+
+    private string NameOf(int line) => plant.Timeline.Eras.SelectMany(era => era.Lines).Last(place => place.LineId == line).Line.Name;
 
     private async Task ReleaseAsync()
     {

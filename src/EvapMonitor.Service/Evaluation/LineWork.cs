@@ -10,14 +10,10 @@ namespace EvapMonitor.Service.Evaluation;
 internal sealed class LineWork(PlantInForce plant, LinePlace line, ReadingStore store)
 {
     private readonly LineEvaluation _evaluation = new(plant.Site, line.Line);
-    private readonly long _step = (long)plant.Site.Window.TotalMilliseconds;
     private LineMemory? _live;
 
     /// <summary>The plant this work is for.</summary>
     public PlantInForce Plant => plant;
-
-    /// <summary>Forgets what is kept for live windows: somebody else may have evaluated meanwhile.</summary>
-    public void Forget() => _live = null;
 
     /// <summary>Evaluates what has changed of a day, by whole hours, up to the last closed window.</summary>
     /// <param name="taken">The day and since when it changed.</param>
@@ -30,18 +26,14 @@ internal sealed class LineWork(PlantInForce plant, LinePlace line, ReadingStore 
         long from = changed - Milliseconds.Modulo(changed, Milliseconds.Hour), to = long.Min(end, closed);
         bool live = to < end;
         LineMemory memory = live ? LiveMemory(day, changed) : _evaluation.NewMemory();
+        long began = EvaluationTimes.Begin();
         Dictionary<string, ReadingSeries> readings = Read(memory, from, to);
+        began = EvaluationTimes.Count("read", began);
         LineWindow[] windows = _evaluation.Evaluate(memory, readings, from, to, log);
+        EvaluationTimes.Count("compute", began);
         long last = readings.Values.Select(series => series.Count == 0 ? long.MinValue : series.At[^1]).DefaultIfEmpty(long.MinValue).Max();
         bool held = live && last > long.MinValue && last + (long)_evaluation.LongestStale.TotalMilliseconds > to;
         return new DayResult(line, taken.Day, Utc(from), windows, held ? Utc(to) : null, plant.Site.Window);
-    }
-
-    /// <summary>End of the last closed window: a window closes a second after its end.</summary>
-    public long ClosedAt(DateTimeOffset now)
-    {
-        long at = now.ToUnixTimeMilliseconds() - 1000;
-        return at - Milliseconds.Modulo(at, _step);
     }
 
     private LineMemory LiveMemory(long day, long changed)

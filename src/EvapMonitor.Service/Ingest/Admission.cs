@@ -3,7 +3,7 @@ using EvapMonitor.Service.Store;
 namespace EvapMonitor.Service.Ingest;
 
 /// <summary>
-/// Decides at arrival which readings are kept: those of signals that the plant names, not more than <see cref="AheadLimit"/> ahead of this machine's clock and
+/// Decides at arrival which readings are kept: those of signals that any plant revision names, not more than <see cref="AheadLimit"/> ahead of this machine's clock and
 /// not before the plant's history. The others are counted at their source. Later the arrival is no longer known, so this cannot wait.
 /// </summary>
 public sealed class Admission(PlantHolder plant, UnknownSignals unknown, TimeProvider clock)
@@ -21,15 +21,15 @@ public sealed class Admission(PlantHolder plant, UnknownSignals unknown, TimePro
         ArgumentNullException.ThrowIfNull(source);
         ArgumentNullException.ThrowIfNull(readings);
         (outOfTime, unnamed) = (0, 0);
-        PlantInForce now = plant.Current;
+        PlantTimeline named = plant.Timeline;
         DateTimeOffset arrival = clock.GetUtcNow();
-        long latest = (arrival + AheadLimit).ToUnixTimeMilliseconds(), earliest = now.Site.HistoryFrom.ToUnixTimeMilliseconds();
+        long latest = (arrival + AheadLimit).ToUnixTimeMilliseconds(), earliest = named.HistoryFrom.ToUnixTimeMilliseconds();
         List<IncomingReading>? kept = null;
         for (int i = 0; i < readings.Count; i++)
         {
             IncomingReading one = readings[i];
-            bool named = now.Signals.ContainsKey(one.Signal), inTime = one.Reading.At <= latest && one.Reading.At >= earliest;
-            if (named && inTime)
+            bool isNamed = named.Signals.ContainsKey(one.Signal), inTime = one.Reading.At <= latest && one.Reading.At >= earliest;
+            if (isNamed && inTime)
             {
                 kept?.Add(one);
                 continue;
@@ -37,7 +37,7 @@ public sealed class Admission(PlantHolder plant, UnknownSignals unknown, TimePro
 
             // Most batches are kept whole: a list of their own is made only when something is left out.
             kept ??= [.. readings.Take(i)];
-            if (!named)
+            if (!isNamed)
             {
                 unnamed++;
                 source.CountUnknown();

@@ -68,7 +68,7 @@ public sealed class Drain(
 
     private async Task StoreAsync(SpoolPortion portion, CancellationToken stop)
     {
-        IReadOnlyDictionary<string, SignalPlace> signals = plant.Current.Signals;
+        IReadOnlyDictionary<string, SignalPlace> signals = plant.Timeline.Signals;
         var readings = new List<SourcedReading>(portion.Readings);
         foreach (IncomingBatch batch in portion.Batches)
         {

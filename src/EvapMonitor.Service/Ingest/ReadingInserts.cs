@@ -69,7 +69,7 @@ public sealed class ReadingInserts(NpgsqlDataSource database, PlantHolder plant,
     {
         await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
         await using NpgsqlTransaction transaction = await connection.BeginTransactionAsync(stop);
-        InsertCount count = await ReadingStore.InsertAsync(connection, transaction, [.. readings.Select(reading => reading.Placed)], replace: false, plant.Current.Reach, stop);
+        InsertCount count = await ReadingStore.InsertAsync(connection, transaction, [.. readings.Select(reading => reading.Placed)], replace: false, plant.Timeline.Reach, stop);
         await transaction.CommitAsync(stop);
         return count;
     }

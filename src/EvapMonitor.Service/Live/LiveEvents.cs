@@ -5,7 +5,7 @@ namespace EvapMonitor.Service.Live;
 /// <summary>Something that open pages want to know at once.</summary>
 /// <param name="Number">Grows by one with each event of this run.</param>
 /// <param name="Id">Run and number: what a page sends when it comes back.</param>
-/// <param name="Kind">windows, import, cleanings.</param>
+/// <param name="Kind">windows, import, cleanings, instruments, recomputation, plant.</param>
 /// <param name="Body">What is sent, an object that the API turns into JSON.</param>
 public sealed record LiveEvent(long Number, string Id, string Kind, object Body);
 

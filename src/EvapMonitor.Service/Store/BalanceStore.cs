@@ -24,11 +24,11 @@ public sealed record WindowVerdicts(long At, IReadOnlyList<IReadOnlyList<string>
 /// <param name="LeftOut">True when the reading did not count.</param>
 public readonly record struct WantedCorrection(long At, double InStandards, double Wanted, bool Checked, bool LeftOut);
 
-/// <summary>Reads stored balances. Only the revision shown for a day is read.</summary>
+/// <summary>Reads stored balances: those of the revision shown for a day, or of another that is asked for, where they still stand.</summary>
 public sealed class BalanceStore(NpgsqlDataSource database)
 {
     private const string From = """
-        FROM balance_window w JOIN line_day d ON d.line_id = w.line_id AND d.day = (w.at AT TIME ZONE 'UTC')::date AND d.shown_revision = w.revision_id
+        FROM balance_window w JOIN line_day d ON d.line_id = w.line_id AND d.day = (w.at AT TIME ZONE 'UTC')::date AND w.revision_id = coalesce($4, d.shown_revision)
         WHERE w.line_id = $1
         """;
 
@@ -39,14 +39,15 @@ public sealed class BalanceStore(NpgsqlDataSource database)
     /// <param name="upTo">The window starts at or before this.</param>
     /// <param name="after">And after this.</param>
     /// <param name="stop">Cancels.</param>
-    public async Task<StoredBalance?> LastAsync(int lineId, DateTimeOffset upTo, DateTimeOffset after, CancellationToken stop)
+    /// <param name="revision">Of this plant revision, where it still stands; null: of that shown for its day.</param>
+    public async Task<StoredBalance?> LastAsync(int lineId, DateTimeOffset upTo, DateTimeOffset after, CancellationToken stop, int? revision = null)
     {
         await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
         await using var command = new NpgsqlCommand(
             $"""
             SELECT w.at, w.revision_id, layout, measured, reconciled, standard, class, correction, wanted, test, chi2, degrees, suspect, left_out
             {From} AND w.at <= $2 AND w.at > $3 ORDER BY w.at DESC LIMIT 1
-            """, connection) { Parameters = { new() { Value = lineId }, new() { Value = upTo.UtcDateTime }, new() { Value = after.UtcDateTime } } };
+            """, connection) { Parameters = { new() { Value = lineId }, new() { Value = upTo.UtcDateTime }, new() { Value = after.UtcDateTime }, Revision(revision) } };
         var found = (await ReadAsync(command, stop)).FirstOrDefault();
         return found is null ? null : await WithLayoutAsync(connection, lineId, found, stop);
     }
@@ -59,7 +60,7 @@ public sealed class BalanceStore(NpgsqlDataSource database)
             $"""
             SELECT w.at, w.revision_id, layout, measured, reconciled, standard, class, correction, wanted, test, chi2, degrees, suspect, left_out
             {From} AND w.at >= $2 AND w.at < $3 ORDER BY w.at
-            """, connection) { Parameters = { new() { Value = lineId }, new() { Value = from.UtcDateTime }, new() { Value = to.UtcDateTime } } };
+            """, connection) { Parameters = { new() { Value = lineId }, new() { Value = from.UtcDateTime }, new() { Value = to.UtcDateTime }, Revision(null) } };
         var all = new List<StoredBalance>();
         foreach (Row row in await ReadAsync(command, stop)) all.Add(await WithLayoutAsync(connection, lineId, row, stop));
         return all;
@@ -71,7 +72,7 @@ public sealed class BalanceStore(NpgsqlDataSource database)
         await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop), other = await database.OpenConnectionAsync(stop);
         await using var command = new NpgsqlCommand($"SELECT w.at, w.revision_id, layout, suspect, left_out {From} AND w.at <= $2 AND w.at > $3 ORDER BY w.at DESC", connection)
         {
-            Parameters = { new() { Value = lineId }, new() { Value = upTo.UtcDateTime }, new() { Value = after.UtcDateTime } },
+            Parameters = { new() { Value = lineId }, new() { Value = upTo.UtcDateTime }, new() { Value = after.UtcDateTime }, Revision(null) },
         };
         await using NpgsqlDataReader reader = await command.ExecuteReaderAsync(stop);
         while (await reader.ReadAsync(stop))
@@ -126,6 +127,8 @@ public sealed class BalanceStore(NpgsqlDataSource database)
 
         return hours;
     }
+
+    private static NpgsqlParameter Revision(int? revision) => new() { Value = (object?)revision ?? DBNull.Value, NpgsqlDbType = NpgsqlTypes.NpgsqlDbType.Integer };
 
     private static async Task<List<Row>> ReadAsync(NpgsqlCommand command, CancellationToken stop)
     {

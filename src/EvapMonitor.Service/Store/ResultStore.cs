@@ -17,7 +17,7 @@ namespace EvapMonitor.Service.Store;
 public sealed record DayResult(LinePlace Line, DateOnly Day, DateTimeOffset From, IReadOnlyList<LineWindow> Windows, DateTimeOffset? Again, TimeSpan Step);
 
 /// <summary>Writes the results of a day: windows, balances, hours and the day's mark in one transaction, so that a killed run never shows half of them.</summary>
-public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
+public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases, TimeProvider clock)
 {
     /// <summary>Replaces the results of a day from an hour on and gives back the mark that was taken.</summary>
     /// <exception cref="LeaseLostException">Another process evaluates the line now; nothing was written.</exception>
@@ -45,16 +45,35 @@ public sealed class ResultStore(NpgsqlDataSource database, LeaseStore leases)
         await BalanceWriter.WriteAsync(connection, line, revisionId, result.Windows);
         await connection.ExecuteAsync(
             """
-            UPDATE line_day SET shown_revision = @revision, taken_from = NULL, result_version = result_version + 1, changed_from = least(changed_from, @again),
+            UPDATE line_day SET superseded_at = CASE WHEN shown_revision <> @revision THEN @now ELSE superseded_at END, shown_revision = @revision, taken_from = NULL, result_version = result_version + 1, changed_from = least(changed_from, @again),
                 evaluated_through = @through, model = @model
             WHERE line_id = @line AND day = @day
             """,
             new
             {
                 line, day = result.Day, revision = revisionId, again = result.Again?.UtcDateTime, model = (short)LineEvaluation.ModelNumber,
-                through = result.Windows.Count == 0 ? from : Instant.FromMilliseconds(result.Windows[^1].At),
+                through = result.Windows.Count == 0 ? from : Instant.FromMilliseconds(result.Windows[^1].At), now = clock.GetUtcNow().UtcDateTime,
             });
+        if (from == to.AddDays(-1)) await RecomputationStore.DayDoneAsync(connection, line, result.Day);
         KillPoint.Pass("evaluation-before-commit");
+        await transaction.CommitAsync(stop);
+    }
+
+    /// <summary>Shows no results of a day any more: the plant in force then does not have the line.</summary>
+    /// <exception cref="LeaseLostException">Another process evaluates the line now; nothing was written.</exception>
+    public async Task HideAsync(int lineId, DateOnly day, long fence, CancellationToken stop)
+    {
+        await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
+        await using NpgsqlTransaction transaction = await connection.BeginTransactionAsync(stop);
+        await leases.CheckAsync(connection, lineId, fence);
+        await connection.ExecuteAsync(
+            """
+            UPDATE line_day SET superseded_at = CASE WHEN shown_revision IS NOT NULL THEN @now ELSE superseded_at END, shown_revision = NULL, taken_from = NULL,
+                result_version = result_version + 1
+            WHERE line_id = @lineId AND day = @day
+            """,
+            new { lineId, day, now = clock.GetUtcNow().UtcDateTime });
+        await RecomputationStore.DayDoneAsync(connection, lineId, day);
         await transaction.CommitAsync(stop);
     }
 

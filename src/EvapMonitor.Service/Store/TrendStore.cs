@@ -5,11 +5,11 @@ using Npgsql;
 
 namespace EvapMonitor.Service.Store;
 
-/// <summary>Reads stored results. Only the revision shown for a day is read.</summary>
+/// <summary>Reads stored results: those of the revision shown for a day, or of another that is asked for, where they still stand.</summary>
 public sealed class TrendStore(NpgsqlDataSource database)
 {
     /// <summary>The windows of an effect in [from, to), ascending, as evaluation left them.</summary>
-    public IReadOnlyList<EffectWindow> Windows(int lineId, int effectId, DateTimeOffset from, DateTimeOffset to)
+    public IReadOnlyList<EffectWindow> Windows(int lineId, int effectId, DateTimeOffset from, DateTimeOffset to, int? revision = null)
     {
         using NpgsqlConnection connection = database.OpenConnection();
         using var command = new NpgsqlCommand(
@@ -17,10 +17,10 @@ public sealed class TrendStore(NpgsqlDataSource database)
             SELECT w.at, w.state, heating_temperature_k, heating_temperature_u, boiling_temperature_k, boiling_temperature_u, elevation_k, elevation_u,
                 driving_force_k, driving_force_u, duty_w, duty_u, coefficient_w_m2k, coefficient_systematic, coefficient_random, solids,
                 heating_from, boiling_from, duty_from, extrapolated, reason, steady, head_corrected_driving_force_k, head_corrected_driving_force_u
-            FROM effect_window w JOIN line_day d ON d.line_id = w.line_id AND d.day = (w.at AT TIME ZONE 'UTC')::date AND d.shown_revision = w.revision_id
+            FROM effect_window w JOIN line_day d ON d.line_id = w.line_id AND d.day = (w.at AT TIME ZONE 'UTC')::date AND w.revision_id = coalesce($5, d.shown_revision)
             WHERE w.line_id = $1 AND w.effect_id = $2 AND w.at >= $3 AND w.at < $4 ORDER BY w.at
             """, connection);
-        AddSpan(command, lineId, effectId, from, to);
+        AddSpan(command, lineId, effectId, from, to, revision);
         using NpgsqlDataReader reader = command.ExecuteReader();
         var windows = new List<EffectWindow>();
         while (reader.Read()) windows.Add(WindowOf(reader));
@@ -28,16 +28,16 @@ public sealed class TrendStore(NpgsqlDataSource database)
     }
 
     /// <summary>Hours of one quantity of an effect in [from, to), ascending.</summary>
-    public IReadOnlyList<EffectHour> Hours(int lineId, int effectId, HourQuantity quantity, DateTimeOffset from, DateTimeOffset to)
+    public IReadOnlyList<EffectHour> Hours(int lineId, int effectId, HourQuantity quantity, DateTimeOffset from, DateTimeOffset to, int? revision = null)
     {
         using NpgsqlConnection connection = database.OpenConnection();
         using var command = new NpgsqlCommand(
             """
             SELECT h.hour, n, mean, lowest, highest, median, systematic, random
-            FROM effect_hour h JOIN line_day d ON d.line_id = h.line_id AND d.day = (h.hour AT TIME ZONE 'UTC')::date AND d.shown_revision = h.revision_id
-            WHERE h.line_id = $1 AND h.effect_id = $2 AND h.hour >= $3 AND h.hour < $4 AND h.quantity = $5 ORDER BY h.hour
+            FROM effect_hour h JOIN line_day d ON d.line_id = h.line_id AND d.day = (h.hour AT TIME ZONE 'UTC')::date AND h.revision_id = coalesce($5, d.shown_revision)
+            WHERE h.line_id = $1 AND h.effect_id = $2 AND h.hour >= $3 AND h.hour < $4 AND h.quantity = $6 ORDER BY h.hour
             """, connection);
-        AddSpan(command, lineId, effectId, from, to);
+        AddSpan(command, lineId, effectId, from, to, revision);
         command.Parameters.Add(new() { Value = (short)quantity });
         using NpgsqlDataReader reader = command.ExecuteReader();
         var hours = new List<EffectHour>();
@@ -89,12 +89,13 @@ public sealed class TrendStore(NpgsqlDataSource database)
             new { lineId }, cancellationToken: stop));
     }
 
-    private static void AddSpan(NpgsqlCommand command, int lineId, int effectId, DateTimeOffset from, DateTimeOffset to)
+    private static void AddSpan(NpgsqlCommand command, int lineId, int effectId, DateTimeOffset from, DateTimeOffset to, int? revision)
     {
         command.Parameters.Add(new() { Value = lineId });
         command.Parameters.Add(new() { Value = effectId });
         command.Parameters.Add(new() { Value = from.UtcDateTime });
         command.Parameters.Add(new() { Value = to.UtcDateTime });
+        command.Parameters.Add(new() { Value = (object?)revision ?? DBNull.Value, NpgsqlDbType = NpgsqlTypes.NpgsqlDbType.Integer });
     }
 
     private static EffectWindow WindowOf(NpgsqlDataReader reader)

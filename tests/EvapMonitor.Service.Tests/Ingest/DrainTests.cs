@@ -62,13 +62,15 @@ public class DrainTests(PostgresServer server)
     }
 
     [IngestFact]
-    public async Task SignalsThatLeftThePlant_AreCounted_NotStored()
+    public async Task SignalsThatNoRevisionNames_AreCounted_NotStored()
     {
         string connection = await server.CreateDatabaseAsync();
         await using IngestService service = await IngestService.StartAsync(connection);
         PlantHolder plant = service.Get<PlantHolder>();
         PlantInForce before = plant.Current;
-        plant.Current = before with { Signals = before.Signals.Where(pair => pair.Key != "F.1").ToDictionary(pair => pair.Key, pair => pair.Value) };
+        plant.Timeline = new PlantTimeline(
+            [before with { Signals = before.Signals.Where(pair => pair.Key != "F.1").ToDictionary(pair => pair.Key, pair => pair.Value) }],
+            before.Signals.Where(pair => pair.Key != "F.1").Select(pair => (pair.Key, pair.Value.SignalId, pair.Value.HomeLineId)), before.RevisionId);
         IntakeAnswer answer = await service.Get<Intake>().KeepAsync(_source, [Reading("F.1", 0), Reading("T.1", 1)]);
         Assert.Equal(new IntakeAnswer(1, 0, 1, null), answer);
         await service.StoredAsync(1);

@@ -37,6 +37,7 @@ internal static class IngestPlant
         PlantFileResult read = PlantFileReader.Read(Text);
         Site site = Assert.IsType<Site>(read.Site);
         var signals = Signals.Select((name, i) => (name, new SignalPlace(i + 1, 1, [1]))).ToDictionary(pair => pair.name, pair => pair.Item2);
-        return new PlantHolder { Current = new PlantInForce(1, default, site.HistoryFrom, "test", Text, site, [], signals) };
+        var plant = new PlantInForce(1, default, site.HistoryFrom, "test", Text, site, [], signals);
+        return new PlantHolder(TimeProvider.System) { Timeline = new PlantTimeline([plant], signals.Select(pair => (pair.Key, pair.Value.SignalId, pair.Value.HomeLineId)), 1) };
     }
 }

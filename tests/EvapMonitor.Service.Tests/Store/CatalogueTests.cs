@@ -7,7 +7,7 @@ namespace EvapMonitor.Service.Tests.Store;
 public sealed class CatalogueTests(PostgresServer server)
 {
     /// <summary>Small tables that every node may hold whole.</summary>
-    private static readonly string[] Reference = ["plant_revision", "line", "signal", "import_file", "refused_reading", "schemaversions"];
+    private static readonly string[] Reference = ["plant_revision", "line", "signal", "import_file", "refused_reading", "recomputation", "schemaversions"];
 
     [PostgreSqlFact]
     public async Task EveryTableButReferenceTables_HasTheLineInEveryKey_AndPointsToNoOther()

@@ -66,11 +66,10 @@ public sealed class RunningService : IAsyncDisposable
     public Task<ImportWire> EndOfImportAsync(string id) => Poll.UntilAsync("the end of the import", async () =>
         await GetAsync<ImportWire>($"/api/v1/imports/{id}") is { State: not ("waiting" or "running") } ended ? ended : null, 60);
 
-    /// <summary>Waits until no day waits for evaluation.</summary>
     /// <summary>Waits until nothing that could be evaluated waits: a day whose last window is still open keeps its mark.</summary>
     public Task EvaluatedAsync() => Poll.UntilAsync(
         "the evaluation of every day",
-        async () => await CountAsync($"SELECT count(*) FROM line_day WHERE taken_from IS NOT NULL OR changed_from < '{LastClosed:O}'") == 0,
+        async () => await CountAsync($"SELECT count(*) FROM line_day WHERE anew OR taken_from IS NOT NULL OR changed_from < '{LastClosed:O}'") == 0,
         120);
 
     private DateTimeOffset LastClosed => new(((Services.GetService(typeof(TimeProvider)) as TimeProvider)!.GetUtcNow().AddSeconds(-1).Ticks / TimeSpan.FromMinutes(5).Ticks) * TimeSpan.FromMinutes(5).Ticks, TimeSpan.Zero);

@@ -10,7 +10,7 @@ namespace EvapMonitor.Service.Ingest.Files;
 /// Takes one file into the store. One thread reads and makes batches, the other writes them; between them at most two batches wait, so that memory does not
 /// grow with the file. Each batch is one transaction: readings, day marks, and how far the file has come.
 /// </summary>
-internal sealed class ImportRun(NpgsqlDataSource database, PlantInForce plant, ImportFile start, TimeProvider clock)
+internal sealed class ImportRun(NpgsqlDataSource database, PlantTimeline plant, ImportFile start, TimeProvider clock)
 {
     private const int BatchSize = 50_000;
     private const int MostProblems = 100;
@@ -51,10 +51,10 @@ internal sealed class ImportRun(NpgsqlDataSource database, PlantInForce plant, I
         {
             using FileStream file = File.OpenRead(Progress.StoredAs ?? throw new ReadingFileException("The upload is gone; send the file again."));
             using var counted = new CountedStream(file);
-            DateTimeZone zone = DateTimeZoneProviders.Tzdb[plant.Site.TimeZone];
+            DateTimeZone zone = DateTimeZoneProviders.Tzdb[plant.At(clock.GetUtcNow()).Site.TimeZone];
             var sink = new BatchSink(plant, Progress, counted, writer, stop);
             long latest = (clock.GetUtcNow() + AheadLimit).ToUnixTimeMilliseconds();
-            new ReadingFile(counted, zone, plant.Site.HistoryFrom.ToUnixTimeMilliseconds(), latest, sink).Read();
+            new ReadingFile(counted, zone, plant.HistoryFrom.ToUnixTimeMilliseconds(), latest, sink).Read();
             sink.Flush();
             writer.Complete();
         }
@@ -120,7 +120,7 @@ internal sealed class ImportRun(NpgsqlDataSource database, PlantInForce plant, I
     /// Gathers batches. Lines up to the committed one are read again after a restart, so that the clock of local times stands as it did, but what they hold
     /// is dropped: it is in the store.
     /// </summary>
-    private sealed class BatchSink(PlantInForce plant, ImportFile import, CountedStream file, ChannelWriter<Batch> writer, CancellationToken stop) : IReadingSink
+    private sealed class BatchSink(PlantTimeline plant, ImportFile import, CountedStream file, ChannelWriter<Batch> writer, CancellationToken stop) : IReadingSink
     {
         private readonly Dictionary<string, int> _keys = plant.Signals.Select((pair, i) => (pair.Key, i)).ToDictionary(pair => pair.Key, pair => pair.i);
         private readonly SignalPlace[] _places = [.. plant.Signals.Values];

@@ -74,7 +74,7 @@ public sealed class ImportWorker(
     {
         using var cancel = CancellationTokenSource.CreateLinkedTokenSource(stop);
         long began = clock.GetTimestamp(), announced = 0;
-        var run = new ImportRun(database, plant.Current, next with { State = ImportState.Running, StartedAt = clock.GetUtcNow().UtcDateTime }, clock);
+        var run = new ImportRun(database, plant.Timeline, next with { State = ImportState.Running, StartedAt = clock.GetUtcNow().UtcDateTime }, clock);
         try
         {
             _running[next.Sha256] = cancel;
