@@ -31,7 +31,7 @@ internal static class ServiceParts
 
     public static IServiceCollection AddApi(this IServiceCollection services)
     {
-        services.AddSingleton<EffectStates>().AddSingleton<SiteStates>().AddSingleton<FlowSheetStates>().AddSingleton<SignalStates>().AddSingleton<BalanceStates>().AddSingleton<Trends>();
+        services.AddSingleton<EffectStates>().AddSingleton<SiteStates>().AddSingleton<FlowSheetStates>().AddSingleton<SignalStates>().AddSingleton<BalanceStates>().AddSingleton<SurfaceStates>().AddSingleton<Trends>();
         services.AddProblemDetails(problems => problems.CustomizeProblemDetails = context =>
         {
             if (context.ProblemDetails.Status == StatusCodes.Status413PayloadTooLarge) context.ProblemDetails.Detail ??= $"The body is larger than is allowed here, {LargestBody >> 20} MiB.";

@@ -59,15 +59,15 @@ public static class CleaningDue
     /// <summary>Judges one effect.</summary>
     /// <param name="limits">Its limits.</param>
     /// <param name="hours">Median coefficient by hour of production since the last cleaning, ascending: start of the hour in ms, W/(m²·K).</param>
-    /// <param name="clean">The clean coefficient; null when unknown.</param>
+    /// <param name="cleanliness">Cleanliness in the same way; empty when unknown.</param>
     /// <param name="lastCleaningEnd">End of the last cleaning; null when none is logged.</param>
     /// <param name="now">The instant for which the verdict holds.</param>
     public static DueVerdict Judge(
-        DueLimits? limits, IReadOnlyList<(long Hour, double Coefficient)> hours, double? clean, long? lastCleaningEnd, long now)
+        DueLimits? limits, IReadOnlyList<(long Hour, double Value)> hours, IReadOnlyList<(long Hour, double Value)> cleanliness, long? lastCleaningEnd, long now)
     {
         var evidence = new List<DueEvidence>();
-        if (limits?.CoefficientBelow is { } floor) evidence.Add(Under(DueLimit.Coefficient, hours, 1, floor, now));
-        if (limits?.CleanlinessBelow is { } share) evidence.Add(Under(DueLimit.Cleanliness, hours, 1 / (clean ?? double.NaN), share, now));
+        if (limits?.CoefficientBelow is { } floor) evidence.Add(Under(DueLimit.Coefficient, hours, floor, now));
+        if (limits?.CleanlinessBelow is { } share) evidence.Add(Under(DueLimit.Cleanliness, cleanliness, share, now));
         if (limits?.HoursSinceCleaning is { } longest) evidence.Add(Since(longest, lastCleaningEnd, now));
         if (evidence.Count == 0) return new DueVerdict(DueState.NoLimit, null, evidence);
         DueEvidence? first = evidence.Where(one => one.State == DueState.Due).MinBy(one => one.Since);
@@ -76,15 +76,14 @@ public static class CleaningDue
         return new DueVerdict(first is null ? DueState.Unknown : DueState.NotDue, first ?? evidence[0], evidence);
     }
 
-    private static DueEvidence Under(DueLimit limit, IReadOnlyList<(long Hour, double Coefficient)> hours, double scale, double bound, long now)
+    private static DueEvidence Under(DueLimit limit, IReadOnlyList<(long Hour, double Value)> hours, double bound, long now)
     {
-        if (hours.Count == 0 || double.IsNaN(scale) || now - hours[^1].Hour > StaleAfter) return new DueEvidence(limit, DueState.Unknown, double.NaN, bound, null);
+        if (hours.Count == 0 || now - hours[^1].Hour > StaleAfter) return new DueEvidence(limit, DueState.Unknown, double.NaN, bound, null);
         long? since = null;
         long firstUnder = 0;
         int under = 0, over = 0;
-        foreach ((long hour, double coefficient) in hours)
+        foreach ((long hour, double value) in hours)
         {
-            double value = coefficient * scale;
             if (value < bound && under++ == 0) firstUnder = hour;
             if (value >= bound) under = 0;
             over = value > bound * (1 + DeadBand) ? over + 1 : 0;
@@ -92,7 +91,7 @@ public static class CleaningDue
             if (over >= Delay) since = null;
         }
 
-        return new DueEvidence(limit, since is null ? DueState.NotDue : DueState.Due, hours[^1].Coefficient * scale, bound, since);
+        return new DueEvidence(limit, since is null ? DueState.NotDue : DueState.Due, hours[^1].Value, bound, since);
     }
 
     private static DueEvidence Since(double longest, long? lastCleaningEnd, long now)

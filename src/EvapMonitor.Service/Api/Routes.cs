@@ -18,10 +18,12 @@ internal static class Routes
         api.Get("/lines/{line}/balance", BalanceHandlers.Balance, "getBalance", "The reconciled balance of a line in its last window or another, as JSON or CSV");
         api.Get("/lines/{line}/effects/{effect}", SiteHandlers.Effect, "getEffect", "One effect as it is now");
         api.Get("/lines/{line}/effects/{effect}/trend", TrendHandlers.Trend, "getTrend", "A series of one quantity, as JSON columns or CSV");
+        api.Get("/lines/{line}/effects/{effect}/campaigns", CampaignHandlers.Campaigns, "getCampaigns", "Campaigns of an effect, stops, tests on water, what it would do if clean");
         api.Get("/cleaning-due", SiteHandlers.CleaningDue, "getCleaningDue", "Effects with their due state, due ones first");
 
-        api.Get("/cleanings", CleaningHandlers.List, "getCleanings", "Logged cleanings, newest first");
+        api.Get("/cleanings", CleaningHandlers.List, "getCleanings", "Cleanings, logged, signalled or recognised, with what they brought; newest first");
         api.MapPost("/cleanings", CleaningHandlers.Log).Named("logCleaning", "Log a cleaning; the same Idempotency-Key never logs twice", Policies.Write);
+        api.MapPut("/cleanings/{id:guid}", CleaningHandlers.Correct).Named("correctCleaning", "Put a corrected entry in the place of a logged one", Policies.Write);
         api.MapDelete("/cleanings/{id:guid}", CleaningHandlers.Withdraw).Named("withdrawCleaning", "Withdraw a logged cleaning", Policies.Write);
 
         api.Get("/instrument-log", InstrumentLogHandlers.List, "getInstrumentLog", "What was logged of instruments: excluded for a time, recalibrated; newest first");
@@ -48,7 +50,7 @@ internal static class Routes
         api.MapPost("/recomputations", RecomputationHandlers.Begin).Named("recompute", "Compute days anew from their stored readings", Policies.Write);
         api.MapPost("/recomputations/{id:int}/cancel", RecomputationHandlers.Cancel).Named("cancelRecomputation", "Stop a recomputation; the days left keep their results", Policies.Write);
         api.MapPost("/recomputations/{id:int}/resume", RecomputationHandlers.Resume).Named("resumeRecomputation", "Go on with a stopped recomputation", Policies.Write);
-        api.Get("/events", EventHandlers.Stream, "getEvents", "Server-sent events: windows, import, cleanings, instruments, recomputation, plant, site");
+        api.Get("/events", EventHandlers.Stream, "getEvents", "Server-sent events: windows, import, cleanings, instruments, surfaces, recomputation, plant, site");
 
         app.MapMethods("/health/live", GetAndHead, HealthHandlers.Live).RequireAuthorization(Policies.Read).ExcludeFromDescription();
         app.MapMethods("/health/ready", GetAndHead, HealthHandlers.Ready).RequireAuthorization(Policies.Read).ExcludeFromDescription();

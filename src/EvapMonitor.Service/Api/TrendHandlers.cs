@@ -10,7 +10,7 @@ namespace EvapMonitor.Service.Api;
 internal static class TrendHandlers
 {
     public static async Task<Results<Ok<TrendWire>, FileContentHttpResult, StatusCodeHttpResult, ProblemHttpResult>> Trend(
-        string line, string effect, HttpContext context, Trends trends, TrendStore store, PlantHolder plant, PlantStore plants, TimeProvider clock, CancellationToken stop,
+        string line, string effect, HttpContext context, Trends trends, TrendStore store, SurfaceStore surfaces, PlantHolder plant, PlantStore plants, TimeProvider clock, CancellationToken stop,
         string quantity = "coefficient", DateTimeOffset? from = null, DateTimeOffset? to = null, int points = 2000, int? revision = null)
     {
         if (await RevisionHandlers.AskedAsync(plant, plants, revision, stop) is not { Plant: { } inForce } asked) return RevisionHandlers.NoRevision(revision!.Value);
@@ -24,9 +24,9 @@ internal static class TrendHandlers
         if (start >= end) return Problems.Wrong($"from ({start:O}) must be before to ({end:O}).");
         if (end - start > Trends.LongestSpan) return Problems.Wrong($"The span is {(end - start).TotalDays:0} days; allowed: {Trends.LongestSpan.TotalDays:0}.");
 
-        long version = await store.DataVersionAsync(place.LineId, stop);
+        long version = await store.DataVersionAsync(place.LineId, stop) + await surfaces.VersionAsync(place.LineId, stop);
         if (IsKnown(context, inForce, version, out bool csv)) return TypedResults.StatusCode(StatusCodes.Status304NotModified);
-        TrendWire trend = trends.Of(place, new EffectInTime(asked.Eras, place, found, id), quantity, start.ToUniversalTime(), end.ToUniversalTime(), points, revision, version);
+        TrendWire trend = await trends.OfAsync(place, new EffectInTime(asked.Eras, place, found, id), quantity, start.ToUniversalTime(), end.ToUniversalTime(), points, revision, version, stop);
         if (!csv) return TypedResults.Ok(trend);
         return TypedResults.File(Encoding.UTF8.GetBytes(TrendCsv.Of(trend)), "text/csv; charset=utf-8", $"{place.Line.Name}-{found.Name}-{quantity}.csv");
     }

@@ -8,7 +8,7 @@ using EvapMonitor.Service.Store;
 namespace EvapMonitor.Service.Api;
 
 /// <summary>Makes a series for a chart: windows for short spans, hours for long ones, thinned so that the extremes stay.</summary>
-public sealed class Trends(TrendStore store)
+public sealed class Trends(TrendStore store, SurfaceStore cleanHours, SurfaceStates surfaces)
 {
     /// <summary>Spans over this come by the hour.</summary>
     public static readonly TimeSpan LongestByWindow = TimeSpan.FromDays(10);
@@ -20,9 +20,10 @@ public sealed class Trends(TrendStore store)
     internal static readonly IReadOnlyDictionary<string, TrendQuantity> Quantities = new Dictionary<string, TrendQuantity>
     {
         ["coefficient"] = new("W/(m2.K)", HourQuantity.Coefficient, (value, _, _) => value),
-        ["clean_coefficient"] = new("W/(m2.K)", HourQuantity.Coefficient, (_, _, clean) => clean is null ? Measured.Absent : new Measured(clean.Coefficient, 0, 0)),
-        ["cleanliness"] = new("1", HourQuantity.Coefficient, (value, _, clean) => CleanComparison.Cleanliness(value, clean)),
-        ["fouling_resistance"] = new("m2.K/W", HourQuantity.Coefficient, (value, _, clean) => CleanComparison.Resistance(value, clean)),
+        ["clean_coefficient"] = new("W/(m2.K)", HourQuantity.Coefficient, (_, _, clean) => clean is null ? Measured.Absent : new Measured(clean.Coefficient, 0, 0)) { Compared = one => one.CleanCoefficient },
+        ["cleanliness"] = new("1", HourQuantity.Coefficient, (value, _, clean) => CleanComparison.Cleanliness(value, clean)) { Compared = one => one.Cleanliness },
+        ["fouling_resistance"] = new("m2.K/W", HourQuantity.Coefficient, (value, _, clean) => CleanComparison.Resistance(value, clean)) { Compared = one => one.Resistance },
+        ["coefficient_at_reference"] = new("W/(m2.K)", HourQuantity.Coefficient, (_, _, _) => Measured.Absent) { Compared = one => one.AtReference },
         ["driving_force"] = new("K", HourQuantity.DrivingForce, (value, _, _) => value),
         ["head_corrected_driving_force"] = new("K", HourQuantity.HeadCorrectedDrivingForce, (value, _, _) => value),
         ["duty"] = new("kW", HourQuantity.Duty, (value, _, _) => Scaled(value, 1e-3)),
@@ -43,22 +44,42 @@ public sealed class Trends(TrendStore store)
     /// <param name="points">Wanted number of points.</param>
     /// <param name="revision">Results of this plant revision, where they still stand; null: those that are shown. Its windows may be gone: then the hours tell.</param>
     /// <param name="dataVersion">Version of the line's results.</param>
-    internal TrendWire Of(LinePlace line, EffectInTime effect, string name, DateTimeOffset from, DateTimeOffset to, int points, int? revision, long dataVersion)
+    /// <param name="stop">Cancels.</param>
+    internal async Task<TrendWire> OfAsync(
+        LinePlace line, EffectInTime effect, string name, DateTimeOffset from, DateTimeOffset to, int points, int? revision, long dataVersion, CancellationToken stop)
     {
         TrendQuantity quantity = Quantities[name];
         bool byHour = to - from > LongestByWindow;
         IReadOnlyList<EffectWindow> windows = byHour ? [] : store.Windows(line.LineId, effect.EffectId, from, to, revision);
         byHour |= revision is not null && windows.Count == 0;
+        // What the surfaces are held against is computed from what is shown; an earlier revision is held against its own design values.
+        CleanInTime? clean = quantity.Compared is null || revision is not null ? null : await surfaces.CleanAsync(line.LineId, effect.EffectId, effect.Now.Name, from, to, stop);
+        if (clean is { Surfaces.Version: > 0 }) return Wire(line, effect.Now, name, quantity.Unit, byHour, Step(byHour, effect), Thin(WithGaps(Compared(line, effect, quantity, clean, byHour, windows, from, to), Step(byHour, effect)), points), from, dataVersion);
         List<Point> all = byHour
             ? [.. store.Hours(line.LineId, effect.EffectId, quantity.Hours, from, to, revision).Select(hour =>
             {
-                (Effect then, CleanExpectation? clean) = effect.At(hour.Hour);
-                return new Point(hour.Hour, quantity.From(hour.Mean, then, clean), "", null, null);
+                (Effect then, CleanExpectation? design) = effect.At(hour.Hour);
+                return new Point(hour.Hour, quantity.From(hour.Mean, then, design), "", null, null);
             })]
             : [.. windows.Select(one => PointOf(one, quantity, effect))];
-        long step = byHour ? Milliseconds.Hour : (long)effect.LongestWindow.TotalMilliseconds;
+        long step = Step(byHour, effect);
         return Wire(line, effect.Now, name, quantity.Unit, byHour, step, Thin(WithGaps(all, step), points), from, dataVersion);
     }
+
+    private static long Step(bool byHour, EffectInTime effect) => byHour ? Milliseconds.Hour : (long)effect.LongestWindow.TotalMilliseconds;
+
+    private List<Point> Compared(
+        LinePlace line, EffectInTime effect, TrendQuantity quantity, CleanInTime clean, bool byHour, IReadOnlyList<EffectWindow> windows, DateTimeOffset from, DateTimeOffset to) => byHour
+        ? [.. cleanHours.Hours(line.LineId, effect.EffectId, from, to).Select(hour => hour.Clean)
+            .Select(hour => new Point(hour.Hour, quantity.Compared!(new(hour.CleanCoefficient, hour.Cleanliness, hour.Resistance, hour.AtReference, hour.Clamped)), hour.Clamped ? "extrapolated" : "", null, null))]
+        : [.. windows.Select(window =>
+        {
+            CleanComparisonResult found = clean.Compare(window);
+            Measured value = quantity.Compared!(found);
+            bool producing = window.State is RunningState.Producing or RunningState.Unknown;
+            string? reason = value.IsPresent ? null : window.Reason ?? clean.At(window.At)?.Reference?.Source ?? "no clean expectation";
+            return new Point(window.At, producing ? value : Measured.Absent, producing ? found.Clamped || window.Extrapolated ? "extrapolated" : "" : "not producing", producing ? reason : window.Reason, window.Steady);
+        })];
 
     private static Measured Scaled(Measured value, double factor) => new(value.Value * factor, value.Systematic * factor, value.Random * factor);
 
@@ -148,4 +169,8 @@ public sealed class Trends(TrendStore store)
 /// <param name="Unit">Unit in which it goes out.</param>
 /// <param name="Hours">The stored quantity it rests on.</param>
 /// <param name="From">How it follows from that.</param>
-internal sealed record TrendQuantity(string Unit, HourQuantity Hours, Func<Measured, Effect, CleanExpectation?, Measured> From);
+internal sealed record TrendQuantity(string Unit, HourQuantity Hours, Func<Measured, Effect, CleanExpectation?, Measured> From)
+{
+    /// <summary>How it follows from holding a coefficient against what it would be if clean; null for what does not.</summary>
+    public Func<CleanComparisonResult, Measured>? Compared { get; init; }
+}

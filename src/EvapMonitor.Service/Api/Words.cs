@@ -2,6 +2,7 @@ using System.Globalization;
 using EvapMonitor.Core.Advice;
 using EvapMonitor.Core.Balances;
 using EvapMonitor.Core.Coefficients;
+using EvapMonitor.Core.Fouling;
 using EvapMonitor.Core.Readings;
 
 namespace EvapMonitor.Service.Api;
@@ -67,6 +68,22 @@ internal static class Words
         VariableClass.Redundant => "checked by others",
         VariableClass.Observable => "follows from others",
         _ => "cannot be told",
+    };
+
+    public static string Of(CleaningSource source) => source switch
+    {
+        CleaningSource.Logged => "logged",
+        CleaningSource.Signal => "signal",
+        CleaningSource.Recognised => "recognised",
+        _ => "first data",
+    };
+
+    public static string Of(CleaningVerdict verdict) => verdict switch
+    {
+        CleaningVerdict.Cleaned => "cleaned",
+        CleaningVerdict.DidNotClean => "did not clean",
+        CleaningVerdict.CannotBeTold => "cannot be told",
+        _ => "awaiting hours",
     };
 
     public static string Of(DueState state) => state switch

@@ -35,7 +35,7 @@ public sealed class SurfaceInputs(NpgsqlDataSource database)
         {
             Effect effect = line.Line.Effects[i];
             records.Add(new EffectRecord(
-                effect, await HoursAsync(connection, line.LineId, line.EffectIds[i], stop), await StretchesAsync(connection, line.LineId, line.EffectIds[i], stop),
+                effect, await HoursAsync(connection, line.LineId, line.EffectIds[i], stop), TrendStore.Stretches(connection, line.LineId, line.EffectIds[i], DateTimeOffset.MinValue, DateTimeOffset.MaxValue),
                 [.. cleanings[line.EffectIds[i]]], [.. Behind(line.Line, effect).SelectMany(signal => recalibrations[signal]).Distinct().Order()]));
         }
 
@@ -105,25 +105,5 @@ public sealed class SurfaceInputs(NpgsqlDataSource database)
         }
 
         return hours;
-    }
-
-    private static async Task<IReadOnlyList<EffectStretch>> StretchesAsync(NpgsqlConnection connection, int lineId, int effectId, CancellationToken stop)
-    {
-        await using var command = new NpgsqlCommand(
-            """
-            SELECT s.starts_at, s.ends_at, s.state, s.product, s.bodies
-            FROM effect_stretch s JOIN line_day d ON d.line_id = s.line_id AND d.day = (s.starts_at AT TIME ZONE 'UTC')::date AND d.shown_revision = s.revision_id
-            WHERE s.line_id = $1 AND s.effect_id = $2 ORDER BY s.starts_at
-            """, connection) { Parameters = { new() { Value = lineId }, new() { Value = effectId } } };
-        await using NpgsqlDataReader reader = await command.ExecuteReaderAsync(stop);
-        var stretches = new List<EffectStretch>();
-        while (await reader.ReadAsync(stop))
-        {
-            stretches.Add(new EffectStretch(
-                Instant.ToMilliseconds(reader.GetDateTime(0)), Instant.ToMilliseconds(reader.GetDateTime(1)), (RunningState)reader.GetInt16(2),
-                reader.IsDBNull(3) ? null : string.Intern(reader.GetString(3)), reader.IsDBNull(4) ? null : string.Intern(reader.GetString(4))));
-        }
-
-        return stretches;
     }
 }

@@ -51,6 +51,36 @@ public sealed class TrendStore(NpgsqlDataSource database)
         return hours;
     }
 
+    /// <summary>What an effect did in [from, to), ascending.</summary>
+    public IReadOnlyList<EffectStretch> Stretches(int lineId, int effectId, DateTimeOffset from, DateTimeOffset to)
+    {
+        using NpgsqlConnection connection = database.OpenConnection();
+        return Stretches(connection, lineId, effectId, from, to);
+    }
+
+    internal static IReadOnlyList<EffectStretch> Stretches(NpgsqlConnection connection, int lineId, int effectId, DateTimeOffset from, DateTimeOffset to)
+    {
+        using var command = new NpgsqlCommand(
+            """
+            SELECT s.starts_at, s.ends_at, s.state, s.product, s.bodies
+            FROM effect_stretch s JOIN line_day d ON d.line_id = s.line_id AND d.day = (s.starts_at AT TIME ZONE 'UTC')::date AND d.shown_revision = s.revision_id
+            WHERE s.line_id = $1 AND s.effect_id = $2 AND s.starts_at >= $3 AND s.starts_at < $4 ORDER BY s.starts_at
+            """, connection);
+        // Stretches do not cross an hour.
+        DateTimeOffset hour = from > DateTimeOffset.MinValue.AddHours(1) ? from.AddHours(-1) : from;
+        foreach (object value in (object[])[lineId, effectId, hour.UtcDateTime, to.UtcDateTime]) command.Parameters.Add(new() { Value = value });
+        using NpgsqlDataReader reader = command.ExecuteReader();
+        var stretches = new List<EffectStretch>();
+        while (reader.Read())
+        {
+            stretches.Add(new EffectStretch(
+                Instant.ToMilliseconds(reader.GetDateTime(0)), Instant.ToMilliseconds(reader.GetDateTime(1)), (RunningState)reader.GetInt16(2),
+                reader.IsDBNull(3) ? null : string.Intern(reader.GetString(3)), reader.IsDBNull(4) ? null : string.Intern(reader.GetString(4))));
+        }
+
+        return stretches;
+    }
+
     /// <summary>Start of the last stored window of an effect; null without any.</summary>
     public async Task<DateTimeOffset?> LastWindowAsync(int lineId, int effectId, CancellationToken stop)
     {

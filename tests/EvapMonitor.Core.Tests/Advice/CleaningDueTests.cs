@@ -36,7 +36,7 @@ public class CleaningDueTests
     public void SeveralLimits_TheFirstReachedBinds()
     {
         var limits = new DueLimits(900, 0.5, 600);
-        DueVerdict verdict = CleaningDue.Judge(limits, Hours(950, 950, 950, 950, 890, 890, 890, 890), clean: 2000, lastCleaningEnd: 0, now: 8 * Milliseconds.Hour);
+        DueVerdict verdict = CleaningDue.Judge(limits, Hours(950, 950, 950, 950, 890, 890, 890, 890), [.. Hours(950, 950, 950, 950, 890, 890, 890, 890).Select(hour => (hour.Item1, hour.Item2 / 2000))], lastCleaningEnd: 0, now: 8 * Milliseconds.Hour);
         Assert.Equal(DueLimit.Cleanliness, verdict.Binding!.Limit);
         Assert.Equal(0.445, verdict.Binding.Value, 12);
         Assert.Equal([DueState.Due, DueState.Due, DueState.NotDue], verdict.Evidence.Select(one => one.State));
@@ -46,25 +46,25 @@ public class CleaningDueTests
     public void HoursLimit_CountsFromTheLastCleaning()
     {
         var limits = new DueLimits(null, null, 100);
-        DueVerdict verdict = CleaningDue.Judge(limits, [], null, lastCleaningEnd: 0, now: 130 * Milliseconds.Hour);
+        DueVerdict verdict = CleaningDue.Judge(limits, [], [], lastCleaningEnd: 0, now: 130 * Milliseconds.Hour);
         Assert.Equal(DueState.Due, verdict.State);
         Assert.Equal(130, verdict.Binding!.Value);
         Assert.Equal(100 * Milliseconds.Hour, verdict.Binding.Since);
-        Assert.Equal(DueState.Unknown, CleaningDue.Judge(limits, [], null, lastCleaningEnd: null, now: 0).State);
+        Assert.Equal(DueState.Unknown, CleaningDue.Judge(limits, [], [], lastCleaningEnd: null, now: 0).State);
     }
 
     [Fact]
     public void NothingToHoldAgainstALimit_IsUnknownNotCalm()
     {
         Assert.Equal(DueState.Unknown, Judge(Floor).State);
-        Assert.Equal(DueState.Unknown, CleaningDue.Judge(new DueLimits(null, 0.7, null), Hours(900), clean: null, null, Milliseconds.Hour).State);
+        Assert.Equal(DueState.Unknown, CleaningDue.Judge(new DueLimits(null, 0.7, null), Hours(900), [], null, Milliseconds.Hour).State);
         // The last result is older than three days.
-        Assert.Equal(DueState.Unknown, CleaningDue.Judge(Floor, Hours(1100, 1100), null, null, 80 * Milliseconds.Hour).State);
-        Assert.Equal(DueState.NoLimit, CleaningDue.Judge(null, Hours(900), null, null, 0).State);
+        Assert.Equal(DueState.Unknown, CleaningDue.Judge(Floor, Hours(1100, 1100), [], null, 80 * Milliseconds.Hour).State);
+        Assert.Equal(DueState.NoLimit, CleaningDue.Judge(null, Hours(900), [], null, 0).State);
     }
 
     private static (long Hour, double Coefficient)[] Hours(params double[] values) => [.. values.Select((value, i) => (i * Milliseconds.Hour, value))];
 
     private static DueVerdict Judge(DueLimits limits, params double[] values) =>
-        CleaningDue.Judge(limits, Hours(values), clean: 2000, lastCleaningEnd: null, now: values.Length * Milliseconds.Hour);
+        CleaningDue.Judge(limits, Hours(values), [.. Hours(values).Select(hour => (hour.Item1, hour.Item2 / 2000))], lastCleaningEnd: null, now: values.Length * Milliseconds.Hour);
 }

@@ -22,18 +22,38 @@ public sealed record TrendWire(
     IReadOnlyList<double?> U, IReadOnlyList<double?> URandom, IReadOnlyList<string> Mark, IReadOnlyList<bool?> Steady,
     IReadOnlyList<string> Reasons, IReadOnlyList<int> Reason, long DataVersion);
 
-/// <summary>A logged cleaning.</summary>
-/// <param name="Id">Key.</param>
+/// <summary>A cleaning: logged, told by a signal, or recognised by its effect.</summary>
+/// <param name="Id">Key of the log entry; null for what nobody logged.</param>
 /// <param name="Line">Name of the line.</param>
 /// <param name="Effect">Name of the effect.</param>
+/// <param name="Body">The body that was cleaned, where the entry names one.</param>
 /// <param name="Start">When it began.</param>
 /// <param name="End">When it ended; null while it goes on.</param>
-/// <param name="Kind">The plant's word for it.</param>
+/// <param name="Kind">The plant's word for it; empty for what nobody logged.</param>
 /// <param name="Note">Free text.</param>
-/// <param name="LoggedAt">When it was logged.</param>
-public sealed record CleaningWire(Guid Id, string Line, string Effect, DateTimeOffset Start, DateTimeOffset? End, string Kind, string Note, DateTimeOffset LoggedAt);
+/// <param name="LoggedAt">When it was logged; null for what nobody logged.</param>
+/// <param name="KnownBy">logged, signal, recognised, rejected (a person says that there was none).</param>
+/// <param name="Result">What it brought; null until that is computed.</param>
+public sealed record CleaningWire(
+    Guid? Id, string Line, string Effect, string? Body, DateTimeOffset Start, DateTimeOffset? End, string Kind, string Note, DateTimeOffset? LoggedAt, string KnownBy,
+    CleaningResultWire? Result);
 
-/// <summary>Logged cleanings, newest first.</summary>
+/// <summary>What a cleaning brought.</summary>
+/// <param name="Surface">The surface.</param>
+/// <param name="Verdict">cleaned, did not clean, cannot be told, awaiting hours.</param>
+/// <param name="Reason">Why it cannot be told, or what is awaited; empty otherwise.</param>
+/// <param name="BeforeM2kW">Fouling resistance before, m²·K/W.</param>
+/// <param name="RemovedM2kW">Removed.</param>
+/// <param name="LeftM2kW">Left, against the best of the latest cleanings.</param>
+/// <param name="RemovedShare">Removed as a share of what was there; null when not known.</param>
+/// <param name="Confidence">How sure it is that the coefficient rose, 0 to 1; null when it cannot be compared.</param>
+public sealed record CleaningResultWire(
+    string Surface, string Verdict, string Reason,
+    [property: System.Text.Json.Serialization.JsonPropertyName("before_m2k_w")] UncertainWire BeforeM2kW,
+    [property: System.Text.Json.Serialization.JsonPropertyName("removed_m2k_w")] UncertainWire RemovedM2kW,
+    [property: System.Text.Json.Serialization.JsonPropertyName("left_m2k_w")] UncertainWire LeftM2kW, double? RemovedShare, double? Confidence);
+
+/// <summary>Cleanings, newest first.</summary>
 /// <param name="Cleanings">The cleanings.</param>
 public sealed record CleaningsWire(IReadOnlyList<CleaningWire> Cleanings);
 
@@ -44,7 +64,10 @@ public sealed record CleaningsWire(IReadOnlyList<CleaningWire> Cleanings);
 /// <param name="Kind">The plant's word for it, up to 60 letters.</param>
 /// <param name="End">When it ended; null or absent while it goes on.</param>
 /// <param name="Note">Free text, up to 2,000 letters.</param>
-public sealed record NewCleaningWire(string? Line, string? Effect, DateTimeOffset? Start, string? Kind, DateTimeOffset? End = null, string? Note = null);
+/// <param name="Body">The body that was cleaned, of an effect with bodies; null or absent: the one that served.</param>
+/// <param name="Rejected">True: there was no cleaning in this time, whatever was recognised. Then kind may be absent, and end must not.</param>
+public sealed record NewCleaningWire(
+    string? Line, string? Effect, DateTimeOffset? Start, string? Kind = null, DateTimeOffset? End = null, string? Note = null, string? Body = null, bool Rejected = false);
 
 /// <summary>Signals and what arrives that no plant file names.</summary>
 /// <param name="AsOf">The instant of the ages and shares.</param>

@@ -46,6 +46,8 @@ public sealed record LineWire(
 /// <param name="LastCleaning">The last cleaning that has ended; null when none is logged.</param>
 /// <param name="CleaningSince">Start of a cleaning that goes on; null otherwise.</param>
 /// <param name="Growth">Fouling resistance at the end of each week since the last cleaning, oldest first, m²·K/W.</param>
+/// <param name="Surface">The surface that serves: the effect's own, or its bodies joined by +; null when not known.</param>
+/// <param name="Campaign">Its present campaign; null until that is computed.</param>
 public sealed record EffectWire(
     string Name,
     string Line,
@@ -56,7 +58,9 @@ public sealed record EffectWire(
     DueWire Due,
     CleaningWire? LastCleaning,
     DateTimeOffset? CleaningSince,
-    IReadOnlyList<double> Growth);
+    IReadOnlyList<double> Growth,
+    string? Surface,
+    CampaignWire? Campaign);
 
 /// <summary>The latest hour of an effect. A number that could not be computed is null, and <paramref name="Reason"/> says why. Each <c>_u</c> is a standard uncertainty.</summary>
 /// <param name="At">Start of the hour that is summed up: the one before the end of the last window.</param>
@@ -78,6 +82,10 @@ public sealed record EffectWire(
 /// <param name="CleanlinessU">Its standard uncertainty, from that of the coefficient.</param>
 /// <param name="FoulingResistanceM2kW">Fouling resistance, m²·K/W; may be negative.</param>
 /// <param name="FoulingResistanceU">Its standard uncertainty.</param>
+/// <param name="CleanCoefficientWM2k">What the effect would do if clean at the conditions of this hour, W/(m²·K).</param>
+/// <param name="CleanCoefficientU">Its standard uncertainty.</param>
+/// <param name="CoefficientAtReferenceWM2k">Coefficient that the surface with this resistance would have at the reference conditions, W/(m²·K).</param>
+/// <param name="CoefficientAtReferenceU">Its standard uncertainty.</param>
 /// <param name="CleanFrom">Where the clean coefficient comes from.</param>
 /// <param name="DutyFrom">Where the duty comes from.</param>
 /// <param name="HeatingTemperatureFrom">Where the heating temperature comes from.</param>
@@ -103,6 +111,10 @@ public sealed record EffectNowWire(
     double? CleanlinessU,
     [property: JsonPropertyName("fouling_resistance_m2k_w")] double? FoulingResistanceM2kW,
     double? FoulingResistanceU,
+    [property: JsonPropertyName("clean_coefficient_w_m2k")] double? CleanCoefficientWM2k,
+    double? CleanCoefficientU,
+    [property: JsonPropertyName("coefficient_at_reference_w_m2k")] double? CoefficientAtReferenceWM2k,
+    double? CoefficientAtReferenceU,
     string? CleanFrom,
     string? DutyFrom,
     string? HeatingTemperatureFrom,
