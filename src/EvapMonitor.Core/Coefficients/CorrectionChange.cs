@@ -28,6 +28,12 @@ public sealed record CorrectionChange(long Since, double Change, double Scatter)
     /// </summary>
     private const double FewDays = 4;
 
+    /// <summary>Within this many standard deviations of a day a value is back where it was.</summary>
+    private const double BackWithin = 1;
+
+    /// <summary>A change under this share of a reading's standard uncertainty is not worth a word, however sure it is.</summary>
+    private const double WorthAWord = 0.25;
+
     /// <summary>1 % of a reading's uncertainty is the least scatter that is believed: a smaller one is rounding.</summary>
     private const double LeastScatterShare = 0.01;
 
@@ -46,6 +52,7 @@ public sealed record CorrectionChange(long Since, double Change, double Scatter)
         (long Day, double Median)[] days = [.. hours.Where(hour => recalibrated is not { } from || hour.Hour >= from)
             .GroupBy(hour => Milliseconds.DayOf(hour.Hour)).Where(day => day.Count() >= LeastHours).Select(day => (day.Key, Median(day.Select(hour => hour.Difference))))];
         double limit = Limit(signals), up = 0, down = 0, upBefore = 0, downBefore = 0, scatterBefore = 0;
+        double stood = 0;
         long upSince = 0, downSince = 0;
         CorrectionChange? stands = null;
         for (int i = 0; i < days.Length; i++)
@@ -58,17 +65,15 @@ public sealed record CorrectionChange(long Since, double Change, double Scatter)
             if (down == 0) (downSince, downBefore, scatterBefore) = (days[i].Day, middle, up == 0 ? scatter : scatterBefore);
             up = double.Max(0, up + off - Reference);
             down = double.Max(0, down - off - Reference);
-            if (up > limit || down > limit)
-            {
-                (long since, double before) = up > limit ? (upSince, upBefore) : (downSince, downBefore);
-                stands = new CorrectionChange(stands?.Since ?? since, Median(days[int.Max(0, i - 2)..(i + 1)].Select(day => day.Median)) - before, scatterBefore);
-                // It stands until the sums come down; they must not grow for ever, or a change that was put right would stand for as long again.
-                (up, down) = (double.Min(up, limit * 1.5), double.Min(down, limit * 1.5));
-            }
-            else if (up == 0 && down == 0) stands = null;
+            if (stands is null && up <= limit && down <= limit) continue;
+            (long since, double before) = stands is not null ? (stands.Since, stood) : up > limit ? (upSince, upBefore) : (downSince, downBefore);
+            stood = before;
+            stands = new CorrectionChange(since, Median(days[int.Max(0, i - 2)..(i + 1)].Select(day => day.Median)) - before, stands?.Scatter ?? scatterBefore);
+            // What was put right again is no change any more.
+            if (double.Abs(stands.Change) < BackWithin * stands.Scatter) (stands, up, down) = (null, 0, 0);
         }
 
-        return stands;
+        return stands is not null && double.Abs(stands.Change) >= WorthAWord * standard ? stands : null;
     }
 
     /// <summary>The sum at which a change is told, in standard deviations of a day.</summary>

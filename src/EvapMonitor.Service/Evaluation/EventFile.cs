@@ -13,8 +13,9 @@ namespace EvapMonitor.Service.Evaluation;
 /// <param name="Line">The line.</param>
 /// <param name="Effect">The effect; null for the whole line.</param>
 /// <param name="Signal">The signal of the instrument; null for others.</param>
+/// <param name="Note">Free text; of a cleaning, the plant's word for it.</param>
 /// <param name="Kind">cleaning, rejected-cleaning, instrument-excluded or recalibration.</param>
-internal sealed record LoggedEvent(long Start, long? End, string Line, string? Effect, string? Signal, string Kind);
+internal sealed record LoggedEvent(long Start, long? End, string Line, string? Effect, string? Signal, string Kind, string Note);
 
 /// <summary>Reads a file of logged events: time,end,line,effect,signal,kind,note. Every mistake ends it: a wrong log would move results in silence.</summary>
 internal static class EventFile
@@ -76,7 +77,7 @@ internal static class EventFile
             if (new LineInstruments(line).All.All(instrument => instrument.Signal != cells[4])) return $"line {line.Name} has no instrument with the signal '{cells[4]}'";
         }
 
-        logged = new LoggedEvent(start, end, line.Name, NullIfEmpty(cells[3]), NullIfEmpty(cells[4]), cells[5]);
+        logged = new LoggedEvent(start, end, line.Name, NullIfEmpty(cells[3]), NullIfEmpty(cells[4]), cells[5], cells[6]);
         return null;
     }
 

@@ -1,6 +1,7 @@
 using System.Globalization;
 using EvapMonitor.Core;
 using EvapMonitor.Core.Coefficients;
+using EvapMonitor.Core.Fouling;
 using EvapMonitor.Core.Plant;
 using EvapMonitor.Core.Readings;
 using EvapMonitor.Service.Ingest.Files;
@@ -62,25 +63,36 @@ internal sealed class FileEvaluation(Site site, CancellationToken stop) : IReadi
         using var writer = new CoefficientFile(path);
         using var balances = new BalanceFile(Path.Combine(folder, "balance.csv"));
         balances.WriteHeader();
+        using var campaigns = new CampaignFile(Path.Combine(folder, "campaigns.csv"));
+        var compared = new List<CleanComparisonResult>();
         foreach (Line line in site.Lines)
         {
             var evaluation = new LineEvaluation(site, line);
             var own = evaluation.Signals.Select(signal => _series[signal]).Where(series => series.Count > 0).ToList();
             if (own.Count == 0) continue;
             LineLog log = LogOf(line);
+            var hours = new LineHours(line, (long)site.Window.TotalMilliseconds);
             long last = own.Max(series => series.At[^1]);
             for (long day = Milliseconds.DayOf(own.Min(series => series.At[0])); day <= last; day += Milliseconds.Day)
             {
                 stop.ThrowIfCancellationRequested();
-                foreach (LineWindow window in evaluation.Evaluate(_series, day, long.Min(day + Milliseconds.Day, EndOfWindow(last)), log))
+                LineWindow[] windows = evaluation.Evaluate(_series, day, long.Min(day + Milliseconds.Day, EndOfWindow(last)), log);
+                hours.Add(windows);
+                foreach (LineWindow window in windows)
                 {
                     writer.Write(line, window);
                     if (window.Balance is { } balance) balances.Write(line.Name, window.At, balance);
                 }
             }
+
+            IReadOnlyList<Surface> surfaces = LineSurfaces.Of(hours.Records(_events));
+            compared.AddRange(hours.Compare(surfaces));
+            campaigns.Write(line.Name, surfaces);
         }
 
-        Summary = string.Create(CultureInfo.InvariantCulture, $"{_accepted} readings used, {_repeated} repeated, {Rejected} rejected, {_unknown.Values.Sum()} of unknown signals; {writer.Rows} rows in {path}, {balances.Rows} in balance.csv");
+        writer.Complete(compared);
+
+        Summary = string.Create(CultureInfo.InvariantCulture, $"{_accepted} readings used, {_repeated} repeated, {Rejected} rejected, {_unknown.Values.Sum()} of unknown signals; {writer.Rows} rows in {path}, {balances.Rows} in balance.csv, {campaigns.Rows} in campaigns.csv");
     }
 
     /// <inheritdoc/>

@@ -55,6 +55,17 @@ public class CorrectionChangeTests
     }
 
     [Fact]
+    public void WhatWasPutRight_IsNoChangeAnyMore()
+    {
+        IReadOnlyList<(long Hour, double Difference)> hours = Hours(new Gaussian(5), 90, day => day is >= 50 and < 65 ? 3 : 0);
+        Assert.NotNull(CorrectionChange.Find([.. hours.Where(hour => hour.Hour < 65 * Milliseconds.Day)], 1, null, Signals));
+        Assert.Null(CorrectionChange.Find(hours, 1, null, Signals));
+    }
+
+    [Fact]
+    public void SureButSmall_IsNotWorthAWord() => Assert.Null(CorrectionChange.Find(Hours(new Gaussian(5), 70, day => day >= 50 ? 3 : 0), 20, null, Signals));
+
+    [Fact]
     public void FewDays_SayNothing()
     {
         Assert.Null(CorrectionChange.Find([], 1, null, Signals));

@@ -1,3 +1,4 @@
+using EvapMonitor.Service.Api;
 using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Service.Evaluation;
 using EvapMonitor.Service.Store;
@@ -23,7 +24,7 @@ public sealed class FilesAgainstServiceTests(ApiService api) : IClassFixture<Api
             Assert.True(exit == 0, error);
             Assert.Contains("0 rejected", said);
             string[] rows = await File.ReadAllLinesAsync(Path.Combine(folder, "out", "coefficients.csv"), Stop);
-            string[] own = OfService(Path.Combine(folder, "service.csv"));
+            string[] own = await OfServiceAsync(Path.Combine(folder, "service.csv"));
             Assert.Equal(1 + (576 * 4), rows.Length);
             // Of all but the coefficient the store keeps the whole uncertainty, which the file does not print: the rows must be alike letter for letter.
             Assert.Equal(rows.Order(StringComparer.Ordinal), own.Order(StringComparer.Ordinal));
@@ -31,6 +32,9 @@ public sealed class FilesAgainstServiceTests(ApiService api) : IClassFixture<Api
             string[] balance = await File.ReadAllLinesAsync(Path.Combine(folder, "out", "balance.csv"), Stop);
             Assert.Equal(await BalanceOfServiceAsync(Path.Combine(folder, "service-balance.csv")), balance);
             Assert.True(balance.Length > 576 * 40);
+            string[] campaigns = await File.ReadAllLinesAsync(Path.Combine(folder, "out", "campaigns.csv"), Stop);
+            Assert.Equal(5, campaigns.Length);
+            Assert.All(campaigns[1..], row => Assert.Contains(",first data,", row));
             Assert.Contains(balance, row => row.StartsWith("2026-03-02T01:00:00Z,north,leaving_solids N2,kg/kg,0.", StringComparison.Ordinal));
         }
         finally
@@ -53,7 +57,7 @@ public sealed class FilesAgainstServiceTests(ApiService api) : IClassFixture<Api
     }
 
     /// <summary>Writes the stored windows with the writer of the command line.</summary>
-    private string[] OfService(string path)
+    private async Task<string[]> OfServiceAsync(string path)
     {
         LinePlace place = api.Service.Services.GetRequiredService<PlantHolder>().Current.Find("north")!;
         var trends = api.Service.Services.GetRequiredService<TrendStore>();
@@ -62,8 +66,13 @@ public sealed class FilesAgainstServiceTests(ApiService api) : IClassFixture<Api
             var effects = place.EffectIds.Select(id => trends.Windows(place.LineId, id, ApiService.Start, ApiService.End.AddDays(1))).ToList();
             for (int i = 0; i < effects[0].Count; i++)
                 file.Write(place.Line, new LineWindow(effects[0][i].At, effects[0][i].State, double.NaN, [.. effects.Select(effect => effect[i])]));
+            var surfaces = api.Service.Services.GetRequiredService<SurfaceStates>();
+            var clean = new List<CleanInTime>();
+            for (int k = 0; k < effects.Count; k++)
+                clean.Add(await surfaces.CleanAsync(place.LineId, place.EffectIds[k], place.Line.Effects[k].Name, ApiService.Start, ApiService.End.AddDays(1), Stop));
+            file.Complete(Enumerable.Range(0, effects[0].Count).SelectMany(i => effects.Select((effect, k) => clean[k].Compare(effect[i]))));
         }
 
-        return File.ReadAllLines(path);
+        return await File.ReadAllLinesAsync(path, Stop);
     }
 }

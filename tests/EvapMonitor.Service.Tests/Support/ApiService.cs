@@ -41,7 +41,7 @@ public class ApiService(PostgresServer server) : IAsyncLifetime
         if (!Prerequisites.HasPostgreSql) return;
         _service = await RunningService.StartAsync(server, Plant, End.AddMinutes(1));
         Assert.Equal("done", (await _service.ImportAsync(History)).State);
-        await _service.EvaluatedAsync();
+        await _service.SurfacesAsync();
     }
 
     /// <summary>Sends a request and expects problem details; gives their text.</summary>

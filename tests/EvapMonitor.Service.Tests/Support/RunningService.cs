@@ -1,3 +1,5 @@
+using Microsoft.Extensions.DependencyInjection;
+using EvapMonitor.Service.Store;
 using System.Net.Http.Headers;
 using System.Net.Http.Json;
 using System.Text;
@@ -71,6 +73,19 @@ public sealed class RunningService : IAsyncDisposable
         "the evaluation of every day",
         async () => await CountAsync($"SELECT count(*) FROM line_day WHERE anew OR taken_from IS NOT NULL OR changed_from < '{LastClosed:O}'") == 0,
         120);
+
+    /// <summary>Waits as above, and until what the hours tell of the surfaces is computed from all of it.</summary>
+    public async Task SurfacesAsync()
+    {
+        await EvaluatedAsync();
+        var (inputs, store, plant) = (Services.GetRequiredService<SurfaceInputs>(), Services.GetRequiredService<SurfaceStore>(), Services.GetRequiredService<PlantHolder>().Current);
+        foreach (LinePlace line in plant.Lines)
+        {
+            await Poll.UntilAsync(
+                "the surfaces of every line",
+                async () => await store.InputAsync(line.LineId, Stop) == $"{plant.RevisionId} {await inputs.VersionAsync(line.LineId, Stop)}", 60);
+        }
+    }
 
     private DateTimeOffset LastClosed => new(((Services.GetService(typeof(TimeProvider)) as TimeProvider)!.GetUtcNow().AddSeconds(-1).Ticks / TimeSpan.FromMinutes(5).Ticks) * TimeSpan.FromMinutes(5).Ticks, TimeSpan.Zero);
 
