@@ -172,7 +172,17 @@ public sealed class RevisionTests(PostgresServer server)
         {
             await service.EvaluatedAsync();
             Assert.Equal("1,1,3,3,3", await service.TextAsync("SELECT string_agg(shown_revision::text, ',' ORDER BY day) FROM line_day"));
+            // Corrected in another way than by this file.
+            await service.Http.AcceptAsync(SteadyHistory.Plant(220));
         }
+
+        await using (RunningService service = await RunningService.StartAsync(connection, SteadyHistory.Plant(210), SmallPlant.Now))
+            Assert.Equal(4, (await service.GetAsync<SiteWire>("/api/v1/site")).PlantRevision);
+        // An edited file is a new word, even when it says what was said before.
+        await using (RunningService service = await RunningService.StartAsync(connection, SteadyHistory.Plant(220), SmallPlant.Now))
+            Assert.Equal(4, (await service.GetAsync<SiteWire>("/api/v1/site")).PlantRevision);
+        await using (RunningService service = await RunningService.StartAsync(connection, SteadyHistory.Plant(210), SmallPlant.Now))
+            Assert.Equal(5, (await service.GetAsync<SiteWire>("/api/v1/site")).PlantRevision);
     }
 
     [PostgreSqlFact]
