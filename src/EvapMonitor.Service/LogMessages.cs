@@ -6,7 +6,7 @@ internal static partial class LogMessages
     [LoggerMessage(100, LogLevel.Information, "Serving {Site}, plant revision {Revision}, at {Address}")]
     public static partial void Serving(this ILogger log, string site, int revision, string address);
 
-    [LoggerMessage(103, LogLevel.Information, "The plant file given is revision {Given}, which another one follows: revision {InForce} is in force now")]
+    [LoggerMessage(103, LogLevel.Information, "The plant file given is revision {Given}, accepted before; in force now is revision {InForce}")]
     public static partial void EarlierPlantGiven(this ILogger log, int given, int inForce);
 
     [LoggerMessage(101, LogLevel.Information, "Stopping")]

@@ -16,6 +16,7 @@ var figures = new Dictionary<string, Func<string[], Task<int>>>
     ["ingest"] = IngestProof.RunAsync,
     ["database"] = DatabaseProof.RunAsync,
     ["kills"] = KillsProof.RunAsync,
+    ["recompute"] = RecomputeProof.RunAsync,
     ["fuzz"] = FuzzProof.RunAsync,
 };
 

@@ -9,6 +9,7 @@ import { effectOf, lineOf } from './answers.mjs';
 import { notices, signals, sources } from './intake.mjs';
 import { cleanings, plantText, sizes, start } from './plant.mjs';
 import { trend } from './series.mjs';
+import { differences, recomputations, revisions } from './revisions.mjs';
 import { everyWay, sheetOf } from './sheets.mjs';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
@@ -53,7 +54,11 @@ async function answer(request, response, url) {
     case 'cleanings': return answerCleanings(request, response, path, q);
     case 'signals': return json(response, 200, empty ? { as_of: iso(now()), signals: [], unknown: [] } : signals(plant, now()));
     case 'sources': return json(response, 200, empty ? { sources: [], spool: { bytes: 0 }, refused: [] } : sources(now()));
-    case 'plant': return json(response, 200, { revision: 3, accepted_at: '2026-10-02T08:11:00Z', in_force_from: '2026-10-01T00:00:00Z', author: 'k.olm', text: plantText });
+    case 'recomputations': return json(response, 200, { recomputations });
+    case 'plant':
+      if (path[3] === 'differences') return json(response, 200, differences);
+      if (path[1] === 'revisions') return json(response, 200, { revisions });
+      return json(response, 200, { revision: 3, accepted_at: '2026-10-02T08:11:00Z', in_force_from: '2026-10-01T00:00:00Z', author: 'k.olm', text: plantText });
     case 'imports':
       if (path[2] === 'cancel') { cancelled = true; return json(response, 202, running()); }
       if (request.method === 'POST') { await body(request); return json(response, 202, { ...running(), id: `sha256-${Date.now()}`, name: q.get('name'), state: 'done' }); }

@@ -18,6 +18,8 @@ internal static class CommandLine
             commands.AddCommand<CheckCommand>("check").WithDescription("Check a plant file; say per effect what can be computed and from which instruments.");
             commands.AddCommand<EvaluateCommand>("evaluate").WithDescription("The whole computation on files alone, without a database.");
             commands.AddCommand<ImportCommand>("import").WithDescription("Send history files to a running service and follow their import.");
+            commands.AddCommand<PlantCommand>("plant").WithDescription("Give a running service a plant file, from now on or from an instant; or list its revisions.");
+            commands.AddCommand<RecomputeCommand>("recompute").WithDescription("Have a running service compute days anew from their stored readings; stop that, go on.");
             commands.SetExceptionHandler(Failure.Tell);
         });
         return app.RunAsync(arguments, stop);

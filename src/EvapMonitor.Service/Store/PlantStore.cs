@@ -132,19 +132,21 @@ public sealed class PlantStore(NpgsqlDataSource database, TimeProvider clock)
     }
 
     /// <summary>
-    /// Accepts the plant file that the program was started with, as a correction of the revision in force now. A file that is in force at another time is left as it
-    /// is: a service that starts again with the file it once began with must not undo a change that was made since.
+    /// Accepts the plant file that the program was started with, as a correction of the revision in force now. A file unchanged since the last start is left as it
+    /// is, and so is one that is in force at another time: a service that starts again with the file it once began with must not undo what was accepted since.
     /// </summary>
     /// <returns>The revision that the file is.</returns>
     public async Task<int> AcceptAtStartAsync(Site site, string text, string author, CancellationToken stop)
     {
         string sha256 = Convert.ToHexStringLower(SHA256.HashData(Encoding.UTF8.GetBytes(text)));
-        await using (NpgsqlConnection connection = await database.OpenConnectionAsync(stop))
-        {
-            if (InForce(await RevisionsAsync(connection)).LastOrDefault(era => era.Sha256 == sha256) is { } known) return known.RevisionId;
-        }
-
-        return (await AcceptAsync(site, text, author, null, null, stop)).Revision;
+        await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
+        int? lastGiven = await connection.QuerySingleOrDefaultAsync<int?>(
+            "SELECT revision_id FROM (SELECT * FROM plant_revision WHERE given_at IS NOT NULL ORDER BY given_at DESC, revision_id DESC LIMIT 1) given WHERE sha256 = @sha256",
+            new { sha256 });
+        int revision = lastGiven ?? InForce(await RevisionsAsync(connection)).LastOrDefault(era => era.Sha256 == sha256)?.RevisionId
+            ?? (await AcceptAsync(site, text, author, null, null, stop)).Revision;
+        await connection.ExecuteAsync("UPDATE plant_revision SET given_at = @now WHERE revision_id = @revision", new { now = clock.GetUtcNow().UtcDateTime, revision });
+        return revision;
     }
 
     /// <summary>Of revisions those that are in force at some time, in order of time.</summary>

@@ -28,13 +28,15 @@ internal sealed class ServiceProcess : IDisposable
     /// <param name="plant">Path of the plant file.</param>
     /// <param name="data">The data folder.</param>
     /// <param name="connection">A database of somebody else's; null for a private one.</param>
-    public static ServiceProcess Start(string plant, string data, string? connection = null)
+    /// <param name="cores">How many cores it may think that there are; null: those that there are.</param>
+    public static ServiceProcess Start(string plant, string data, string? connection = null, int? cores = null)
     {
         string program = Path.Combine(AppContext.BaseDirectory, "evapmonitor.dll");
         var start = new ProcessStartInfo("dotnet", [program, "run", plant, "--data", data, "--listen", "http://127.0.0.1:0"]) { RedirectStandardOutput = true };
         start.Environment["EVAPMONITOR_MQTT"] = "off";
         start.Environment.Remove("EVAPMONITOR_CONNECTION");
         if (connection is not null) start.Environment["EVAPMONITOR_CONNECTION"] = connection;
+        if (cores is { } most) start.Environment["DOTNET_PROCESSOR_COUNT"] = most.ToString(CultureInfo.InvariantCulture);
         return new ServiceProcess(Process.Start(start)!, data);
     }
 

@@ -62,7 +62,7 @@ public sealed class DashboardTests(DashboardService dashboard, Chromium chromium
         await using RunningService service = await RunningService.StartAsync(dashboard.Server, SmallPlant.Text, SmallPlant.Now);
         await using OpenPage open = await chromium.OpenAsync(service.Address);
         await open.GoAsync("/plant", "Revision 1");
-        await open.Page.Locator("input[type=file]").SetInputFilesAsync(new FilePayload { Name = "spring.csv", MimeType = "text/csv", Buffer = History.Long(250_000) });
+        await open.Page.Locator(".upload input[type=file]").SetInputFilesAsync(new FilePayload { Name = "spring.csv", MimeType = "text/csv", Buffer = History.Long(250_000) });
         await Assertions.Expect(open.Page.Locator("section.work progress").First).ToBeVisibleAsync();
         await Assertions.Expect(open.Page.Locator("table tbody tr").First).ToContainTextAsync("done", new() { Timeout = 60_000 });
         await Assertions.Expect(open.Page.Locator("table tbody tr").First).ToContainTextAsync("spring.csv");

@@ -10,6 +10,13 @@ export const addresses = {
   signals: `${base}/signals`,
   sources: `${base}/sources`,
   plant: `${base}/plant`,
+  revisions: `${base}/plant/revisions`,
+  revision: (id: number) => `${base}/plant/revisions/${id}`,
+  differences: (id: number, from: number) => `${base}/plant/revisions/${id}/differences?from=${from}`,
+  /** `from`: the instant, ms; null corrects the revision in force now. */
+  acceptPlant: (from: number | null) => `${base}/plant/revisions${from === null ? '' : `?in_force_from=${part(new Date(from).toISOString())}`}`,
+  recomputations: `${base}/recomputations`,
+  turnRecomputation: (id: number, what: 'cancel' | 'resume') => `${base}/recomputations/${id}/${what}`,
   imports: `${base}/imports`,
   events: `${base}/events`,
   /** The events missed since one are sent first. */

@@ -2,7 +2,7 @@ import type { Problem } from './types';
 
 /** A request that did not succeed, with words for the reader. `answered`: the service did answer, so repeating it changes nothing. */
 export class RequestFailure extends Error {
-  constructor(message: string, readonly answered: boolean, readonly status: number | null) {
+  constructor(message: string, readonly answered: boolean, readonly status: number | null, readonly problem: Problem | null = null) {
     super(message);
   }
 }
@@ -26,7 +26,7 @@ export async function send(address: string, options: RequestInit = {}): Promise<
   }
   if (answer.ok) return answer;
   const problem = await answer.json().catch(() => null) as Problem | null;
-  throw new RequestFailure(describe(problem, answer.status), answer.status < 500, answer.status);
+  throw new RequestFailure(describe(problem, answer.status), answer.status < 500, answer.status, problem);
 }
 
 /** Fetches JSON. */

@@ -397,10 +397,57 @@ export interface PlantRevision {
   text: string;
 }
 
+/** An accepted plant file without its text. */
+export interface Revision {
+  revision: number;
+  accepted_at: Instant;
+  in_force_from: Instant;
+  in_force_until: Instant | null;
+  state: 'in force' | 'past' | 'coming' | 'replaced';
+  replaced_by: number | null;
+  author: string;
+  sha256: string;
+  /** Days of lines whose shown results were computed under it. */
+  days_computed: number;
+}
+
+export interface DifferentLine { change: 'same' | 'added' | 'removed'; from_line: number | null; to_line: number | null; text: string }
+
+/** How a plant file differs from another, line by line. */
+export interface Differences { from: number; to: number; added: number; removed: number; stretches: { lines: DifferentLine[] }[] }
+
+/** Days computed anew though none of their readings changed. */
+export interface Recomputation {
+  id: number;
+  cause: 'plant revision' | 'older model' | 'asked';
+  why: string;
+  revision: number | null;
+  line: string | null;
+  /** First and last UTC day, 2026-03-01. */
+  from: string;
+  to: string;
+  days_total: number;
+  days_done: number;
+  days_left: number;
+  state: 'running' | 'done' | 'cancelled';
+  days_per_minute: number | null;
+  seconds_left: number | null;
+  started_at: Instant;
+  ended_at: Instant | null;
+  author: string;
+}
+
+export interface AcceptedRevision { revision: Revision; is_new: boolean; recomputation: Recomputation | null }
+
+/** What is wrong in a plant file, and where. */
+export interface PlantProblem { line: number; column: number; path: string; found: string; allowed: string }
+
 /** Problem details, RFC 9457. */
 export interface Problem {
   title?: string;
   detail?: string;
   status?: number;
   errors?: Record<string, string[]>;
+  /** Of a plant file: every mistake. */
+  problems?: PlantProblem[];
 }

@@ -1,12 +1,15 @@
 import { addresses } from '../api/addresses';
-import type { Import, PlantRevision } from '../api/types';
+import type { Import, PlantRevision, Revision } from '../api/types';
 import { useResource } from '../api/use-resource';
 import { Scroller } from '../parts/Scroller';
 import { Shown } from '../parts/Waiting';
 import { Upload } from '../parts/Upload';
 import { useTitle } from '../parts/use-title';
+import { PlantForm } from '../plant/PlantForm';
+import { Recomputations } from '../plant/Recomputations';
+import { Revisions } from '../plant/Revisions';
 import { calmNow } from '../site/clock';
-import { eventsMissed, imports, site, zone } from '../site/state';
+import { eventsMissed, imports, plantChanged, recomputations, site, zone } from '../site/state';
 import { bytes, count, fixed } from '../words/number';
 import { fullMoment, moment } from '../words/time';
 import { useEffect } from 'preact/hooks';
@@ -15,10 +18,17 @@ import { useEffect } from 'preact/hooks';
 export function Plant() {
   useTitle('Plant');
   const plant = useResource<PlantRevision>(addresses.plant);
+  const revisions = useResource<{ revisions: Revision[] }>(addresses.revisions);
   const revision = site.state.value.value?.plant_revision ?? null;
-  useEffect(() => { const known = plant.state.peek().value; if (known && revision !== null && known.revision !== revision) void plant.load(); }, [revision]);
-  const missed = eventsMissed.value;
-  useEffect(() => { if (plant.state.peek().value) void plant.load(); }, [missed]);
+  useEffect(() => { const known = plant.state.peek().value; if (known && revision !== null && known.revision !== revision) { void plant.load(); void revisions.load(); } }, [revision]);
+  const changes = eventsMissed.value + plantChanged.value;
+  useEffect(() => {
+    if (plant.state.peek().value) { void plant.load(); void revisions.load(); }
+    void recomputations.load();
+  }, [changes]);
+  // Days computed under a revision grow as a recomputation goes on; its end is soon enough.
+  const running = (recomputations.state.value.value?.recomputations ?? []).filter(r => r.state === 'running').length;
+  useEffect(() => { if (revisions.state.peek().value) void revisions.load(); }, [running]);
   return (
     <section class="page">
       <h1 class="page-name">Plant</h1>
@@ -27,7 +37,15 @@ export function Plant() {
       <Shown of={imports} what="The imports">
         {({ imports: all }) => (all.length === 0 ? <p class="quiet">No file has been imported yet.</p> : <Imports all={all} />)}
       </Shown>
-      <h2>Plant file</h2>
+      <h2>Days computed anew</h2>
+      <Shown of={recomputations} what="The recomputations">
+        {({ recomputations: all }) => (all.length === 0 ? <p class="quiet">No day has been computed anew yet.</p> : <Recomputations all={all} />)}
+      </Shown>
+      <h2>Plant files</h2>
+      <Shown of={revisions} what="The plant files">
+        {({ revisions: all }) => <><Revisions all={all} /><PlantForm all={all} /></>}
+      </Shown>
+      <h2>Plant file in force</h2>
       <Shown of={plant} what="The plant file">
         {p => <>
           <p>Revision {p.revision}, accepted {fullMoment(Date.parse(p.accepted_at), zone.value)}{p.author && <> from {p.author}</>}

@@ -1,7 +1,7 @@
 import { computed, effect, signal } from '@preact/signals';
 import { addresses } from '../api/addresses';
 import { Resource } from '../api/resource';
-import type { Import, Line, Site } from '../api/types';
+import type { Import, Line, Recomputation, Site } from '../api/types';
 import { connect, connection } from '../live/connection';
 import { throttle } from '../live/throttle';
 import { learnTime } from './clock';
@@ -11,6 +11,8 @@ import { observeWaiting } from './waiting';
 export const site = new Resource<Site>(addresses.site);
 export const lines = new Resource<{ lines: Line[] }>(addresses.lines);
 export const imports = new Resource<{ imports: Import[] }>(addresses.imports);
+/** Fetched by the page that shows them; kept fresh from then on. */
+export const recomputations = new Resource<{ recomputations: Recomputation[] }>(addresses.recomputations);
 
 /** Civil time of the site; UTC until the site is known. */
 export const zone = computed(() => usableZone(site.state.value.value?.time_zone));
@@ -21,6 +23,8 @@ export const resultsChanged = signal<Readonly<Record<string, number>>>({});
 export const cleaningsChanged = signal(0);
 /** Grows when something was logged of an instrument, or taken back. */
 export const instrumentsChanged = signal(0);
+/** Grows when a plant file was accepted. */
+export const plantChanged = signal(0);
 /** Grows when events were missed for good: everything shown is to be fetched anew. */
 export const eventsMissed = signal(0);
 
@@ -47,6 +51,12 @@ function mergeImport(one: Import): void {
   imports.put({ imports: at < 0 ? [one, ...known] : known.map(i => (i.id === one.id ? one : i)) });
 }
 
+function mergeRecomputation(one: Recomputation): void {
+  const known = recomputations.state.peek().value?.recomputations;
+  if (!known) return;
+  recomputations.put({ recomputations: known.some(r => r.id === one.id) ? known.map(r => (r.id === one.id ? one : r)) : [one, ...known] });
+}
+
 /** Loads what every page shares and keeps it fresh. */
 export function startState(): () => void {
   const all = () => void Promise.all([site.load(), lines.load(), imports.load()]);
@@ -70,6 +80,8 @@ export function startState(): () => void {
     windows: data => { changedLines.add((data as { line: string }).line); publish(); },
     import: data => mergeImport(data as Import),
     instruments: () => { instrumentsChanged.value++; },
+    recomputation: data => mergeRecomputation(data as Recomputation),
+    plant: () => { plantChanged.value++; void lines.load(); },
     cleanings: () => { cleaningsChanged.value++; void lines.load(); },
   }, everything);
   return () => { forget(); clearInterval(regular); close(); };

@@ -1,7 +1,9 @@
 -- Revisions in time. What was accepted before this held for all time, the last one alone: all of them start where the first does, and of those with one start the
 -- one accepted last is in force.
 UPDATE plant_revision SET in_force_from = (SELECT in_force_from FROM plant_revision ORDER BY revision_id LIMIT 1);
-ALTER TABLE plant_revision ADD COLUMN request_key text UNIQUE;
+ALTER TABLE plant_revision ADD COLUMN request_key text UNIQUE, ADD COLUMN given_at timestamptz;
+COMMENT ON COLUMN plant_revision.given_at IS 'When the program was last started with this file; null: never. A file unchanged since the last start undoes nothing that came since.';
+UPDATE plant_revision SET given_at = accepted_at;
 
 -- Under which names a revision knows the lines and effects: a later rename must not part an earlier revision from its history.
 CREATE TABLE revision_line (
@@ -47,3 +49,18 @@ CREATE INDEX line_day_superseded ON line_day (superseded_at) WHERE superseded_at
 UPDATE line_day d SET superseded_at = clock_timestamp()
 WHERE EXISTS (SELECT 1 FROM line_window w WHERE w.line_id = d.line_id AND w.at >= d.day::timestamp AT TIME ZONE 'UTC'
     AND w.at < (d.day + 1)::timestamp AT TIME ZONE 'UTC' AND w.revision_id <> d.shown_revision);
+
+-- Lines are written beside each other now: two may need the same month at the same time.
+CREATE OR REPLACE FUNCTION ensure_month(parent text, instant timestamptz) RETURNS void LANGUAGE plpgsql AS $$
+DECLARE
+    first_day date := date_trunc('month', instant AT TIME ZONE 'UTC')::date;
+    child     text := format('%s_%s', parent, to_char(first_day, 'YYYYMM'));
+BEGIN
+    IF to_regclass(child) IS NULL THEN
+        EXECUTE format('CREATE TABLE IF NOT EXISTS %I PARTITION OF %I FOR VALUES FROM (%L) TO (%L)',
+            child, parent, first_day::text || ' 00:00+00', (first_day + interval '1 month')::date::text || ' 00:00+00');
+    END IF;
+EXCEPTION
+    WHEN duplicate_table OR unique_violation THEN
+        NULL;
+END $$;
