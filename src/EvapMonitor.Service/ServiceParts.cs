@@ -25,7 +25,7 @@ internal static class ServiceParts
     public static IServiceCollection AddEvaluation(this IServiceCollection services) => services
         .AddSingleton<LiveEvents>().AddSingleton<EvaluationSignal>().AddSingleton<LineLogs>()
         .AddSingleton<ImportWorker>().AddHostedService(provider => provider.GetRequiredService<ImportWorker>())
-        .AddSingleton<LineTurns>().AddHostedService<EvaluationWorker>()
+        .AddSingleton<DaysInHand>().AddSingleton<LineTurns>().AddHostedService<EvaluationWorker>()
         .AddSingleton<RecomputationSignal>().AddSingleton<RecomputationWatch>().AddHostedService(provider => provider.GetRequiredService<RecomputationWatch>())
         .AddHostedService<SupersededWindowsDeletion>().AddHostedService<SurfaceWorker>();
 

@@ -5,8 +5,8 @@ using Npgsql;
 namespace EvapMonitor.Service.Evaluation;
 
 /// <summary>
-/// Turns stored readings into stored results. Live, late, imported, recomputed: all of it comes as marked days. Each line has one day at a time under evaluation, as
-/// many lines as the machine has cores, lines with today's day first. A line is evaluated by the one process that holds its lease.
+/// Turns stored readings into stored results. Live, late, imported, recomputed: all of it comes as marked days. As many are under evaluation as the machine has
+/// cores: one of each line, lines with today's day first, and where cores are left, more of a line. A line is evaluated by the one process that holds its lease.
 /// </summary>
 public sealed class EvaluationWorker(
     DayStore days, LineTurns turns, LeaseStore leases, PlantStore plants, PlantHolder plant, EvaluationSignal signal, TimeProvider clock, ILogger<EvaluationWorker> log)
@@ -21,9 +21,9 @@ public sealed class EvaluationWorker(
     private static readonly TimeSpan Closing = TimeSpan.FromSeconds(1);
 
     private readonly DaysSetAside _aside = new(clock);
-    private readonly Dictionary<int, Task<LineTurn>> _running = [];
+    private readonly Dictionary<(int Line, int Seat), Task<LineTurn>> _running = [];
     private readonly Dictionary<int, long> _servedAt = [];
-    private readonly HashSet<int> _resting = [];
+    private readonly HashSet<int> _resting = [], _full = [];
     private Dictionary<int, long> _fences = [];
     private long _renewed;
     private bool _away;
@@ -40,6 +40,7 @@ public sealed class EvaluationWorker(
                 {
                     bell = signal.WaitAsync(Pause, stoppingToken);
                     _resting.Clear();
+                    _full.Clear();
                 }
 
                 await RenewAsync(stoppingToken);
@@ -87,23 +88,27 @@ public sealed class EvaluationWorker(
     private async Task GiveTurnsAsync(CancellationToken stop)
     {
         int free = Environment.ProcessorCount - _running.Count;
-        int[] idle = [.. _fences.Keys.Where(line => !_running.ContainsKey(line) && !_resting.Contains(line))];
-        if (free <= 0 || idle.Length == 0) return;
+        int[] open = [.. _fences.Keys.Where(line => !_resting.Contains(line) && !(_running.ContainsKey((line, 0)) && _full.Contains(line)))];
+        if (free <= 0 || open.Length == 0) return;
         DateTimeOffset closed = Closed();
-        IReadOnlyList<(int Line, bool Today)> waiting = await days.WaitingLinesAsync(idle, closed, Rest, stop);
-        foreach ((int line, _) in waiting.OrderByDescending(one => one.Today).ThenBy(one => _servedAt.GetValueOrDefault(one.Line)).Take(free))
+        IReadOnlyList<(int Line, bool Today)> waiting = await days.WaitingLinesAsync(open, closed, Rest, stop);
+        // A line that is not served yet goes before a second seat of one that is.
+        var next = waiting.OrderBy(one => _running.ContainsKey((one.Line, 0))).ThenByDescending(one => one.Today).ThenBy(one => _servedAt.GetValueOrDefault(one.Line));
+        foreach ((int line, _) in next.Take(free))
         {
+            int seat = Enumerable.Range(0, Environment.ProcessorCount).First(one => !_running.ContainsKey((line, one)));
             (long fence, IReadOnlyCollection<DateOnly> aside) = (_fences[line], _aside.Of(line));
             _servedAt[line] = clock.GetTimestamp();
-            _running[line] = Task.Run(() => turns.NextAsync(line, fence, closed, Rest, aside, stop), CancellationToken.None);
+            _running[(line, seat)] = Task.Run(() => turns.NextAsync(line, seat, fence, closed, Rest, aside, stop), CancellationToken.None);
         }
     }
 
     private void Judge(LineTurn turn)
     {
-        _running.Remove(turn.LineId);
-        // A line with nothing to do, or in trouble, is asked again after the pause.
-        if (turn.End != TurnEnd.Done) _resting.Add(turn.LineId);
+        _running.Remove((turn.LineId, turn.Seat));
+        // A line with nothing to do, or in trouble, is asked again after the pause; one whose other days are all taken, too.
+        if (turn.End == TurnEnd.Nothing && turn.Seat > 0) _full.Add(turn.LineId);
+        else if (turn.End != TurnEnd.Done) _resting.Add(turn.LineId);
         switch (turn.End)
         {
             case TurnEnd.Done:
