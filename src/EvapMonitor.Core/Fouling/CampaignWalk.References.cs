@@ -9,7 +9,7 @@ internal sealed partial class CampaignWalk
     private const long Memory = 366 * Milliseconds.Day;
 
     /// <summary>Slopes are learnt anew when the hours have grown by this share: more often they would move by less than their uncertainty.</summary>
-    private const double Growth = 0.05;
+    private const double Growth = 0.1;
 
     private readonly double[] _share;
     private readonly CleanHour[] _results;

@@ -179,17 +179,17 @@ internal sealed class ConditionSlopes
     {
         for (int t = 0; t < SurfaceTable.Terms; t++)
         {
-            var values = new List<double>(limit - from);
+            double[] all = new double[limit - from];
+            int count = 0;
             for (int i = from; i < limit; i++)
             {
-                if (settled[i] && table.Use[i] == use && double.IsFinite(table.Condition[t][i])) values.Add(table.Condition[t][i]);
+                if (settled[i] && table.Use[i] == use && double.IsFinite(table.Condition[t][i])) all[count++] = table.Condition[t][i];
             }
 
-            if (values.Count == 0) continue;
-            values.Sort();
+            if (count == 0) continue;
             // One hour in 200 at either end is no experience.
-            Lowest[t] = values[values.Count / 200];
-            Highest[t] = values[^(1 + (values.Count / 200))];
+            Lowest[t] = Robust.Place(all.AsSpan(0, count), count / 200);
+            Highest[t] = Robust.Place(all.AsSpan(0, count), count - 1 - (count / 200));
         }
     }
 

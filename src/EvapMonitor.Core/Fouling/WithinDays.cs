@@ -1,3 +1,4 @@
+using System.Runtime.InteropServices;
 using EvapMonitor.Core.Readings;
 
 namespace EvapMonitor.Core.Fouling;
@@ -15,7 +16,10 @@ internal sealed class WithinDays
     /// <summary>Huber's constant: 95 % of the efficiency of least squares where the noise is normal.</summary>
     private const double HuberBound = 1.345;
 
+    /// <summary>Rounds of weighting at most, and the move of a slope under which there is no need for another.</summary>
     private const int Rounds = 6;
+
+    private const double Settled = 5e-4;
 
     private readonly List<double> _response = [], _feed = [], _time = [];
     private readonly List<double>[] _terms = [[], [], []];
@@ -76,7 +80,7 @@ internal sealed class WithinDays
     {
         double[] weights = new double[Rows];
         Array.Fill(weights, 1);
-        double[] column = Take(_terms[term], weights);
+        double[] column = Take(CollectionsMarshal.AsSpan(_terms[term]), weights);
         double sum = 0;
         foreach (double one in column) sum += one * one;
         return double.Sqrt(sum / int.Max(Rows, 1));
@@ -100,15 +104,15 @@ internal sealed class WithinDays
         for (int round = 0; round < Rounds; round++)
         {
             double[] y = Take(response, weights);
-            double[][] x = [.. Enumerable.Range(0, SurfaceTable.Terms).Where(t => active[t]).Select(t => Take(_terms[t], weights))];
-            double[]? z = active[2] ? Take(_feed, weights) : null;
+            double[][] x = [.. Enumerable.Range(0, SurfaceTable.Terms).Where(t => active[t]).Select(t => Take(CollectionsMarshal.AsSpan(_terms[t]), weights))];
+            double[]? z = active[2] ? Take(CollectionsMarshal.AsSpan(_feed), weights) : null;
             if (TwoStages.Solve(x, y, z) is not { } solution) return null;
             double moved = slopes.Length == 0 ? 1 : slopes.Zip(solution.Slopes, (before, now) => double.Abs(before - now)).Append(0).Max();
             slopes = solution.Slopes;
             double[] residuals = new double[Rows];
             for (int i = 0; i < Rows; i++) residuals[i] = solution.Residuals[i] / double.Sqrt(weights[i]);
             double scale = Robust.Spread(residuals) * double.Sqrt(Rows / double.Max(Rows - (2.0 * _dayOf.Count) - x.Length, 1));
-            bool settles = moved < 1e-5 || round + 1 == Rounds;
+            bool settles = moved < Settled || round + 1 == Rounds;
             if (settles) last = Report(active, solution, residuals, weights, scale);
             double[] next = new double[Rows];
             for (int i = 0; i < Rows; i++) next[i] = double.Min(1, HuberBound * scale / double.Max(double.Abs(residuals[i]), 1e-300));
@@ -152,29 +156,30 @@ internal sealed class WithinDays
     }
 
     /// <summary>A column without the weighted mean and drift of each group, times the root of the weight.</summary>
-    private double[] Take(IReadOnlyList<double> column, double[] weights)
+    private double[] Take(ReadOnlySpan<double> column, double[] weights)
     {
         double[] left = new double[Rows];
+        ReadOnlySpan<double> time = CollectionsMarshal.AsSpan(_time);
         for (int g = 0; g < _dayOf.Count; g++)
         {
             double w = 0, t = 0, c = 0;
             for (int i = _starts[g]; i < _starts[g + 1]; i++)
             {
                 w += weights[i];
-                t += weights[i] * _time[i];
+                t += weights[i] * time[i];
                 c += weights[i] * column[i];
             }
 
             double meanTime = t / w, mean = c / w, product = 0, square = 0;
             for (int i = _starts[g]; i < _starts[g + 1]; i++)
             {
-                double at = _time[i] - meanTime;
+                double at = time[i] - meanTime;
                 product += weights[i] * at * (column[i] - mean);
                 square += weights[i] * at * at;
             }
 
             double drift = product / square;
-            for (int i = _starts[g]; i < _starts[g + 1]; i++) left[i] = double.Sqrt(weights[i]) * (column[i] - mean - (drift * (_time[i] - meanTime)));
+            for (int i = _starts[g]; i < _starts[g + 1]; i++) left[i] = (weights[i] == 1 ? 1 : double.Sqrt(weights[i])) * (column[i] - mean - (drift * (time[i] - meanTime)));
         }
 
         return left;

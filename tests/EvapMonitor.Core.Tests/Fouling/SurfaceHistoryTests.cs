@@ -22,15 +22,12 @@ public class SurfaceHistoryTests
     public void AYearOfHours_IsToldInTime()
     {
         SimulatedSurface surface = Year(1, 30);
-        surface.History();
+        for (int i = 0; i < 5; i++) surface.History();
         var clock = Stopwatch.StartNew();
         SurfaceHistory history = surface.History();
         clock.Stop();
         Assert.Equal(30, history.Campaigns.Count);
         TestContext.Current.TestOutputHelper!.WriteLine($"{clock.Elapsed.TotalMilliseconds}");
-        foreach (Campaign c in history.Campaigns) TestContext.Current.TestOutputHelper!.WriteLine($"{c.StartedBy} {c.InitialResistance} {c.FinalResistance} {c.GrowthRate} {c.RemovedShare} {c.ProductionHours}");
-        foreach (CleanReference r in history.References) TestContext.Current.TestOutputHelper!.WriteLine($"{r.Level} {r.LevelUncertainty} {r.Source} {r.HourScatter} {r.HourCorrelation}");
-        foreach (SurfaceCleaning c in history.Cleanings) TestContext.Current.TestOutputHelper!.WriteLine($"{c.Verdict} {c.Reason} {c.Test} {c.Before} {c.Left} {c.Removed}");
         Assert.InRange(clock.Elapsed.TotalMilliseconds, 0, 100);
     }
 }
