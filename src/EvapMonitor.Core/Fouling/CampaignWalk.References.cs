@@ -111,7 +111,7 @@ internal sealed partial class CampaignWalk
             Lowest = SurfaceConditions.From(slopes.Lowest),
             Highest = SurfaceConditions.From(slopes.Highest),
             HourScatter = slopes.Noise.Learnt ? slopes.Noise.Sigma : 0,
-            HourCorrelation = slopes.Noise.Phi,
+            SlowShare = slopes.Noise.SlowShare,
         };
     }
 }

@@ -88,6 +88,7 @@ internal sealed class ConditionSlopes
         }
 
         learnt.Choose(days, active);
+        learnt.Noise = NoiseLearning.Of(table, use, from, limit, segment, settled, learnt.Slopes, learnt.Noise);
         return learnt;
     }
 

@@ -167,7 +167,7 @@ internal sealed record Recovery
             double[] left = [.. before.Select(i => Carried(i, one, 0))], right = [.. after.Select(i => Carried(i, other, 0))];
             double scatter = double.Sqrt(((left.Length * double.Pow(Robust.Spread(left), 2)) + (right.Length * double.Pow(Robust.Spread(right), 2))) / (left.Length + right.Length));
             double random = before.Concat(after).Average(i => table.Random[i]);
-            return new HourNoise(double.Max(double.Max(scatter, random), one.HourScatter), one.HourCorrelation, true);
+            return new HourNoise(double.Max(double.Max(scatter, random), one.HourScatter), one.SlowShare, true);
         }
 
         private double Level(int[] hours, CleanReference reference)

@@ -145,7 +145,31 @@ internal sealed class WithinDays
             for (int j = 0; j < place.Length; j++) full[place[i], place[j]] = widen * covariance[i][j];
         }
 
-        return new SlopeEstimate(slopes, full, active[2] ? solution.FirstStage(Cluster(), Days) : double.NaN, HourNoise.Learn(residuals, [.. _time], _starts));
+        return new SlopeEstimate(slopes, full, active[2] ? solution.FirstStage(Cluster(), Days) : double.NaN, Noise(residuals));
+    }
+
+    /// <summary>The scatter within days, and from the correlation of neighbours how much of it is slow.</summary>
+    private HourNoise Noise(double[] residuals)
+    {
+        if (_dayOf.Count < 5) return HourNoise.Assumed;
+        double limit = 3 * Robust.Spread(residuals), squares = 0, products = 0, paired = 0;
+        for (int g = 0; g < _dayOf.Count; g++)
+        {
+            for (int i = _starts[g]; i < _starts[g + 1]; i++)
+            {
+                double one = double.Clamp(residuals[i], -limit, limit);
+                squares += one * one;
+                if (i + 1 == _starts[g + 1] || _time[i + 1] - _time[i] > 1.5) continue;
+                double next = double.Clamp(residuals[i + 1], -limit, limit);
+                products += one * next;
+                paired += ((one * one) + (next * next)) / 2;
+            }
+        }
+
+        if (!(paired > 0)) return HourNoise.Assumed;
+        // Taking a mean and a slope from n numbers lowers their correlation to about φ − (2 + 4φ)/n (Kendall 1954 for the mean; the same expansion with a slope).
+        double n = Rows / (double)_dayOf.Count, phi = ((products / paired) + (2 / n)) / double.Max(1 - (4 / n), 0.2);
+        return new HourNoise(double.Sqrt(squares / double.Max(Rows - (2.0 * _dayOf.Count), 1)), double.Clamp(phi / HourNoise.Phi, 0, 1), true);
     }
 
     private int[] Cluster()
