@@ -19,7 +19,7 @@ internal sealed partial class CampaignWalk
     private const double Confirmed = 0.01;
 
     /// <summary>Share of the fall of ln U, and the least of it, that a cleaning must bring back before it is said not to have failed.</summary>
-    private const double WorthwhileShare = 0.2, WorthwhileRise = 0.02;
+    private const double WorthwhileShare = 0.3, WorthwhileRise = 0.02;
 
     private readonly SurfaceSettings _settings;
     private readonly SurfaceTable _table;
