@@ -106,7 +106,8 @@ internal sealed partial class CampaignWalk
 
     private void End(Interruption interruption, int first)
     {
-        _campaigns[^1].End = interruption.IsCleaning ? interruption.CleaningStart : interruption.Start;
+        // A log may say that a cleaning began before the first hour of all.
+        _campaigns[^1].End = long.Max(_campaigns[^1].Start, interruption.IsCleaning ? interruption.CleaningStart : interruption.Start);
         // Before the first hour of all there was no campaign to end.
         if (first == 0) _campaigns.RemoveAt(0);
     }
@@ -114,8 +115,9 @@ internal sealed partial class CampaignWalk
     private void Begin(Interruption interruption, Recovery recovery, int first)
     {
         bool known = interruption.IsCleaning;
+        long start = long.Max(known ? interruption.CleaningEnd : interruption.End, _campaigns.Count > 0 ? _campaigns[^1].End!.Value : long.MinValue);
         double origin = first < _table.Count ? _table.Served[first] - 0.5 : double.NaN;
-        _campaigns.Add(new OpenCampaign(known ? interruption.CleaningEnd : interruption.End, first, origin, interruption.Source, known ? 1 : 1 - recovery.Test!.Significance));
+        _campaigns.Add(new OpenCampaign(start, first, origin, interruption.Source, known ? 1 : 1 - recovery.Test!.Significance));
     }
 
     private static SurfaceCleaning Cleaning(Interruption interruption, RecoveryTest? test, Recovery told, CleaningVerdict verdict, string reason) => new()

@@ -63,6 +63,57 @@ public class SurfaceHistoryTests
         }
     }
 
+    [Theory]
+    [InlineData(1)]
+    [InlineData(2)]
+    [InlineData(3)]
+    public void LaterDays_MoveNothing_WhateverHappens(int state)
+    {
+        (SimulatedSurface surface, _) = CampaignCases.Make(state, 15);
+        var random = new Random(state);
+        if (state == 3) surface.Events.Add(new SurfaceEvent(surface.Hours[1500].Hour, surface.Hours[1500].Hour, SurfaceEventKind.Recalibration, "", null));
+        SurfaceHistory whole = surface.History();
+        for (int cut = 0; cut < 15; cut++)
+        {
+            int kept = random.Next(200, surface.Hours.Count);
+            long end = surface.Hours[kept - 1].Hour + Milliseconds.Hour;
+            SurfaceHistory part = SurfaceHistory.Of(new SurfaceSettings(null), surface.Hours.GetRange(0, kept), [], [.. surface.Spans.Where(span => span.Start < end)], [.. surface.Events.Where(one => one.Start < end)]);
+            int first = Enumerable.Range(0, kept).First(i => whole.Hours[i].Campaign == whole.Hours[kept - 1].Campaign);
+            Assert.Equal(whole.Hours.Take(first), part.Hours.Take(first));
+        }
+    }
+
+    [Fact]
+    public void WhateverComes_IsTakenWithoutAFault()
+    {
+        var random = new Random(7);
+        double Any(double usual) => random.Next(40) switch { 0 => double.NaN, 1 => 0, 2 => double.PositiveInfinity, _ => usual * (0.5 + random.NextDouble()) };
+        for (int run = 0; run < 300; run++)
+        {
+            List<SurfaceHour> hours = [];
+            List<SurfaceSpan> spans = [];
+            List<SurfaceEvent> events = [];
+            long now = 0;
+            for (int count = random.Next(300); count > 0; count--)
+            {
+                now += Milliseconds.Hour * (random.Next(10) == 0 ? random.Next(1, 100) : 1);
+                hours.Add(new SurfaceHour(now, random.Next(50) == 0 ? "N2" : "N1", random.Next(30) == 0 ? "B" : "A", 12, new(1 + (2000 * random.NextDouble()), 1, Any(10)), Any(10), Any(350), Any(0.4), Any(3e4), Any(10)));
+            }
+
+            for (int count = random.Next(30); count > 0; count--)
+            {
+                long at = random.NextInt64(now + 1), length = random.NextInt64(-1000, 50 * Milliseconds.Hour);
+                spans.Add(new SurfaceSpan(at, at + length, (SpanKind)random.Next(4)));
+                if (random.Next(2) == 0) events.Add(new SurfaceEvent(at / 2, random.Next(5) == 0 ? long.MaxValue : (at / 2) + length, (SurfaceEventKind)random.Next(3), "w", null));
+            }
+
+            SurfaceHistory history = SurfaceHistory.Of(new SurfaceSettings(random.Next(2) == 0 ? null : 2200), hours, hours, spans, events);
+            Assert.Equal(hours.Count, history.Hours.Count);
+            Assert.DoesNotContain(history.Hours, hour => hour is null || hour.Cleanliness.IsPresent && !(hour.Cleanliness.Random >= 0));
+            for (int k = 1; k < history.Campaigns.Count; k++) Assert.True(history.Campaigns[k - 1].Start <= history.Campaigns[k - 1].End && history.Campaigns[k - 1].End <= history.Campaigns[k].Start);
+        }
+    }
+
     [Fact]
     public void SameHours_GiveTheSameBits()
     {
