@@ -12,6 +12,7 @@ internal sealed partial class CampaignWalk
     private const double Growth = 0.1;
 
     private readonly double[] _share;
+    private readonly int[] _sharedBy;
     private readonly CleanHour[] _results;
     private readonly List<CleanReference> _references = [];
     private readonly Dictionary<SurfaceUse, (int Limit, ConditionSlopes Slopes)> _learnt = [];
@@ -28,17 +29,40 @@ internal sealed partial class CampaignWalk
             // More is known of its beginning: what was said of these days is said anew.
             foreach (((SurfaceUse use, long since), int at) in campaign.References) _references[at] = Make(index, use, since, campaign.Slopes[use]);
             from = campaign.From;
+            LookBack(index);
         }
 
         for (int i = from; i < campaign.Limit; i++)
         {
             CleanReference reference = ReferenceOf(index, _table.Use[i], i);
             CleanComparisonResult one = reference.Compare(_hours[i].Coefficient, SurfaceConditions.From(_table.ConditionsOf(i)));
-            bool none = reference.Basis == ReferenceBasis.None;
             _results[i] = new CleanHour(_table.At[i], index, campaign.References[(_table.Use[i], reference.From)], one.CleanCoefficient, one.Cleanliness, one.Resistance, one.AtReference, one.Clamped);
-            if (!none && reference.Basis != ReferenceBasis.Design) _share[i] = double.Clamp(one.Cleanliness.Value, 0.3, 1.1);
+            if (IsLearnt(reference)) Share(i, one.Cleanliness.Value, index);
         }
     }
+
+    /// <summary>
+    /// Hours before the first cleaning had nothing to be held against. What is said of them stays; but for learning from them, how clean they were is now known.
+    /// </summary>
+    private void LookBack(int index)
+    {
+        OpenCampaign campaign = _campaigns[index];
+        long baseline = Baseline(campaign.Start);
+        for (int i = campaign.From - 1; i >= 0 && _table.At[i] >= baseline; i--)
+        {
+            if ((_sharedBy[i] >= 0 && _sharedBy[i] < index) || !campaign.Samples.ContainsKey(_table.Use[i])) continue;
+            CleanReference reference = ReferenceOf(index, _table.Use[i], campaign.From);
+            if (IsLearnt(reference)) Share(i, reference.Compare(_hours[i].Coefficient, SurfaceConditions.From(_table.ConditionsOf(i))).Cleanliness.Value, index);
+        }
+    }
+
+    private void Share(int hour, double cleanliness, int by)
+    {
+        _share[hour] = double.Clamp(cleanliness, 0.3, 1.1);
+        _sharedBy[hour] = by;
+    }
+
+    private static bool IsLearnt(CleanReference reference) => reference.Basis is ReferenceBasis.Level or ReferenceBasis.Conditions;
 
     /// <summary>The expectation of a campaign at one of its hours.</summary>
     private CleanReference ReferenceOf(int index, SurfaceUse use, int hour)

@@ -44,7 +44,9 @@ internal sealed partial class CampaignWalk
         _segment = new int[_table.Count];
         _settled = [.. _table.Whole];
         _share = new double[_table.Count];
+        _sharedBy = new int[_table.Count];
         Array.Fill(_share, 1);
+        Array.Fill(_sharedBy, -1);
         _results = new CleanHour[_table.Count];
         Divide();
     }
