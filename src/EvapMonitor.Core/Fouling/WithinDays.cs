@@ -87,7 +87,7 @@ internal sealed class WithinDays
     }
 
     /// <summary>
-    /// Two-stage least squares with Huber weights; covariance clustered by day (Liang and Zeger 1986, G/(G−1)·(N−1)/(N−k)). Null when the columns depend on each other.
+    /// Two-stage least squares with Huber weights; covariance clustered by day (Liang and Zeger 1986), for few days. Null when the columns depend on each other.
     /// </summary>
     /// <param name="active">Terms to estimate.</param>
     /// <param name="held">Values of the terms that are not.</param>

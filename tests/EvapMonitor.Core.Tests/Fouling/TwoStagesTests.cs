@@ -14,10 +14,11 @@ public class TwoStagesTests
         Assert.Equal(18.0 / 15, found.Slopes[0], 12);
         // Residuals with x itself: y − 1.2 x.
         Assert.Equal([-1.4, 2.2, 1.2, -1.4, 0.4], found.Residuals.Select(one => double.Round(one, 12)));
-        // Each row a cluster: x̂ = 1.5 z, Σx̂² = 22.5, Σ(x̂ e)² = 2.25·(4·1.96 + 4.84 + 0 + 1.96 + 4·0.16) = 34.38; times 5/4·4/4.
-        Assert.Equal(1.25 * 34.38 / (22.5 * 22.5), found.Covariance([0, 1, 2, 3, 4], 5)[0][0], 12);
-        // First stage: slope 1.5, residuals 0, 0.5, −1, 0.5, 0; Σ(z v)² = 0.25 + 0.25 = 0.5 over Σz² = 10: variance 1.25·0.5/100.
-        Assert.Equal(1.5 * 1.5 / (1.25 * 0.5 / 100), found.FirstStage([0, 1, 2, 3, 4], 5), 9);
+        // Each row a cluster: x̂ = 1.5 z, Σx̂² = 22.5; of each row 1 − z²/10 is left: scores 4.2/0.6, −3.3/0.9, 0, −2.1/0.9, 1.2/0.6.
+        double squares = 49 + (121 / 9.0) + (49 / 9.0) + 4;
+        Assert.Equal(0.8 * squares / (22.5 * 22.5), found.Covariance([0, 1, 2, 3, 4], 5)[0][0], 12);
+        // First stage: slope 1.5, residuals 0, 0.5, −1, 0.5, 0; scores −0.5/0.9 and 0.5/0.9 over Σz² = 10.
+        Assert.Equal(1.5 * 1.5 / (0.8 * 0.5 / 0.81 / 100), found.FirstStage([0, 1, 2, 3, 4], 5), 9);
     }
 
     [Fact]
