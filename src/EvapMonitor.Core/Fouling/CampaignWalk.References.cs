@@ -1,3 +1,4 @@
+using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Readings;
 
 namespace EvapMonitor.Core.Fouling;
@@ -27,17 +28,53 @@ internal sealed partial class CampaignWalk
         if (campaign.Sample(_table, _settled, next == 0 ? long.MaxValue : next))
         {
             // More is known of its beginning: what was said of these days is said anew.
+            campaign.Links.Clear();
             foreach (((SurfaceUse use, long since), int at) in campaign.References) _references[at] = Make(index, use, since, campaign.Slopes[use]);
             from = campaign.From;
             LookBack(index);
         }
 
-        for (int i = from; i < campaign.Limit; i++)
+        for (int i = from; i < campaign.Limit; i++) HoldAgainst(i, index);
+        if (campaign.StartedBy != CleaningSource.FirstData) CarryOver(index);
+    }
+
+    private void HoldAgainst(int hour, int index)
+    {
+        CleanReference reference = ReferenceOf(index, _table.Use[hour], hour);
+        CleanComparisonResult one = reference.Compare(_hours[hour].Coefficient, SurfaceConditions.From(_table.ConditionsOf(hour)));
+        int at = _campaigns[index].References[(_table.Use[hour], reference.From)];
+        _results[hour] = new CleanHour(_table.At[hour], index, at, one.CleanCoefficient, one.Cleanliness, one.Resistance, one.AtReference, one.Clamped);
+        if (IsLearnt(reference)) Share(hour, one.Cleanliness.Value, index);
+    }
+
+    /// <summary>
+    /// A product that follows another without an interruption finds the surface as that one left it: where it never ran after a cleaning, its level is what the
+    /// resistance of the moment leaves of it.
+    /// </summary>
+    private void CarryOver(int index)
+    {
+        OpenCampaign campaign = _campaigns[index];
+        foreach (SurfaceUse use in Enumerable.Range(campaign.From, campaign.Limit - campaign.From).Select(i => _table.Use[i]).Distinct().ToArray())
         {
-            CleanReference reference = ReferenceOf(index, _table.Use[i], i);
-            CleanComparisonResult one = reference.Compare(_hours[i].Coefficient, SurfaceConditions.From(_table.ConditionsOf(i)));
-            _results[i] = new CleanHour(_table.At[i], index, campaign.References[(_table.Use[i], reference.From)], one.CleanCoefficient, one.Cleanliness, one.Resistance, one.AtReference, one.Clamped);
-            if (IsLearnt(reference)) Share(i, one.Cleanliness.Value, index);
+            if (campaign.Samples.GetValueOrDefault(use)?.Hours.Length >= LevelSample.Fewest || campaign.Links.GetValueOrDefault(use)?.Hours.Length == LevelSample.Most) continue;
+            int first = Array.IndexOf(_table.Use, use, campaign.From, campaign.Limit - campaign.From);
+            int[] hours = [.. Enumerable.Range(first, campaign.Limit - first)
+                .TakeWhile(i => _segment[i] == _segment[first] && _table.At[i] < _table.At[first] + LevelSample.Within).Where(i => _settled[i] && _table.Use[i] == use).Take(LevelSample.Most)];
+            int[] before = [.. Enumerable.Range(campaign.From, first - campaign.From).Where(i => _segment[i] == _segment[first] && _settled[i] && _results[i].Resistance.IsPresent && IsLearnt(_references[_results[i].Reference]))];
+            int[] last = [.. before.Where(i => _table.At[i] > _table.At[first] - LevelSample.Within).TakeLast(LevelSample.Most)];
+            double origin = _table.Served[first] - 0.5;
+            Measured carried = Carried(last, [.. before.TakeLast(MostForGrowth)], origin);
+            if (hours.Length < LevelSample.Fewest || !carried.IsPresent || campaign.Links.GetValueOrDefault(use)?.Hours.Length == hours.Length) continue;
+            campaign.Links[use] = new LevelSample(campaign.Start, hours, origin) { Carried = carried, Before = _table.Use[last[^1]].Product };
+            foreach (((SurfaceUse of, long since), int at) in campaign.References)
+            {
+                if (of == use) _references[at] = Make(index, use, since, campaign.Slopes[use]);
+            }
+
+            for (int i = first; i < campaign.Limit; i++)
+            {
+                if (_table.Use[i] == use) HoldAgainst(i, index);
+            }
         }
     }
 
@@ -105,7 +142,8 @@ internal sealed partial class CampaignWalk
         long baseline = Baseline(since);
         LevelSample[] samples = [.. _campaigns.Take(index + 1).Where(campaign => campaign.Start >= baseline)
             .Select(campaign => campaign.Samples.GetValueOrDefault(use)).OfType<LevelSample>().Where(sample => sample.Hours.Length >= LevelSample.Fewest).TakeLast(int.Max(_settings.BestOf, 1))];
-        if (samples.Length > 0) return CleanLevels.Combine(frame, _table, samples, slopes);
+        if (samples.Length == 0) samples = [.. _campaigns.Take(index + 1).Where(campaign => campaign.Start >= baseline).Select(campaign => campaign.Links.GetValueOrDefault(use)).OfType<LevelSample>().TakeLast(int.Max(_settings.BestOf, 1))];
+        if (CleanLevels.Combine(frame, _table, samples, slopes) is { } combined) return combined;
         string why = baseline > long.MinValue && baseline > _campaigns[0].Start ? $"an instrument was recalibrated on {CleanLevels.Day(baseline)} and no cleaning with this product has followed"
             : _campaigns.Take(index + 1).Any(campaign => campaign.StartedBy != CleaningSource.FirstData) ? "too few hours with this product after a cleaning"
             : "no cleaning was seen yet";

@@ -125,6 +125,24 @@ public class CleaningsTests
     }
 
     [Fact]
+    public void AProductThatFollowsAnotherWithoutAStop_TakesTheResistanceOver()
+    {
+        SimulatedSurface surface = Fouled(30);
+        int changed = surface.Hours.Count;
+        surface.Product = "other";
+        surface.Clean = 3500;
+        surface.Produce(100);
+        SurfaceHistory history = surface.History();
+        Assert.StartsWith("level carried over from product usual at 1 of the last 1 changes", history.References[^1].Source, StringComparison.Ordinal);
+        double[] errors = [.. Enumerable.Range(changed, 100).Select(i => (history.Hours[i].Resistance.Value - surface.Truth[i].Resistance) / history.Hours[i].Resistance.Random)];
+        Assert.InRange(errors.Average(), -2, 2);
+        Assert.True(errors.Count(error => double.Abs(error) < 2) >= 80);
+        // It is frozen after its first day.
+        SurfaceHistory part = SurfaceHistory.Of(new SurfaceSettings(null), surface.Hours[..(changed + 40)], [], surface.Spans, surface.Events);
+        Assert.Equal(history.Hours.Take(changed + 40), part.Hours);
+    }
+
+    [Fact]
     public void ARecalibration_EndsTheBaseline_UntilTheNextCleaning()
     {
         SimulatedSurface surface = Fouled(28);
@@ -160,7 +178,7 @@ public class CleaningsTests
     /// <summary>Three campaigns with logged cleanings, and 200 hours of scale since the last.</summary>
     private static SimulatedSurface Fouled(int state)
     {
-        SimulatedSurface surface = SurfaceHistoryTests.Campaigns(state, 3, 200);
+        SimulatedSurface surface = SurfaceHistoryTests.Campaigns(state, 3, 200, product: "usual");
         surface.Produce(200);
         return surface;
     }

@@ -151,9 +151,9 @@ public class SurfaceHistoryTests
         Assert.Empty(history.Hours);
     }
 
-    internal static SimulatedSurface Campaigns(int state, int campaigns, int hours, double removes = 1)
+    internal static SimulatedSurface Campaigns(int state, int campaigns, int hours, double removes = 1, string product = "")
     {
-        var surface = new SimulatedSurface(state) { Season = 8 };
+        var surface = new SimulatedSurface(state) { Season = 8, Product = product };
         for (int k = 0; k < campaigns; k++)
         {
             surface.Produce(hours);
