@@ -86,6 +86,31 @@ internal static class CampaignCases
         return (surface, happened);
     }
 
+    /// <summary>A surface on which everything happens at random: three products with and without stops between them, cleanings of all kinds, recalibrations.</summary>
+    public static SimulatedSurface Jumble(int state)
+    {
+        var random = new Random(state);
+        var surface = new SimulatedSurface(state) { Product = "A" };
+        for (int k = 0; k < 25; k++)
+        {
+            surface.Produce(random.Next(5, 120));
+            switch (random.Next(6))
+            {
+                case 0: surface.CleanFor(3, random.NextDouble(), logged: random.Next(2) == 0); break;
+                case 1: surface.Stand(random.Next(1, 6)); break;
+                case 2: surface.CleanFor(4); break;
+                case 3: surface.Events.Add(new SurfaceEvent(surface.Now, surface.Now, SurfaceEventKind.Recalibration, "", null)); break;
+                default:
+                    int product = random.Next(3);
+                    (surface.Product, surface.Clean) = ("ABC"[product].ToString(), 2000 + (500 * product));
+                    break;
+            }
+        }
+
+        surface.Produce(30);
+        return surface;
+    }
+
     private static void Set(SimulatedSurface surface, bool other)
     {
         surface.Product = other ? "B" : "A";
