@@ -85,8 +85,13 @@ internal sealed class TwoStages
     private static double[][] Sandwich(double[][] columns, double[] residuals, double[][] inverse, int[] cluster, int clusters)
     {
         int p = columns.Length;
-        double[][] score = Sums(p, clusters, (j, i) => columns[j][i] * residuals[i], cluster);
-        double[][] product = Sums(p * p, clusters, (jk, i) => columns[jk / p][i] * columns[jk % p][i], cluster);
+        double[][] score = [.. columns.Select(column => Products(column, residuals, cluster, clusters))];
+        double[][] product = new double[p * p][];
+        for (int j = 0; j < p; j++)
+        {
+            for (int k = 0; k <= j; k++) product[(j * p) + k] = product[(k * p) + j] = Products(columns[j], columns[k], cluster, clusters);
+        }
+
         double[][] covariance = new double[p][];
         for (int i = 0; i < p; i++) covariance[i] = new double[p];
         for (int c = 0; c < clusters; c++)
@@ -114,15 +119,11 @@ internal sealed class TwoStages
         return covariance;
     }
 
-    private static double[][] Sums(int count, int clusters, Func<int, int, double> of, int[] cluster)
+    /// <summary>Σ a·b of each cluster.</summary>
+    private static double[] Products(double[] one, double[] other, int[] cluster, int clusters)
     {
-        double[][] sums = new double[count][];
-        for (int j = 0; j < count; j++)
-        {
-            sums[j] = new double[clusters];
-            for (int i = 0; i < cluster.Length; i++) sums[j][cluster[i]] += of(j, i);
-        }
-
+        double[] sums = new double[clusters];
+        for (int i = 0; i < one.Length; i++) sums[cluster[i]] += one[i] * other[i];
         return sums;
     }
 
