@@ -8,7 +8,7 @@ namespace EvapMonitor.Core.Fouling;
 /// </summary>
 internal static class NoiseLearning
 {
-    private const int Stretch = 72, Block = 12, FewestHours = 60, FewestInBlock = 8, FewestStretches = 4;
+    private const int Stretch = 72, Block = 12, FewestHours = 30, FewestInBlock = 4, FewestStretches = 4;
 
     /// <summary>What is left of a variance of 1 in hours and in means of twelve: for noise that is new every hour, and for slow noise.</summary>
     private static readonly (double Hours, double Blocks) KeptOfFast = Kept(new HourNoise(1, 0, true)), KeptOfSlow = Kept(new HourNoise(1, 1, true));
@@ -17,6 +17,7 @@ internal static class NoiseLearning
     public static HourNoise Of(SurfaceTable table, SurfaceUse use, int from, int limit, int[] segment, bool[] settled, double[] slopes, HourNoise withinDays)
     {
         List<double> hours = [], blocks = [];
+        double thinner = 0;
         int stretches = 0;
         for (int start = from; start < limit;)
         {
@@ -30,7 +31,10 @@ internal static class NoiseLearning
                 hours.AddRange(left);
                 foreach (IGrouping<long, int> block in Enumerable.Range(0, rows.Length).GroupBy(k => (table.At[rows[k]] - table.At[rows[0]]) / (Block * Milliseconds.Hour)))
                 {
-                    if (block.Count() >= FewestInBlock) blocks.Add(block.Average(k => left[k]));
+                    int count = block.Count();
+                    if (count < FewestInBlock) continue;
+                    blocks.Add(block.Average(k => left[k]));
+                    thinner += Block / (double)count;
                 }
             }
 
@@ -38,14 +42,17 @@ internal static class NoiseLearning
             start = int.Max(stop, start + 1);
         }
 
-        return stretches < FewestStretches || blocks.Count < 2 * FewestStretches ? withinDays : Solve(Square(hours), Square(blocks));
+        return stretches < FewestStretches || blocks.Count < 2 * FewestStretches ? withinDays : Solve(Square(hours), Square(blocks), thinner / blocks.Count);
     }
 
-    private static HourNoise Solve(double ofHours, double ofBlocks)
+    /// <param name="ofHours">Mean square of the hours.</param>
+    /// <param name="ofBlocks">Mean square of the means of blocks.</param>
+    /// <param name="thinner">How many times fewer hours the blocks have than they could: the fast part of their means is larger by so much.</param>
+    private static HourNoise Solve(double ofHours, double ofBlocks, double thinner)
     {
-        double determinant = (KeptOfFast.Hours * KeptOfSlow.Blocks) - (KeptOfFast.Blocks * KeptOfSlow.Hours);
+        double fastBlocks = KeptOfFast.Blocks * thinner, determinant = (KeptOfFast.Hours * KeptOfSlow.Blocks) - (fastBlocks * KeptOfSlow.Hours);
         double fast = ((ofHours * KeptOfSlow.Blocks) - (ofBlocks * KeptOfSlow.Hours)) / determinant;
-        double slow = ((KeptOfFast.Hours * ofBlocks) - (KeptOfFast.Blocks * ofHours)) / determinant;
+        double slow = ((KeptOfFast.Hours * ofBlocks) - (fastBlocks * ofHours)) / determinant;
         if (slow <= 0) return new HourNoise(double.Sqrt(ofHours / KeptOfFast.Hours), 0, true);
         if (fast <= 0) return new HourNoise(double.Sqrt(ofBlocks / KeptOfSlow.Blocks), 1, true);
         return new HourNoise(double.Sqrt(fast + slow), slow / (fast + slow), true);

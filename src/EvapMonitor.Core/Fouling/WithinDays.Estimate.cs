@@ -75,7 +75,7 @@ internal sealed partial class WithinDays
         return new SlopeEstimate(slopes, full, active[2] ? solution.FirstStage(Cluster(), Days) : double.NaN, Noise(residuals));
     }
 
-    /// <summary>The scatter within days, and from the correlation of neighbours how much of it is slow.</summary>
+    /// <summary>The scatter within days, and from the correlation of neighbours how much of it is slow: never less than is assumed, since a day shows little of what lasts for one.</summary>
     private HourNoise Noise(double[] residuals)
     {
         if (_dayOf.Count < 5) return HourNoise.Assumed;
@@ -96,7 +96,7 @@ internal sealed partial class WithinDays
         if (!(paired > 0)) return HourNoise.Assumed;
         // Taking a mean and a slope from n numbers lowers their correlation to about φ − (2 + 4φ)/n (Kendall 1954 for the mean; the same expansion with a slope).
         double n = Rows / (double)_dayOf.Count, phi = ((products / paired) + (2 / n)) / double.Max(1 - (4 / n), 0.2);
-        return new HourNoise(double.Sqrt(squares / double.Max(Rows - (2.0 * _dayOf.Count), 1)), double.Clamp(phi / HourNoise.Phi, 0, 1), true);
+        return new HourNoise(double.Sqrt(squares / double.Max(Rows - (2.0 * _dayOf.Count), 1)), double.Clamp(phi / HourNoise.Phi, HourNoise.Assumed.SlowShare, 1), true);
     }
 
     private int[] Cluster()
