@@ -1,5 +1,6 @@
 using System.Globalization;
 using EvapMonitor.Benchmarks.Balances;
+using EvapMonitor.Benchmarks.Fouling;
 using EvapMonitor.Benchmarks.Ingest;
 using EvapMonitor.Benchmarks.Proofs;
 using EvapMonitor.Benchmarks.Steam;
@@ -13,6 +14,8 @@ var figures = new Dictionary<string, Func<string[], Task<int>>>
     ["speed"] = _ => Task.FromResult(SpeedProof.Run()),
     ["uncertainty"] = arguments => Task.FromResult(UncertaintyProof.Run(arguments)),
     ["instruments"] = arguments => Task.FromResult(InstrumentsProof.Run(arguments)),
+    ["expectation"] = arguments => Task.FromResult(ExpectationProof.Run(arguments)),
+    ["campaigns"] = arguments => Task.FromResult(CampaignsProof.Run(arguments)),
     ["ingest"] = IngestProof.RunAsync,
     ["database"] = DatabaseProof.RunAsync,
     ["kills"] = KillsProof.RunAsync,

@@ -56,7 +56,7 @@ public sealed record Campaign
 
 /// <summary>Time out of production after which the surface was as before, as far as can be told.</summary>
 /// <param name="Start">Start, ms since 1970-01-01T00:00:00Z.</param>
-/// <param name="End">End.</param>
+/// <param name="End">End; <see cref="long.MaxValue"/> while nothing was produced since.</param>
 /// <param name="Test">The comparison before and after; null when there were not enough hours.</param>
 /// <param name="Reason">Why it is not taken for a cleaning, in plain words.</param>
 public sealed record SurfaceStop(long Start, long End, RecoveryTest? Test, string Reason);

@@ -9,9 +9,10 @@ internal sealed partial class CampaignWalk
     private const long Memory = 366 * Milliseconds.Day;
 
     /// <summary>Slopes are learnt anew when the hours have grown by this share: more often they would move by less than their uncertainty.</summary>
-    private const double Growth = 0.05;
+    private const double Growth = 0.1;
 
     private readonly double[] _share;
+    private readonly int[] _sharedBy;
     private readonly CleanHour[] _results;
     private readonly List<CleanReference> _references = [];
     private readonly Dictionary<SurfaceUse, (int Limit, ConditionSlopes Slopes)> _learnt = [];
@@ -26,19 +27,32 @@ internal sealed partial class CampaignWalk
         if (campaign.Sample(_table, _settled, next == 0 ? long.MaxValue : next))
         {
             // More is known of its beginning: what was said of these days is said anew.
+            campaign.Links.Clear();
             foreach (((SurfaceUse use, long since), int at) in campaign.References) _references[at] = Make(index, use, since, campaign.Slopes[use]);
             from = campaign.From;
+            LookBack(index);
         }
 
-        for (int i = from; i < campaign.Limit; i++)
-        {
-            CleanReference reference = ReferenceOf(index, _table.Use[i], i);
-            CleanComparisonResult one = reference.Compare(_hours[i].Coefficient, SurfaceConditions.From(_table.ConditionsOf(i)));
-            bool none = reference.Basis == ReferenceBasis.None;
-            _results[i] = new CleanHour(_table.At[i], index, campaign.References[(_table.Use[i], reference.From)], one.CleanCoefficient, one.Cleanliness, one.Resistance, one.AtReference, one.Clamped);
-            if (!none && reference.Basis != ReferenceBasis.Design) _share[i] = double.Clamp(one.Cleanliness.Value, 0.3, 1.1);
-        }
+        for (int i = from; i < campaign.Limit; i++) HoldAgainst(i, index);
+        if (campaign.StartedBy != CleaningSource.FirstData) CarryOver(index);
     }
+
+    private void HoldAgainst(int hour, int index)
+    {
+        CleanReference reference = ReferenceOf(index, _table.Use[hour], hour);
+        CleanComparisonResult one = reference.Compare(_hours[hour].Coefficient, SurfaceConditions.From(_table.ConditionsOf(hour)));
+        int at = _campaigns[index].References[(_table.Use[hour], reference.From)];
+        _results[hour] = new CleanHour(_table.At[hour], index, at, one.CleanCoefficient, one.Cleanliness, one.Resistance, one.AtReference, one.Clamped);
+        if (IsLearnt(reference)) Share(hour, one.Cleanliness.Value, index);
+    }
+
+    private void Share(int hour, double cleanliness, int by)
+    {
+        _share[hour] = double.Clamp(cleanliness, 0.3, 1.1);
+        _sharedBy[hour] = by;
+    }
+
+    private static bool IsLearnt(CleanReference reference) => reference.Basis is ReferenceBasis.Level or ReferenceBasis.Conditions;
 
     /// <summary>The expectation of a campaign at one of its hours.</summary>
     private CleanReference ReferenceOf(int index, SurfaceUse use, int hour)
@@ -81,7 +95,8 @@ internal sealed partial class CampaignWalk
         long baseline = Baseline(since);
         LevelSample[] samples = [.. _campaigns.Take(index + 1).Where(campaign => campaign.Start >= baseline)
             .Select(campaign => campaign.Samples.GetValueOrDefault(use)).OfType<LevelSample>().Where(sample => sample.Hours.Length >= LevelSample.Fewest).TakeLast(int.Max(_settings.BestOf, 1))];
-        if (samples.Length > 0) return CleanLevels.Combine(frame, _table, samples, slopes);
+        if (samples.Length == 0) samples = [.. _campaigns.Take(index + 1).Where(campaign => campaign.Start >= baseline).Select(campaign => campaign.Links.GetValueOrDefault(use)).OfType<LevelSample>().TakeLast(int.Max(_settings.BestOf, 1))];
+        if (CleanLevels.Combine(frame, _table, samples, slopes) is { } combined) return combined;
         string why = baseline > long.MinValue && baseline > _campaigns[0].Start ? $"an instrument was recalibrated on {CleanLevels.Day(baseline)} and no cleaning with this product has followed"
             : _campaigns.Take(index + 1).Any(campaign => campaign.StartedBy != CleaningSource.FirstData) ? "too few hours with this product after a cleaning"
             : "no cleaning was seen yet";
@@ -111,7 +126,7 @@ internal sealed partial class CampaignWalk
             Lowest = SurfaceConditions.From(slopes.Lowest),
             Highest = SurfaceConditions.From(slopes.Highest),
             HourScatter = slopes.Noise.Learnt ? slopes.Noise.Sigma : 0,
-            HourCorrelation = slopes.Noise.Phi,
+            SlowShare = slopes.Noise.SlowShare,
         };
     }
 }

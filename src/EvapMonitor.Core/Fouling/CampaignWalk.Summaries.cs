@@ -67,7 +67,7 @@ internal sealed partial class CampaignWalk
             clean += _results[i].CleanCoefficient.Random / (_results[i].CleanCoefficient.Value * _results[i].CleanCoefficient.Value) / hours.Length;
         }
 
-        double variance = new HourNoise(double.Max(own, Robust.Spread(carried)), held.HourCorrelation, true).Variance(weights, [.. growth.Select(i => _table.At[i] / (double)Milliseconds.Hour)]);
+        double variance = new HourNoise(double.Max(own, Robust.Spread(carried)), held.SlowShare, true).Variance(weights, [.. growth.Select(i => _table.At[i] / (double)Milliseconds.Hour)]);
         return new Measured(Robust.Location(carried), 0, double.Sqrt((1.1 * variance) + (clean * clean)));
     }
 
@@ -87,7 +87,11 @@ internal sealed partial class CampaignWalk
 
         (double slope, double standard) = Robust.Slope(days, resistance);
         // Neighbouring bins share their slow causes: the uncertainty is that of so many fewer.
-        double phi = double.Pow(_references[_results[hours[0]].Reference].HourCorrelation, hours.Length / (double)bins);
-        return new Measured(slope, 0, standard * double.Sqrt((1 + phi) / (1 - phi)));
+        CleanReference reference = _references[_results[hours[0]].Reference];
+        double perBin = hours.Length / (double)bins;
+        // The share of the slow part in a bin's median, and its correlation from bin to bin.
+        double share = reference.SlowShare / (reference.SlowShare + ((1 - reference.SlowShare) / perBin)), phi = double.Pow(HourNoise.Phi, perBin);
+        double widen = 1 + (2 * share * phi / (1 - phi));
+        return new Measured(slope, 0, standard * double.Sqrt(widen));
     }
 }

@@ -1,4 +1,3 @@
-using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Readings;
 
 namespace EvapMonitor.Core.Fouling;
@@ -9,18 +8,6 @@ namespace EvapMonitor.Core.Fouling;
 /// </summary>
 internal sealed partial class CampaignWalk
 {
-    /// <summary>Chance of taking a stop for a cleaning: with a hundred stops a year, one in twenty years.</summary>
-    private const double Recognised = 5e-4;
-
-    /// <summary>Least rise of ln U that is worth the name of a cleaning nobody logged.</summary>
-    private const double LeastRise = 0.01;
-
-    /// <summary>Chance of taking a logged or signalled cleaning that did nothing for one that cleaned.</summary>
-    private const double Confirmed = 0.01;
-
-    /// <summary>Share of the fall of ln U, and the least of it, that a cleaning must bring back before it is said not to have failed.</summary>
-    private const double WorthwhileShare = 0.2, WorthwhileRise = 0.02;
-
     private readonly SurfaceSettings _settings;
     private readonly SurfaceTable _table;
     private readonly IReadOnlyList<SurfaceHour> _hours;
@@ -44,7 +31,9 @@ internal sealed partial class CampaignWalk
         _segment = new int[_table.Count];
         _settled = [.. _table.Whole];
         _share = new double[_table.Count];
+        _sharedBy = new int[_table.Count];
         Array.Fill(_share, 1);
+        Array.Fill(_sharedBy, -1);
         _results = new CleanHour[_table.Count];
         Divide();
     }
@@ -101,12 +90,10 @@ internal sealed partial class CampaignWalk
         _campaigns[^1].DidNotClean = verdict == CleaningVerdict.DidNotClean;
     }
 
-    private static bool IsRecognised(Interruption interruption, Recovery recovery) =>
-        !interruption.Rejected && recovery.Test is { } test && test.Significance < Recognised && test.Rise.Value > LeastRise;
-
     private void End(Interruption interruption, int first)
     {
-        _campaigns[^1].End = interruption.IsCleaning ? interruption.CleaningStart : interruption.Start;
+        // A log may say that a cleaning began before the first hour of all.
+        _campaigns[^1].End = long.Max(_campaigns[^1].Start, interruption.IsCleaning ? interruption.CleaningStart : interruption.Start);
         // Before the first hour of all there was no campaign to end.
         if (first == 0) _campaigns.RemoveAt(0);
     }
@@ -114,37 +101,9 @@ internal sealed partial class CampaignWalk
     private void Begin(Interruption interruption, Recovery recovery, int first)
     {
         bool known = interruption.IsCleaning;
+        long start = long.Max(known ? interruption.CleaningEnd : interruption.End, _campaigns.Count > 0 ? _campaigns[^1].End!.Value : long.MinValue);
         double origin = first < _table.Count ? _table.Served[first] - 0.5 : double.NaN;
-        _campaigns.Add(new OpenCampaign(known ? interruption.CleaningEnd : interruption.End, first, origin, interruption.Source, known ? 1 : 1 - recovery.Test!.Significance));
-    }
-
-    private static SurfaceCleaning Cleaning(Interruption interruption, RecoveryTest? test, Recovery told, CleaningVerdict verdict, string reason) => new()
-    {
-        Start = interruption.IsCleaning ? interruption.CleaningStart : interruption.Start,
-        End = interruption.IsCleaning ? (interruption.CleaningEnd == long.MaxValue ? null : interruption.CleaningEnd) : interruption.End,
-        Source = interruption.Source,
-        Word = string.Join(", ", interruption.Words),
-        Ids = interruption.Ids,
-        Verdict = verdict,
-        Reason = reason,
-        Test = test,
-        Before = Less(told.Before, told.Clean),
-        Left = Less(told.After, told.Clean),
-        Removed = Less(told.Before, told.After),
-    };
-
-    private static (CleaningVerdict Verdict, string Reason) Verdict(Interruption interruption, Recovery recovery)
-    {
-        if (interruption.End == long.MaxValue) return (CleaningVerdict.AwaitingHours, interruption.CleaningEnd == long.MaxValue ? "it goes on" : "nothing was produced since");
-        if (recovery.Awaiting) return (CleaningVerdict.AwaitingHours, recovery.Reason);
-        if (recovery.Test is not { } test) return (CleaningVerdict.CannotBeTold, recovery.Reason);
-        if (test.Significance < Confirmed) return (CleaningVerdict.Cleaned, "");
-        double fall = double.Log(recovery.Before.Value / recovery.Clean.Value), width = double.Hypot(recovery.Before.Random / recovery.Before.Value, recovery.Clean.Random / recovery.Clean.Value);
-        if (fall < double.Max(WorthwhileRise, 2 * width)) return (CleaningVerdict.CannotBeTold, "the surface was clean before, as far as can be told");
-        double worthwhile = double.Max(WorthwhileRise, double.IsFinite(fall) ? WorthwhileShare * fall : 0);
-        return test.Rise.Value + (1.645 * test.Rise.Random) < worthwhile
-            ? (CleaningVerdict.DidNotClean, "")
-            : (CleaningVerdict.CannotBeTold, FormattableString.Invariant($"the hours scatter too much: ln U rose by {test.Rise.Value:0.000} ± {test.Rise.Random:0.000}"));
+        _campaigns.Add(new OpenCampaign(start, first, origin, interruption.Source, known ? 1 : 1 - recovery.Test!.Significance));
     }
 
     private long Baseline(long at) => _recalibrations.LastOrDefault(one => one <= at, long.MinValue);
@@ -160,9 +119,6 @@ internal sealed partial class CampaignWalk
 
         return null;
     }
-
-    private static Measured Less(Measured one, Measured other) =>
-        one.IsPresent && other.IsPresent ? new(one.Value - other.Value, 0, double.Hypot(one.Random, other.Random)) : Measured.Absent;
 
     /// <summary>Numbers the stretches of hours between interruptions and recalibrations, and marks the hours that do not tell of the surface.</summary>
     private void Divide()
@@ -181,52 +137,5 @@ internal sealed partial class CampaignWalk
         }
 
         for (int i = 1; i < _table.Count; i++) _segment[i] += _segment[i - 1];
-    }
-}
-
-/// <summary>A campaign as far as it is known.</summary>
-internal sealed class OpenCampaign(long start, int from, double origin, CleaningSource startedBy, double confidence)
-{
-    public long Start { get; } = start;
-
-    /// <summary>Its first hour.</summary>
-    public int From { get; } = from;
-
-    /// <summary>Hours of service at its start.</summary>
-    public double Origin { get; } = origin;
-
-    public CleaningSource StartedBy { get; } = startedBy;
-
-    public double Confidence { get; } = confidence;
-
-    public double RemovedShare { get; set; } = double.NaN;
-
-    public bool DidNotClean { get; set; }
-
-    public long? End { get; set; }
-
-    /// <summary>First hour that is not of it, as far as is known.</summary>
-    public int Limit { get; set; }
-
-    /// <summary>The slopes of each use, learnt from what was before it.</summary>
-    public Dictionary<SurfaceUse, ConditionSlopes> Slopes { get; } = [];
-
-    /// <summary>The first hours after its start, by use.</summary>
-    public Dictionary<SurfaceUse, LevelSample> Samples { get; private set; } = [];
-
-    /// <summary>Its clean expectations: where they stand in the list.</summary>
-    public Dictionary<(SurfaceUse Use, long From), int> References { get; } = [];
-
-    /// <summary>Takes the first hours after its start as far as they are known; true when there are more than before.</summary>
-    public bool Sample(SurfaceTable table, bool[] settled, long recalibrated)
-    {
-        if (StartedBy == CleaningSource.FirstData) return false;
-        int had = Samples.Values.Sum(sample => sample.Hours.Length);
-        if (had >= LevelSample.Most) return false;
-        long start = From < table.Count ? table.At[From] : Start;
-        int[] hours = [.. Enumerable.Range(From, Limit - From).Where(i => settled[i] && table.At[i] < start + LevelSample.Within && table.At[i] < recalibrated).Take(LevelSample.Most)];
-        if (hours.Length == had) return false;
-        Samples = hours.GroupBy(i => table.Use[i]).ToDictionary(group => group.Key, group => new LevelSample(Start, [.. group], Origin));
-        return true;
     }
 }

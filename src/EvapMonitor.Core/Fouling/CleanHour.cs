@@ -8,7 +8,7 @@ namespace EvapMonitor.Core.Fouling;
 /// </summary>
 /// <param name="Hour">Start of the hour, ms since 1970-01-01T00:00:00Z.</param>
 /// <param name="Campaign">Index of its campaign. An hour within an interruption belongs to the campaign that ended.</param>
-/// <param name="Reference">Index of the clean expectation; -1 when there is none.</param>
+/// <param name="Reference">Index of its clean expectation, whose basis may be none: then all that follows is absent.</param>
 /// <param name="CleanCoefficient">What a clean surface would do at the conditions of the hour, W/(m²·K).</param>
 /// <param name="Cleanliness">U/U_clean.</param>
 /// <param name="Resistance">1/U − 1/U_clean, m²·K/W; may be negative.</param>

@@ -1,32 +1,6 @@
 using System.Globalization;
-using EvapMonitor.Core.Readings;
 
 namespace EvapMonitor.Core.Fouling;
-
-/// <summary>The first settled hours of one use after a cleaning.</summary>
-/// <param name="CleanedAt">End of the cleaning, ms.</param>
-/// <param name="Hours">Indices of the hours.</param>
-/// <param name="Origin">Hours of service at which the campaign began.</param>
-internal sealed record LevelSample(long CleanedAt, int[] Hours, double Origin)
-{
-    /// <summary>Hours of production that count as starting up.</summary>
-    public const int StartUp = 2;
-
-    /// <summary>Hours taken after starting up.</summary>
-    public const int Most = 24;
-
-    /// <summary>Fewest hours that make a level.</summary>
-    public const int Fewest = 6;
-
-    /// <summary>How long after a cleaning an hour still tells of the clean surface, ms.</summary>
-    public const long Within = 3 * Milliseconds.Day;
-}
-
-/// <summary>ln U of a surface as it came out of a cleaning, at mean conditions.</summary>
-/// <param name="Value">The level at the moment production began.</param>
-/// <param name="Standard">Its standard uncertainty from the scatter of the hours.</param>
-/// <param name="At">Mean conditions.</param>
-internal sealed record CleanLevel(double Value, double Standard, double[] At);
 
 /// <summary>Makes clean expectations of slopes and of the levels after cleanings.</summary>
 internal static class CleanLevels
@@ -41,7 +15,7 @@ internal static class CleanLevels
     /// The level of one sample. Fouling grows from the first hour on: the hours are carried back to the start of production along their own slope (Theil-Sen), and
     /// their middle is that of Hodges and Lehmann.
     /// </summary>
-    public static CleanLevel Of(SurfaceTable table, LevelSample sample, ConditionSlopes slopes)
+    public static CleanLevel? Of(SurfaceTable table, LevelSample sample, ConditionSlopes slopes)
     {
         int n = sample.Hours.Length;
         double[] at = new double[SurfaceTable.Terms], y = new double[n], time = new double[n];
@@ -76,13 +50,17 @@ internal static class CleanLevels
         for (int k = 0; k < n; k++) y[k] -= slope * time[k];
         HourNoise noise = slopes.Noise.Learnt ? slopes.Noise : slopes.Noise with { Sigma = Robust.Spread(y) };
         noise = noise with { Sigma = double.Max(noise.Sigma, random) };
-        return new CleanLevel(Robust.Location(y), double.Sqrt(1.1 * noise.Variance(Lines.Intercept(time), time)), at);
+        double level = Robust.Location(y), whole = double.Exp(-level), clean = whole - sample.Carried.Value;
+        double own = whole * double.Sqrt(1.1 * noise.Variance(Lines.Intercept(time), time));
+        // More scale than there is resistance cannot be: then these hours tell nothing.
+        return clean > 0.1 * whole ? new CleanLevel(-double.Log(clean), double.Hypot(own, sample.Carried.Random) / clean, at) : null;
     }
 
-    /// <summary>The expectation from the levels after the latest cleanings: the mean of those that cannot be told from the best one.</summary>
-    public static CleanReference Combine(CleanReference frame, SurfaceTable table, IReadOnlyList<LevelSample> samples, ConditionSlopes slopes)
+    /// <summary>The expectation from the levels after the latest cleanings: the mean of those that cannot be told from the best one. Null when none tells anything.</summary>
+    public static CleanReference? Combine(CleanReference frame, SurfaceTable table, IReadOnlyList<LevelSample> samples, ConditionSlopes slopes)
     {
-        CleanLevel[] levels = [.. samples.Select(sample => Of(table, sample, slopes))];
+        CleanLevel[] levels = [.. samples.Select(sample => Of(table, sample, slopes)).OfType<CleanLevel>()];
+        if (levels.Length == 0) return null;
         CleanLevel[] chosen = [.. Best(levels, slopes)];
         double weights = 0, level = 0;
         double[] at = new double[SurfaceTable.Terms];
@@ -110,7 +88,9 @@ internal static class CleanLevels
         return WithRange(frame, table, samples, slopes, at) with
         {
             Basis = slopes.Enough ? ReferenceBasis.Conditions : ReferenceBasis.Level,
-            Source = string.Create(CultureInfo.InvariantCulture, $"level of {chosen.Length} of the last {levels.Length} cleanings with this product, the last on {Day(samples[^1].CleanedAt)}; {conditions}"),
+            Source = (samples[^1].Before is { } before
+                ? string.Create(CultureInfo.InvariantCulture, $"level carried over from product {before} at {chosen.Length} of the last {levels.Length} changes, for want of hours with this product after a cleaning")
+                : string.Create(CultureInfo.InvariantCulture, $"level of {chosen.Length} of the last {levels.Length} cleanings with this product, the last on {Day(samples[^1].CleanedAt)}")) + "; " + conditions,
             Level = level,
             LevelUncertainty = double.Sqrt(double.Max(own, chosen.Length > 1 ? spread * chosen.Length / (chosen.Length - 1) : 0)),
             At = SurfaceConditions.From(at),

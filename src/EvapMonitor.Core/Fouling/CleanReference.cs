@@ -79,6 +79,6 @@ public sealed partial record CleanReference
     /// <summary>Scatter of an hour about the fit, as a share of the coefficient; 0 until it is learnt.</summary>
     public required double HourScatter { get; init; }
 
-    /// <summary>Correlation of that scatter from one hour to the next.</summary>
-    public required double HourCorrelation { get; init; }
+    /// <summary>Share of the square of that scatter that lasts for about a day.</summary>
+    public required double SlowShare { get; init; }
 }

@@ -1,9 +1,7 @@
-using MathNet.Numerics.Distributions;
-
 namespace EvapMonitor.Core.Fouling;
 
 /// <summary>How a clean coefficient follows its conditions, as far as the hours before an instant show it.</summary>
-internal sealed class ConditionSlopes
+internal sealed partial class ConditionSlopes
 {
     /// <summary>Days within which hours must differ before a slope is believed.</summary>
     public const int FewestDays = 10;
@@ -88,108 +86,25 @@ internal sealed class ConditionSlopes
         }
 
         learnt.Choose(days, active);
+        learnt.Noise = NoiseLearning.Of(table, use, from, limit, segment, settled, learnt.Slopes, learnt.Noise);
         return learnt;
-    }
-
-    /// <summary>Takes terms out, one at a time, until all that are left are told by the hours and possible.</summary>
-    private void Choose(WithinDays days, bool[] active)
-    {
-        double critical = StudentT.InvCDF(0, 1, Days - 1, 0.975);
-        while (true)
-        {
-            if (days.Estimate(active, Slopes) is not { } found)
-            {
-                int last = Array.FindLastIndex(active, one => one);
-                if (last < 0) return;
-                Leave(active, last, "not told from the other conditions");
-                continue;
-            }
-
-            int worst = -1;
-            double ratio = 1;
-            for (int t = 0; t < SurfaceTable.Terms; t++)
-            {
-                double standard = double.Sqrt(found.Covariance[t, t]);
-                if (!active[t] || standard / Usual[t] <= ratio) continue;
-                ratio = standard / Usual[t];
-                worst = t;
-            }
-
-            if (active[2] && found.FirstStage < WeakInstrument) Leave(active, 2, "the feed flow says too little of the flux");
-            else if (worst >= 0) Leave(active, worst, "too little movement to tell");
-            else if (active[2] && double.Abs(found.Slopes[2]) <= critical * double.Sqrt(found.Covariance[2, 2])) Hold(active, 2, 0, found, "not told from 0");
-            else if (Beyond(active, found) is (>= 0, var bound) beyond) Hold(active, beyond.Term, bound, found, "held at its bound");
-            else
-            {
-                Keep(active, found);
-                return;
-            }
-        }
-    }
-
-    private static (int Term, double Bound) Beyond(bool[] active, SlopeEstimate found)
-    {
-        (int Term, double Bound) worst = (-1, 0);
-        double most = 0;
-        for (int t = 0; t < SurfaceTable.Terms; t++)
-        {
-            if (!active[t]) continue;
-            double bound = double.Clamp(found.Slopes[t], Lower[t], Upper[t]), by = double.Abs(found.Slopes[t] - bound) / double.Sqrt(found.Covariance[t, t]);
-            if (!(by > most)) continue;
-            most = by;
-            worst = (t, bound);
-        }
-
-        return worst;
-    }
-
-    private void Leave(bool[] active, int term, string why)
-    {
-        active[term] = false;
-        Remarks[term] = why;
-    }
-
-    /// <summary>A slope put at a value: its uncertainty is that of the estimate, and the estimate's distance from 0 where 0 was chosen for want of evidence.</summary>
-    private void Hold(bool[] active, int term, double value, SlopeEstimate found, string why)
-    {
-        active[term] = false;
-        Remarks[term] = why;
-        Learnt[term] = true;
-        Slopes[term] = value;
-        double distance = value == 0 && double.Clamp(found.Slopes[term], Lower[term], Upper[term]) == found.Slopes[term] ? found.Slopes[term] : 0;
-        Covariance[term, term] = found.Covariance[term, term] + (distance * distance);
-    }
-
-    private void Keep(bool[] active, SlopeEstimate found)
-    {
-        Noise = found.Noise;
-        for (int i = 0; i < SurfaceTable.Terms; i++)
-        {
-            if (!active[i]) continue;
-            Learnt[i] = true;
-            Slopes[i] = found.Slopes[i];
-            for (int j = 0; j < SurfaceTable.Terms; j++)
-            {
-                if (active[j]) Covariance[i, j] = found.Covariance[i, j];
-            }
-        }
     }
 
     private void Range(SurfaceTable table, SurfaceUse use, int from, int limit, bool[] settled)
     {
         for (int t = 0; t < SurfaceTable.Terms; t++)
         {
-            var values = new List<double>(limit - from);
+            double[] all = new double[limit - from];
+            int count = 0;
             for (int i = from; i < limit; i++)
             {
-                if (settled[i] && table.Use[i] == use && double.IsFinite(table.Condition[t][i])) values.Add(table.Condition[t][i]);
+                if (settled[i] && table.Use[i] == use && double.IsFinite(table.Condition[t][i])) all[count++] = table.Condition[t][i];
             }
 
-            if (values.Count == 0) continue;
-            values.Sort();
+            if (count == 0) continue;
             // One hour in 200 at either end is no experience.
-            Lowest[t] = values[values.Count / 200];
-            Highest[t] = values[^(1 + (values.Count / 200))];
+            Lowest[t] = Robust.Place(all.AsSpan(0, count), count / 200);
+            Highest[t] = Robust.Place(all.AsSpan(0, count), count - 1 - (count / 200));
         }
     }
 

@@ -64,11 +64,9 @@ internal sealed class OrthogonalFit
 
     private static double Norm(double[] column, int from)
     {
-        double largest = 0, sum = 0;
-        for (int i = from; i < column.Length; i++) largest = double.Max(largest, double.Abs(column[i]));
-        if (largest == 0) return 0;
-        for (int i = from; i < column.Length; i++) sum += column[i] / largest * (column[i] / largest);
-        return largest * double.Sqrt(sum);
+        double sum = 0;
+        for (int i = from; i < column.Length; i++) sum += column[i] * column[i];
+        return double.Sqrt(sum);
     }
 
     private static void Reflect(double[] by, double[] column, int from, double half)

@@ -7,9 +7,38 @@ internal static class Robust
     public static double Median(Span<double> values)
     {
         if (values.Length == 0) return double.NaN;
-        values.Sort();
         int half = values.Length / 2;
-        return values.Length % 2 == 1 ? values[half] : (values[half - 1] + values[half]) / 2;
+        double upper = Place(values, half);
+        if (values.Length % 2 == 1) return upper;
+        double lower = double.NegativeInfinity;
+        foreach (double one in values[..half]) lower = double.Max(lower, one);
+        return (lower + upper) / 2;
+    }
+
+    /// <summary>The number with so many below it in order (Hoare 1961); what stands before it is not larger, what stands after not smaller.</summary>
+    public static double Place(Span<double> values, int rank)
+    {
+        int from = 0, to = values.Length - 1;
+        while (from < to)
+        {
+            double pivot = Middle(values[from], values[from + ((to - from) / 2)], values[to]);
+            int i = from, j = to;
+            while (i <= j)
+            {
+                while (values[i] < pivot) i++;
+                while (values[j] > pivot) j--;
+                if (i > j) break;
+                (values[i], values[j]) = (values[j], values[i]);
+                i++;
+                j--;
+            }
+
+            if (rank <= j) to = j;
+            else if (rank >= i) from = i;
+            else break;
+        }
+
+        return values[rank];
     }
 
     /// <summary>1.4826 times the median distance from the median: the standard deviation, where the numbers are normal (Hampel 1974).</summary>
@@ -61,18 +90,21 @@ internal static class Robust
         }
 
         if (count == 0) return (double.NaN, double.NaN);
-        Span<double> sorted = slopes.AsSpan(0, count);
-        double slope = Median(sorted);
+        Span<double> found = slopes.AsSpan(0, count);
+        double slope = Median(found);
         // Kendall's S has this standard deviation where there is no slope; half the width between the ranks at ± one of it is one standard uncertainty of the slope.
         double deviation = double.Sqrt(n * (n - 1.0) * ((2.0 * n) + 5) / 18) / 2;
         double middle = (count - 1) / 2.0;
-        return (slope, (At(sorted, middle + deviation) - At(sorted, middle - deviation)) / 2);
+        return (slope, (At(found, middle + deviation) - At(found, middle - deviation)) / 2);
     }
 
-    private static double At(ReadOnlySpan<double> sorted, double rank)
+    private static double At(Span<double> values, double rank)
     {
-        double held = double.Clamp(rank, 0, sorted.Length - 1);
-        int below = (int)held, above = int.Min(below + 1, sorted.Length - 1);
-        return sorted[below] + ((held - below) * (sorted[above] - sorted[below]));
+        double held = double.Clamp(rank, 0, values.Length - 1);
+        int below = (int)held, above = int.Min(below + 1, values.Length - 1);
+        double low = Place(values, below), high = Place(values, above);
+        return low + ((held - below) * (high - low));
     }
+
+    private static double Middle(double a, double b, double c) => double.Max(double.Min(a, b), double.Min(double.Max(a, b), c));
 }

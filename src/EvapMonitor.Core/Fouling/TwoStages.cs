@@ -67,56 +67,64 @@ internal sealed class TwoStages
         return new TwoStages(fit.Coefficients, Left(columns, response, fit.Coefficients), projected, fit.InverseGram, alone, firstResiduals, firstSlope);
     }
 
-    /// <summary>The sandwich: (X̂ᵀX̂)⁻¹ Σ s sᵀ (X̂ᵀX̂)⁻¹ with s the score of a cluster, corrected for few clusters.</summary>
-    public double[][] Covariance(int[] cluster, int clusters)
+    /// <summary>
+    /// The sandwich (X̂ᵀX̂)⁻¹ Σ s sᵀ (X̂ᵀX̂)⁻¹ with s the score of a cluster, each divided by what the fit leaves of it (Bell and McCaffrey 2002, the jackknife form): with few
+    /// clusters, or some that weigh much, the plain sandwich is too narrow.
+    /// </summary>
+    public double[][] Covariance(int[] cluster, int clusters) => Sandwich(_projected, Residuals, _inverse, cluster, clusters);
+
+    /// <summary>F of the instrument in the first stage, with the same sandwich; NaN without one.</summary>
+    public double FirstStage(int[] cluster, int clusters)
     {
-        int p = Slopes.Length;
-        double[][] score = Scores(_projected, Residuals, cluster, clusters);
-        double correction = Correction(clusters, Residuals.Length, p);
+        if (_instrumentAlone is null) return double.NaN;
+        double square = 0;
+        foreach (double one in _instrumentAlone) square += one * one;
+        return _firstSlope * _firstSlope / double.Max(Sandwich([_instrumentAlone], _firstResiduals!, [[1 / square]], cluster, clusters)[0][0], 1e-300);
+    }
+
+    private static double[][] Sandwich(double[][] columns, double[] residuals, double[][] inverse, int[] cluster, int clusters)
+    {
+        int p = columns.Length;
+        double[][] score = [.. columns.Select(column => Products(column, residuals, cluster, clusters))];
+        double[][] product = new double[p * p][];
+        for (int j = 0; j < p; j++)
+        {
+            for (int k = 0; k <= j; k++) product[(j * p) + k] = product[(k * p) + j] = Products(columns[j], columns[k], cluster, clusters);
+        }
+
         double[][] covariance = new double[p][];
         for (int i = 0; i < p; i++) covariance[i] = new double[p];
-        double[] turned = new double[p];
         for (int c = 0; c < clusters; c++)
         {
-            for (int i = 0; i < p; i++)
+            // (I − M A) s* = s, M the cluster's own XᵀX and A the inverse of all.
+            double[][] kept = new double[p][];
+            for (int j = 0; j < p; j++)
             {
-                turned[i] = 0;
-                for (int j = 0; j < p; j++) turned[i] += _inverse[i][j] * score[j][c];
+                kept[j] = new double[p];
+                for (int i = 0; i < p; i++)
+                {
+                    kept[j][i] = i == j ? 1 : 0;
+                    for (int k = 0; k < p; k++) kept[j][i] -= product[(i * p) + k][c] * inverse[k][j];
+                }
             }
 
+            double[] own = [.. score.Select(sums => sums[c])], whole = OrthogonalFit.Solve(kept, own)?.Coefficients ?? own;
+            double[] turned = [.. inverse.Select(row => row.Zip(whole, (one, other) => one * other).Sum())];
             for (int i = 0; i < p; i++)
             {
-                for (int j = 0; j < p; j++) covariance[i][j] += correction * turned[i] * turned[j];
+                for (int j = 0; j < p; j++) covariance[i][j] += (clusters - 1.0) / clusters * turned[i] * turned[j];
             }
         }
 
         return covariance;
     }
 
-    /// <summary>F of the instrument in the first stage, with the same sandwich; NaN without one.</summary>
-    public double FirstStage(int[] cluster, int clusters)
+    /// <summary>Σ a·b of each cluster.</summary>
+    private static double[] Products(double[] one, double[] other, int[] cluster, int clusters)
     {
-        if (_instrumentAlone is null) return double.NaN;
-        double square = 0, meat = 0;
-        foreach (double one in _instrumentAlone) square += one * one;
-        foreach (double one in Scores([_instrumentAlone], _firstResiduals!, cluster, clusters)[0]) meat += one * one;
-        double variance = meat * Correction(clusters, Residuals.Length, Slopes.Length) / (square * square);
-        return _firstSlope * _firstSlope / double.Max(variance, 1e-300);
-    }
-
-    private static double Correction(int clusters, int rows, int columns) =>
-        clusters / double.Max(clusters - 1.0, 1) * ((rows - 1.0) / double.Max(rows - columns, 1));
-
-    private static double[][] Scores(double[][] columns, double[] residuals, int[] cluster, int clusters)
-    {
-        double[][] score = new double[columns.Length][];
-        for (int j = 0; j < columns.Length; j++)
-        {
-            score[j] = new double[clusters];
-            for (int i = 0; i < residuals.Length; i++) score[j][cluster[i]] += columns[j][i] * residuals[i];
-        }
-
-        return score;
+        double[] sums = new double[clusters];
+        for (int i = 0; i < one.Length; i++) sums[cluster[i]] += one[i] * other[i];
+        return sums;
     }
 
     private static double[]? Without(double[][] columns, double[] one)

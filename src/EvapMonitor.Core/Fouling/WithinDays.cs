@@ -1,3 +1,4 @@
+using System.Runtime.InteropServices;
 using EvapMonitor.Core.Readings;
 
 namespace EvapMonitor.Core.Fouling;
@@ -7,15 +8,10 @@ namespace EvapMonitor.Core.Fouling;
 /// weeks, and its growth within the day do not enter. Differences of neighbouring hours would do the same, but they keep little of conditions that move over a shift
 /// and all of the noise.
 /// </summary>
-internal sealed class WithinDays
+internal sealed partial class WithinDays
 {
     /// <summary>Fewest hours of a group.</summary>
     public const int SmallestGroup = 6;
-
-    /// <summary>Huber's constant: 95 % of the efficiency of least squares where the noise is normal.</summary>
-    private const double HuberBound = 1.345;
-
-    private const int Rounds = 6;
 
     private readonly List<double> _response = [], _feed = [], _time = [];
     private readonly List<double>[] _terms = [[], [], []];
@@ -76,105 +72,37 @@ internal sealed class WithinDays
     {
         double[] weights = new double[Rows];
         Array.Fill(weights, 1);
-        double[] column = Take(_terms[term], weights);
+        double[] column = Take(CollectionsMarshal.AsSpan(_terms[term]), weights);
         double sum = 0;
         foreach (double one in column) sum += one * one;
         return double.Sqrt(sum / int.Max(Rows, 1));
     }
 
-    /// <summary>
-    /// Two-stage least squares with Huber weights; covariance clustered by day (Liang and Zeger 1986, G/(G−1)·(N−1)/(N−k)). Null when the columns depend on each other.
-    /// </summary>
-    /// <param name="active">Terms to estimate.</param>
-    /// <param name="held">Values of the terms that are not.</param>
-    public SlopeEstimate? Estimate(bool[] active, double[] held)
-    {
-        double[] response = [.. _response];
-        for (int t = 0; t < SurfaceTable.Terms; t++)
-        {
-            for (int i = 0; !active[t] && held[t] != 0 && i < Rows; i++) response[i] -= held[t] * _terms[t][i];
-        }
-
-        double[] weights = _weights, slopes = [];
-        SlopeEstimate? last = null;
-        for (int round = 0; round < Rounds; round++)
-        {
-            double[] y = Take(response, weights);
-            double[][] x = [.. Enumerable.Range(0, SurfaceTable.Terms).Where(t => active[t]).Select(t => Take(_terms[t], weights))];
-            double[]? z = active[2] ? Take(_feed, weights) : null;
-            if (TwoStages.Solve(x, y, z) is not { } solution) return null;
-            double moved = slopes.Length == 0 ? 1 : slopes.Zip(solution.Slopes, (before, now) => double.Abs(before - now)).Append(0).Max();
-            slopes = solution.Slopes;
-            double[] residuals = new double[Rows];
-            for (int i = 0; i < Rows; i++) residuals[i] = solution.Residuals[i] / double.Sqrt(weights[i]);
-            double scale = Robust.Spread(residuals) * double.Sqrt(Rows / double.Max(Rows - (2.0 * _dayOf.Count) - x.Length, 1));
-            bool settles = moved < 1e-5 || round + 1 == Rounds;
-            if (settles) last = Report(active, solution, residuals, weights, scale);
-            double[] next = new double[Rows];
-            for (int i = 0; i < Rows; i++) next[i] = double.Min(1, HuberBound * scale / double.Max(double.Abs(residuals[i]), 1e-300));
-            weights = next;
-            if (settles) break;
-        }
-
-        _weights = weights;
-        return last;
-    }
-
-    private SlopeEstimate Report(bool[] active, TwoStages solution, double[] residuals, double[] weights, double scale)
-    {
-        // The bread of the sandwich is the slope of the score, not the weight: 1 within the bound, 0 beyond it.
-        double inside = 0, weight = 0;
-        for (int i = 0; i < Rows; i++)
-        {
-            if (double.Abs(residuals[i]) <= HuberBound * scale) inside++;
-            weight += weights[i];
-        }
-
-        double[][] covariance = solution.Covariance(Cluster(), Days);
-        double widen = inside > 0 ? weight / inside * (weight / inside) : 1;
-        int[] place = [.. Enumerable.Range(0, SurfaceTable.Terms).Where(t => active[t])];
-        double[] slopes = new double[SurfaceTable.Terms];
-        double[,] full = new double[SurfaceTable.Terms, SurfaceTable.Terms];
-        for (int i = 0; i < place.Length; i++)
-        {
-            slopes[place[i]] = solution.Slopes[i];
-            for (int j = 0; j < place.Length; j++) full[place[i], place[j]] = widen * covariance[i][j];
-        }
-
-        return new SlopeEstimate(slopes, full, active[2] ? solution.FirstStage(Cluster(), Days) : double.NaN, HourNoise.Learn(residuals, [.. _time], _starts));
-    }
-
-    private int[] Cluster()
-    {
-        int[] cluster = new int[Rows];
-        for (int g = 0; g < _dayOf.Count; g++) Array.Fill(cluster, _dayOf[g], _starts[g], _starts[g + 1] - _starts[g]);
-        return cluster;
-    }
-
     /// <summary>A column without the weighted mean and drift of each group, times the root of the weight.</summary>
-    private double[] Take(IReadOnlyList<double> column, double[] weights)
+    private double[] Take(ReadOnlySpan<double> column, double[] weights)
     {
         double[] left = new double[Rows];
+        ReadOnlySpan<double> time = CollectionsMarshal.AsSpan(_time);
         for (int g = 0; g < _dayOf.Count; g++)
         {
             double w = 0, t = 0, c = 0;
             for (int i = _starts[g]; i < _starts[g + 1]; i++)
             {
                 w += weights[i];
-                t += weights[i] * _time[i];
+                t += weights[i] * time[i];
                 c += weights[i] * column[i];
             }
 
             double meanTime = t / w, mean = c / w, product = 0, square = 0;
             for (int i = _starts[g]; i < _starts[g + 1]; i++)
             {
-                double at = _time[i] - meanTime;
+                double at = time[i] - meanTime;
                 product += weights[i] * at * (column[i] - mean);
                 square += weights[i] * at * at;
             }
 
             double drift = product / square;
-            for (int i = _starts[g]; i < _starts[g + 1]; i++) left[i] = double.Sqrt(weights[i]) * (column[i] - mean - (drift * (_time[i] - meanTime)));
+            for (int i = _starts[g]; i < _starts[g + 1]; i++) left[i] = (weights[i] == 1 ? 1 : double.Sqrt(weights[i])) * (column[i] - mean - (drift * (time[i] - meanTime)));
         }
 
         return left;
@@ -210,10 +138,3 @@ internal sealed class WithinDays
 
     private static long Day(long instant) => instant - Milliseconds.Modulo(instant, Milliseconds.Day);
 }
-
-/// <summary>Slopes as the hours within days show them.</summary>
-/// <param name="Slopes">b1, b2, b3; 0 where not estimated.</param>
-/// <param name="Covariance">Their covariance; 0 where not estimated.</param>
-/// <param name="FirstStage">F of the instrument, clustered by day; NaN without one.</param>
-/// <param name="Noise">What the hours scatter about them.</param>
-internal sealed record SlopeEstimate(double[] Slopes, double[,] Covariance, double FirstStage, HourNoise Noise);
