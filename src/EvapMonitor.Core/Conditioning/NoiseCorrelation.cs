@@ -1,3 +1,6 @@
+using System.Buffers;
+using EvapMonitor.Core.Readings;
+
 namespace EvapMonitor.Core.Conditioning;
 
 /// <summary>How far the noise of neighbouring samples of a signal is correlated, whatever the signal itself does meanwhile.</summary>
@@ -14,13 +17,33 @@ internal static class NoiseCorrelation
     public static double Of(ReadOnlySpan<double> samples)
     {
         if (samples.Length < 3) return 0;
-        var differences = new double[samples.Length - 1];
-        for (int i = 0; i < differences.Length; i++) differences[i] = samples[i + 1] - samples[i];
-        double[] sorted = Array.FindAll(differences, double.IsFinite);
-        double middle = Median(sorted);
-        // 1.4826: from median absolute deviation to standard deviation of a normal distribution.
-        double limit = Clip * 1.4826 * Median(Array.ConvertAll(sorted, one => double.Abs(one - middle)));
-        if (!(limit > 0)) limit = double.PositiveInfinity;
+        int count = samples.Length - 1;
+        double[] scratch = ArrayPool<double>.Shared.Rent(2 * count);
+        try
+        {
+            Span<double> differences = scratch.AsSpan(0, count), work = scratch.AsSpan(count, count);
+            int known = 0;
+            for (int i = 0; i < count; i++)
+            {
+                differences[i] = samples[i + 1] - samples[i];
+                if (double.IsFinite(differences[i])) work[known++] = differences[i];
+            }
+
+            if (known == 0) return 0;
+            double middle = Middle.Of(work[..known]);
+            for (int i = 0; i < known; i++) work[i] = double.Abs(work[i] - middle);
+            // 1.4826: from median absolute deviation to standard deviation of a normal distribution.
+            double limit = Clip * 1.4826 * Middle.Of(work[..known]);
+            return Correlation(differences, middle, limit > 0 ? limit : double.PositiveInfinity);
+        }
+        finally
+        {
+            ArrayPool<double>.Shared.Return(scratch);
+        }
+    }
+
+    private static double Correlation(ReadOnlySpan<double> differences, double middle, double limit)
+    {
         double squares = 0, products = 0, previous = double.NaN;
         foreach (double difference in differences)
         {
@@ -31,13 +54,5 @@ internal static class NoiseCorrelation
         }
 
         return squares > 0 ? double.Clamp(1 + (2 * products / squares), 0, 1) : 0;
-    }
-
-    private static double Median(double[] values)
-    {
-        if (values.Length == 0) return 0;
-        Array.Sort(values);
-        int half = values.Length / 2;
-        return values.Length % 2 == 1 ? values[half] : (values[half - 1] + values[half]) / 2;
     }
 }

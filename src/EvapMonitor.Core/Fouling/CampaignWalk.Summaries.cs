@@ -82,7 +82,7 @@ internal sealed partial class CampaignWalk
         {
             int[] bin = hours[(b * hours.Length / bins)..((b + 1) * hours.Length / bins)];
             days[b] = bin.Average(i => _table.Served[i]) / 24;
-            resistance[b] = Robust.Median([.. bin.Select(i => _results[i].Resistance.Value)]);
+            resistance[b] = Middle.Of([.. bin.Select(i => _results[i].Resistance.Value)]);
         }
 
         (double slope, double standard) = Robust.Slope(days, resistance);

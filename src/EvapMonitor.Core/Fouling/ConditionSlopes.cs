@@ -1,3 +1,5 @@
+using EvapMonitor.Core.Readings;
+
 namespace EvapMonitor.Core.Fouling;
 
 /// <summary>How a clean coefficient follows its conditions, as far as the hours before an instant show it.</summary>
@@ -103,8 +105,8 @@ internal sealed partial class ConditionSlopes
 
             if (count == 0) continue;
             // One hour in 200 at either end is no experience.
-            Lowest[t] = Robust.Place(all.AsSpan(0, count), count / 200);
-            Highest[t] = Robust.Place(all.AsSpan(0, count), count - 1 - (count / 200));
+            Lowest[t] = Middle.Place(all.AsSpan(0, count), count / 200);
+            Highest[t] = Middle.Place(all.AsSpan(0, count), count - 1 - (count / 200));
         }
     }
 

@@ -1,53 +1,17 @@
+using EvapMonitor.Core.Readings;
+
 namespace EvapMonitor.Core.Fouling;
 
 /// <summary>Location, spread and slope that a few wild hours do not move.</summary>
 internal static class Robust
 {
-    /// <summary>The median; NaN of nothing. Reorders the span.</summary>
-    public static double Median(Span<double> values)
-    {
-        if (values.Length == 0) return double.NaN;
-        int half = values.Length / 2;
-        double upper = Place(values, half);
-        if (values.Length % 2 == 1) return upper;
-        double lower = double.NegativeInfinity;
-        foreach (double one in values[..half]) lower = double.Max(lower, one);
-        return (lower + upper) / 2;
-    }
-
-    /// <summary>The number with so many below it in order (Hoare 1961); what stands before it is not larger, what stands after not smaller.</summary>
-    public static double Place(Span<double> values, int rank)
-    {
-        int from = 0, to = values.Length - 1;
-        while (from < to)
-        {
-            double pivot = Middle(values[from], values[from + ((to - from) / 2)], values[to]);
-            int i = from, j = to;
-            while (i <= j)
-            {
-                while (values[i] < pivot) i++;
-                while (values[j] > pivot) j--;
-                if (i > j) break;
-                (values[i], values[j]) = (values[j], values[i]);
-                i++;
-                j--;
-            }
-
-            if (rank <= j) to = j;
-            else if (rank >= i) from = i;
-            else break;
-        }
-
-        return values[rank];
-    }
-
     /// <summary>1.4826 times the median distance from the median: the standard deviation, where the numbers are normal (Hampel 1974).</summary>
     public static double Spread(ReadOnlySpan<double> values)
     {
         double[] copy = values.ToArray();
-        double middle = Median(copy);
+        double middle = Middle.Of(copy);
         for (int i = 0; i < copy.Length; i++) copy[i] = double.Abs(values[i] - middle);
-        return 1.4826 * Median(copy);
+        return 1.4826 * Middle.Of(copy);
     }
 
     /// <summary>Median of the means of all pairs, each number with itself too (Hodges and Lehmann 1963).</summary>
@@ -60,7 +24,7 @@ internal static class Robust
             for (int j = i; j < values.Length; j++) means[count++] = (values[i] + values[j]) / 2;
         }
 
-        return Median(means);
+        return Middle.Of(means);
     }
 
     /// <summary>Median of the differences of all pairs, one of each sample (Hodges and Lehmann 1963): how much higher the second lies.</summary>
@@ -73,7 +37,7 @@ internal static class Robust
             foreach (double other in second) differences[count++] = other - one;
         }
 
-        return Median(differences);
+        return Middle.Of(differences);
     }
 
     /// <summary>Median of the slopes of all pairs with different x (Theil 1950, Sen 1968), and its standard uncertainty by Sen's interval; NaN with fewer than two.</summary>
@@ -91,7 +55,7 @@ internal static class Robust
 
         if (count == 0) return (double.NaN, double.NaN);
         Span<double> found = slopes.AsSpan(0, count);
-        double slope = Median(found);
+        double slope = Middle.Of(found);
         // Kendall's S has this standard deviation where there is no slope; half the width between the ranks at ± one of it is one standard uncertainty of the slope.
         double deviation = double.Sqrt(n * (n - 1.0) * ((2.0 * n) + 5) / 18) / 2;
         double middle = (count - 1) / 2.0;
@@ -102,9 +66,7 @@ internal static class Robust
     {
         double held = double.Clamp(rank, 0, values.Length - 1);
         int below = (int)held, above = int.Min(below + 1, values.Length - 1);
-        double low = Place(values, below), high = Place(values, above);
+        double low = Middle.Place(values, below), high = Middle.Place(values, above);
         return low + ((held - below) * (high - low));
     }
-
-    private static double Middle(double a, double b, double c) => double.Max(double.Min(a, b), double.Min(double.Max(a, b), c));
 }

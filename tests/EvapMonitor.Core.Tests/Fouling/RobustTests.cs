@@ -1,3 +1,4 @@
+using EvapMonitor.Core.Readings;
 using EvapMonitor.Core.Fouling;
 using EvapMonitor.Core.Tests.Balances;
 
@@ -10,7 +11,7 @@ public class RobustTests
     [InlineData(new double[] { 3 }, 3)]
     [InlineData(new double[] { 4, 1, 3, 2 }, 2.5)]
     [InlineData(new double[] { 5, 5, 5, 1, 5 }, 5)]
-    public void Median_IsTheMiddle(double[] values, double expected) => Assert.Equal(expected, Robust.Median(values));
+    public void Median_IsTheMiddle(double[] values, double expected) => Assert.Equal(expected, Middle.Of(values));
 
     [Fact]
     public void Place_IsTheSortedOne()
@@ -21,7 +22,7 @@ public class RobustTests
             // Rounded, so that there are ties.
             double[] values = [.. Enumerable.Range(0, n).Select(_ => double.Round(3 * noise.Next()))];
             double[] sorted = [.. values.Order()];
-            for (int rank = 0; rank < n; rank++) Assert.Equal(sorted[rank], Robust.Place((double[])values.Clone(), rank));
+            for (int rank = 0; rank < n; rank++) Assert.Equal(sorted[rank], Middle.Place((double[])values.Clone(), rank));
         }
     }
 
