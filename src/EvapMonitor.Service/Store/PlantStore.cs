@@ -141,11 +141,11 @@ public sealed class PlantStore(NpgsqlDataSource database, TimeProvider clock)
         string sha256 = Convert.ToHexStringLower(SHA256.HashData(Encoding.UTF8.GetBytes(text)));
         await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
         int? lastGiven = await connection.QuerySingleOrDefaultAsync<int?>(
-            "SELECT revision_id FROM (SELECT * FROM plant_revision WHERE given_at IS NOT NULL ORDER BY given_at DESC, revision_id DESC LIMIT 1) given WHERE sha256 = @sha256",
+            "SELECT revision_id FROM plant_revision WHERE given = (SELECT max(given) FROM plant_revision) AND sha256 = @sha256",
             new { sha256 });
         int revision = lastGiven ?? InForce(await RevisionsAsync(connection)).LastOrDefault(era => era.Sha256 == sha256)?.RevisionId
             ?? (await AcceptAsync(site, text, author, null, null, stop)).Revision;
-        await connection.ExecuteAsync("UPDATE plant_revision SET given_at = @now WHERE revision_id = @revision", new { now = clock.GetUtcNow().UtcDateTime, revision });
+        await connection.ExecuteAsync("UPDATE plant_revision SET given = (SELECT coalesce(max(given), 0) + 1 FROM plant_revision) WHERE revision_id = @revision", new { revision });
         return revision;
     }
 

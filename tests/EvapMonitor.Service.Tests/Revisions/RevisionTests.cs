@@ -44,12 +44,12 @@ public sealed class RevisionTests(PostgresServer server)
     }
 
     [PostgreSqlFact]
-    public async Task EachSurface_IsComparedWithItsOwnCleanCoefficient()
+    public async Task EachRevision_IsComparedWithItsOwnCleanCoefficient()
     {
         await using RunningService service = await StartAsync();
         await service.Http.AcceptAsync(SteadyHistory.Plant().Replace("2000 W/(m2.K)", "1000 W/(m2.K)"), Change);
         await service.EvaluatedAsync();
-        double[] old = await service.CoefficientsAsync(Change.AddDays(-1), "&quantity=clean_coefficient"), now = await service.CoefficientsAsync(Change, "&quantity=clean_coefficient");
+        double[] old = await service.CoefficientsAsync(Change, "&quantity=clean_coefficient&revision=1"), now = await service.CoefficientsAsync(Change, "&quantity=clean_coefficient&revision=2");
         Assert.Equal((288, 288), (old.Length, now.Length));
         Assert.All(old, value => Assert.Equal(2000, value));
         Assert.All(now, value => Assert.Equal(1000, value));

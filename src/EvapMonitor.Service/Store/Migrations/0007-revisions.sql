@@ -1,9 +1,9 @@
 -- Revisions in time. What was accepted before this held for all time, the last one alone: all of them start where the first does, and of those with one start the
 -- one accepted last is in force.
 UPDATE plant_revision SET in_force_from = (SELECT in_force_from FROM plant_revision ORDER BY revision_id LIMIT 1);
-ALTER TABLE plant_revision ADD COLUMN request_key text UNIQUE, ADD COLUMN given_at timestamptz;
-COMMENT ON COLUMN plant_revision.given_at IS 'When the program was last started with this file; null: never. A file unchanged since the last start undoes nothing that came since.';
-UPDATE plant_revision SET given_at = accepted_at;
+ALTER TABLE plant_revision ADD COLUMN request_key text UNIQUE, ADD COLUMN given integer;
+COMMENT ON COLUMN plant_revision.given IS 'Grows with each start of the program with this file; null: never. A file unchanged since the last start undoes nothing that came since.';
+UPDATE plant_revision SET given = revision_id;
 
 -- Under which names a revision knows the lines and effects: a later rename must not part an earlier revision from its history.
 CREATE TABLE revision_line (
