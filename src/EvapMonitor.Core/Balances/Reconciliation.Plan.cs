@@ -63,14 +63,14 @@ internal sealed partial class Reconciliation
         _measured.CopyTo(_reading, 0);
         Assemble();
         reading.CopyTo(_reading, 0);
-        bool[][] present = Present();
+        bool[][] present = Present(out int[][] seen);
         (int, int)[] pivots = _system.Choose(allowed);
         EliminationStep[] steps = _system.Plan(pivots, present, out int[] filled);
-        return _plan with { Pivots = pivots, Steps = steps, Filled = filled };
+        return _plan with { Pivots = pivots, Steps = steps, Filled = filled, Seen = seen };
     }
 
     /// <summary>Where the system of the plan can have entries: what an equation names, whatever its slope, and what an instrument sees, however sure it is.</summary>
-    private bool[][] Present()
+    private bool[][] Present(out int[][] seen)
     {
         int n = _variables.Count;
         bool[][] present = [.. Enumerable.Range(0, _system.Rows).Select(_ => new bool[_system.Right + 1])];
@@ -80,11 +80,13 @@ internal sealed partial class Reconciliation
         }
 
         double[] x = new double[n], z = new double[_measured.Length];
+        seen = new int[_plan.Equations.Count][];
         for (int k = 0; k < _plan.Equations.Count; k++)
         {
             Array.Clear(x);
             Array.Clear(z);
             _measurements.Evaluate(_plan.Equations[k], State, _measured, x, z);
+            seen[k] = [.. Enumerable.Range(0, n).Where(i => x[i] != 0), .. Enumerable.Range(0, z.Length).Where(i => z[i] != 0).Select(i => n + i)];
             bool[] row = present[_plan.Rows.Length + k];
             for (int i = 0; i < n; i++) row[i] = x[i] != 0 && _plan.Allowed[i];
             for (int i = 0; i < z.Length; i++) row[n + i] = z[i] != 0;
@@ -136,6 +138,9 @@ internal sealed partial class Reconciliation
 
         /// <summary>What each step of it touches.</summary>
         public EliminationStep[] Steps { get; init; } = [];
+
+        /// <summary>By equation of the instruments: the columns that it names.</summary>
+        public int[][] Seen { get; init; } = [];
 
         /// <summary>Where it leaves entries.</summary>
         public int[] Filled { get; init; } = [];

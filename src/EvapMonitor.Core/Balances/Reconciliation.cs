@@ -264,26 +264,32 @@ internal sealed partial class Reconciliation
         }
 
         int n = _variables.Count;
-        foreach (MeasurementEquations.Equation equation in _plan.Equations)
+        for (int e = 0; e < _plan.Equations.Count; e++)
         {
+            MeasurementEquations.Equation equation = _plan.Equations[e];
             Span<double> target = _system.Row(at++), x = target[..n], z = target[n.._system.Right];
             double scale = 1 / _measurements.Scale(equation, _scale);
             double right = -_measurements.Evaluate(equation, State, _measured, x, z);
-            for (int i = 0; i < n; i++)
-            {
-                if (x[i] != 0) x[i] *= _plan.Allowed[i] ? scale * _scale[i] : 0;
-            }
-
-            // Measured quantities are counted from their readings, in standard uncertainties.
-            for (int k = 0; k < z.Length; k++)
-            {
-                if (z[k] == 0) continue;
-                right -= z[k] * (_reading[k] - _measured[k]);
-                z[k] *= scale * _standard[k];
-            }
+            // While the plan is made it is not known yet what an equation names.
+            if (e < _plan.Seen.Length) foreach (int column in _plan.Seen[e]) Take(x, z, column, scale, ref right);
+            else for (int column = 0; column < _system.Right; column++) Take(x, z, column, scale, ref right);
 
             target[_system.Right] = right * scale;
         }
+    }
+
+    private void Take(Span<double> x, Span<double> z, int column, double scale, ref double right)
+    {
+        if (column < x.Length)
+        {
+            x[column] *= _plan.Allowed[column] ? scale * _scale[column] : 0;
+            return;
+        }
+
+        // Measured quantities are counted from their readings, in standard uncertainties.
+        int k = column - x.Length;
+        right -= z[k] * (_reading[k] - _measured[k]);
+        z[k] *= scale * _standard[k];
     }
 
     private void Measure(LineInputs inputs, ReadOnlySpan<double> systematic, ReadOnlySpan<double> random, (double Systematic, double Random) air)

@@ -13,7 +13,8 @@ internal sealed class Redundancy
     private readonly int _unknowns, _columns;
     private readonly double[] _correction, _systematicShare, _randomShare;
     private readonly List<int> _rows = [];
-    private double[] _factor = [], _white = [], _right = [];
+    private double[] _factor = [], _white = [], _right = [], _follows = [];
+    private bool[] _isKnown = [];
 
     /// <summary>Prepares it.</summary>
     /// <param name="system">The system from which the unknowns are eliminated.</param>
@@ -84,6 +85,8 @@ internal sealed class Redundancy
     {
         // L⁻¹B, L the Cholesky factor of B·Bᵀ: its rows bind the measured quantities as B's do, and are at right angles and of length 1.
         int n = _rows.Count;
+        if (_isKnown.Length < _system.Rows) (_isKnown, _follows) = (new bool[_system.Rows], new double[_system.Rows * _columns]);
+        Array.Clear(_isKnown);
         for (int k = 0; k < n; k++)
         {
             Span<double> white = _white.AsSpan(k * _columns, _columns);
@@ -105,18 +108,27 @@ internal sealed class Redundancy
     /// <summary>Adds factor times how the unknown of a row follows each reading, the corrections made anew.</summary>
     public void AddSensitivity(int row, double factor, Span<double> sum)
     {
-        ReadOnlySpan<double> entries = Measured(row);
-        AddTo(sum, entries, factor);
-        for (int k = 0; k < _rows.Count; k++)
+        Span<double> follows = _follows.AsSpan(row * _columns, _columns);
+        if (!_isKnown[row])
         {
-            double along = Dot(entries, White(k));
-            if (along != 0) AddTo(sum, White(k), -factor * along);
+            ReadOnlySpan<double> entries = Measured(row);
+            entries.CopyTo(follows);
+            for (int k = 0; k < _rows.Count; k++)
+            {
+                double along = Dot(entries, White(k));
+                if (along != 0) AddTo(follows, White(k), -along);
+            }
+
+            _isKnown[row] = true;
         }
+
+        AddTo(sum, follows, factor);
     }
 
     /// <summary>Standard uncertainty of the unknown of a row, with the corrections made, both parts together.</summary>
     public double Standard(int row)
     {
+        if (_isKnown[row]) return double.Sqrt(Dot(_follows.AsSpan(row * _columns, _columns), _follows.AsSpan(row * _columns, _columns)));
         ReadOnlySpan<double> entries = Measured(row);
         double sum = Dot(entries, entries);
         for (int k = 0; k < _rows.Count; k++)
