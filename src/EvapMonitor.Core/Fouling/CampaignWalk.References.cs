@@ -97,7 +97,7 @@ internal sealed partial class CampaignWalk
             .Select(campaign => campaign.Samples.GetValueOrDefault(use)).OfType<LevelSample>().Where(sample => sample.Hours.Length >= LevelSample.Fewest).TakeLast(int.Max(_settings.BestOf, 1))];
         if (samples.Length == 0) samples = [.. _campaigns.Take(index + 1).Where(campaign => campaign.Start >= baseline).Select(campaign => campaign.Links.GetValueOrDefault(use)).OfType<LevelSample>().TakeLast(int.Max(_settings.BestOf, 1))];
         if (CleanLevels.Combine(frame, _table, samples, slopes) is { } combined) return combined;
-        string why = baseline > long.MinValue && baseline > _campaigns[0].Start ? $"an instrument was recalibrated on {CleanLevels.Day(baseline)} and no cleaning with this product has followed"
+        string why = baseline > long.MinValue && baseline > _campaigns[0].Start ? $"an instrument was recalibrated, or the surface changed, on {CleanLevels.Day(baseline)} and no cleaning with this product has followed"
             : _campaigns.Take(index + 1).Any(campaign => campaign.StartedBy != CleaningSource.FirstData) ? "too few hours with this product after a cleaning"
             : "no cleaning was seen yet";
         return _settings.DesignCoefficient is > 0 and { } design

@@ -64,7 +64,7 @@ internal sealed partial class CampaignWalk
         int from = int.Max(_campaigns[^1].From, _table.FirstFrom(Baseline(interruption.Start)));
         Recovery Compare(Func<SurfaceUse, CleanReference> expectation) => Recovery.Compare(_table, _settled, interruption, from, until, final, expectation);
         Recovery recovery = Recalibrated(interruption) is { } when
-            ? Recovery.NotComparable($"an instrument was recalibrated on {CleanLevels.Day(when)}")
+            ? Recovery.NotComparable($"an instrument was recalibrated, or the surface changed, on {CleanLevels.Day(when)}")
             : Compare(use => Expectation(use, interruption));
         if (!interruption.IsCleaning && !IsRecognised(interruption, recovery))
         {

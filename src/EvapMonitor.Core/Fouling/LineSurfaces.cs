@@ -18,7 +18,7 @@ public sealed record EffectCleaning(long Start, long End, string Word, string? B
 /// <param name="Hours">Its hours, by quantity, in any order.</param>
 /// <param name="Stretches">What it did, ascending.</param>
 /// <param name="Cleanings">What people wrote down.</param>
-/// <param name="Recalibrations">When instruments behind its coefficient were set right, ms.</param>
+/// <param name="Recalibrations">When instruments behind its coefficient were set right, or its surface became another, ms.</param>
 public sealed record EffectRecord(
     Effect Effect, IReadOnlyList<EffectHour> Hours, IReadOnlyList<EffectStretch> Stretches, IReadOnlyList<EffectCleaning> Cleanings, IReadOnlyList<long> Recalibrations);
 

@@ -57,7 +57,7 @@ public sealed class SurfaceWorker(
         if (await store.InputAsync(line.LineId, stop) == version) return;
         try
         {
-            (string read, IReadOnlyList<EffectRecord> effects) = await inputs.ReadAsync(inForce, line, stop);
+            (string read, IReadOnlyList<EffectRecord> effects) = await inputs.ReadAsync(plant.Timeline, inForce, line, stop);
             IReadOnlyList<Surface> surfaces = await Task.Run(() => LineSurfaces.Of(effects), stop);
             await WriteAsync(line, $"{inForce.RevisionId} {read}", surfaces, effects, stop);
             events.Publish("surfaces", new SurfacesChanged(line.Line.Name));

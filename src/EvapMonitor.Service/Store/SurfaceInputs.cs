@@ -23,7 +23,7 @@ public sealed class SurfaceInputs(NpgsqlDataSource database)
     }
 
     /// <summary>The records of a line's effects, in plant-file order, and their version.</summary>
-    public async Task<(string Version, IReadOnlyList<EffectRecord> Effects)> ReadAsync(PlantInForce plant, LinePlace line, CancellationToken stop)
+    public async Task<(string Version, IReadOnlyList<EffectRecord> Effects)> ReadAsync(PlantTimeline plants, PlantInForce plant, LinePlace line, CancellationToken stop)
     {
         await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
         await using NpgsqlTransaction moment = await connection.BeginTransactionAsync(System.Data.IsolationLevel.RepeatableRead, stop);
@@ -36,7 +36,8 @@ public sealed class SurfaceInputs(NpgsqlDataSource database)
             Effect effect = line.Line.Effects[i];
             records.Add(new EffectRecord(
                 effect, await HoursAsync(connection, line.LineId, line.EffectIds[i], stop), TrendStore.Stretches(connection, line.LineId, line.EffectIds[i], DateTimeOffset.MinValue, DateTimeOffset.MaxValue),
-                [.. cleanings[line.EffectIds[i]]], [.. Behind(line.Line, effect).SelectMany(signal => recalibrations[signal]).Distinct().Order()]));
+                [.. cleanings[line.EffectIds[i]]],
+                [.. Behind(line.Line, effect).SelectMany(signal => recalibrations[signal]).Concat(Rebuilt(plants, line.LineId, line.EffectIds[i])).Distinct().Order()]));
         }
 
         return (version, records);
@@ -56,6 +57,23 @@ public sealed class SurfaceInputs(NpgsqlDataSource database)
             one.Chest.Pressure, one.Chest.Temperature, one.Chest.CondensateFlow, one.Chest.CondensateTemperature, one.Vapour.Pressure, one.Vapour.Temperature,
             one.Leaving.Flow, one.Leaving.Solids, one.Leaving.Temperature, one.PressureDifference,
         }).Concat(whole).OfType<Instrument>().Select(instrument => instrument.Signal).Distinct();
+    }
+
+    /// <summary>When a plant revision gave an effect, or a body of its line, another surface: what was before is no measure for it.</summary>
+    private static IEnumerable<long> Rebuilt(PlantTimeline plants, int lineId, int effectId)
+    {
+        (double Area, IEnumerable<Body> Bodies)? SurfaceUnder(PlantInForce era)
+        {
+            if (era.Lines.FirstOrDefault(place => place.LineId == lineId) is not { } place || place.EffectIds.ToList().IndexOf(effectId) is not (>= 0 and var i)) return null;
+            return (place.Line.Effects[i].Area, place.Line.Bodies);
+        }
+
+        for (int k = 1; k < plants.Eras.Count; k++)
+        {
+            if (SurfaceUnder(plants.Eras[k - 1]) is not var (area, bodies) || SurfaceUnder(plants.Eras[k]) is not var (later, others)) continue;
+            bool same = area == later && bodies.All(body => others.All(other => other.Name != body.Name || other.Area == body.Area));
+            if (!same) yield return PlantTimeline.Midnight(PlantTimeline.FirstDay(plants.Eras[k].InForceFrom)).ToUnixTimeMilliseconds();
+        }
     }
 
     private static Task<string> VersionAsync(NpgsqlConnection connection, int lineId, CancellationToken stop) => connection.ExecuteScalarAsync<string>(new CommandDefinition(

@@ -56,7 +56,7 @@ public sealed class CampaignTests(ApiService api) : IClassFixture<ApiService>
         Assert.Equal(HttpStatusCode.Created, answer.StatusCode);
         await api.Service.SurfacesAsync();
         CampaignsWire near = await api.Service.GetAsync<CampaignsWire>("/api/v1/lines/north/effects/N4/campaigns"), far = await api.Service.GetAsync<CampaignsWire>("/api/v1/lines/north/effects/N1/campaigns");
-        Assert.Contains(near.CleanReferences, one => one.Source.Contains("recalibrated on 2026-03-03", StringComparison.Ordinal));
+        Assert.Contains(near.CleanReferences, one => one.Source.Contains("changed, on 2026-03-03", StringComparison.Ordinal));
         Assert.DoesNotContain(far.CleanReferences, one => one.Source.Contains("recalibrated", StringComparison.Ordinal));
     }
 
