@@ -1,4 +1,5 @@
 import type { Effect } from '../api/types';
+import { residualOf } from '../words/fouling';
 import type { Deposit } from './geometry';
 
 /** How many weeks one stratum stands for, the same for a page: one, or four once any campaign on it is longer than twelve weeks. */
@@ -15,13 +16,14 @@ export function depositOf(effect: Effect, weeks: 1 | 4): { deposit: Deposit; sca
   const clean = cleanCoefficient(effect);
   const limit = set !== null && set > 0 ? set : clean === null ? null : 1 / clean;
   if (limit === null) return null;
+  const left = residualOf(effect);
   return {
     scale: limit === set ? 'limit' : 'half clean',
     deposit: {
       resistance: effect.now?.fouling_resistance_m2k_w ?? null,
       uncertainty: effect.now?.fouling_resistance_u ?? null,
       limit,
-      residual: effect.residual_m2k_w ?? null,
+      residual: left?.told ? left.value : null,
       growth: effect.growth.filter((_, i) => (i + 1) % weeks === 0),
     },
   };

@@ -30,10 +30,10 @@ export function usePlot(model: ChartModel, height: number, events: ChartEvents) 
     // Text drawn before the typeface arrives has the wrong widths.
     void document.fonts?.ready.then(() => { if (plot.current === made) made.redraw(false, true); });
     return () => { stop(); resize.disconnect(); made.destroy(); plot.current = null; };
-  }, [height, model.narrow]);
+  }, [height, model.narrow, model.times]);
 
   useEffect(() => { plot.current?.setData(chartData(live.model), true); },
-    [model.columns, model.clean, model.cleanings, model.limit?.value, model.limit?.label, model.latest?.label, model.span.from, model.span.to, model.zone]);
+    [model.columns, model.clean, model.marks, model.limit?.value, model.limit?.label, model.latest?.label, model.span.from, model.span.to, model.zone]);
 
   return { host, plot, model: live.model };
 }

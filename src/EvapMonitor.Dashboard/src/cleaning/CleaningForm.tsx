@@ -32,7 +32,7 @@ export function CleaningForm({ lines, chosen }: { lines: Line[]; chosen: { line:
   const errors = useSignal<ReturnType<typeof check>['errors']>(null);
   const failure = useSignal<string | null>(null);
   const sending = useSignal(false);
-  const logged = useSignal<Cleaning | null>(null);
+  const logged = useSignal<(Cleaning & { id: string }) | null>(null);
   const element = useRef<HTMLFormElement>(null);
   const draft = form.value.draft;
 
@@ -61,7 +61,7 @@ export function CleaningForm({ lines, chosen }: { lines: Line[]; chosen: { line:
       const answer = await send(addresses.cleanings(), {
         method: 'POST', headers: { 'content-type': 'application/json', 'idempotency-key': form.peek().key }, body: JSON.stringify(checked.cleaning),
       });
-      logged.value = await answer.json() as Cleaning;
+      logged.value = await answer.json() as Cleaning & { id: string };
       keep(null);
       form.value = fresh();
       cleaningsChanged.value++;

@@ -9,7 +9,7 @@ import { cleaningsChanged } from '../site/state';
 const patience = 10;
 
 /** Says what was logged and lets it be taken back for ten seconds. */
-export function Undo({ of, done }: { of: Cleaning; done: () => void }) {
+export function Undo({ of, done }: { of: Cleaning & { id: string }; done: () => void }) {
   const left = useSignal(patience);
   const words = useSignal<string | null>(null);
   useEffect(() => {

@@ -19,7 +19,7 @@ export function CleaningsTable({ all, now, everywhere }: { all: Cleaning[]; now:
             <th scope="col">kind</th><th scope="col">note</th></tr></thead>
           <tbody>{sorted.slice(0, most.value).map(c => {
             const start = Date.parse(c.start), end = c.end === null ? null : Date.parse(c.end);
-            return <tr key={c.id}>
+            return <tr key={c.id ?? `${c.line} ${c.effect} ${c.start}`}>
               {everywhere && <><td>{c.line}</td><th scope="row"><Link href={pages.effect(c.line, c.effect)}>{c.effect}</Link></th></>}
               <td class="time">{moment(start, zone.value, now)}</td><td class="time">{end === null ? <b>goes on</b> : moment(end, zone.value, now)}</td>
               <td class="time">{duration((end ?? now) - start)}</td><td>{c.kind}</td><td class="note">{c.note}</td>

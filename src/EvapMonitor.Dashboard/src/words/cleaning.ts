@@ -1,0 +1,46 @@
+import type { Cleaning, Verdict } from '../api/types';
+import { percent } from './resistance';
+
+/** How a cleaning is known, in words. */
+export const knownWords = (c: Cleaning): string => {
+  switch (c.known_by) {
+    case 'logged': return 'logged';
+    case 'signal': return 'by signal';
+    case 'recognised': return 'recognised, not logged';
+    case 'rejected': return 'rejected: no cleaning';
+  }
+};
+
+/** What it brought, in words; why when that cannot be told. */
+export function verdictWords(c: Cleaning): { words: string; why: string } {
+  if (c.known_by === 'rejected') return { words: 'no cleaning', why: 'somebody says so' };
+  if (c.end === null) return { words: 'goes on', why: '' };
+  if (c.result === null) return { words: 'not computed yet', why: '' };
+  const { verdict, reason } = c.result;
+  return { words: verdict === 'awaiting hours' ? 'waits for hours of production' : verdict, why: reason };
+}
+
+/** The verdict that a mark stands for; null when there is none yet. */
+export const verdictOf = (c: Cleaning): Verdict | null => (c.known_by === 'rejected' || c.end === null ? null : c.result?.verdict ?? null);
+
+/** The surface in words: the effect's name, and the body's where one was cleaned. */
+export function surfaceWords(c: Cleaning): string | null {
+  const surface = c.result?.surface ?? c.body;
+  return surface === null || surface === c.effect ? null : surface;
+}
+
+/** Short words for a chart: "chemical, 97 % removed", and shorter: "97 %". */
+export function laneWords(c: Cleaning): { long: string; short: string } {
+  const surface = surfaceWords(c), named = (words: string) => (surface === null ? words : `${surface}: ${words}`);
+  if (c.end === null) return { long: named('being cleaned'), short: 'being cleaned' };
+  const how = c.known_by === 'recognised' ? 'recognised' : c.known_by === 'signal' ? 'by signal' : c.kind || 'cleaned';
+  if (c.result?.verdict === 'did not clean') return { long: named(`${how}, did not clean`), short: 'did not clean' };
+  const share = c.result?.removed_share ?? null;
+  return share === null ? { long: named(how), short: '' } : { long: named(`${how}, ${percent(share)} removed`), short: percent(share) };
+}
+
+/** Recognised ones that wait for an answer, newest first, at most one for each effect when `onePerEffect`. */
+export function waiting(all: readonly Cleaning[], onePerEffect = false): Cleaning[] {
+  const open = all.filter(c => c.known_by === 'recognised' && c.id === null).sort((a, b) => Date.parse(b.start) - Date.parse(a.start));
+  return onePerEffect ? open.filter((c, i) => open.findIndex(d => d.line === c.line && d.effect === c.effect) === i) : open;
+}
