@@ -102,13 +102,13 @@ export function TrendChart({ title, name, model: given, height, small, busy, sho
   return (
     <figure class={small ? 'chart chart-small' : 'chart'} aria-label={title}>
       {small
-        ? <div class="chart-head"><figcaption>{title}</figcaption><p class="values">{values}</p><span class="chart-buttons">{buttons}</span></div>
+        ? <div class="chart-head"><figcaption>{title}</figcaption><p class="values">{values}</p><span class="axis-start">{foot}</span><span class="chart-buttons">{buttons}</span></div>
         : <><figcaption>{title}</figcaption><p class="values">{values}</p></>}
       <div class="plot" ref={host} tabIndex={0} role="img" onKeyDown={press} aria-busy={busy}
         aria-label={`${spokenSummary(title, columns, span, given.limit?.label ?? null, given.marks, zone, calmNow.peek())} Arrow keys move the cursor, plus and minus zoom, 0 resets, T opens the table.`} />
       {empty && <p class="plot-empty">{busy ? 'The values are on the way.' : <>No value from {date(span.from, zone, calmNow.peek())} to {date(span.to, zone, calmNow.peek())}
         {why.length > 0 ? `: ${why.join('; ')}` : '; show an earlier time, or see under Plant what was imported'}.</>}</p>}
-      {small ? foot !== '' && <p class="axis-start">{foot}</p> : <div class="chart-foot"><span class="axis-start">{foot}</span>{buttons}</div>}
+      {!small && <div class="chart-foot"><span class="axis-start">{foot}</span>{buttons}</div>}
       {table.value && <TrendTable columns={columns} span={span} zone={zone} what={title} />}
     </figure>
   );

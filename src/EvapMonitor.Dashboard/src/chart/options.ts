@@ -15,7 +15,7 @@ export interface ChartEvents {
 }
 
 const axisFont = '13px "Atkinson Hyperlegible Next Variable", system-ui, sans-serif';
-export const gutter = (narrow: boolean) => (narrow ? 84 : 128);
+export const gutter = (narrow: boolean) => (narrow ? 84 : 140);
 
 /** uPlot's options for a model; the model may change afterwards, what is drawn follows it. */
 export function chartOptions(m: ChartModel, width: number, height: number, events: ChartEvents): uPlot.Options {
@@ -51,9 +51,9 @@ export function chartOptions(m: ChartModel, width: number, height: number, event
     series: [
       {},
       // The band comes first, so that the line lies on it.
-      { stroke: () => m.palette.water, width: 0.7, points: { show: false } },
-      { stroke: () => m.palette.water, width: 0.7, points: { show: false } },
-      { stroke: () => m.palette.water, width: 2, points: { show: false } },
+      { stroke: () => m.palette.water, width: 0.7, points: { show: false }, gaps },
+      { stroke: () => m.palette.water, width: 0.7, points: { show: false }, gaps },
+      { stroke: () => m.palette.water, width: 2, points: { show: false }, gaps },
       dots(() => m.palette.water, 4),
       dots(() => m.palette.faint, 3),
     ],
@@ -70,6 +70,9 @@ export function chartOptions(m: ChartModel, width: number, height: number, event
     },
   };
 }
+
+/** Gaps are cut out of a line that is drawn across them; a pixel more on both sides, else a steep one leaves its edges standing. */
+const gaps: uPlot.Series.GapsRefiner = (_, __, ___, ____, found) => found.map(([from, to]) => [from - devicePixelRatio, to + devicePixelRatio]);
 
 function dots(colour: () => string, size: number): uPlot.Series {
   return { paths: () => null, points: { show: true, size, width: 0, stroke: colour, fill: colour } };

@@ -50,7 +50,7 @@ export function EffectPage({ line, effect }: { line: string; effect: string }) {
           <div>
             <Shown of={cleanings} what="The cleanings">
               {({ cleanings: all }) => (all.length === 0 ? <p class="quiet">No cleaning of {e.name} is known.</p>
-                : <CleaningsTable all={all} now={calmNow.value} everywhere={false} />)}
+                : <CleaningsTable all={all} now={calmNow.value} everywhere={false} first={10} />)}
             </Shown>
             <details class="log"><summary>Log a cleaning of {e.name}</summary>
               <CleaningForm lines={lines.state.value.value?.lines ?? []} chosen={{ line, effect }} />

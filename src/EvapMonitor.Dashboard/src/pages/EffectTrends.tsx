@@ -78,7 +78,7 @@ export function EffectTrends({ effect, cleanings, stops, version }: { effect: Ef
           <option value="">none</option>
           {quantities.filter(q => !standing.includes(q) && !conditions.includes(q)).map(q => <option key={q} value={q}>{quantityWords[q].name}</option>)}
         </select></label>
-        {another !== null && <Condition key={another} quantity={another} address={address(another)} version={version}>{(shown, busy) => chart(another, shown, busy, 'middle', true)}</Condition>}
+        {another !== null && <div class="another"><Condition key={another} quantity={another} address={address(another)} version={version}>{(shown, busy) => chart(another, shown, busy, 'middle', true)}</Condition></div>}
       </div>
     </section>
   );

@@ -1,5 +1,7 @@
 import type { Cleaning, Verdict } from '../api/types';
-import { percent } from './resistance';
+import { duration } from './duration';
+import { percent, resistance, resistanceUnit } from './resistance';
+import { date, moment } from './time';
 
 /** How a cleaning is known, in words. */
 export const knownWords = (c: Cleaning): string => {
@@ -43,4 +45,16 @@ export function laneWords(c: Cleaning): { long: string; short: string } {
 export function waiting(all: readonly Cleaning[], onePerEffect = false): Cleaning[] {
   const open = all.filter(c => c.known_by === 'recognised' && c.id === null).sort((a, b) => Date.parse(b.start) - Date.parse(a.start));
   return onePerEffect ? open.filter((c, i) => open.findIndex(d => d.line === c.line && d.effect === c.effect) === i) : open;
+}
+
+/** The question that a recognised cleaning asks, after the name of its effect. */
+export function askedWords(c: Cleaning, zone: string, now: number): { head: string; rest: string } {
+  const start = Date.parse(c.start), end = c.end === null ? null : Date.parse(c.end), r = c.result;
+  const removed = r && resistance(r.removed_m2k_w), share = r?.removed_share ?? null;
+  const day = date(end ?? start, zone, now);
+  const head = removed === null ? `came back better on ${day} without an entry` : `lost ${removed} ${resistanceUnit} of resistance on ${day} without an entry`;
+  const out = end === null ? `It is out of production since ${moment(start, zone, now)}` : `It was out of production from ${moment(start, zone, now)} for ${duration(end - start)}`;
+  const confidence = r?.confidence ?? null;
+  const sure = confidence === null ? '' : confidence > 0.995 ? '; that its coefficient rose is as good as certain' : `; that its coefficient rose is ${percent(confidence)} sure`;
+  return { head, rest: `${share === null ? '' : `, ${percent(share)} of what was there`}: was it cleaned? ${out}${sure}.` };
 }

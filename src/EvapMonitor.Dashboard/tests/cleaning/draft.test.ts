@@ -3,11 +3,11 @@ import { check, twice, type Draft } from '../../src/cleaning/draft';
 
 const zone = 'Europe/Copenhagen', now = Date.parse('2026-11-30T13:32:00Z');
 const draft = (part: Partial<Draft>): Draft => ({
-  line: 'north', effect: 'N4', start: '2026-11-30T06:00', end: '2026-11-30T12:00', goesOn: false, kind: ' chemical ', note: '', startSecond: false, endSecond: false, ...part,
+  line: 'north', effect: 'N4', body: '', start: '2026-11-30T06:00', end: '2026-11-30T12:00', goesOn: false, kind: ' chemical ', note: '', startSecond: false, endSecond: false, ...part,
 });
 
 test('GoodDraft_UtcInstants', () => {
-  expect(check(draft({}), zone, now).cleaning).toEqual({ line: 'north', effect: 'N4', start: '2026-11-30T05:00:00.000Z', end: '2026-11-30T11:00:00.000Z', kind: 'chemical', note: '' });
+  expect(check(draft({}), zone, now).cleaning).toEqual({ line: 'north', effect: 'N4', start: '2026-11-30T05:00:00.000Z', end: '2026-11-30T11:00:00.000Z', kind: 'chemical', note: '', body: null });
 });
 test('StillGoingOn_NoEnd', () => expect(check(draft({ goesOn: true, end: 'nonsense' }), zone, now).cleaning?.end).toBeNull());
 test.each([
