@@ -34,7 +34,7 @@ export function Wall() {
   return (
     <div class="wall">
       <Top />
-      <Alerts all={firstSentences(notices.value, all, at, zone.value, Infinity).first} />
+      <Alerts all={firstSentences(notices.value, all, [], at, zone.value, Infinity).first} />
       {all.length === 0
         ? <p class="wall-empty">{lines.state.value.failure === null ? 'The lines are on the way.' : `The lines could not be fetched: ${lines.state.value.failure.words}. It is tried again by itself.`}</p>
         : <div class="wall-lines" style={{ gridTemplateRows: `repeat(${shown.length}, minmax(0, 1fr))` }}>{shown.map(l => <Row key={l.name} line={l} now={at} weeks={weeks} />)}</div>}

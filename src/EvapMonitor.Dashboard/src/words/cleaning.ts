@@ -41,11 +41,15 @@ export function laneWords(c: Cleaning): { long: string; short: string } {
   return share === null ? { long: named(how), short: '' } : { long: named(`${how}, ${percent(share)} removed`), short: percent(share) };
 }
 
-/** Recognised ones that wait for an answer, newest first, at most one for each effect when `onePerEffect`. */
-export function waiting(all: readonly Cleaning[], onePerEffect = false): Cleaning[] {
-  const open = all.filter(c => c.known_by === 'recognised' && c.id === null).sort((a, b) => Date.parse(b.start) - Date.parse(a.start));
-  return onePerEffect ? open.filter((c, i) => open.findIndex(d => d.line === c.line && d.effect === c.effect) === i) : open;
+/** Recognised ones that wait for an answer, newest first. One that an entry of the log touches is answered, even before results follow it. */
+export function waiting(all: readonly Cleaning[]): Cleaning[] {
+  const end = (c: Cleaning) => (c.end === null ? Infinity : Date.parse(c.end));
+  const answers = (entry: Cleaning, c: Cleaning) => entry.id !== null && entry.line === c.line && entry.effect === c.effect && Date.parse(entry.start) < end(c) && end(entry) > Date.parse(c.start);
+  return all.filter(c => c.id === null && c.known_by === 'recognised' && !all.some(entry => answers(entry, c))).sort((a, b) => Date.parse(b.start) - Date.parse(a.start));
 }
+
+/** Of those that wait, the newest of each effect. */
+export const onePerEffect = (asked: readonly Cleaning[]): Cleaning[] => asked.filter((c, i) => asked.findIndex(d => d.line === c.line && d.effect === c.effect) === i);
 
 /** The question that a recognised cleaning asks, after the name of its effect. */
 export function askedWords(c: Cleaning, zone: string, now: number): { head: string; rest: string } {

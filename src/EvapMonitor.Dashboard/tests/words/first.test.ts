@@ -15,31 +15,31 @@ const keys = (...given: Parameters<typeof firstSentences>) => firstSentences(...
 
 test('Order_NoticesDueSilentUnknown_WhateverTheRows', () => {
   const lines = [calm('a'), line([unknown('N1', 'x')], { name: 'b' }), silentSince('c', '2026-11-30T10:00:00Z'), dueAt('d', '2026-11-30T04:00:00Z')];
-  expect(keys([cut], lines, now, zone)).toEqual(['notice source:gateway', 'line d', 'line c', 'line b']);
+  expect(keys([cut], lines, [], now, zone)).toEqual(['notice source:gateway', 'line d', 'line c', 'line b']);
   expect(lines.map(l => l.name)).toEqual(['a', 'b', 'c', 'd']);
 });
 test('LongestDueAndLongestSilent_ComeFirst', () => {
-  expect(keys([], [dueAt('a', '2026-11-30T04:00:00Z'), dueAt('b', '2026-11-29T04:00:00Z'), silentSince('c', '2026-11-30T10:00:00Z'), silentSince('d', '2026-11-29T10:00:00Z')], now, zone))
+  expect(keys([], [dueAt('a', '2026-11-30T04:00:00Z'), dueAt('b', '2026-11-29T04:00:00Z'), silentSince('c', '2026-11-30T10:00:00Z'), silentSince('d', '2026-11-29T10:00:00Z')], [], now, zone))
     .toEqual(['line b', 'line a', 'line d', 'line c']);
 });
 test('MoreThanFive_FiveStandAndTheRestAreCounted', () => {
-  const { first, left } = firstSentences([full], ['a', 'b', 'c', 'd', 'e', 'f'].map(n => dueAt(n, '2026-11-30T04:00:00Z')), now, zone);
+  const { first, left } = firstSentences([full], ['a', 'b', 'c', 'd', 'e', 'f'].map(n => dueAt(n, '2026-11-30T04:00:00Z')), [], now, zone);
   expect([first.length, left]).toEqual([5, 2]);
   expect(first[0]!.key).toBe('notice spool-full');
 });
-test('CalmSite_NothingComesFirst', () => expect(firstSentences([], [calm('a')], now, zone)).toEqual({ first: [], left: 0 }));
+test('CalmSite_NothingComesFirst', () => expect(firstSentences([], [calm('a')], [], now, zone)).toEqual({ first: [], left: 0 }));
 test('SilentLineWithADueEffect_IsSilentAndAsksForNoAct', () => {
-  const { first } = firstSentences([], [line([due('N4', '2026-11-29T04:00:00Z')], { name: 'a', readings: 'stale', latest_reading_at: '2026-11-30T10:08:00Z' })], now, zone);
+  const { first } = firstSentences([], [line([due('N4', '2026-11-29T04:00:00Z')], { name: 'a', readings: 'stale', latest_reading_at: '2026-11-30T10:08:00Z' })], [], now, zone);
   expect(first).toHaveLength(1);
   expect(first[0]!.act).toBe(false);
   expect(first[0]!.pieces[0]!.text).toBe('No reading has come for 3 h');
 });
 test('OnlyWhereSomeoneMustAct_IsMarked', () => {
-  expect(firstSentences([cut, full], [dueAt('a', '2026-11-30T04:00:00Z'), line([unknown('N1', 'x')], { name: 'b' })], now, zone).first.map(f => [f.key, f.act]))
+  expect(firstSentences([cut, full], [dueAt('a', '2026-11-30T04:00:00Z'), line([unknown('N1', 'x')], { name: 'b' })], [], now, zone).first.map(f => [f.key, f.act]))
     .toEqual([['notice spool-full', true], ['notice source:gateway', false], ['line a', true], ['line b', false]]);
 });
 test('EveryFirst_OneBoldClause', () => {
-  for (const f of firstSentences([cut, full], [dueAt('a', '2026-11-30T04:00:00Z')], now, zone).first) expect(f.pieces.filter(p => p.bold)).toHaveLength(1);
+  for (const f of firstSentences([cut, full], [dueAt('a', '2026-11-30T04:00:00Z')], [], now, zone).first) expect(f.pieces.filter(p => p.bold)).toHaveLength(1);
 });
 
 test('Wall_ActsInFullFirstAndTheRestByName', () => {
