@@ -1,4 +1,5 @@
 import { useSignal } from '@preact/signals';
+import { useEffect, useRef } from 'preact/hooks';
 import { addresses } from '../api/addresses';
 import { send } from '../api/request';
 import type { Cleaning } from '../api/types';
@@ -14,8 +15,10 @@ import { failureWords, useDraft, type Entry } from './use-draft';
 /** What an entry of the log is called when several could be meant. */
 export const entryName = (c: Cleaning) => `${c.effect}, ${moment(Date.parse(c.start), zone.peek(), now.peek())}`;
 
-/** The buttons of an entry in the log. */
-export function EntryButtons({ of, correct }: { of: Entry; correct(): void }) {
+/** The buttons of an entry in the log. `focus`: its correction was just closed, so the focus comes back here. */
+export function EntryButtons({ of, focus, correct }: { of: Entry; focus: boolean; correct(): void }) {
+  const first = useRef<HTMLButtonElement>(null);
+  useEffect(() => { if (focus) first.current?.focus(); }, []);
   const asks = useSignal(false), failure = useSignal<string | null>(null);
   const rejected = of.known_by === 'rejected', name = <span class="unseen"> the entry {entryName(of)}</span>;
   const withdraw = async () => {
@@ -32,7 +35,7 @@ export function EntryButtons({ of, correct }: { of: Entry; correct(): void }) {
       {asks.value
         ? <span role="group" aria-label={`Withdraw ${entryName(of)}`}>Results are computed anew without it.{' '}
           <button type="button" onClick={() => void withdraw()}>Withdraw it</button>{' '}<button type="button" onClick={() => { asks.value = false; }}>Keep it</button></span>
-        : <><button type="button" onClick={correct}>Correct{name}</button>{' '}<button type="button" onClick={() => { asks.value = true; }}>Withdraw{name}</button></>}
+        : <><button type="button" ref={first} onClick={correct}>Correct{name}</button>{' '}<button type="button" onClick={() => { asks.value = true; }}>Withdraw{name}</button></>}
       {failure.value && <p class="wrong" role="alert">{failure.value}</p>}
     </>
   );
@@ -44,6 +47,7 @@ export function CorrectionForm({ of, done }: { of: Entry; done(): void }) {
     announce(`Corrected: ${entryName(entry)}.`);
     done();
   });
+  useEffect(() => form.element.current?.querySelector<HTMLElement>('select, input')?.focus(), []);
   return (
     <form ref={form.element} class="log-form correction" noValidate aria-label={`Correct the entry ${entryName(of)}`} onSubmit={event => void form.submit(event)}>
       <CleaningFields draft={form.draft} errors={form.errors} lines={null} prefix={of.id} open change={form.change} />

@@ -78,7 +78,7 @@ function Head({ effect }: { effect: Effect }) {
       <div>
         <Words pieces={effectWords(effect, readings, latest, now, zone.value)} />
         {failed && <Words pieces={failed} />}
-        <Words pieces={foulingWords(effect, zone.value, now)} />
+        <Words pieces={foulingWords(effect, readings === 'live' && (effect.now?.coefficient_w_m2k ?? null) !== null, zone.value, now)} />
         <div class="head-row">
           <Bore effect={effect} radius={64} now={now} stale={readings !== 'live'} weeks={weeksPerStratum([effect])} />
           <LimitsTable effect={effect} now={now} fresh={readings === 'live'} />

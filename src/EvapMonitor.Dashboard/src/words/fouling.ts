@@ -35,17 +35,17 @@ export function begunWords(campaign: Campaign, zone: string, now: number): strin
   }
 }
 
-/** How fast it fouls, or whether it fouls at all; two sentences at most, one clause bold. */
-export function foulingWords(effect: Effect, zone: string, now: number): Piece[] {
+/** How fast it fouls, or whether it fouls at all; two sentences at most, one clause bold. `fresh`: its readings are live and it has a coefficient; else it is told of the past. */
+export function foulingWords(effect: Effect, fresh: boolean, zone: string, now: number): Piece[] {
   const { campaign, name } = effect;
   if (campaign === null) return [plain(`How fast ${name} fouls is not known yet: it has no campaign with results.`)];
   const rate = rateOf(campaign), since = begunWords(campaign, zone, now), left = residualOf(effect);
   const began = left === null ? '' : left.told ? ` It began with ${resistance(left)} left.` : ` It began with ${resistance(left)}, not to be told from clean.`;
   if (rate === null) return [bold('How fast it fouls cannot be told yet'), plain(`, ${Math.round(campaign.production_hours)} h of production since ${since}.${began}`)];
-  if (rate.grows === null) return [bold(`No fouling of ${name} can be told`), plain(`: its resistance changes by ${rate.words} of production, since ${since}.${began}`)];
-  if (!rate.grows) return [bold(`The resistance of ${name} falls`), plain(`, by ${rate.words.replace('\u2212', '')} of production, since ${since}.${began}`)];
+  if (rate.grows === null) return [bold(`No fouling of ${name} ${fresh ? 'can' : 'could'} be told`), plain(`: its resistance ${fresh ? 'changes' : 'changed'} by ${rate.words} of production, since ${since}.${began}`)];
+  if (!rate.grows) return [bold(`The resistance of ${name} ${fresh ? 'falls' : 'fell'}`), plain(`, by ${rate.words.replace('\u2212', '')} of production, since ${since}.${began}`)];
   const limit = effect.limits.resistance_m2k_w, share = limit !== null && limit > 0 ? `, ${significant((rate.value / limit) * 100, 2)} % of its limit` : '';
-  return [bold(`${name} fouls by ${rate.words} of production`), plain(`${share}, since ${since}.${began}`)];
+  return [bold(`${name} ${fresh ? 'fouls' : 'fouled'} by ${rate.words} of production`), plain(`${share}, since ${since}.${began}`)];
 }
 
 /** That the last cleaning did not clean, with its numbers; null when it did or that is not known. */

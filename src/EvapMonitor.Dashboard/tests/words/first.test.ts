@@ -3,6 +3,7 @@ import type { Notice } from '../../src/api/types';
 import { firstSentences, wallFirst } from '../../src/words/first';
 import { noticeLine, noticeWords, orderedNotices } from '../../src/words/notice';
 import { due, effect, line, now, unknown } from './sample';
+import { recognised } from './sample-cleaning';
 
 const zone = 'Europe/Copenhagen';
 const full: Notice = { key: 'spool-full', since: '2026-11-30T13:20:00Z', sentence: 'The spool is full. Readings are refused until there is room.' };
@@ -60,4 +61,11 @@ test('Notices_ThoseToActUponFirst', () => expect(orderedNotices([cut, full]).map
 test('NoticeLine_TheFirstAndHowManyMore', () => {
   expect(noticeLine([cut, full], zone, now)).toBe('The spool is full. Readings are refused until there is room. Since 14:20, for 12 min. 1 more notice stands on Today.');
   expect(noticeLine([], zone, now)).toBe('');
+});
+test('RecognisedCleanings_OnceForEachEffect_AfterAllElse_WithThePageThatAnswers', () => {
+  const asked = [recognised(), recognised({ start: '2026-09-01T00:00:00Z', end: '2026-09-01T08:00:00Z' })];
+  const { first } = firstSentences([cut], [dueAt('a', '2026-11-30T04:00:00Z')], asked, now, zone);
+  expect(first.map(f => f.key)).toEqual(['notice source:gateway', 'line a', 'asked north N4']);
+  expect(first[2]).toMatchObject({ act: false, answer: '/cleanings' });
+  expect(first[2]!.pieces.map(p => p.text).join('')).toBe('N4 came back better on Mon 26 Oct without an entry: was it cleaned?');
 });
