@@ -10,7 +10,6 @@ import { now } from '../site/clock';
 import { cleaningsChanged, zone } from '../site/state';
 import { askedWords } from '../words/cleaning';
 import { CleaningFields } from './CleaningFields';
-import { Cautions } from './Cautions';
 import { draftOf } from './draft';
 import { entryName } from './EntryActions';
 import { freshKey } from './key';
@@ -80,7 +79,6 @@ function ConfirmForm({ of, done, close }: { of: Cleaning; done(entry: Entry): vo
   return (
     <form ref={form.element} class="log-form" noValidate aria-label={`The cleaning ${entryName(of)}`} onSubmit={event => void form.submit(event)}>
       <CleaningFields draft={form.draft} errors={form.errors} lines={null} prefix={`asked-${of.line}-${of.effect}-${Date.parse(of.start)}`} open={false} change={form.change} />
-      <Cautions id={`cautions-${of.line}-${of.effect}-${Date.parse(of.start)}`} />
       {form.failure && <p class="wrong" role="alert">{form.failure}</p>}
       <p><button type="submit" class="main" disabled={form.sending}>{form.sending ? 'Sending' : 'Log it as cleaned'}</button>{' '}<button type="button" onClick={close}>Not now</button></p>
     </form>

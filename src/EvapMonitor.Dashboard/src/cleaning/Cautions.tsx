@@ -1,8 +1,8 @@
-/** What stands above the button that logs a cleaning. `id` is unique on the page. */
-export function Cautions({ id }: { id: string }) {
+/** What stands above the button that logs a cleaning. */
+export function Cautions() {
   return (
-    <section class="cautions" aria-labelledby={id}>
-      <h3 id={id}>Before anyone cleans</h3>
+    <section class="cautions" aria-labelledby="cautions">
+      <h3 id="cautions">Before anyone cleans</h3>
       <ul>
         <li>Caustic first, then acid, with a full rinse between: together they react violently.</li>
         <li>Acid can set free hydrogen: vent, and keep every ignition source away. On sulphide scale it sets free hydrogen sulphide, on carbonate scale carbon dioxide; with hypochlorite, chlorine.</li>

@@ -41,7 +41,7 @@ function Form({ lines, chosen }: FormProps) {
   return (
     <form ref={form.element} class="log-form" noValidate onSubmit={event => void form.submit(event)}>
       <CleaningFields draft={form.draft} errors={form.errors} lines={chosen ? null : lines} prefix="" open change={form.change} />
-      <Cautions id="cautions" />
+      <Cautions />
       {form.failure && <p class="wrong" role="alert">{form.failure}</p>}
       <button type="submit" class="main" disabled={form.sending}>{form.sending ? 'Sending' : 'Log this cleaning'}</button>
     </form>

@@ -1,7 +1,7 @@
 import type { CleanReference, Effect } from '../api/types';
 import { zone } from '../site/state';
 import { exponentRows, withDates } from '../words/expectation';
-import { measured, significant } from '../words/number';
+import { measured } from '../words/number';
 
 /** What the clean expectation rests on, in plain words; one part for each product. */
 export function CleanBasis({ effect, of, now }: { effect: Effect; of: readonly CleanReference[]; now: number }) {
@@ -23,7 +23,7 @@ export function CleanBasis({ effect, of, now }: { effect: Effect; of: readonly C
           </tr>)}</tbody>
         </table>
       </section>)}
-      <p class="legend-small">Design value of the plant file or last learnt: {effect.clean_coefficient_w_m2k === null ? 'none' : `${significant(effect.clean_coefficient_w_m2k, 3)} W/(m²·K) in use now`}. An exponent stands for ln U by ln of the condition; of the boiling temperature for ln U by K.</p>
+      {of.length > 0 && <p class="legend-small">An exponent stands for ln U by ln of the condition; of the boiling temperature for ln U by K.</p>}
     </details>
   );
 }
