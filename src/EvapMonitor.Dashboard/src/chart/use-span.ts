@@ -26,6 +26,7 @@ export function useSpan() {
   };
   const reset = () => { clearTimeout(rest.current); moving.value = null; navigate(path + writeView({ from: null, to: null, quantity: view.quantity })); };
   const choose = (quantity: Quantity | null) => navigate(path + writeView({ ...view, quantity }), { replace: true });
-  const [from, to] = useSettled(`${span.from} ${span.to}`, 250).split(' ').map(Number) as [number, number];
+  // What a button or the address names is fetched at once.
+  const [from, to] = useSettled(`${span.from} ${span.to}`, moving.value === null ? 0 : 250).split(' ').map(Number) as [number, number];
   return { span, settled: { from, to }, quantity: view.quantity, show, reset, choose };
 }

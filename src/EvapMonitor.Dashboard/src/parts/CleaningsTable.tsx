@@ -7,7 +7,7 @@ import { CorrectionForm, EntryButtons } from '../cleaning/EntryActions';
 import type { Entry } from '../cleaning/use-draft';
 import { VerdictMark } from '../cleaning/VerdictMark';
 import { zone } from '../site/state';
-import { knownWords, surfaceWords, verdictWords } from '../words/cleaning';
+import { knownWords, surfaceWords, verdictWords, waiting } from '../words/cleaning';
 import { duration } from '../words/duration';
 import { percent, resistance, resistanceUnit } from '../words/resistance';
 import { moment } from '../words/time';
@@ -16,7 +16,7 @@ import { Scroller } from './Scroller';
 /** Cleanings with what they brought, the youngest first. `everywhere`: name line and effect too. `first`: so many rows at once. */
 export function CleaningsTable({ all, now, everywhere, first }: { all: readonly Cleaning[]; now: number; everywhere: boolean; first: number }) {
   const most = useSignal(first), open = useSignal<string | null>(null), returned = useSignal<string | null>(null);
-  const sorted = [...all].sort((a, b) => Date.parse(b.start) - Date.parse(a.start)), columns = everywhere ? 9 : 7;
+  const sorted = [...all].sort((a, b) => Date.parse(b.start) - Date.parse(a.start)), columns = everywhere ? 9 : 7, asked = new Set(waiting(all));
   return (
     <>
       <Scroller label="Table of cleanings">
@@ -36,7 +36,7 @@ export function CleaningsTable({ all, now, everywhere, first }: { all: readonly 
                 <td class="verdict"><VerdictMark of={c} /><span>{c.result?.verdict === 'did not clean' ? <b>{words}</b> : words}{why !== '' && <span class="quiet">: {why}</span>}</span></td>
                 <td class="number" data-name="removed">{r === null || r.removed_share === null ? '–' : <>{resistance(r.removed_m2k_w)} ({percent(r.removed_share)})</>}</td>
                 <td class="number" data-name="left">{r === null ? '–' : resistance(r.left_m2k_w) ?? '–'}</td>
-                <td class="entry-buttons">{entry && open.value !== key && <EntryButtons of={entry} focus={returned.value === key} correct={() => { [open.value, returned.value] = [key, key]; }} />}</td>
+                <td class="entry-buttons">{asked.has(c) && (everywhere ? <a href="#asked">Was it a cleaning?</a> : <Link href={pages.cleanings}>Was it a cleaning?</Link>)}{entry && open.value !== key && <EntryButtons of={entry} focus={returned.value === key} correct={() => { [open.value, returned.value] = [key, key]; }} />}</td>
               </tr>
               {entry && open.value === key && <tr class="more"><td colSpan={columns}><CorrectionForm of={entry} done={() => { open.value = null; }} /></td></tr>}
             </Fragment>;
