@@ -36,9 +36,8 @@ function cleanCoefficient(effect: Effect): number | null {
   return effect.clean_coefficient_w_m2k;
 }
 
-/** Share of the hours allowed since the last cleaning; null without such a limit or without a known cleaning. */
-export function hoursShare(effect: Effect, now: number): number | null {
-  const allowed = effect.limits.hours_since_cleaning;
-  const end = effect.last_cleaning?.end ?? null;
-  return allowed === null || end === null ? null : (now - Date.parse(end)) / 3_600_000 / allowed;
+/** Share of the hours allowed since the last cleaning, as the limits table has it; null without such a limit or without a known cleaning. */
+export function hoursShare(effect: Effect): number | null {
+  const hours = effect.due.evidence.find(e => e.limit.startsWith('hours'));
+  return hours === undefined || hours.value === null || hours.bound === null || hours.bound <= 0 ? null : hours.value / hours.bound;
 }

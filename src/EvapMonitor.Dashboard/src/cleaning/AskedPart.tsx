@@ -31,7 +31,10 @@ export function AskedPart({ asked }: { asked: readonly Cleaning[] }) {
       <h2 id="asked">Nobody logged these: were they cleanings?</h2>
       {answers.value.map(({ entry, cleaned }) => <Said key={entry.id}>
         <Undo id={entry.id} said={<><b>{cleaned ? 'Logged as a cleaning' : 'Logged: no cleaning'}</b>: {entryName(entry)}{cleaned && `, ${entry.kind}`}. </>}
-          back={`Taken back: ${entryName(entry)} waits for an answer again.`} next="Close" done={() => { answers.value = answers.peek().filter(a => a.entry.id !== entry.id); }} />
+          back={`Taken back: ${entryName(entry)} waits for an answer again.`} next="Close" done={() => {
+            answers.value = answers.peek().filter(a => a.entry.id !== entry.id);
+            document.getElementById('content')?.focus({ preventScroll: true });
+          }} />
       </Said>)}
       <ul>{asked.map(c => <li key={`${c.line} ${c.effect} ${c.start}`}><Question of={c} answered={answered} /></li>)}</ul>
     </section>

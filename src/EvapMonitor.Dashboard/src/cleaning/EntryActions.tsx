@@ -42,17 +42,17 @@ export function EntryButtons({ of, focus, correct }: { of: Entry; focus: boolean
 }
 
 /** The form that puts a corrected entry in the place of a logged one. */
-export function CorrectionForm({ of, done }: { of: Entry; done(): void }) {
+export function CorrectionForm({ of, done }: { of: Entry; done(entry: Entry): void }) {
   const form = useDraft(() => ({ draft: draftOf(of, now.peek(), zone.peek()), key: freshKey() }), { method: 'PUT', address: addresses.cleaning(of.id), kept: false }, entry => {
     announce(`Corrected: ${entryName(entry)}.`);
-    done();
+    done(entry);
   });
   useEffect(() => form.element.current?.querySelector<HTMLElement>('select, input')?.focus(), []);
   return (
     <form ref={form.element} class="log-form correction" noValidate aria-label={`Correct the entry ${entryName(of)}`} onSubmit={event => void form.submit(event)}>
       <CleaningFields draft={form.draft} errors={form.errors} lines={null} prefix={of.id} open change={form.change} />
       {form.failure && <p class="wrong" role="alert">{form.failure}</p>}
-      <p><button type="submit" class="main" disabled={form.sending}>{form.sending ? 'Sending' : 'Put it right'}</button>{' '}<button type="button" onClick={done}>Leave it as it was</button></p>
+      <p><button type="submit" class="main" disabled={form.sending}>{form.sending ? 'Sending' : 'Put it right'}</button>{' '}<button type="button" onClick={() => done(of)}>Leave it as it was</button></p>
     </form>
   );
 }

@@ -67,7 +67,7 @@ function Head({ effect }: { effect: Effect }) {
   const found = lines.state.value.value?.lines.find(l => l.name === effect.line);
   const line = found && aged(found, now);
   const readings = line?.readings ?? 'live';
-  const failed = failedWords(effect.last_cleaning, zone.value, now);
+  const failed = failedWords(effect, zone.value, now);
   const latest = line?.latest_reading_at ? Date.parse(line.latest_reading_at) : null;
   return (
     <section class="line head">
@@ -80,7 +80,7 @@ function Head({ effect }: { effect: Effect }) {
         {failed && <Words pieces={failed} />}
         <Words pieces={foulingWords(effect, readings === 'live' && (effect.now?.coefficient_w_m2k ?? null) !== null, zone.value, now)} />
         <div class="head-row">
-          <Bore effect={effect} radius={64} now={now} stale={readings !== 'live'} weeks={weeksPerStratum([effect])} />
+          <Bore effect={effect} radius={64} stale={readings !== 'live'} weeks={weeksPerStratum([effect])} />
           <LimitsTable effect={effect} now={now} fresh={readings === 'live'} />
         </div>
         <p class="legend-small">Ring thickness stands for fouling resistance; not to scale, not a flow restriction.</p>

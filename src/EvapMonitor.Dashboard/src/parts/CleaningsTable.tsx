@@ -36,9 +36,9 @@ export function CleaningsTable({ all, now, everywhere, first }: { all: readonly 
                 <td class="verdict"><VerdictMark of={c} /><span>{c.result?.verdict === 'did not clean' ? <b>{words}</b> : words}{why !== '' && <span class="quiet">: {why}</span>}</span></td>
                 <td class="number" data-name="removed">{r === null || r.removed_share === null ? '–' : <>{resistance(r.removed_m2k_w)} ({percent(r.removed_share)})</>}</td>
                 <td class="number" data-name="left">{r === null ? '–' : resistance(r.left_m2k_w) ?? '–'}</td>
-                <td class="entry-buttons">{asked.has(c) && (everywhere ? <a href="#asked">Was it a cleaning?</a> : <Link href={pages.cleanings}>Was it a cleaning?</Link>)}{entry && open.value !== key && <EntryButtons of={entry} focus={returned.value === key} correct={() => { [open.value, returned.value] = [key, key]; }} />}</td>
+                <td class="entry-buttons">{asked.has(c) && (everywhere ? <a href="#asked">Was it a cleaning?</a> : <Link href={pages.cleanings}>Was it a cleaning?</Link>)}{entry && open.value !== key && <EntryButtons of={entry} focus={returned.value === key} correct={() => { open.value = key; }} />}</td>
               </tr>
-              {entry && open.value === key && <tr class="more"><td colSpan={columns}><CorrectionForm of={entry} done={() => { open.value = null; }} /></td></tr>}
+              {entry && open.value === key && <tr class="more"><td colSpan={columns}><CorrectionForm of={entry} done={stands => { [open.value, returned.value] = [null, stands.id]; }} /></td></tr>}
             </Fragment>;
           })}</tbody>
         </table>

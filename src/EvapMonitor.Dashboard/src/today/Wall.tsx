@@ -86,7 +86,7 @@ function Row({ line, now: at, weeks }: { line: Line; now: number; weeks: 1 | 4 }
         <h2>{line.name}</h2>
         {stale && <p><b>{line.latest_reading_at === null ? 'no reading yet' : `silent ${duration(at - Date.parse(line.latest_reading_at))}`}</b></p>}
       </div>
-      <ul>{line.effects.map(e => <li key={e.name}><Bore effect={e} radius={30} now={at} stale={stale} weeks={weeks} />
+      <ul>{line.effects.map(e => <li key={e.name}><Bore effect={e} radius={30} stale={stale} weeks={weeks} />
         <p><b>{e.name}</b><br /><State effect={e} now={at} stale={stale} /></p></li>)}</ul>
     </section>
   );

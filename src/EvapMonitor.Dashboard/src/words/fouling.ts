@@ -1,4 +1,4 @@
-import type { Campaign, Cleaning, Effect, Uncertain } from '../api/types';
+import type { Campaign, Effect, Uncertain } from '../api/types';
 import type { Piece } from './line';
 import { significant, measured } from './number';
 import { percent, resistance, resistanceUnit, told } from './resistance';
@@ -48,9 +48,9 @@ export function foulingWords(effect: Effect, fresh: boolean, zone: string, now: 
   return [bold(`${name} ${fresh ? 'fouls' : 'fouled'} by ${rate.words} of production`), plain(`${share}, since ${since}.${began}`)];
 }
 
-/** That the last cleaning did not clean, with its numbers; null when it did or that is not known. */
-export function failedWords(last: Cleaning | null, zone: string, now: number): Piece[] | null {
-  if (last?.result?.verdict !== 'did not clean') return null;
+/** That the last cleaning did not clean, with its numbers; null when it did, that is not known, or it was of a body that does not serve now. */
+export function failedWords({ last_cleaning: last, surface }: Pick<Effect, 'last_cleaning' | 'surface'>, zone: string, now: number): Piece[] | null {
+  if (last?.result?.verdict !== 'did not clean' || (surface !== null && last.result.surface !== surface)) return null;
   const { before_m2k_w: before, removed_m2k_w: removed, removed_share: share } = last.result;
   const [was, gone] = [resistance(before), resistance(removed)];
   const numbers = was === null || gone === null ? '.' : `: it removed ${gone} of ${was} ${resistanceUnit}${share === null ? '' : ` (${percent(share)})`}.`;

@@ -47,7 +47,8 @@ describe('residual', () => {
 
 test('DidNotClean_SaysSoWithItsNumbers', () => {
   const last = cleaning({ result: result({ verdict: 'did not clean', removed_m2k_w: { value: 0.000004, u: 0.000006 }, removed_share: 0.01 }) });
-  expect(failedWords(last, zone, now)?.map(p => p.text).join('')).toBe('The cleaning of Mon 26 Oct did not clean: it removed 0.004 ± 0.006 of 0.388 ± 0.002 m²·K/kW (1 %).');
-  expect(failedWords(cleaning(), zone, now)).toBeNull();
-  expect(failedWords(null, zone, now)).toBeNull();
+  expect(failedWords({ last_cleaning: last, surface: 'N4' }, zone, now)?.map(p => p.text).join('')).toBe('The cleaning of Mon 26 Oct did not clean: it removed 0.004 ± 0.006 of 0.388 ± 0.002 m²·K/kW (1 %).');
+  expect(failedWords({ last_cleaning: last, surface: 'NB' }, zone, now)).toBeNull();
+  expect(failedWords({ last_cleaning: cleaning(), surface: 'N4' }, zone, now)).toBeNull();
+  expect(failedWords({ last_cleaning: null, surface: null }, zone, now)).toBeNull();
 });
