@@ -1,3 +1,4 @@
+import { campaignsOf, cleaningOf } from './fouling.mjs';
 import { cleanings, start } from './plant.mjs';
 import { at } from './series.mjs';
 
@@ -28,8 +29,9 @@ export function effectOf(line, e) {
       at: iso(Math.floor((t - 3_600_000) / 3_600_000) * 3_600_000), hours: 1, coefficient_w_m2k: coefficient, coefficient_u: coefficient && s.u, coefficient_u_random: coefficient && s.u / 4,
       heating_temperature_c: e.unknown ? null : e.Ts, boiling_temperature_c: e.Ts - e.force - e.elevation, elevation_k: e.elevation, driving_force_k: e.unknown ? null : e.force, driving_force_u: e.unknown ? null : 0.4, head_corrected_driving_force_k: null, head_corrected_driving_force_u: null,
       duty_kw: e.duty, duty_u: e.duty * 0.018, heat_flux_kw_m2: e.duty / e.area, cleanliness: coefficient && coefficient / clean, cleanliness_u: coefficient && 0.02,
-      fouling_resistance_m2k_w: r, fouling_resistance_u: r === null ? null : 0.02 / clean * 1.1,
-      clean_from: 'design value', duty_from: 'condensate', heating_temperature_from: 'chest pressure', boiling_temperature_from: 'vapour pressure and elevation', reason: s.reason,
+      fouling_resistance_m2k_w: r, fouling_resistance_u: r === null ? null : 0.02 / clean * 1.1, clean_coefficient_w_m2k: coefficient && clean, clean_coefficient_u: coefficient && clean * 0.006,
+      coefficient_at_reference_w_m2k: coefficient && 1 / (1 / e.clean + r), coefficient_at_reference_u: coefficient && s.u * 0.6,
+      clean_from: 'level of 2 of the last 3 cleanings with this product, the last on 2026-11-03; conditions learnt from 1645 hours of 72 days', duty_from: 'condensate', heating_temperature_from: 'chest pressure', boiling_temperature_from: 'vapour pressure and elevation', reason: s.reason,
     },
     limits: { coefficient_w_m2k: e.floor, cleanliness: e.share, hours_since_cleaning: e.hours, resistance_m2k_w: limitR },
     due: {
@@ -37,8 +39,8 @@ export function effectOf(line, e) {
       sentence: due && due.limit === 'coefficient' ? `${e.name} has been under its coefficient floor for 34 h: ${Math.round(due.value)} of ${due.bound} W/(m²·K).`
         : due ? `${e.name} has run longer than its ${due.bound} h since the last cleaning.` : null,
     },
-    last_cleaning: own ? { id: own.id, start: own.start, end: own.end, kind: own.kind } : null,
-    cleaning_since: e.cleaning ? iso(start - e.cleaning * 3_600_000) : null, residual_m2k_w: e.residual / e.clean, growth,
+    last_cleaning: own ? cleaningOf(own, line, e) : null,
+    cleaning_since: e.cleaning ? iso(start - e.cleaning * 3_600_000) : null, growth, surface: e.name, campaign: own ? campaignsOf([line], line, e).campaigns[0] : null,
   };
 }
 

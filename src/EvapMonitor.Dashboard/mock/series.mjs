@@ -29,7 +29,7 @@ export function at(line, effect, t) {
   return { clean, coefficient: reason ? null : stop ? coefficient * (0.7 + 0.3 * noise(seed, i + 9)) : noise(seed, i) > 0.9998 ? coefficient * 30 : coefficient, fouling, u: coefficient * 0.023, mark: stop ? 'not producing' : noise(5, Math.floor(t / day * 2)) > 0.97 ? 'extrapolated' : '', reason };
 }
 
-const units = { coefficient: 'W/(m2.K)', clean_coefficient: 'W/(m2.K)', cleanliness: '1', fouling_resistance: 'm2.K/W', driving_force: 'K', duty: 'kW', heating_temperature: 'degC', boiling_temperature: 'degC', elevation: 'K', heat_flux: 'kW/m2' };
+const units = { solids: '%', feed_flow: 'kg/s', coefficient_at_reference: 'W/(m2.K)', head_corrected_driving_force: 'K', coefficient: 'W/(m2.K)', clean_coefficient: 'W/(m2.K)', cleanliness: '1', fouling_resistance: 'm2.K/W', driving_force: 'K', duty: 'kW', heating_temperature: 'degC', boiling_temperature: 'degC', elevation: 'K', heat_flux: 'kW/m2' };
 
 function value(quantity, line, effect, s, t) {
   if (s.coefficient === null) return [null, null];
@@ -40,6 +40,10 @@ function value(quantity, line, effect, s, t) {
     case 'cleanliness': return [s.coefficient / s.clean, 0.02];
     case 'fouling_resistance': return [1 / s.coefficient - 1 / s.clean, 0.023 / s.coefficient];
     case 'driving_force': return [effect.force * wave, 0.4];
+    case 'solids': return [30 * wave, null];
+    case 'feed_flow': return [52 * wave, null];
+    case 'coefficient_at_reference': return [1 / (1 / effect.clean + 1 / s.coefficient - 1 / s.clean), s.u * 0.6];
+    case 'head_corrected_driving_force': return [null, null];
     case 'duty': return [effect.duty * wave, effect.duty * 0.018];
     case 'heating_temperature': return [effect.Ts * (0.99 + 0.01 * wave), 0.2];
     case 'boiling_temperature': return [effect.Ts - effect.force * wave, 0.3];

@@ -6,6 +6,7 @@ import { createServer } from 'node:http';
 import { extname, join, normalize } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { effectOf, lineOf } from './answers.mjs';
+import { campaignsOf, cleaningOf, cleaningsOf } from './fouling.mjs';
 import { notices, signals, sources } from './intake.mjs';
 import { cleanings, plantText, sizes, start } from './plant.mjs';
 import { trend } from './series.mjs';
@@ -50,8 +51,9 @@ async function answer(request, response, url) {
       if (path[2] === 'flow-sheet') return json(response, 200, sheetOf(line, now()));
       if (!effect) return problem(response, 404, 'Not found', `Line ${line.name} has no effect ${path[3]}.`);
       if (path.length === 4) return json(response, 200, effectOf(line, effect));
+      if (path[4] === 'campaigns') return json(response, 200, campaignsOf(plant, line, effect));
       return answerTrend(request, response, trend(line, effect, q.get('quantity'), Date.parse(q.get('from')), Date.parse(q.get('to')), Number(q.get('points') ?? 2000)));
-    case 'cleanings': return answerCleanings(request, response, path, q);
+    case 'cleanings': return answerCleanings(request, response, path, q, plant);
     case 'signals': return json(response, 200, empty ? { as_of: iso(now()), signals: [], unknown: [] } : signals(plant, now()));
     case 'sources': return json(response, 200, empty ? { sources: [], spool: { bytes: 0 }, refused: [] } : sources(now()));
     case 'recomputations': return json(response, 200, { recomputations });
@@ -79,19 +81,21 @@ function answerTrend(request, response, t) {
   response.end(`time,value,u\n${t.offset_s.map((o, i) => `${iso(Date.parse(t.start) + o * 1000)},${t.value[i] ?? ''},${t.u[i] ?? ''}`).join('\n')}\n`);
 }
 
-async function answerCleanings(request, response, path, q) {
+async function answerCleanings(request, response, path, q, plant) {
   if (request.method === 'DELETE') { cleanings.splice(cleanings.findIndex(c => c.id === path[1]), 1); response.writeHead(204); return response.end(); }
-  if (request.method === 'POST') {
-    const wanted = JSON.parse(await body(request)), key = request.headers['idempotency-key'];
+  if (request.method === 'POST' || request.method === 'PUT') {
+    const wanted = JSON.parse(await body(request)), key = request.headers['idempotency-key'], old = request.method === 'PUT' ? path[1] : null;
     if (keys.has(key)) return json(response, 200, keys.get(key));
-    const other = cleanings.find(c => c.effect === wanted.effect && c.start < (wanted.end ?? '9') && (c.end ?? '9') > wanted.start);
+    const logged = cleanings.filter(c => c.id !== old && !['c-N4-1', 'c-B1-1'].includes(c.id));
+    const other = logged.find(c => c.effect === wanted.effect && c.start < (wanted.end ?? '9') && (c.end ?? '9') > wanted.start);
     if (other) return problem(response, 409, 'Overlap', `${wanted.effect} was being cleaned from ${other.start} to ${other.end ?? 'now'}`);
-    const made = { ...wanted, id: `c-${cleanings.length}`, logged_at: iso(now()) };
+    const made = { ...wanted, id: old ?? `c-${cleanings.length}`, logged_at: iso(now()) };
+    if (old !== null) cleanings.splice(cleanings.findIndex(c => c.id === old), 1);
     cleanings.push(made);
-    keys.set(key, made);
-    return json(response, 201, made);
+    keys.set(key, cleaningOf(made));
+    return json(response, old === null ? 201 : 200, cleaningOf(made));
   }
-  return json(response, 200, { cleanings: empty ? [] : cleanings.filter(c => (!q.get('line') || c.line === q.get('line')) && (!q.get('effect') || c.effect === q.get('effect'))) });
+  return json(response, 200, { cleanings: empty ? [] : cleaningsOf(plant, q.get('line'), q.get('effect')) });
 }
 
 setInterval(() => { for (const l of listeners) l.write(`id: ${++sent}\nevent: import\ndata: ${JSON.stringify(running())}\n\nid: ${++sent}\nevent: site\ndata: ${JSON.stringify(site())}\n\n`); }, 2000);

@@ -29,6 +29,7 @@ export const addresses = {
   trend: (line: string, effect: string, quantity: Quantity, from: number, to: number, points: number) =>
     `${addresses.effect(line, effect)}/trend?quantity=${quantity}&from=${part(new Date(from).toISOString())}` +
     `&to=${part(new Date(to).toISOString())}&points=${points}`,
+  campaigns: (line: string, effect: string) => `${addresses.effect(line, effect)}/campaigns`,
   cleanings: (line?: string, effect?: string) => {
     const filter = [line && `line=${part(line)}`, effect && `effect=${part(effect)}`].filter(Boolean).join('&');
     return `${base}/cleanings${filter && `?${filter}`}`;

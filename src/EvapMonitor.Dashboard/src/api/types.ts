@@ -30,7 +30,7 @@ export interface Notice {
 export interface Line {
   name: string;
   liquor: string;
-  state: 'producing' | 'filling' | 'idle' | 'water run' | 'unknown';
+  state: 'producing' | 'filling' | 'idle' | 'water run' | 'cleaning' | 'unknown';
   as_of: Instant | null;
   latest_reading_at: Instant | null;
   readings: ReadingsState;
@@ -47,12 +47,14 @@ export interface Effect {
   now: HourResult | null;
   limits: Limits;
   due: Due;
-  last_cleaning: { id: string; start: Instant; end: Instant | null; kind: string } | null;
+  last_cleaning: Cleaning | null;
   cleaning_since: Instant | null;
-  /** Fouling resistance that the last cleaning left, m²·K/W; absent when not known. */
-  residual_m2k_w?: number | null;
   /** Fouling resistance at the end of each week since the last cleaning, oldest first, m²·K/W. */
   growth: number[];
+  /** The surface that serves: the effect's own, or its bodies joined by +; null when not known. */
+  surface: string | null;
+  /** Its present campaign; null until that is computed. */
+  campaign: Campaign | null;
 }
 
 /** The latest hour with a result. A number that could not be computed is null and `reason` says why. */
@@ -78,6 +80,12 @@ export interface HourResult {
   /** May be negative: never clipped. */
   fouling_resistance_m2k_w: number | null;
   fouling_resistance_u: number | null;
+  /** What the effect would do if clean at the conditions of this hour. */
+  clean_coefficient_w_m2k: number | null;
+  clean_coefficient_u: number | null;
+  /** What the surface with this resistance would do at the reference conditions. */
+  coefficient_at_reference_w_m2k: number | null;
+  coefficient_at_reference_u: number | null;
   clean_from: string | null;
   duty_from: string | null;
   heating_temperature_from: string | null;
@@ -225,8 +233,8 @@ export interface MeasuredNow {
 }
 
 export const quantities = [
-  'coefficient', 'clean_coefficient', 'cleanliness', 'fouling_resistance', 'driving_force', 'duty',
-  'heating_temperature', 'boiling_temperature', 'elevation', 'heat_flux',
+  'coefficient', 'clean_coefficient', 'cleanliness', 'fouling_resistance', 'coefficient_at_reference', 'driving_force', 'head_corrected_driving_force', 'duty',
+  'heat_flux', 'heating_temperature', 'boiling_temperature', 'elevation', 'solids', 'feed_flow',
 ] as const;
 export type Quantity = (typeof quantities)[number];
 
@@ -253,17 +261,49 @@ export interface Trend {
   data_version: number;
 }
 
+/** A number with its standard uncertainty; both null when it is not known. */
+export interface Uncertain {
+  value: number | null;
+  u: number | null;
+}
+
+/** How a cleaning is known; `rejected`: a person says that there was none. */
+export type KnownBy = 'logged' | 'signal' | 'recognised' | 'rejected';
+
 export interface Cleaning {
-  id: string;
+  /** Null for what nobody logged. */
+  id: string | null;
   line: string;
   effect: string;
+  /** The body that was cleaned, where the entry names one. */
+  body: string | null;
   start: Instant;
   end: Instant | null;
   kind: string;
   note: string | null;
-  logged_at: Instant;
+  logged_at: Instant | null;
+  known_by: KnownBy;
+  /** What it brought; null until that is computed. */
+  result: CleaningResult | null;
 }
 
+export type Verdict = 'cleaned' | 'did not clean' | 'cannot be told' | 'awaiting hours';
+
+/** What a cleaning brought. `left` is held against the best of the latest cleanings. */
+export interface CleaningResult {
+  surface: string;
+  verdict: Verdict;
+  /** Why it cannot be told, or what is awaited; empty otherwise. */
+  reason: string;
+  before_m2k_w: Uncertain;
+  removed_m2k_w: Uncertain;
+  left_m2k_w: Uncertain;
+  removed_share: number | null;
+  /** How sure it is that the coefficient rose, 0 to 1. */
+  confidence: number | null;
+}
+
+/** A cleaning to log. Of a rejected one the kind may be empty and the end must be given. */
 export interface NewCleaning {
   line: string;
   effect: string;
@@ -271,6 +311,71 @@ export interface NewCleaning {
   end: Instant | null;
   kind: string;
   note: string;
+  body?: string | null;
+  rejected?: boolean;
+}
+
+/** The time between two cleanings of a surface. */
+export interface Campaign {
+  surface: string;
+  start: Instant;
+  end: Instant | null;
+  started_by: 'first data' | 'logged' | 'signal' | 'recognised';
+  confidence: number;
+  products: string[];
+  initial_resistance_m2k_w: Uncertain;
+  final_resistance_m2k_w: Uncertain;
+  removed_share: number | null;
+  /** Growth in a day of production. */
+  rate_m2k_w_per_day: Uncertain;
+  production_hours: number;
+  hours_since_cleaned: number;
+}
+
+/** A time out of production after which the surface was as before. */
+export interface Stop {
+  surface: string;
+  start: Instant;
+  end: Instant | null;
+  reason: string;
+}
+
+/** A run on water: a test of the surface without solids or elevation. */
+export interface WaterTest {
+  surface: string;
+  start: Instant;
+  end: Instant;
+  coefficient_w_m2k: Uncertain;
+  resistance_since_previous_m2k_w: Uncertain;
+}
+
+/** What the effect would do if clean, as it is learnt for the present campaign and one product. */
+export interface CleanReference {
+  surface: string;
+  product: string;
+  since: Instant;
+  source: string;
+  coefficient_w_m2k: Uncertain;
+  by_solids: Uncertain;
+  by_boiling_temperature: Uncertain;
+  by_heat_flux: Uncertain;
+  /** Mass fraction; null when it does not follow them. */
+  reference_solids: number | null;
+  reference_boiling_temperature_c: number | null;
+  reference_heat_flux_kw_m2: number | null;
+}
+
+/** Campaigns of the surfaces that served an effect, each list newest first. */
+export interface Campaigns {
+  line: string;
+  effect: string;
+  surface: string | null;
+  campaigns: Campaign[];
+  stops: Stop[];
+  water_tests: WaterTest[];
+  clean_references: CleanReference[];
+  /** 0 before they were first computed. */
+  version: number;
 }
 
 /** A signal of the plant file. Shares and counts are of the last 24 hours. */

@@ -11,12 +11,12 @@ export function boreState(effect: Effect): BoreState {
 }
 
 /** The picture of an effect's deposit. Hidden from screen readers: the words beside it say the same. */
-export function Bore({ effect, radius, now, stale, weeks }: { effect: Effect; radius: number; now: number; stale: boolean; weeks: 1 | 4 }) {
+export function Bore({ effect, radius, stale, weeks }: { effect: Effect; radius: number; stale: boolean; weeks: 1 | 4 }) {
   const found = depositOf(effect, weeks);
   const state = found === null ? 'unknown' : boreState(effect);
   const deposit = found?.deposit ?? { resistance: null, uncertainty: null, limit: 1, residual: null, growth: [] };
   const shape = boreShape(state === 'unknown' ? { ...deposit, resistance: null } : deposit, radius);
-  const hours = hoursShare(effect, now);
+  const hours = hoursShare(effect);
   const half = radius + 8;
   return (
     <svg class="bore" width={2 * half} height={2 * half} viewBox={`${-half} ${-half} ${2 * half} ${2 * half}`} aria-hidden="true" focusable="false">

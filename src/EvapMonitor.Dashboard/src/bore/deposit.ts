@@ -1,4 +1,5 @@
 import type { Effect } from '../api/types';
+import { residualOf } from '../words/fouling';
 import type { Deposit } from './geometry';
 
 /** How many weeks one stratum stands for, the same for a page: one, or four once any campaign on it is longer than twelve weeks. */
@@ -15,13 +16,14 @@ export function depositOf(effect: Effect, weeks: 1 | 4): { deposit: Deposit; sca
   const clean = cleanCoefficient(effect);
   const limit = set !== null && set > 0 ? set : clean === null ? null : 1 / clean;
   if (limit === null) return null;
+  const left = residualOf(effect);
   return {
     scale: limit === set ? 'limit' : 'half clean',
     deposit: {
       resistance: effect.now?.fouling_resistance_m2k_w ?? null,
       uncertainty: effect.now?.fouling_resistance_u ?? null,
       limit,
-      residual: effect.residual_m2k_w ?? null,
+      residual: left?.told ? left.value : null,
       growth: effect.growth.filter((_, i) => (i + 1) % weeks === 0),
     },
   };
@@ -34,9 +36,8 @@ function cleanCoefficient(effect: Effect): number | null {
   return effect.clean_coefficient_w_m2k;
 }
 
-/** Share of the hours allowed since the last cleaning; null without such a limit or without a known cleaning. */
-export function hoursShare(effect: Effect, now: number): number | null {
-  const allowed = effect.limits.hours_since_cleaning;
-  const end = effect.last_cleaning?.end ?? null;
-  return allowed === null || end === null ? null : (now - Date.parse(end)) / 3_600_000 / allowed;
+/** Share of the hours allowed since the last cleaning, as the limits table has it; null without such a limit or without a known cleaning. */
+export function hoursShare(effect: Effect): number | null {
+  const hours = effect.due.evidence.find(e => e.limit.startsWith('hours'));
+  return hours === undefined || hours.value === null || hours.bound === null || hours.bound <= 0 ? null : hours.value / hours.bound;
 }

@@ -20,6 +20,8 @@ export interface TrendChartProps {
   name: string;
   model: Omit<ChartModel, 'palette' | 'axis' | 'outside'>;
   height: number;
+  /** A panel among others: heading, values and buttons in one row. */
+  small: boolean;
   busy: boolean;
   /** A new span; `settled` false while fingers or keys still move it. */
   show(span: Span, settled: boolean): void;
@@ -30,7 +32,7 @@ export interface TrendChartProps {
 const noPalette = { card: '', ink: '', soft: '', faint: '', hair: '', water: '', wash: '', soon: '', now: '' };
 
 /** A series with its band, limit, cleanings and labels; by mouse, finger and key. */
-export function TrendChart({ title, name, model: given, height, busy, show, reset, csv }: TrendChartProps) {
+export function TrendChart({ title, name, model: given, height, small, busy, show, reset, csv }: TrendChartProps) {
   const table = useSignal(false), axisStart = useSignal(''), outside = useSignal(0), index = useSignal<number | null>(null);
   const { host, plot, model } = usePlot({ ...given, palette: noPalette, axis: { from: 0, to: 1, step: 1 }, outside: 0 }, height, {
     cursor: i => {
@@ -91,20 +93,22 @@ export function TrendChart({ title, name, model: given, height, busy, show, rese
     axisStart.value !== '' && `axis starts at ${axisStart.value}`,
     outside.value > 0 && `${outside.value} far-off ${outside.value === 1 ? 'point lies' : 'points lie'} outside it; the table and the CSV have them`,
   ].filter(Boolean).join('; ');
+  const values = at ? <><span class="values-when">{at.when}</span> <b>{at.value}</b> <span class="quiet">{at.more}</span></> : ' ';
+  const buttons = <>
+    <button type="button" aria-expanded={table.value} onClick={() => { table.value = !table.peek(); }}>Table<span class="unseen"> of {title}</span></button>
+    <button type="button" onClick={csv}>CSV<span class="unseen"> of {title}</span></button>
+    <button type="button" onClick={() => savePng(plot.current!.ctx.canvas, title, foot, model.palette, name)}>PNG<span class="unseen"> of {title}</span></button>
+  </>;
   return (
-    <figure class="chart" aria-label={title}>
-      <figcaption>{title}</figcaption>
-      <p class="values">{at ? <><span class="values-when">{at.when}</span> <b>{at.value}</b> <span class="quiet">{at.more}</span></> : ' '}</p>
+    <figure class={small ? 'chart chart-small' : 'chart'} aria-label={title}>
+      {small
+        ? <div class="chart-head"><figcaption>{title}</figcaption><p class="values">{values}</p><span class="axis-start">{foot}</span><span class="chart-buttons">{buttons}</span></div>
+        : <><figcaption>{title}</figcaption><p class="values">{values}</p></>}
       <div class="plot" ref={host} tabIndex={0} role="img" onKeyDown={press} aria-busy={busy}
-        aria-label={`${spokenSummary(title, columns, span, given.limit?.label ?? null, given.cleanings, zone, calmNow.peek())} Arrow keys move the cursor, plus and minus zoom, 0 resets, T opens the table.`} />
+        aria-label={`${spokenSummary(title, columns, span, given.limit?.label ?? null, given.marks, zone, calmNow.peek())} Arrow keys move the cursor, plus and minus zoom, 0 resets, T opens the table.`} />
       {empty && <p class="plot-empty">{busy ? 'The values are on the way.' : <>No value from {date(span.from, zone, calmNow.peek())} to {date(span.to, zone, calmNow.peek())}
         {why.length > 0 ? `: ${why.join('; ')}` : '; show an earlier time, or see under Plant what was imported'}.</>}</p>}
-      <div class="chart-foot">
-        <span class="axis-start">{foot}</span>
-        <button type="button" aria-expanded={table.value} onClick={() => { table.value = !table.peek(); }}>Table<span class="unseen"> of {title}</span></button>
-        <button type="button" onClick={csv}>CSV<span class="unseen"> of {title}</span></button>
-        <button type="button" onClick={() => savePng(plot.current!.ctx.canvas, title, foot, model.palette, name)}>PNG<span class="unseen"> of {title}</span></button>
-      </div>
+      {!small && <div class="chart-foot"><span class="axis-start">{foot}</span>{buttons}</div>}
       {table.value && <TrendTable columns={columns} span={span} zone={zone} what={title} />}
     </figure>
   );

@@ -1,9 +1,9 @@
 import type uPlot from 'uplot';
+import { drawLane, laneHeight } from './draw-lane';
 import { place } from './gutter';
 import type { ChartModel } from './model';
 import type { Columns } from './trend';
 
-export const laneHeight = 26;
 const font = (px: number, weight = 400) => `${weight} ${px * devicePixelRatio}px "Atkinson Hyperlegible Next Variable", system-ui, sans-serif`;
 
 /** Draws what uPlot does not know: cleanings, clean expectation, limit, hollow points, labels. Canvas pixels throughout. */
@@ -15,38 +15,14 @@ export function drawOver(u: uPlot, m: ChartModel): void {
   ctx.beginPath();
   ctx.rect(bbox.left, bbox.top - (m.lane ? laneHeight * px : 0), bbox.width, bbox.height + (m.lane ? laneHeight * px : 0));
   ctx.clip();
-  cleanings(u, m, px);
+  drawLane(u, m, font(13), px);
+  if (m.zero) base(u, m, px);
   if (m.clean) dashed(u, m.clean, m.palette.soft, px);
   if (m.limit) level(u, m.limit.value, m.palette.soon, px);
   hollow(u, m, px);
   ctx.restore();
   labels(u, m, px);
   ctx.restore();
-}
-
-function cleanings(u: uPlot, m: ChartModel, px: number): void {
-  const { ctx, bbox } = u;
-  let free = -Infinity;
-  ctx.font = font(13);
-  ctx.textBaseline = 'middle';
-  ctx.textAlign = 'left';
-  for (const c of [...m.cleanings].sort((a, b) => Date.parse(a.start) - Date.parse(b.start))) {
-    const start = Date.parse(c.start), end = c.end === null ? m.span.to : Date.parse(c.end);
-    if (end < m.span.from || start > m.span.to) continue;
-    const x0 = Math.round(u.valToPos(start / 1000, 'x', true)), x1 = Math.max(x0 + 2 * px, Math.round(u.valToPos(end / 1000, 'x', true)));
-    ctx.fillStyle = m.palette.faint;
-    ctx.fillRect(x1 - px / 2, bbox.top - 8 * px, px, bbox.height + 8 * px);
-    if (x1 - x0 > 3 * px) ctx.fillRect(x0 - px / 2, bbox.top - 8 * px, px, bbox.height + 8 * px);
-    if (!m.lane) continue;
-    ctx.fillRect(x0, bbox.top - 8 * px, x1 - x0, 5 * px);
-    const words = c.end === null ? 'cleaning' : `cleaned${c.kind ? `, ${c.kind}` : ''}`;
-    const width = ctx.measureText(words).width;
-    const at = Math.min(x0, bbox.left + bbox.width - width);
-    if (at < free) continue;
-    ctx.fillStyle = m.palette.soft;
-    ctx.fillText(words, at, bbox.top - 17 * px);
-    free = at + width + 10 * px;
-  }
 }
 
 function dashed(u: uPlot, c: Columns, colour: string, px: number): void {
@@ -72,6 +48,19 @@ function level(u: uPlot, value: number, colour: string, px: number): void {
   const y = u.valToPos(value, 'y', true);
   ctx.fillStyle = colour;
   ctx.fillRect(bbox.left, y - 0.75 * px, bbox.width, 1.5 * px);
+}
+
+/** Nothing on the surface: dashed like the clean expectation, which it is. */
+function base(u: uPlot, m: ChartModel, px: number): void {
+  const { ctx, bbox } = u, y = Math.round(u.valToPos(0, 'y', true));
+  ctx.beginPath();
+  ctx.moveTo(bbox.left, y);
+  ctx.lineTo(bbox.left + bbox.width, y);
+  ctx.setLineDash([6 * px, 4 * px]);
+  ctx.lineWidth = 1.3 * px;
+  ctx.strokeStyle = m.palette.soft;
+  ctx.stroke();
+  ctx.setLineDash([]);
 }
 
 /** Points that are extrapolated or not steady are hollow, thinned so that each can be seen as one. */
@@ -100,6 +89,7 @@ function labels(u: uPlot, m: ChartModel, px: number): void {
   const wanted: { value: number; words: string; colour: string }[] = [];
   const cleanLast = m.clean && lastIn(m.clean, m.span.from / 1000, m.span.to / 1000);
   if (cleanLast) wanted.push({ value: cleanLast.value, words: m.narrow ? 'if clean' : `if clean ${Math.round(cleanLast.value)}`, colour: m.palette.soft });
+  if (m.zero) wanted.push({ value: 0, words: 'clean', colour: m.palette.soft });
   if (m.latest) wanted.push({ value: m.latest.value, words: m.latest.label, colour: m.palette.ink });
   if (m.limit) wanted.push({ value: m.limit.value, words: m.limit.label, colour: m.palette.ink });
   const heights = wanted.map(w => u.valToPos(w.value, 'y', true));

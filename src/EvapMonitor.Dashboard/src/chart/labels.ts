@@ -16,7 +16,7 @@ export function limitOf(quantity: Quantity, effect: Effect): { value: number; la
 export function latestLabel(c: Columns, span: Span, narrow: boolean, now: number): { value: number; label: string } | null {
   const found = extent(c, span.from / 1000, span.to / 1000);
   if (found === null) return null;
-  const u = c.u[found.lastIndex] ?? null;
+  const given = c.u[found.lastIndex] ?? null, u = given !== null && given > 0 ? given : null;
   const word = now / 1000 - c.x[found.lastIndex]! < 7200 ? 'now' : 'last';
   const value = u === null ? significant(found.last, 3) : rounded(found.last, decimalsFor(u));
   return { value: found.last, label: `${word} ${value}${u === null || narrow ? '' : ` ± ${rounded(u, decimalsFor(u))}`}` };

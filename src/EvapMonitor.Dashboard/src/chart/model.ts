@@ -1,5 +1,5 @@
-import type { Cleaning } from '../api/types';
 import type { Axis } from './axis';
+import type { LaneMark } from './lane';
 import type { Palette } from './palette';
 import type { Columns } from './trend';
 import type { Span } from './view';
@@ -11,7 +11,8 @@ export interface ChartModel {
   clean: Columns | null;
   /** The limit, in the unit shown, and its words in the gutter. */
   limit: { value: number; label: string } | null;
-  cleanings: readonly Cleaning[];
+  /** Cleanings and stops. */
+  marks: readonly LaneMark[];
   span: Span;
   zone: string;
   palette: Palette;
@@ -19,9 +20,15 @@ export interface ChartModel {
   axis: Axis;
   /** How many values the axis leaves out, as far from all others. */
   outside: number;
-  /** The lane of cleanings on top. */
+  /** The lane of cleanings and stops on top; without it cleanings are lines down the plot alone. */
   lane: boolean;
+  /** A dashed line at zero, where nothing is on the surface. */
+  zero: boolean;
+  /** Whether the time axis has its labels: of charts under each other the last one alone. */
+  times: boolean;
   /** The latest value's label, when the span holds it. */
   latest: { value: number; label: string } | null;
   narrow: boolean;
+  /** At most so many steps of the value axis. */
+  most: number;
 }

@@ -1,7 +1,8 @@
 import type uPlot from 'uplot';
 import { fixed } from '../words/number';
 import { bodyOf, splits, stepDecimals, valueAxis } from './axis';
-import { drawOver, laneHeight } from './draw';
+import { drawOver } from './draw';
+import { laneHeight } from './draw-lane';
 import type { ChartModel } from './model';
 import { timeTicks } from './ticks';
 import { extent } from './trend';
@@ -14,7 +15,7 @@ export interface ChartEvents {
 }
 
 const axisFont = '13px "Atkinson Hyperlegible Next Variable", system-ui, sans-serif';
-export const gutter = (narrow: boolean) => (narrow ? 84 : 128);
+export const gutter = (narrow: boolean) => (narrow ? 84 : 140);
 
 /** uPlot's options for a model; the model may change afterwards, what is drawn follows it. */
 export function chartOptions(m: ChartModel, width: number, height: number, events: ChartEvents): uPlot.Options {
@@ -35,13 +36,13 @@ export function chartOptions(m: ChartModel, width: number, height: number, event
     },
     axes: [
       {
-        font: axisFont, size: 44, gap: 6, stroke: () => m.palette.soft, grid: { show: false },
+        font: axisFont, size: m.times ? 44 : 8, gap: 6, stroke: () => m.palette.soft, grid: { show: false },
         ticks: { stroke: () => m.palette.faint, width: 1, size: 5 },
         splits: u => ticksNow(u).map(t => t.at / 1000),
-        values: u => ticksNow(u).map(t => t.label),
+        values: u => ticksNow(u).map(t => (m.times ? t.label : '')),
       },
       {
-        font: axisFont, size: (_, values) => Math.max(52, 18 + 7.5 * Math.max(0, ...(values ?? []).map(v => v.length))), gap: 6, stroke: () => m.palette.soft,
+        font: axisFont, size: (_, values) => Math.max(60, 18 + 7.5 * Math.max(0, ...(values ?? []).map(v => v.length))), gap: 6, stroke: () => m.palette.soft,
         grid: { stroke: () => m.palette.hair, width: 1 }, ticks: { show: false },
         splits: () => splits(m.axis),
         values: () => splits(m.axis).map(v => fixed(v, stepDecimals(m.axis.step))),
@@ -50,9 +51,9 @@ export function chartOptions(m: ChartModel, width: number, height: number, event
     series: [
       {},
       // The band comes first, so that the line lies on it.
-      { stroke: () => m.palette.water, width: 0.7, points: { show: false } },
-      { stroke: () => m.palette.water, width: 0.7, points: { show: false } },
-      { stroke: () => m.palette.water, width: 2, points: { show: false } },
+      { stroke: () => m.palette.water, width: 0.7, points: { show: false }, gaps },
+      { stroke: () => m.palette.water, width: 0.7, points: { show: false }, gaps },
+      { stroke: () => m.palette.water, width: 2, points: { show: false }, gaps },
       dots(() => m.palette.water, 4),
       dots(() => m.palette.faint, 3),
     ],
@@ -69,6 +70,9 @@ export function chartOptions(m: ChartModel, width: number, height: number, event
     },
   };
 }
+
+/** Gaps are cut out of a line that is drawn across them; a pixel more on both sides, else a steep one leaves its edges standing. */
+const gaps: uPlot.Series.GapsRefiner = (_, __, ___, ____, found) => found.map(([from, to]) => [from - devicePixelRatio, to + devicePixelRatio]);
 
 function dots(colour: () => string, size: number): uPlot.Series {
   return { paths: () => null, points: { show: true, size, width: 0, stroke: colour, fill: colour } };
@@ -91,12 +95,12 @@ function layAxis(m: ChartModel): void {
   });
   const body = bodyOf(seen);
   m.outside = body === null ? 0 : seen.filter(v => v < body.lowest || v > body.highest).length;
-  const marks = [...(body ? [body.lowest, body.highest] : []), ...(m.limit ? [m.limit.value] : [])];
+  const marks = [...(body ? [body.lowest, body.highest] : []), ...(m.limit ? [m.limit.value] : []), ...(m.zero && body ? [0] : [])];
   const clean = m.clean && extent(m.clean, from, to);
   if (clean) marks.push(clean.lowest, clean.highest);
   if (marks.length === 0) { m.axis = { from: 0, to: 1, step: 0.5 }; return; }
   const [lowest, highest] = [Math.min(...marks), Math.max(...marks)];
   // A limit at the very edge would be taken for the axis itself.
   const room = m.limit ? 0.04 * (highest - lowest) : 0;
-  m.axis = valueAxis(m.limit?.value === lowest ? lowest - room : lowest, m.limit?.value === highest ? highest + room : highest);
+  m.axis = valueAxis(m.limit?.value === lowest ? lowest - room : lowest, m.limit?.value === highest ? highest + room : highest, m.most);
 }

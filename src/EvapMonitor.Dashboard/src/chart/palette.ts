@@ -17,6 +17,9 @@ export function readPalette(element: HTMLElement): Palette {
   return palette;
 }
 
+/** Whether the page is being printed. */
+export const onPaper = () => document.documentElement.classList.contains('paper');
+
 /** Calls back when the colours may have changed: light and dark, forced colours, paper. Returns what stops it. */
 export function watchPalette(changed: () => void): () => void {
   const queries = ['(prefers-color-scheme: dark)', '(forced-colors: active)'].map(q => matchMedia(q));

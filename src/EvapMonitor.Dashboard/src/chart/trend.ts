@@ -48,11 +48,12 @@ export function columns(trend: Trend): Columns {
   return out;
 }
 
-/** Thinning keeps extremes, so points stand up to a few usual distances apart; anything wider than six of them is a hole. */
+/** Thinning keeps the lowest and the highest of each stretch of three points and more, so at most half of what is left stands a step apart; then points
+ * stand up to a few usual distances apart, and anything wider than six of them is a hole. */
 export function holeWiderThan(offsets: readonly number[], step: number): number {
   const apart = offsets.slice(1).map((o, i) => o - offsets[i]!).sort((a, b) => a - b);
-  const usual = apart[Math.floor(apart.length / 2)] ?? step;
-  return usual <= step ? 1.5 * step : 6 * usual;
+  if (apart.length === 0 || apart.filter(a => a <= step).length > 0.6 * apart.length) return 1.5 * step;
+  return 6 * Math.max(apart[Math.floor(apart.length / 2)]!, apart.reduce((sum, a) => sum + a, 0) / apart.length);
 }
 
 /** First, last, lowest and highest joined value in a span of s; null when there is none. */

@@ -1,7 +1,10 @@
 import { quantities, type Quantity } from '../api/types';
 
-/** What the address bar holds of an effect's page. `to` null: until now, and on as time goes. Instants in ms. */
-export interface View { from: number | null; to: number | null; quantity: Quantity }
+/** Quantities that stand on an effect's page anyway, one under the other. */
+export const standing: readonly Quantity[] = ['coefficient', 'fouling_resistance', 'solids', 'boiling_temperature', 'heat_flux', 'driving_force'];
+
+/** What the address bar holds of an effect's page. `to` null: until now, and on as time goes. Instants in ms. `quantity`: one more than those that stand there anyway. */
+export interface View { from: number | null; to: number | null; quantity: Quantity | null }
 
 /** A span of time shown, ms. */
 export interface Span { from: number; to: number }
@@ -17,7 +20,7 @@ export function readView(search: string): View {
   const q = new URLSearchParams(search);
   const instant = (name: string) => { const t = Date.parse(q.get(name) ?? ''); return Number.isFinite(t) ? t : null; };
   const [from, to] = [instant('from'), instant('to')];
-  const quantity = quantities.find(k => k === q.get('quantity') && k !== 'coefficient') ?? 'driving_force';
+  const quantity = quantities.find(k => k === q.get('quantity') && !standing.includes(k)) ?? null;
   return from !== null && to !== null && to <= from ? { from: null, to: null, quantity } : { from, to, quantity };
 }
 
@@ -27,7 +30,7 @@ export function writeView(view: View): string {
   const text = (t: number) => new Date(Math.round(t / 1000) * 1000).toISOString().replace('.000', '');
   if (view.from !== null) q.set('from', text(view.from));
   if (view.to !== null) q.set('to', text(view.to));
-  if (view.quantity !== 'driving_force') q.set('quantity', view.quantity);
+  if (view.quantity !== null) q.set('quantity', view.quantity);
   const written = q.toString().replaceAll('%3A', ':');
   return written && `?${written}`;
 }
@@ -54,6 +57,6 @@ export function moved(span: Span, share: number): Span {
 }
 
 /** The view that shows a span; one that reaches the present keeps following it. */
-export function viewOf(span: Span, quantity: Quantity, now: number): View {
+export function viewOf(span: Span, quantity: Quantity | null, now: number): View {
   return { from: span.from, to: span.to >= now ? null : span.to, quantity };
 }

@@ -3,7 +3,7 @@ import { twice } from './draft';
 
 interface Attributes { id: string; 'aria-invalid': 'true' | undefined; 'aria-describedby': string | undefined }
 
-/** A labelled field with its error beside it. */
+/** A labelled field with its error beside it. `name` is unique on the page. */
 export function Field({ name, label, error, children }: { name: string; label: string; error: string | undefined; children: (a: Attributes) => ComponentChildren }) {
   const id = `field-${name}`;
   return (

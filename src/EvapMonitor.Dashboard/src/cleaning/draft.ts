@@ -1,11 +1,13 @@
-import { fromInput } from '../words/time';
+import type { Cleaning, NewCleaning } from '../api/types';
+import { fromInput, toInput } from '../words/time';
 import { zoneName } from '../words/zone';
-import type { NewCleaning } from '../api/types';
 
 /** What the form holds, as typed: times are local to the site. `second`: of an hour that the clocks repeat, the second one is meant. */
 export interface Draft {
   line: string;
   effect: string;
+  /** The body that was cleaned; empty: the one that served. */
+  body: string;
   start: string;
   end: string;
   goesOn: boolean;
@@ -13,6 +15,20 @@ export interface Draft {
   note: string;
   startSecond: boolean;
   endSecond: boolean;
+}
+
+/** A draft of nothing yet, that ends now. */
+export const emptyDraft = (line: string, effect: string, now: number, zone: string): Draft =>
+  ({ line, effect, body: '', start: '', end: toInput(now, zone), goesOn: false, kind: '', note: '', startSecond: false, endSecond: false });
+
+/** A draft of what is already known: an entry to correct, or a recognised cleaning to confirm. */
+export function draftOf(c: Cleaning, now: number, zone: string): Draft {
+  const second = (at: number) => { const found = fromInput(toInput(at, zone), zone); return found?.length === 2 && found[1]! <= at; };
+  const start = Date.parse(c.start), end = c.end === null ? null : Date.parse(c.end);
+  return {
+    line: c.line, effect: c.effect, body: c.body ?? '', start: toInput(start, zone), end: toInput(end ?? now, zone), goesOn: end === null, kind: c.kind, note: c.note ?? '',
+    startSecond: second(start), endSecond: end !== null && second(end),
+  };
 }
 
 /** A cleaning ready to send, or what is wrong, by field. */
@@ -35,7 +51,7 @@ export function check(draft: Draft, zone: string, now: number): Checked {
     errors: null,
     cleaning: {
       line: draft.line, effect: draft.effect, start: new Date(start).toISOString(), end: end === null ? null : new Date(end).toISOString(),
-      kind: draft.kind.trim(), note: draft.note.trim(),
+      kind: draft.kind.trim(), note: draft.note.trim(), body: draft.body === '' ? null : draft.body,
     },
   };
 }

@@ -22,10 +22,10 @@ import { columnsOf } from '../sheet/order';
 import { Readings } from '../sheet/Readings';
 import { every } from '../sheet/words';
 import { calmNow } from '../site/clock';
-import { cleaningsChanged, lines, resultsChanged, zone } from '../site/state';
+import { cleaningsChanged, lines, resultsChanged, site, zone } from '../site/state';
 import { aged } from '../words/aged';
 import { lineWords } from '../words/line';
-import { moment } from '../words/time';
+import { fullMoment, moment } from '../words/time';
 import { NotHere } from './NotHere';
 import '../styles/line.css';
 
@@ -87,7 +87,11 @@ function Pictures({ of }: { of: FlowSheet }) {
           {[...falls.values()].some(f => f.lossStated) && ' A line loss in brackets is not measured: that chest has no gauge, and the plant file says what is lost on the way to it.'}</p>
       </section>
       {/* Without a result there is no balance either, and the reasons stand above. */}
-      {of.as_of !== null && <section class="page line-balance" aria-label="The balance of the line"><BalancePart line={of.line} changes={of.as_of} now={now} /></section>}
+      {of.as_of !== null && <section class="page line-balance" aria-label="The balance of the line">
+        {/* On paper the balance is a sheet of its own, which may be parted from the first. */}
+        <p class="paper-only" aria-hidden="true">{of.line}, {site.state.value.value?.name}, {fullMoment(Date.parse(of.as_of), zone.value)}</p>
+        <BalancePart line={of.line} changes={of.as_of} now={now} />
+      </section>}
       <section class="page line-readings"><Readings of={of} now={now} /></section>
     </>
   );

@@ -1,11 +1,12 @@
 import { Link } from 'wouter-preact';
 import { pages } from '../api/addresses';
-import type { Line } from '../api/types';
+import type { Cleaning, Line } from '../api/types';
 import { weeksPerStratum } from '../bore/deposit';
 import { Shown } from '../parts/Waiting';
 import { useTitle } from '../parts/use-title';
 import { calmNow } from '../site/clock';
 import { lines, notices, site, zone } from '../site/state';
+import { useAsked } from '../cleaning/use-asked';
 import { FirstSentences } from '../today/FirstSentences';
 import { LedgerLine } from '../today/LedgerLine';
 import { Legend } from '../today/Legend';
@@ -37,15 +38,16 @@ export function Today() {
 }
 
 /** Before the rows: notices, and what the lines ask for. */
-function First({ of }: { of: Line[] }) {
-  return <FirstSentences {...firstSentences(notices.value, of, calmNow.value, zone.value)} />;
+function First({ of, asked = [] }: { of: Line[]; asked?: readonly Cleaning[] }) {
+  return <FirstSentences {...firstSentences(notices.value, of, asked, calmNow.value, zone.value)} />;
 }
 
 /** The page by the size of the site; rows keep the plant file's order whatever their state. */
 function Sized({ lines: given }: { lines: Line[] }) {
   const now = calmNow.value, all = given.map(l => aged(l, now)), effects = all.flatMap(l => l.effects), weeks = weeksPerStratum(effects);
-  if (all.length === 1) return <><First of={[]} /><OneLine line={all[0]!} /><Legend effects={effects} weeks={weeks} dense={false} /></>;
-  const { first, left } = firstSentences(notices.value, all.length > many ? [] : all, now, zone.value);
+  const asked = useAsked(all.length <= many);
+  if (all.length === 1) return <><First of={[]} asked={asked} /><OneLine line={all[0]!} /><Legend effects={effects} weeks={weeks} dense={false} /></>;
+  const { first, left } = firstSentences(notices.value, all.length > many ? [] : all, asked, now, zone.value);
   const told = new Set(first.map(f => f.line));
   return (
     <>

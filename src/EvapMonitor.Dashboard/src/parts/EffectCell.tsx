@@ -19,7 +19,7 @@ export function EffectCell({ effect, now, zone, stale, weeks, radius, asOf }: Ef
   return (
     <Link class="effect" href={pages.effect(effect.line, effect.name)}>
       <span class="effect-name">{effect.name}</span>{' '}
-      <Bore effect={effect} radius={radius} now={now} stale={stale} weeks={weeks} />
+      <Bore effect={effect} radius={radius} stale={stale} weeks={weeks} />
       <span class="effect-words">
         {stale && asOf !== null && <span class="effect-asof">as of {moment(asOf, zone, now)} </span>}
         {!unknown && effect.cleaning_since === null && <span>{cleanlinessWords(effect)} </span>}

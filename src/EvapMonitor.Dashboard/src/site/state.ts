@@ -78,6 +78,8 @@ export function startState(): () => void {
   const close = connect({ first: addresses.events, after: addresses.eventsAfter }, {
     site: data => site.put(data as Site),
     windows: data => { changedLines.add((data as { line: string }).line); publish(); },
+    // Campaigns, clean expectations and what cleanings brought are results of the line too.
+    surfaces: data => { changedLines.add((data as { line: string }).line); publish(); },
     import: data => mergeImport(data as Import),
     instruments: () => { instrumentsChanged.value++; },
     recomputation: data => mergeRecomputation(data as Recomputation),

@@ -1,3 +1,4 @@
+import { Link } from 'wouter-preact';
 import { Mark } from '../bore/Mark';
 import { Words } from '../parts/Words';
 import type { First } from '../words/first';
@@ -11,7 +12,7 @@ export function FirstSentences({ first, left }: { first: First[]; left: number }
       <ul>
         {first.map(f => <li key={f.key}>
           <span class="first-of">{f.line === null ? 'site' : <a href={`#line.${encodeURIComponent(f.line)}`}>{f.line}</a>}</span>
-          <div class="first-words">{f.act ? <Mark kind="now" /> : <span class="mark" />}<Words pieces={f.pieces} /></div>
+          <div class="first-words">{f.act ? <Mark kind="now" /> : <span class="mark" />}<div><Words pieces={f.pieces} />{f.answer !== undefined && <p class="first-answer"><Link href={f.answer}>Answer<span class="unseen"> for {f.key.split(' ').slice(1).join(' ')}</span></Link></p>}</div></div>
         </li>)}
       </ul>
       {left > 0 && <p class="quiet first-left">{left === 1 ? 'One more stands' : `${left} more stand`} in the rows below.</p>}

@@ -34,7 +34,7 @@ export function Wall() {
   return (
     <div class="wall">
       <Top />
-      <Alerts all={firstSentences(notices.value, all, at, zone.value, Infinity).first} />
+      <Alerts all={firstSentences(notices.value, all, [], at, zone.value, Infinity).first} />
       {all.length === 0
         ? <p class="wall-empty">{lines.state.value.failure === null ? 'The lines are on the way.' : `The lines could not be fetched: ${lines.state.value.failure.words}. It is tried again by itself.`}</p>
         : <div class="wall-lines" style={{ gridTemplateRows: `repeat(${shown.length}, minmax(0, 1fr))` }}>{shown.map(l => <Row key={l.name} line={l} now={at} weeks={weeks} />)}</div>}
@@ -86,7 +86,7 @@ function Row({ line, now: at, weeks }: { line: Line; now: number; weeks: 1 | 4 }
         <h2>{line.name}</h2>
         {stale && <p><b>{line.latest_reading_at === null ? 'no reading yet' : `silent ${duration(at - Date.parse(line.latest_reading_at))}`}</b></p>}
       </div>
-      <ul>{line.effects.map(e => <li key={e.name}><Bore effect={e} radius={30} now={at} stale={stale} weeks={weeks} />
+      <ul>{line.effects.map(e => <li key={e.name}><Bore effect={e} radius={30} stale={stale} weeks={weeks} />
         <p><b>{e.name}</b><br /><State effect={e} now={at} stale={stale} /></p></li>)}</ul>
     </section>
   );

@@ -9,12 +9,16 @@ export const quantityWords: Record<Quantity, QuantityWords> = {
   clean_coefficient: { name: 'coefficient if clean', unit: 'W/(m²·K)', from: 'W/(m2.K)', factor: 1 },
   cleanliness: { name: 'cleanliness', unit: '%', from: '1', factor: 100 },
   fouling_resistance: { name: 'fouling resistance', unit: 'm²·K/kW', from: 'm2.K/W', factor: 1000 },
+  coefficient_at_reference: { name: 'coefficient at the reference conditions', unit: 'W/(m²·K)', from: 'W/(m2.K)', factor: 1 },
   driving_force: { name: 'driving force', unit: 'K', from: 'K', factor: 1 },
+  head_corrected_driving_force: { name: 'driving force at half the liquor’s height', unit: 'K', from: 'K', factor: 1 },
   duty: { name: 'duty', unit: 'kW', from: 'kW', factor: 1 },
   heating_temperature: { name: 'heating temperature', unit: '°C', from: 'degC', factor: 1 },
   boiling_temperature: { name: 'boiling temperature', unit: '°C', from: 'degC', factor: 1 },
   elevation: { name: 'boiling-point elevation', unit: 'K', from: 'K', factor: 1 },
   heat_flux: { name: 'heat flux', unit: 'kW/m²', from: 'kW/m2', factor: 1 },
+  solids: { name: 'solids leaving', unit: '%', from: '%', factor: 1 },
+  feed_flow: { name: 'feed flow of the line', unit: 't/h', from: 'kg/s', factor: 3.6 },
 };
 
 const same = (a: string, b: string) => a.replace(/[·.*() ]/g, '').replace('²', '2').toLowerCase() === b.replace(/[·.*() ]/g, '').replace('²', '2').toLowerCase();

@@ -1,5 +1,7 @@
 import { describe, expect, test } from 'vitest';
+import { hoursShare } from '../../src/bore/deposit';
 import { arcPath, boreShape, boundaries, hatch, type Deposit } from '../../src/bore/geometry';
+import { effect } from '../words/sample';
 
 const deposit = (part: Partial<Deposit>): Deposit => ({ resistance: 0.5, uncertainty: 0.05, limit: 1, residual: null, growth: [], ...part });
 const R = 52, bore = R - 3;
@@ -106,4 +108,11 @@ test('HatchOfAFullDisc_CoversIt', () => expect(hatch(10, 0, 5).length).toBeGreat
 
 test.each([[0.25, 'M0 -10A10 10 0 0 1 10 0'], [0.5, 'M0 -10A10 10 0 0 1 0 10'], [0.75, 'M0 -10A10 10 0 1 1 -10 0']])('HoursShare%s_ArcClockwiseFromTheTop', (share, path) => {
   expect(arcPath(10, share).replace(/-0(?![.\d])/g, '0')).toBe(path.replace(/-0(?![.\d])/g, '0'));
+});
+
+test('HoursArc_SaysWhatTheLimitsTableSays', () => {
+  const hours = { limit: 'hours', value: 440, bound: 900, unit: 'h', state: 'not due' as const, since: null };
+  const of = (evidence: typeof hours[]) => hoursShare(effect({ due: { state: 'not due', limit: null, since: null, sentence: null, evidence } }));
+  expect(of([hours])).toBeCloseTo(0.489, 3);
+  expect(of([])).toBeNull();
 });

@@ -71,3 +71,8 @@ test('Reasons_CommonestFirst', () => {
   expect(reasonsIn(c, 0, Infinity)).toEqual(['b', 'a']);
 });
 test('FullSeries_OneMissingWindowIsAHole', () => expect(holeWiderThan([0, 300, 600, 1200], 300)).toBeLessThan(600));
+test('ThinnedToHalf_PointsTwoAndThreeStepsApartAreJoined', () => {
+  // As the service thins 840 hours to 800 points: the lowest and the highest of each three.
+  const offsets = Array.from({ length: 200 }, (_, i) => [3 * i, 3 * i + 1 + (i % 2)]).flat().map(h => h * 3600);
+  expect(holeWiderThan(offsets, 3600)).toBeGreaterThan(3 * 3600);
+});

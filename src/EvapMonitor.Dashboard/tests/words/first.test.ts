@@ -3,6 +3,7 @@ import type { Notice } from '../../src/api/types';
 import { firstSentences, wallFirst } from '../../src/words/first';
 import { noticeLine, noticeWords, orderedNotices } from '../../src/words/notice';
 import { due, effect, line, now, unknown } from './sample';
+import { recognised } from './sample-cleaning';
 
 const zone = 'Europe/Copenhagen';
 const full: Notice = { key: 'spool-full', since: '2026-11-30T13:20:00Z', sentence: 'The spool is full. Readings are refused until there is room.' };
@@ -15,31 +16,31 @@ const keys = (...given: Parameters<typeof firstSentences>) => firstSentences(...
 
 test('Order_NoticesDueSilentUnknown_WhateverTheRows', () => {
   const lines = [calm('a'), line([unknown('N1', 'x')], { name: 'b' }), silentSince('c', '2026-11-30T10:00:00Z'), dueAt('d', '2026-11-30T04:00:00Z')];
-  expect(keys([cut], lines, now, zone)).toEqual(['notice source:gateway', 'line d', 'line c', 'line b']);
+  expect(keys([cut], lines, [], now, zone)).toEqual(['notice source:gateway', 'line d', 'line c', 'line b']);
   expect(lines.map(l => l.name)).toEqual(['a', 'b', 'c', 'd']);
 });
 test('LongestDueAndLongestSilent_ComeFirst', () => {
-  expect(keys([], [dueAt('a', '2026-11-30T04:00:00Z'), dueAt('b', '2026-11-29T04:00:00Z'), silentSince('c', '2026-11-30T10:00:00Z'), silentSince('d', '2026-11-29T10:00:00Z')], now, zone))
+  expect(keys([], [dueAt('a', '2026-11-30T04:00:00Z'), dueAt('b', '2026-11-29T04:00:00Z'), silentSince('c', '2026-11-30T10:00:00Z'), silentSince('d', '2026-11-29T10:00:00Z')], [], now, zone))
     .toEqual(['line b', 'line a', 'line d', 'line c']);
 });
 test('MoreThanFive_FiveStandAndTheRestAreCounted', () => {
-  const { first, left } = firstSentences([full], ['a', 'b', 'c', 'd', 'e', 'f'].map(n => dueAt(n, '2026-11-30T04:00:00Z')), now, zone);
+  const { first, left } = firstSentences([full], ['a', 'b', 'c', 'd', 'e', 'f'].map(n => dueAt(n, '2026-11-30T04:00:00Z')), [], now, zone);
   expect([first.length, left]).toEqual([5, 2]);
   expect(first[0]!.key).toBe('notice spool-full');
 });
-test('CalmSite_NothingComesFirst', () => expect(firstSentences([], [calm('a')], now, zone)).toEqual({ first: [], left: 0 }));
+test('CalmSite_NothingComesFirst', () => expect(firstSentences([], [calm('a')], [], now, zone)).toEqual({ first: [], left: 0 }));
 test('SilentLineWithADueEffect_IsSilentAndAsksForNoAct', () => {
-  const { first } = firstSentences([], [line([due('N4', '2026-11-29T04:00:00Z')], { name: 'a', readings: 'stale', latest_reading_at: '2026-11-30T10:08:00Z' })], now, zone);
+  const { first } = firstSentences([], [line([due('N4', '2026-11-29T04:00:00Z')], { name: 'a', readings: 'stale', latest_reading_at: '2026-11-30T10:08:00Z' })], [], now, zone);
   expect(first).toHaveLength(1);
   expect(first[0]!.act).toBe(false);
   expect(first[0]!.pieces[0]!.text).toBe('No reading has come for 3 h');
 });
 test('OnlyWhereSomeoneMustAct_IsMarked', () => {
-  expect(firstSentences([cut, full], [dueAt('a', '2026-11-30T04:00:00Z'), line([unknown('N1', 'x')], { name: 'b' })], now, zone).first.map(f => [f.key, f.act]))
+  expect(firstSentences([cut, full], [dueAt('a', '2026-11-30T04:00:00Z'), line([unknown('N1', 'x')], { name: 'b' })], [], now, zone).first.map(f => [f.key, f.act]))
     .toEqual([['notice spool-full', true], ['notice source:gateway', false], ['line a', true], ['line b', false]]);
 });
 test('EveryFirst_OneBoldClause', () => {
-  for (const f of firstSentences([cut, full], [dueAt('a', '2026-11-30T04:00:00Z')], now, zone).first) expect(f.pieces.filter(p => p.bold)).toHaveLength(1);
+  for (const f of firstSentences([cut, full], [dueAt('a', '2026-11-30T04:00:00Z')], [], now, zone).first) expect(f.pieces.filter(p => p.bold)).toHaveLength(1);
 });
 
 test('Wall_ActsInFullFirstAndTheRestByName', () => {
@@ -60,4 +61,11 @@ test('Notices_ThoseToActUponFirst', () => expect(orderedNotices([cut, full]).map
 test('NoticeLine_TheFirstAndHowManyMore', () => {
   expect(noticeLine([cut, full], zone, now)).toBe('The spool is full. Readings are refused until there is room. Since 14:20, for 12 min. 1 more notice stands on Today.');
   expect(noticeLine([], zone, now)).toBe('');
+});
+test('RecognisedCleanings_OnceForEachEffect_AfterAllElse_WithThePageThatAnswers', () => {
+  const asked = [recognised(), recognised({ start: '2026-09-01T00:00:00Z', end: '2026-09-01T08:00:00Z' })];
+  const { first } = firstSentences([cut], [dueAt('a', '2026-11-30T04:00:00Z')], asked, now, zone);
+  expect(first.map(f => f.key)).toEqual(['notice source:gateway', 'line a', 'asked north N4']);
+  expect(first[2]).toMatchObject({ act: false, answer: '/cleanings' });
+  expect(first[2]!.pieces.map(p => p.text).join('')).toBe('N4 came back better on Mon 26 Oct without an entry: was it cleaned?');
 });

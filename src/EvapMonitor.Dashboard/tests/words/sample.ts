@@ -8,12 +8,12 @@ export function effect(part: Partial<Effect> = {}): Effect {
     now: {
       at: '2026-11-30T12:00:00Z', hours: 1, coefficient_w_m2k: 730, coefficient_u: 17, coefficient_u_random: 4, heating_temperature_c: 76.3, boiling_temperature_c: 59.4,
       elevation_k: 3.4, driving_force_k: 16.9, driving_force_u: 0.4, head_corrected_driving_force_k: null, head_corrected_driving_force_u: null, duty_kw: 16000, duty_u: 300, heat_flux_kw_m2: 12.3, cleanliness: 0.76, cleanliness_u: 0.02,
-      fouling_resistance_m2k_w: 0.00033, fouling_resistance_u: 0.00003, clean_from: 'design value', duty_from: 'condensate', heating_temperature_from: 'chest pressure',
+      fouling_resistance_m2k_w: 0.00033, fouling_resistance_u: 0.00003, clean_coefficient_w_m2k: 960, clean_coefficient_u: 12, coefficient_at_reference_w_m2k: 731, coefficient_at_reference_u: 15, clean_from: 'design value', duty_from: 'condensate', heating_temperature_from: 'chest pressure',
       boiling_temperature_from: 'vapour pressure and elevation', reason: null,
     },
     limits: { coefficient_w_m2k: 690, cleanliness: null, hours_since_cleaning: null, resistance_m2k_w: 0.00041 },
     due: { state: 'not due', limit: null, since: null, sentence: null, evidence: [] },
-    last_cleaning: null, cleaning_since: null, growth: [],
+    last_cleaning: null, cleaning_since: null, growth: [], surface: 'N1', campaign: null,
     ...part,
   };
 }
