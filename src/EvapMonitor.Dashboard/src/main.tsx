@@ -13,6 +13,7 @@ import './styles/forms.css';
 import './styles/tables.css';
 import './styles/instruments.css';
 import './styles/chart.css';
+import './styles/cleanings.css';
 import './styles/print.css';
 
 startClock();

@@ -12,7 +12,6 @@ import { useTitle } from '../parts/use-title';
 import { calmNow } from '../site/clock';
 import { cleaningsChanged, lines, resultsChanged } from '../site/state';
 import { waiting } from '../words/cleaning';
-import '../styles/cleanings.css';
 
 /** Did it work? What waits for an answer, what cleanings brought, the log, and where one is added to it. */
 export function Cleanings() {
