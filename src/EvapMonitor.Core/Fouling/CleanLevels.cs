@@ -155,7 +155,7 @@ internal static class CleanLevels
     {
         string[] names = ["solids", "boiling temperature", "flux"];
         string each = string.Join(", ", names.Select((name, t) => string.Create(CultureInfo.InvariantCulture,
-            $"{name} {(slopes.Learnt[t] ? $"{slopes.Slopes[t]:0.###} ± {double.Sqrt(slopes.Covariance[t, t]):0.###}" : "0")}{(slopes.Remarks[t].Length > 0 ? $" ({slopes.Remarks[t]})" : "")}")));
+            $"{name} {(slopes.Learnt[t] ? $"{slopes.Slopes[t]:0.####} ± {double.Sqrt(slopes.Covariance[t, t]):0.####}" : "0")}{(slopes.Remarks[t].Length > 0 ? $" ({slopes.Remarks[t]})" : "")}")));
         return string.Create(CultureInfo.InvariantCulture, $"conditions learnt from {slopes.Hours} hours of {slopes.Days} days: {each}");
     }
 }

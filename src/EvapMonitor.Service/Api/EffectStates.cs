@@ -21,10 +21,11 @@ public sealed class EffectStates(TrendStore trends, CleaningStore cleanings, Sur
     {
         DateTimeOffset now = clock.GetUtcNow();
         IReadOnlyList<LoggedCleaning> logged = [.. (await cleanings.ListAsync(line.LineId, effectId, stop)).Where(cleaning => !cleaning.Rejected)];
-        LoggedCleaning? last = logged.FirstOrDefault(cleaning => cleaning.End is not null);
         LoggedCleaning? running = logged.FirstOrDefault(cleaning => cleaning.Start <= now && (cleaning.End is null || cleaning.End > now));
         DateTimeOffset? lastWindow = await trends.LastWindowAsync(line.LineId, effectId, stop);
         SurfacesOfEffect its = SurfacesOfEffect.Of(await surfaces.OfAsync(line.LineId, stop), effect.Name);
+        // Where bodies take turns, what was logged of another one is no cleaning of this.
+        LoggedCleaning? last = logged.FirstOrDefault(cleaning => cleaning.End is not null && !its.All.Any(other => other != its.Serving && other.History.Cleanings.Any(one => one.Ids.Contains(cleaning.Id))));
         Campaign? campaign = its.Serving?.History.Campaigns is [.., var latestCampaign] ? latestCampaign : null;
         // The log is known at once, what was recognised in it a moment later.
         long? cleaned = Later(last?.End?.ToUnixTimeMilliseconds(), campaign is { StartedBy: not CleaningSource.FirstData } ? campaign.Start : null);

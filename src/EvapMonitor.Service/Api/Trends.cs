@@ -31,8 +31,8 @@ public sealed class Trends(TrendStore store, SurfaceStore cleanHours, SurfaceSta
         ["heating_temperature"] = new("degC", HourQuantity.HeatingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
         ["boiling_temperature"] = new("degC", HourQuantity.BoilingTemperature, (value, _, _) => value with { Value = value.Value - 273.15 }),
         ["elevation"] = new("K", HourQuantity.Elevation, (value, _, _) => value),
-        ["solids"] = new("%", HourQuantity.Solids, (value, _, _) => Scaled(value, 100)),
-        ["feed_flow"] = new("kg/s", HourQuantity.FeedFlow, (value, _, _) => value),
+        ["solids"] = new("%", HourQuantity.Solids, (value, _, _) => new Measured(value.Value * 100, double.NaN, double.NaN)),
+        ["feed_flow"] = new("kg/s", HourQuantity.FeedFlow, (value, _, _) => new Measured(value.Value, double.NaN, double.NaN)),
     };
 
     /// <summary>One series.</summary>

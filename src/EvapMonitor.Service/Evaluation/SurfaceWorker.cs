@@ -22,7 +22,9 @@ public sealed class SurfaceWorker(
     /// <summary>A line is left alone for this many times as long as it took, so that this takes a twentieth of a core at most.</summary>
     private const int RestTimes = 20;
 
-    private readonly Dictionary<int, long> _restUntil = [];
+    private static readonly TimeSpan LongestWait = TimeSpan.FromMinutes(1);
+
+    private readonly Dictionary<int, long> _restUntil = [], _computed = [];
     private readonly Dictionary<int, Dictionary<(int Effect, long Day), int>> _written = [];
 
     /// <inheritdoc/>
@@ -54,7 +56,14 @@ public sealed class SurfaceWorker(
         if (_restUntil.GetValueOrDefault(line.LineId) > began || !await leases.IsOursAsync(line.LineId, stop)) return;
         // Which plant revision it was computed under enters too: design values and names are of the plant in force.
         string version = $"{inForce.RevisionId} {await inputs.VersionAsync(line.LineId, stop)}";
-        if (await store.InputAsync(line.LineId, stop) == version) return;
+        if (await store.InputAsync(line.LineId, stop) is { } computed)
+        {
+            if (computed == version) return;
+            // A long backlog must not keep the surfaces from being shown, a short one is waited for.
+            bool behind = await inputs.IsBehindAsync(line.LineId, DateOnly.FromDateTime(clock.GetUtcNow().UtcDateTime), stop);
+            if (behind && clock.GetElapsedTime(_computed.GetValueOrDefault(line.LineId, long.MinValue / 4)) < LongestWait) return;
+        }
+
         try
         {
             (string read, IReadOnlyList<EffectRecord> effects) = await inputs.ReadAsync(plant.Timeline, inForce, line, stop);
@@ -71,6 +80,7 @@ public sealed class SurfaceWorker(
             return;
         }
 
+        _computed[line.LineId] = clock.GetTimestamp();
         _restUntil[line.LineId] = clock.GetTimestamp() + (RestTimes * (clock.GetTimestamp() - began));
     }
 

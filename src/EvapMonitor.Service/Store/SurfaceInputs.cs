@@ -22,6 +22,15 @@ public sealed class SurfaceInputs(NpgsqlDataSource database)
         return await VersionAsync(connection, lineId, stop);
     }
 
+    /// <summary>True while past days of a line wait for evaluation: what was logged may not have reached them yet.</summary>
+    public async Task<bool> IsBehindAsync(int lineId, DateOnly today, CancellationToken stop)
+    {
+        await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
+        return await connection.ExecuteScalarAsync<bool>(new CommandDefinition(
+            "SELECT EXISTS (SELECT 1 FROM line_day WHERE line_id = @lineId AND day < @today AND (changed_from IS NOT NULL OR taken_from IS NOT NULL OR anew))",
+            new { lineId, today }, cancellationToken: stop));
+    }
+
     /// <summary>The records of a line's effects, in plant-file order, and their version.</summary>
     public async Task<(string Version, IReadOnlyList<EffectRecord> Effects)> ReadAsync(PlantTimeline plants, PlantInForce plant, LinePlace line, CancellationToken stop)
     {
