@@ -36,12 +36,48 @@ public sealed class BalancePageTests(FaultyService faulty, Chromium chromium) : 
         ILocator row = open.Page.Locator("table.signals tr", new() { HasText = FeedFlow }).First;
         await Assertions.Expect(row.Locator("td.fit b")).ToContainTextAsync("left out of the balance: the others want −");
         await Assertions.Expect(open.Page.Locator("table.signals tr", new() { HasText = "N.FT-90" }).First.Locator("td.fit")).ToContainTextAsync("fits the others");
-        await row.GetByRole(AriaRole.Button, new() { Name = $"30 days of {FeedFlow}" }).ClickAsync();
+        await row.GetByRole(AriaRole.Button, new() { Name = $"30 days, log of {FeedFlow}" }).ClickAsync();
         ILocator figure = open.Page.Locator("figure.corrections");
         await Assertions.Expect(figure).ToContainTextAsync("dotted while it is left out");
         Assert.Matches(@"^M\d", await figure.Locator(".corrections-line").GetAttributeAsync("d"));
         Assert.Matches(@"^M\d", await figure.Locator(".corrections-out").GetAttributeAsync("d"));
         await Assertions.Expect(figure).ToContainTextAsync("In the last 30 days between −");
+        open.NothingWentWrong();
+    }
+
+    [BrowserFact]
+    public async Task Instrument_IsExcludedByTheForm_AndTakenBack()
+    {
+        await using OpenPage open = await chromium.OpenAsync(Service.Address);
+        await open.GoAsync("/instruments", FeedFlow);
+        ILocator row = open.Page.Locator("table.signals tr", new() { HasText = "N3.FT-3" }).First;
+        await row.GetByRole(AriaRole.Button, new() { Name = "30 days, log of N3.FT-3" }).ClickAsync();
+        ILocator log = open.Page.Locator(".instrument-log");
+        await Assertions.Expect(log).ToContainTextAsync("Nothing is logged of N3.FT-3.");
+        await log.GetByText("Exclude N3.FT-3 for a time").ClickAsync();
+        await log.GetByRole(AriaRole.Button, new() { Name = "Exclude N3.FT-3" }).ClickAsync();
+        await Assertions.Expect(log).ToContainTextAsync("Give a date and a time.");
+        await log.GetByLabel("From, local time").FillAsync("2026-03-02T08:00");
+        await log.GetByLabel("Note").FillAsync("orifice eaten");
+        await log.GetByRole(AriaRole.Button, new() { Name = "Exclude N3.FT-3" }).ClickAsync();
+        ILocator entry = log.Locator("li", new() { HasText = "until further notice: orifice eaten" });
+        await Assertions.Expect(entry).ToContainTextAsync("Excluded from");
+        await entry.GetByRole(AriaRole.Button, new() { Name = "take back" }).ClickAsync();
+        await Assertions.Expect(log).ToContainTextAsync("Nothing is logged of N3.FT-3.");
+        open.NothingWentWrong();
+    }
+
+    [BrowserFact]
+    public async Task Effect_TellsItsCampaign_AndWhatTheCleanExpectationRestsOn()
+    {
+        await using OpenPage open = await chromium.OpenAsync(Service.Address);
+        await Service.SurfacesAsync();
+        await open.GoAsync("/lines/north/effects/N2", "Ring thickness stands for");
+        ILocator campaigns = open.Page.Locator("table.campaigns");
+        await Assertions.Expect(campaigns).ToContainTextAsync("first data");
+        await open.Page.GetByText("What the clean expectation rests on").ClickAsync();
+        await Assertions.Expect(open.Page.Locator("main")).ToContainTextAsync("design value");
+        await open.AccessibleAsync("effect");
         open.NothingWentWrong();
     }
 
@@ -65,7 +101,7 @@ public sealed class BalancePageTests(FaultyService faulty, Chromium chromium) : 
             await open.GoAsync(path, awaited);
             if (path == "/instruments")
             {
-                await open.Page.GetByRole(AriaRole.Button, new() { Name = $"30 days of {FeedFlow}" }).ClickAsync();
+                await open.Page.GetByRole(AriaRole.Button, new() { Name = $"30 days, log of {FeedFlow}" }).ClickAsync();
                 await open.Page.Locator("figure.corrections svg").WaitForAsync();
             }
             else if (path != "/") await open.Page.GetByText("What follows without an instrument").ClickAsync();
