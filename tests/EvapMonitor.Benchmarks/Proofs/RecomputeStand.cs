@@ -101,9 +101,9 @@ internal sealed class RecomputeStand : IAsyncDisposable
     }
 
     /// <summary>Asks for all days anew.</summary>
-    public static async Task<RecomputationWire> RecomputeAsync(HttpClient http)
+    public static async Task<RecomputationWire> RecomputeAsync(HttpClient http, string? line = null)
     {
-        using HttpResponseMessage answer = await http.PostAsJsonAsync(new Uri("/api/v1/recomputations", UriKind.Relative), new { }, Json);
+        using HttpResponseMessage answer = await http.PostAsJsonAsync(new Uri("/api/v1/recomputations", UriKind.Relative), new { line }, Json);
         answer.EnsureSuccessStatusCode();
         return (await answer.Content.ReadFromJsonAsync<RecomputationWire>(Json))!;
     }
@@ -122,6 +122,28 @@ internal sealed class RecomputeStand : IAsyncDisposable
         {
             await using NpgsqlCommand command = Database.CreateCommand(
                 $"SELECT count(*), coalesce(encode(sha256(string_agg(decode(md5(t::text), 'hex'), ''::bytea ORDER BY {key})), 'hex'), '') FROM {table} t WHERE revision_id = {revision}");
+            await using NpgsqlDataReader reader = await command.ExecuteReaderAsync();
+            await reader.ReadAsync();
+            bits[table] = (reader.GetInt64(0), reader.GetString(1));
+        }
+
+        return bits;
+    }
+
+    /// <summary>Waits until the surfaces are computed from all that stands, and gives their bits: hours held against the clean expectation, and campaigns.</summary>
+    public async Task<IReadOnlyDictionary<string, (long Rows, string Hash)>> SurfaceBitsAsync()
+    {
+        var inputs = new SurfaceInputs(Database);
+        for (int line = 1; line <= await CountAsync("SELECT max(line_id) FROM line"); line++)
+        {
+            while (await CountAsync($"SELECT count(*) FROM surface_state WHERE line_id = {line} AND input LIKE '% {await inputs.VersionAsync(line, CancellationToken.None)}'") == 0) await Task.Delay(50);
+        }
+
+        var bits = new Dictionary<string, (long, string)>();
+        foreach ((string table, string key) in new[] { ("clean_hour", "line_id, effect_id, hour"), ("surface_history", "line_id, surface") })
+        {
+            await using NpgsqlCommand command = Database.CreateCommand(
+                $"SELECT count(*), coalesce(encode(sha256(string_agg(decode(md5(t::text), 'hex'), ''::bytea ORDER BY {key})), 'hex'), '') FROM {table} t");
             await using NpgsqlDataReader reader = await command.ExecuteReaderAsync();
             await reader.ReadAsync();
             bits[table] = (reader.GetInt64(0), reader.GetString(1));
