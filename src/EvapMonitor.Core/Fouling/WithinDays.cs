@@ -4,7 +4,7 @@ using EvapMonitor.Core.Readings;
 namespace EvapMonitor.Core.Fouling;
 
 /// <summary>
-/// Hours in groups: those of one UTC day without an interruption. From each group a mean and a straight drift are taken, so that fouling, whatever its course over
+/// Hours in groups: those of one UTC day without an interruption. From each group a mean and a straight drift are taken, so that fouling, however it goes over
 /// weeks, and its growth within the day do not enter. Differences of neighbouring hours would do the same, but they keep little of conditions that move over a shift
 /// and all of the noise.
 /// </summary>

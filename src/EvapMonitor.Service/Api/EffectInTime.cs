@@ -4,7 +4,7 @@ using EvapMonitor.Service.Store;
 
 namespace EvapMonitor.Service.Api;
 
-/// <summary>An effect as the plant revisions had it in the course of time: a rebuilt surface is compared with its own clean coefficient.</summary>
+/// <summary>An effect as the plant revisions had it over time: a rebuilt surface is compared with its own clean coefficient.</summary>
 internal sealed class EffectInTime
 {
     private readonly (long From, Effect Effect, CleanExpectation? Clean)[] _eras;

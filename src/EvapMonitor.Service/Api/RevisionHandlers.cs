@@ -65,7 +65,7 @@ internal static class RevisionHandlers
 
     public static ProblemHttpResult NoRevision(int id) => Problems.NotFound($"There is no plant revision {id}; GET /api/v1/plant/revisions lists them.");
 
-    /// <summary>The plant whose results are asked for, with the revisions by which they are to be read: those of the course of time, or the one asked for.</summary>
+    /// <summary>The plant whose results are asked for, with the revisions by which they are to be read: those in force over time, or the one asked for.</summary>
     public static async Task<(PlantInForce Plant, IReadOnlyList<PlantInForce> Eras)?> AskedAsync(PlantHolder plant, PlantStore store, int? revision, CancellationToken stop)
     {
         if (revision is not { } asked) return (plant.Current, plant.Timeline.Eras);

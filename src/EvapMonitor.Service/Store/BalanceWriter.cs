@@ -12,7 +12,8 @@ internal static class BalanceWriter
     public static async Task WriteAsync(NpgsqlConnection connection, int lineId, int revisionId, IReadOnlyList<LineWindow> windows)
     {
         Dictionary<BalanceLayout, long> layouts = windows.Select(window => window.Balance?.Layout).OfType<BalanceLayout>().Distinct().ToDictionary(layout => layout, BalanceRow.KeyOf);
-        foreach ((BalanceLayout layout, long key) in layouts) await WriteLayoutAsync(connection, lineId, revisionId, layout, key);
+        // Always in the same order, so that two days written beside each other never wait for each other in a circle.
+        foreach ((BalanceLayout layout, long key) in layouts.OrderBy(pair => pair.Value)) await WriteLayoutAsync(connection, lineId, revisionId, layout, key);
         if (layouts.Count > 0) WriteWindows(connection, lineId, revisionId, windows, layouts);
         WriteHours(connection, lineId, revisionId, windows);
     }

@@ -7,7 +7,7 @@ using Microsoft.Extensions.DependencyInjection;
 
 namespace EvapMonitor.Service.Tests.Revisions;
 
-/// <summary>Plant revisions in the course of time.</summary>
+/// <summary>Plant revisions over time.</summary>
 public sealed class RevisionTests(PostgresServer server)
 {
     private static readonly DateTimeOffset Change = SteadyHistory.Start.AddDays(2);
