@@ -109,7 +109,9 @@ public sealed class RecomputationTests(PostgresServer server)
                 await first.DeathAsync();
             }
 
-            Assert.Equal("1,2,1,1,1", await TextAsync(database, "SELECT string_agg(shown_revision::text, ',' ORDER BY day) FROM line_day"));
+            // Two days are written beside each other where there are two cores: of them one may have been committed when the other killed the process.
+            string shown = await TextAsync(database, "SELECT string_agg(shown_revision::text, ',' ORDER BY day) FROM line_day");
+            Assert.Contains(shown, new[] { "1,1,1,1,1", "1,2,1,1,1", "1,1,2,1,1" });
             await using ChildService second = await ChildService.RunAsync(plant, folder, connection);
             await Poll.UntilAsync("the end of the recomputation", async () => await TextAsync(database, "SELECT string_agg(state, ',') FROM recomputation") == "done", 60);
             Assert.Equal(undisturbed, await TextAsync(database, Results));
