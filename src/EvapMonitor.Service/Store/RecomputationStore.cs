@@ -185,7 +185,7 @@ public sealed class RecomputationStore(NpgsqlDataSource database, TimeProvider c
     private const string Days =
         """
         SELECT line_id, day FROM line_day l
-        WHERE (@LineId::integer IS NULL OR line_id = @LineId) AND day >= @From AND (@End::date IS NULL OR day < @End)
+        WHERE (@LineId::integer IS NULL OR line_id = @LineId) AND day >= @From AND (@End::date IS NULL OR day < @End) AND day <= @today
           AND (@Model::smallint IS NULL OR (model < @Model AND shown_revision IS NOT NULL AND NOT anew AND NOT EXISTS (
               SELECT 1 FROM recomputation_day r JOIN recomputation c USING (recomputation_id)
               WHERE r.line_id = l.line_id AND r.day = l.day AND c.state = 'cancelled' AND c.model = @Model)))
@@ -194,6 +194,8 @@ public sealed class RecomputationStore(NpgsqlDataSource database, TimeProvider c
     private static object Parameters(NewRecomputation wish) => new
     {
         wish.LineId, wish.Revision, Model = (short?)wish.Model, wish.From, wish.End, wish.Author, cause = wish.Cause.ToString(), now = wish.Now.UtcDateTime,
+        // Readings of the evening have marked tomorrow, which looks back at them; it comes by itself.
+        today = DateOnly.FromDateTime(wish.Now.UtcDateTime),
     };
 
     private async Task<Recomputation?> TurnAsync(int id, string from, string to, string marks, CancellationToken stop)
