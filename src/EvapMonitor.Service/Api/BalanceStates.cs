@@ -117,7 +117,7 @@ public sealed class BalanceStates(BalanceStore balances, TrendStore trends, Inst
             long? recalibrated = logged[plant.Signals[signal].SignalId].FirstOrDefault(one => one.Kind == InstrumentLogStore.Recalibrated)?.Start.ToUnixTimeMilliseconds();
             if (CorrectionChange.Find(hours[signal], StandardOf(last.Balance, signal), recalibrated, signals.Length) is not { } change) continue;
             if (units.Difference(signal, change.Change) is not var (value, unit)) continue;
-            changes[signal] = new ChangeWire(Utc(change.Since), value, unit, $"has changed: the others want {Signed(value)} {unit} more than before");
+            changes[signal] = new ChangeWire(Utc(change.Since), value, unit, $"reads {Signed(double.Abs(value))[1..]} {unit} {(value < 0 ? "higher" : "lower")} against the others than before");
         }
 
         return changes;

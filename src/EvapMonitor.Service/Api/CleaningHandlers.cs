@@ -115,11 +115,10 @@ internal static class CleaningHandlers
     /// <summary>A logged cleaning as it goes out, with what it brought.</summary>
     internal static CleaningWire? WireOf(LinePlace line, LoggedCleaning cleaning, IReadOnlyList<Surface> surfaces)
     {
-        int i = line.EffectIds.ToList().IndexOf(cleaning.EffectId);
-        if (i < 0) return null;
+        if (line.Find(cleaning.EffectId) is not { } effect) return null;
         var found = surfaces.SelectMany(surface => surface.History.Cleanings.Select(one => (surface.Name, Cleaning: one))).FirstOrDefault(one => one.Cleaning.Ids.Contains(cleaning.Id));
         return new CleaningWire(
-            cleaning.Id, line.Line.Name, line.Line.Effects[i].Name, cleaning.Body, cleaning.Start, cleaning.End, cleaning.Kind, cleaning.Note, cleaning.LoggedAt,
+            cleaning.Id, line.Line.Name, effect.Name, cleaning.Body, cleaning.Start, cleaning.End, cleaning.Kind, cleaning.Note, cleaning.LoggedAt,
             cleaning.Rejected ? "rejected" : "logged", found.Cleaning is null ? null : CampaignStates.ResultOf(found.Name, found.Cleaning));
     }
 

@@ -39,8 +39,6 @@ internal sealed class EffectInTime
 
     private static Effect? Of(PlantInForce era, int lineId, int effectId)
     {
-        if (era.Lines.FirstOrDefault(place => place.LineId == lineId) is not { } line) return null;
-        int place = line.EffectIds.ToList().IndexOf(effectId);
-        return place < 0 ? null : line.Line.Effects[place];
+        return era.Lines.FirstOrDefault(place => place.LineId == lineId)?.Find(effectId);
     }
 }

@@ -54,7 +54,7 @@ public sealed class Trends(TrendStore store, SurfaceStore cleanHours, SurfaceSta
         byHour |= revision is not null && windows.Count == 0;
         // What the surfaces are held against is computed from what is shown; an earlier revision is held against its own design values.
         CleanInTime? clean = quantity.Compared is null || revision is not null ? null : await surfaces.CleanAsync(line.LineId, effect.EffectId, effect.Now.Name, from, to, stop);
-        if (clean is { Surfaces.Version: > 0 }) return Wire(line, effect.Now, name, quantity.Unit, byHour, Step(byHour, effect), Thin(WithGaps(Compared(line, effect, quantity, clean, byHour, windows, from, to), Step(byHour, effect)), points), from, dataVersion);
+        if (clean is { Surfaces.Count: > 0 }) return Wire(line, effect.Now, name, quantity.Unit, byHour, Step(byHour, effect), Thin(WithGaps(Compared(line, effect, quantity, clean, byHour, windows, from, to), Step(byHour, effect)), points), from, dataVersion);
         List<Point> all = byHour
             ? [.. store.Hours(line.LineId, effect.EffectId, quantity.Hours, from, to, revision).Select(hour =>
             {

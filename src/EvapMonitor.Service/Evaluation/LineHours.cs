@@ -1,7 +1,6 @@
 using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Fouling;
 using EvapMonitor.Core.Plant;
-using EvapMonitor.Service.Api;
 using EvapMonitor.Service.Store;
 
 namespace EvapMonitor.Service.Evaluation;
@@ -39,8 +38,7 @@ internal sealed class LineHours(Line line, long step)
     /// <summary>The windows held against their surfaces, in the order in which they came: by window, then effect.</summary>
     public IEnumerable<CleanComparisonResult> Compare(IReadOnlyList<Surface> surfaces)
     {
-        var stored = new StoredSurfaces(1, surfaces);
-        CleanInTime[] clean = [.. line.Effects.Select((effect, i) => new CleanInTime(effect.Name, stored, _stretches[i]))];
+        CleanInTime[] clean = [.. line.Effects.Select((effect, i) => new CleanInTime(effect.Name, surfaces, _stretches[i]))];
         for (int k = 0; k < _windows.Count; k++)
         {
             (long at, Measured coefficient, double solids, double boiling, double flux) = _windows[k];

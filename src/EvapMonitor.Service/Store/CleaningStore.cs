@@ -18,10 +18,7 @@ public sealed record LoggedCleaning(
     Guid Id, int LineId, int EffectId, DateTimeOffset Start, DateTimeOffset? End, string Kind, string Note, DateTimeOffset LoggedAt, string? Body = null, bool Rejected = false)
 {
     /// <summary>True when another says the same, whenever it was logged. The store keeps microseconds.</summary>
-    public bool Says(LoggedCleaning other) => Same(Start, other.Start) && Same(End, other.End) && (Kind, Note, Body, Rejected) == (other.Kind, other.Note, other.Body, other.Rejected);
-
-    private static bool Same(DateTimeOffset? one, DateTimeOffset? other) =>
-        one is { } a && other is { } b ? (a - b).Duration() < TimeSpan.FromMilliseconds(1) : one is null && other is null;
+    public bool Says(LoggedCleaning other) => Instant.AreSame(Start, other.Start) && Instant.AreSame(End, other.End) && (Kind, Note, Body, Rejected) == (other.Kind, other.Note, other.Body, other.Rejected);
 }
 
 /// <summary>What became of an attempt to log a cleaning.</summary>

@@ -14,10 +14,7 @@ namespace EvapMonitor.Service.Store;
 public sealed record InstrumentEvent(Guid Id, int SignalId, string Kind, DateTimeOffset Start, DateTimeOffset? End, string Note, DateTimeOffset LoggedAt)
 {
     /// <summary>True when another says the same, whenever it was logged. The store keeps microseconds.</summary>
-    public bool Says(InstrumentEvent other) => Kind == other.Kind && Note == other.Note && Same(Start, other.Start) && Same(End, other.End);
-
-    private static bool Same(DateTimeOffset? one, DateTimeOffset? other) =>
-        one is { } a && other is { } b ? (a - b).Duration() < TimeSpan.FromMilliseconds(1) : one is null && other is null;
+    public bool Says(InstrumentEvent other) => Kind == other.Kind && Note == other.Note && Instant.AreSame(Start, other.Start) && Instant.AreSame(End, other.End);
 }
 
 /// <summary>

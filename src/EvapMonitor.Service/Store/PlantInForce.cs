@@ -25,6 +25,17 @@ public sealed record LinePlace(int LineId, Line Line, IReadOnlyList<int> EffectI
 
         return null;
     }
+
+    /// <summary>The effect with a key; null when there is none.</summary>
+    public Effect? Find(int effectId)
+    {
+        for (int i = 0; i < EffectIds.Count; i++)
+        {
+            if (EffectIds[i] == effectId) return Line.Effects[i];
+        }
+
+        return null;
+    }
 }
 
 /// <summary>The plant revision in force, with the keys that the store gave to its lines, effects and signals.</summary>

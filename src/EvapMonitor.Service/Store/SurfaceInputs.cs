@@ -73,8 +73,8 @@ public sealed class SurfaceInputs(NpgsqlDataSource database)
     {
         (double Area, IEnumerable<Body> Bodies)? SurfaceUnder(PlantInForce era)
         {
-            if (era.Lines.FirstOrDefault(place => place.LineId == lineId) is not { } place || place.EffectIds.ToList().IndexOf(effectId) is not (>= 0 and var i)) return null;
-            return (place.Line.Effects[i].Area, place.Line.Bodies);
+            LinePlace? place = era.Lines.FirstOrDefault(place => place.LineId == lineId);
+            return place?.Find(effectId) is { } effect ? (effect.Area, place.Line.Bodies) : null;
         }
 
         for (int k = 1; k < plants.Eras.Count; k++)

@@ -12,11 +12,7 @@ namespace EvapMonitor.Service.Store;
 /// <summary>The surfaces of a line as stored; their hours stand apart.</summary>
 /// <param name="Version">Grows when they change; 0 before they were first computed.</param>
 /// <param name="Surfaces">The surfaces.</param>
-public sealed record StoredSurfaces(long Version, IReadOnlyList<Surface> Surfaces)
-{
-    /// <summary>The surface of a name; null when there is none.</summary>
-    public Surface? Find(string name) => Surfaces.FirstOrDefault(surface => surface.Name == name);
-}
+public sealed record StoredSurfaces(long Version, IReadOnlyList<Surface> Surfaces);
 
 /// <summary>An hour of an effect held against what it would be if clean.</summary>
 /// <param name="Surface">The surface that served.</param>

@@ -11,7 +11,7 @@ public class CorrectionChangeTests
     [Fact]
     public void HealthyInstruments_AreAccusedLessThanOnceALineAndYear()
     {
-        // 20 lines of 30 instruments over half a year each: ten expected at one a line and year. Days scatter by 0.3 more than their hours do.
+        // 20 lines of 30 instruments over half a year each: ten expected at one a line and year, and up to 20 in 998 of 1,000 such draws (Poisson). Days scatter by 0.3 more than their hours do.
         var gaussian = new Gaussian(11);
         int accused = 0;
         for (int instrument = 0; instrument < 20 * Signals; instrument++)
