@@ -1,6 +1,5 @@
 using System.Net;
 using System.Net.Http.Json;
-using System.Text;
 using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Tests.Support;
 
@@ -51,7 +50,7 @@ public sealed class CampaignTests(ApiService api) : IClassFixture<ApiService>
     [PostgreSqlFact]
     public async Task Recalibration_EndsTheBaselineOfTheEffectsBehindWhichItStands()
     {
-        using var request = Post(HttpMethod.Post, "/api/v1/instrument-log", """{"signal":"N4.DT-2","kind":"recalibration","start":"2026-03-03T00:00:00Z"}""", "recalibrated");
+        using var request = ApiService.Keyed(HttpMethod.Post, "/api/v1/instrument-log", """{"signal":"N4.DT-2","kind":"recalibration","start":"2026-03-03T00:00:00Z"}""", "recalibrated");
         using HttpResponseMessage answer = await api.Http.SendAsync(request, Stop);
         Assert.Equal(HttpStatusCode.Created, answer.StatusCode);
         await api.Service.SurfacesAsync();
@@ -68,9 +67,9 @@ public sealed class CampaignTests(ApiService api) : IClassFixture<ApiService>
             HttpMethod.Post, "/api/v1/cleanings", $$"""{"line":"north","effect":"N3","start":"{{start:O}}","end":"{{start.AddHours(1):O}}","rejected":true}""", "rejected-1");
         Assert.Equal("rejected", kept.KnownBy);
         Assert.Null((await api.Service.GetAsync<EffectWire>("/api/v1/lines/north/effects/N3")).LastCleaning);
-        using var request = Post(HttpMethod.Post, "/api/v1/cleanings", $$"""{"line":"north","effect":"N3","start":"{{start:O}}","rejected":true}""", "rejected-2");
+        using var request = ApiService.Keyed(HttpMethod.Post, "/api/v1/cleanings", $$"""{"line":"north","effect":"N3","start":"{{start:O}}","rejected":true}""", "rejected-2");
         Assert.Contains("end is missing", await api.ProblemAsync(HttpStatusCode.BadRequest, request));
-        using var body = Post(HttpMethod.Post, "/api/v1/cleanings", $$"""{"line":"north","effect":"N3","start":"{{start:O}}","kind":"rinse","body":"B7"}""", "rejected-3");
+        using var body = ApiService.Keyed(HttpMethod.Post, "/api/v1/cleanings", $$"""{"line":"north","effect":"N3","start":"{{start:O}}","kind":"rinse","body":"B7"}""", "rejected-3");
         Assert.Contains("has no body 'B7'", await api.ProblemAsync(HttpStatusCode.BadRequest, body));
     }
 
@@ -89,14 +88,9 @@ public sealed class CampaignTests(ApiService api) : IClassFixture<ApiService>
 
     private static string Body(string effect, DateTimeOffset start, DateTimeOffset end) => $$"""{"line":"north","effect":"{{effect}}","start":"{{start:O}}","end":"{{end:O}}","kind":"boil-out"}""";
 
-    private static HttpRequestMessage Post(HttpMethod method, string path, string body, string key) => new(method, path)
-    {
-        Content = new StringContent(body, Encoding.UTF8, "application/json"), Headers = { { "Idempotency-Key", key } },
-    };
-
     private async Task<CleaningWire> SendAsync(HttpMethod method, string path, string body, string key)
     {
-        using HttpRequestMessage request = Post(method, path, body, key);
+        using HttpRequestMessage request = ApiService.Keyed(method, path, body, key);
         using HttpResponseMessage answer = await api.Http.SendAsync(request, Stop);
         Assert.True(answer.IsSuccessStatusCode, await answer.Content.ReadAsStringAsync(Stop));
         return (await answer.Content.ReadFromJsonAsync<CleaningWire>(RunningService.Json, Stop))!;

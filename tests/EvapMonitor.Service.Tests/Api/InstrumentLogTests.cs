@@ -1,6 +1,5 @@
 using System.Net;
 using System.Net.Http.Json;
-using System.Text;
 using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Tests.Support;
 
@@ -86,8 +85,5 @@ public sealed class InstrumentLogTests(ApiService api) : IClassFixture<ApiServic
         return await api.ProblemAsync(status, request);
     }
 
-    private static HttpRequestMessage Post(string body, string key) => new(HttpMethod.Post, "/api/v1/instrument-log")
-    {
-        Content = new StringContent(body, Encoding.UTF8, "application/json"), Headers = { { "Idempotency-Key", key } },
-    };
+    private static HttpRequestMessage Post(string body, string key) => ApiService.Keyed(HttpMethod.Post, "/api/v1/instrument-log", body, key);
 }

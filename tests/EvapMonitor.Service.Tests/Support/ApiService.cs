@@ -1,5 +1,6 @@
 using System.Net;
 using System.Net.Http.Json;
+using System.Text;
 using System.Text.Json;
 using EvapMonitor.Service.PlantFile;
 using EvapMonitor.Simulator;
@@ -43,6 +44,12 @@ public class ApiService(PostgresServer server) : IAsyncLifetime
         Assert.Equal("done", (await _service.ImportAsync(History)).State);
         await _service.SurfacesAsync();
     }
+
+    /// <summary>A request with a JSON body and an idempotency key.</summary>
+    public static HttpRequestMessage Keyed(HttpMethod method, string path, string body, string key) => new(method, path)
+    {
+        Content = new StringContent(body, Encoding.UTF8, "application/json"), Headers = { { "Idempotency-Key", key } },
+    };
 
     /// <summary>Sends a request and expects problem details; gives their text.</summary>
     public async Task<string> ProblemAsync(HttpStatusCode status, HttpRequestMessage request)
