@@ -1,3 +1,4 @@
+using EvapMonitor.Core.Fouling;
 using EvapMonitor.Service.Api;
 using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Service.Evaluation;
