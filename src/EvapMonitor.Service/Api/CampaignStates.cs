@@ -2,6 +2,7 @@ using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Fouling;
 using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Store;
+using EvapMonitor.Service.Wording;
 
 namespace EvapMonitor.Service.Api;
 

@@ -4,6 +4,7 @@ using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Evaluation;
 using EvapMonitor.Service.Live;
 using EvapMonitor.Service.Store;
+using EvapMonitor.Service.Wording;
 using Microsoft.AspNetCore.Http.HttpResults;
 using Microsoft.AspNetCore.Mvc;
 

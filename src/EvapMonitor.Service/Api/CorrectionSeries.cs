@@ -1,6 +1,7 @@
 using EvapMonitor.Core.Plant;
 using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Store;
+using EvapMonitor.Service.Wording;
 
 namespace EvapMonitor.Service.Api;
 

@@ -5,6 +5,7 @@ using EvapMonitor.Core.Plant;
 using EvapMonitor.Core.Readings;
 using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Store;
+using EvapMonitor.Service.Wording;
 
 namespace EvapMonitor.Service.Api;
 

@@ -2,6 +2,7 @@ using EvapMonitor.Core.Plant;
 using EvapMonitor.Core.Readings;
 using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Store;
+using EvapMonitor.Service.Wording;
 using Microsoft.AspNetCore.Http.HttpResults;
 
 namespace EvapMonitor.Service.Api;

@@ -2,6 +2,7 @@ using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Plant;
 using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Store;
+using EvapMonitor.Service.Wording;
 using Microsoft.AspNetCore.Http.HttpResults;
 
 namespace EvapMonitor.Service.Api;

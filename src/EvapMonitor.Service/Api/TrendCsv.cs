@@ -1,6 +1,7 @@
 using System.Globalization;
 using System.Text;
 using EvapMonitor.Service.Api.Wire;
+using EvapMonitor.Service.Wording;
 
 namespace EvapMonitor.Service.Api;
 
@@ -13,19 +14,10 @@ internal static class TrendCsv
         for (int i = 0; i < trend.Value.Count; i++)
         {
             string reason = trend.Reason[i] < 0 ? "" : trend.Reasons[trend.Reason[i]];
-            text.Append(CultureInfo.InvariantCulture, $"{trend.Start.AddSeconds(trend.OffsetS[i]):yyyy-MM-ddTHH:mm:ssZ},{Cell(trend.Line)},{Cell(trend.Effect)},{trend.Quantity},{trend.Unit},")
-                .Append(CultureInfo.InvariantCulture, $"{trend.Value[i]:R},{trend.U[i]:R},{trend.URandom[i]:R},{trend.Mark[i]},{Cell(reason)},{Words.OfSteady(trend.Steady[i])}\r\n");
+            text.Append(CultureInfo.InvariantCulture, $"{trend.Start.AddSeconds(trend.OffsetS[i]):yyyy-MM-ddTHH:mm:ssZ},{Csv.Cell(trend.Line)},{Csv.Cell(trend.Effect)},{trend.Quantity},{trend.Unit},")
+                .Append(CultureInfo.InvariantCulture, $"{trend.Value[i]:R},{trend.U[i]:R},{trend.URandom[i]:R},{trend.Mark[i]},{Csv.Cell(reason)},{Words.OfSteady(trend.Steady[i])}\r\n");
         }
 
         return text.ToString();
-    }
-
-    /// <summary>
-    /// A text from outside as a cell: quoted where needed, and with a leading apostrophe where a spreadsheet would take it for a formula.
-    /// </summary>
-    public static string Cell(string text)
-    {
-        if (text is [('=' or '+' or '-' or '@' or '\t' or '\r'), ..]) text = "'" + text;
-        return text.AsSpan().IndexOfAny("\",\r\n") < 0 ? text : "\"" + text.Replace("\"", "\"\"", StringComparison.Ordinal) + "\"";
     }
 }

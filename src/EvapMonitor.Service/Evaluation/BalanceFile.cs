@@ -1,8 +1,8 @@
 using System.Globalization;
 using EvapMonitor.Core.Balances;
 using EvapMonitor.Core.Plant;
-using EvapMonitor.Service.Api;
 using EvapMonitor.Service.Store;
+using EvapMonitor.Service.Wording;
 
 namespace EvapMonitor.Service.Evaluation;
 
@@ -26,7 +26,7 @@ internal sealed class BalanceFile(TextWriter text) : IDisposable
     public void Write(string line, long at, BalanceWindow balance)
     {
         if (_layout != balance.Layout) TakeLayout(balance.Layout);
-        string start = $"{DateTimeOffset.FromUnixTimeMilliseconds(at).ToString("yyyy-MM-ddTHH:mm:ssZ", CultureInfo.InvariantCulture)},{TrendCsv.Cell(line)},";
+        string start = $"{DateTimeOffset.FromUnixTimeMilliseconds(at).ToString("yyyy-MM-ddTHH:mm:ssZ", CultureInfo.InvariantCulture)},{Csv.Cell(line)},";
         for (int k = 0; k < _names.Length; k++)
         {
             Rows++;
@@ -39,7 +39,7 @@ internal sealed class BalanceFile(TextWriter text) : IDisposable
             text.Write(',');
             text.Write(Words.Of(balance.Class[k]));
             text.Write(',');
-            text.WriteLine(TrendCsv.Cell(BalanceWords.Suspicion(balance, k)));
+            text.WriteLine(Csv.Cell(BalanceWords.Suspicion(balance, k)));
         }
     }
 
@@ -49,7 +49,7 @@ internal sealed class BalanceFile(TextWriter text) : IDisposable
     {
         _layout = layout;
         _units = [.. layout.Variables.Select(variable => BalanceUnits.Plain(variable.Kind))];
-        _names = [.. layout.Variables.Select((variable, k) => $"{TrendCsv.Cell(BalanceRow.NameOf(variable))},{_units[k].Written}")];
+        _names = [.. layout.Variables.Select((variable, k) => $"{Csv.Cell(BalanceRow.NameOf(variable))},{_units[k].Written}")];
     }
 
     private void WriteNumber(double si, double offset, double factor)

@@ -1,7 +1,7 @@
 using System.Globalization;
 using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Fouling;
-using EvapMonitor.Service.Api;
+using EvapMonitor.Service.Wording;
 
 namespace EvapMonitor.Service.Evaluation;
 
@@ -26,18 +26,18 @@ internal sealed class CampaignFile : IDisposable
             foreach (Campaign campaign in surface.History.Campaigns)
             {
                 Rows++;
-                _text.Write($"{TrendCsv.Cell(line)},{TrendCsv.Cell(surface.Effect)},{Time(campaign.Start)},{(campaign.End is { } end && end < long.MaxValue ? Time(end) : "")},{Words.Of(campaign.StartedBy)}");
+                _text.Write($"{Csv.Cell(line)},{Csv.Cell(surface.Effect)},{Time(campaign.Start)},{(campaign.End is { } end && end < long.MaxValue ? Time(end) : "")},{Words.Of(campaign.StartedBy)}");
                 Write(campaign.Confidence, "0.####");
                 Write(campaign.InitialResistance.Value, "0.000000000");
                 Write(campaign.FinalResistance.Value, "0.000000000");
                 Write(campaign.RemovedShare, "0.####");
                 Write(campaign.GrowthRate.Value, "0.0000E+0");
                 // Which law it follows is not told by the growth of one campaign.
-                _text.Write($",,{(surface.Name == surface.Effect ? "" : TrendCsv.Cell(surface.Name))}");
+                _text.Write($",,{(surface.Name == surface.Effect ? "" : Csv.Cell(surface.Name))}");
                 foreach (Measured value in (ReadOnlySpan<Measured>)[campaign.InitialResistance, campaign.FinalResistance]) Write(value.Standard, "0.000000000");
                 Write(campaign.GrowthRate.Standard, "0.0000E+0");
                 Write(campaign.ProductionHours, "0.##");
-                _text.WriteLine($",{TrendCsv.Cell(string.Join(' ', campaign.Products))}");
+                _text.WriteLine($",{Csv.Cell(string.Join(' ', campaign.Products))}");
             }
         }
     }

@@ -2,7 +2,7 @@ using System.Globalization;
 using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Fouling;
 using EvapMonitor.Core.Plant;
-using EvapMonitor.Service.Api;
+using EvapMonitor.Service.Wording;
 
 namespace EvapMonitor.Service.Evaluation;
 
@@ -78,7 +78,7 @@ internal sealed class CoefficientFile : IDisposable
     {
         Measured coefficient = window.Coefficient;
         _text.Write(DateTimeOffset.FromUnixTimeMilliseconds(window.At).ToString("yyyy-MM-ddTHH:mm:ssZ", CultureInfo.InvariantCulture));
-        _text.Write($",{TrendCsv.Cell(line)},{TrendCsv.Cell(effect.Name)},{Words.Of(window.State)},{Words.OfSteady(window.Steady)}");
+        _text.Write($",{Csv.Cell(line)},{Csv.Cell(effect.Name)},{Words.Of(window.State)},{Words.OfSteady(window.Steady)}");
         Write(_text, window.HeatingTemperature.Value - 273.15, "0.0000");
         Write(_text, window.BoilingTemperature.Value - 273.15, "0.0000");
         Write(_text, window.Elevation.Value, "0.0000");
@@ -89,7 +89,7 @@ internal sealed class CoefficientFile : IDisposable
         Write(_text, coefficient.Random, "0.0000");
         _text.Write(Gap);
         string flags = string.Join(' ', Flags(window));
-        _text.Write($",{TrendCsv.Cell(window.Reason ?? "")},{flags}");
+        _text.Write($",{Csv.Cell(window.Reason ?? "")},{flags}");
         Write(_text, window.HeadCorrectedDrivingForce.Value, "0.0000");
         Write(_text, window.HeadCorrectedDrivingForce.Standard, "0.0000");
         _text.WriteLine();

@@ -1,4 +1,5 @@
 using EvapMonitor.Core.Plant;
+using EvapMonitor.Service.Wording;
 
 namespace EvapMonitor.Service.PlantFile;
 

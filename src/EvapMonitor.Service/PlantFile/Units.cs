@@ -1,5 +1,6 @@
 using System.Collections.Frozen;
 using EvapMonitor.Core.Plant;
+using EvapMonitor.Service.Wording;
 using UnitsNet;
 using UnitsNet.Units;
 

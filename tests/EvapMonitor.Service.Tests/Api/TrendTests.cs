@@ -2,6 +2,7 @@ using System.Net;
 using EvapMonitor.Service.Api;
 using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Tests.Support;
+using EvapMonitor.Service.Wording;
 
 namespace EvapMonitor.Service.Tests.Api;
 
@@ -113,7 +114,7 @@ public sealed class TrendTests(ApiService api) : IClassFixture<ApiService>
     [InlineData("=HYPERLINK(\"http://x\",\"y\")", "\"'=HYPERLINK(\"\"http://x\"\",\"\"y\"\")\"")]
     [InlineData("a,b", "\"a,b\"")]
     [InlineData("\tx", "'\tx")]
-    public void Cell_IsNeverAFormula(string text, string cell) => Assert.Equal(cell, TrendCsv.Cell(text));
+    public void Cell_IsNeverAFormula(string text, string cell) => Assert.Equal(cell, Csv.Cell(text));
 
     [PostgreSqlFact]
     public async Task EntityTag_SparesWhatHasNotChanged()

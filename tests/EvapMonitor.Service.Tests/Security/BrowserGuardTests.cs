@@ -2,6 +2,7 @@ using System.Net;
 using System.Net.Http.Headers;
 using System.Text;
 using EvapMonitor.Service.Tests.Support;
+using EvapMonitor.Service.Wording;
 
 namespace EvapMonitor.Service.Tests.Security;
 

@@ -1,7 +1,7 @@
 using EvapMonitor.Core.Balances;
 using EvapMonitor.Core.Plant;
 
-namespace EvapMonitor.Service.Api;
+namespace EvapMonitor.Service.Wording;
 
 /// <summary>Units in which the variables of a balance go out: a fixed one in files, the plant's own on pages.</summary>
 internal sealed class BalanceUnits

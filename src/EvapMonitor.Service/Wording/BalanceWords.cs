@@ -1,7 +1,7 @@
 using System.Globalization;
 using EvapMonitor.Core.Balances;
 
-namespace EvapMonitor.Service.Api;
+namespace EvapMonitor.Service.Wording;
 
 /// <summary>The words for what a balance says of a line's instruments.</summary>
 internal static class BalanceWords

@@ -5,7 +5,7 @@ using EvapMonitor.Core.Coefficients;
 using EvapMonitor.Core.Fouling;
 using EvapMonitor.Core.Readings;
 
-namespace EvapMonitor.Service.Api;
+namespace EvapMonitor.Service.Wording;
 
 /// <summary>The words under which states, sources and verdicts go out. One place, so that a sentence and a table never differ.</summary>
 internal static class Words
