@@ -22,6 +22,7 @@ public sealed class SurfaceWorker(
     /// <summary>A line is left alone for this many times as long as it took, so that this takes a twentieth of a core at most.</summary>
     private const int RestTimes = 20;
 
+    /// <summary>Days that wait hold the surfaces up for this long at most.</summary>
     private static readonly TimeSpan LongestWait = TimeSpan.FromMinutes(1);
 
     private readonly Dictionary<int, long> _restUntil = [], _computed = [];
@@ -53,7 +54,14 @@ public sealed class SurfaceWorker(
     private async Task UpdateAsync(PlantInForce inForce, LinePlace line, CancellationToken stop)
     {
         long began = clock.GetTimestamp();
-        if (_restUntil.GetValueOrDefault(line.LineId) > began || !await leases.IsOursAsync(line.LineId, stop)) return;
+        if (_restUntil.GetValueOrDefault(line.LineId) > began) return;
+        if (!await leases.IsOursAsync(line.LineId, stop))
+        {
+            // Another process writes the line now: what stands there is not what was written here.
+            _written.Remove(line.LineId);
+            return;
+        }
+
         // Which plant revision it was computed under enters too: design values and names are of the plant in force.
         string version = $"{inForce.RevisionId} {await inputs.VersionAsync(line.LineId, stop)}";
         if (await store.InputAsync(line.LineId, stop) is { } computed)
@@ -72,9 +80,9 @@ public sealed class SurfaceWorker(
             events.Publish("surfaces", new SurfacesChanged(line.Line.Name));
             log.SurfacesComputed(line.Line.Name, clock.GetElapsedTime(began).TotalMilliseconds);
         }
-        catch (Exception error) when (error is not NpgsqlException and not OperationCanceledException)
+        catch (Exception error) when (error is not OperationCanceledException && (error is not NpgsqlException of || DatabaseErrors.IsOfTheData(of)))
         {
-            // One line that fails must not stop the others; it is tried again when something of it changes.
+            // One line that fails must not stop the others.
             log.SurfacesFailed(error, line.Line.Name);
             _restUntil[line.LineId] = clock.GetTimestamp() + (60 * clock.TimestampFrequency);
             return;
