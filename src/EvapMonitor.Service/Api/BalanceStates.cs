@@ -21,7 +21,7 @@ public sealed record LineFit(long Version, StoredBalance? Last, IReadOnlyList<Su
     public IReadOnlyDictionary<string, ChangeWire> Changes { get; init; } = new Dictionary<string, ChangeWire>();
 }
 
-/// <summary>Puts together what is known of the balance of each line now. Kept until the line has new results.</summary>
+/// <summary>Puts together what is known of the balance of each line now. Kept until the line has new results or an instrument new entries.</summary>
 public sealed class BalanceStates(BalanceStore balances, TrendStore trends, InstrumentLogStore log, TimeProvider clock)
 {
     /// <summary>How far back the beginning of a suspicion is looked for.</summary>
@@ -33,18 +33,18 @@ public sealed class BalanceStates(BalanceStore balances, TrendStore trends, Inst
     /// <summary>Of a line that has had no balance for this long nothing is said.</summary>
     private static readonly TimeSpan Present = TimeSpan.FromHours(2);
 
-    private readonly ConcurrentDictionary<int, (PlantInForce Plant, LineFit Fit)> _known = new();
+    private readonly ConcurrentDictionary<int, (PlantInForce Plant, long Log, LineFit Fit)> _known = new();
 
     /// <summary>What is known of a line.</summary>
     public async Task<LineFit> OfAsync(PlantInForce plant, LinePlace line, CancellationToken stop)
     {
-        long version = await trends.DataVersionAsync(line.LineId, stop);
-        if (_known.TryGetValue(line.LineId, out var known) && known.Plant == plant && known.Fit.Version == version) return known.Fit;
+        long version = await trends.DataVersionAsync(line.LineId, stop), logged = await log.VersionAsync(stop);
+        if (_known.TryGetValue(line.LineId, out var known) && known.Plant == plant && known.Log == logged && known.Fit.Version == version) return known.Fit;
         StoredBalance? last = await balances.LastAsync(line.LineId, DateTimeOffset.MaxValue, DateTimeOffset.MinValue, stop);
         LineFit fit = last is null
             ? new LineFit(version, null, [], new Dictionary<string, FitWire>())
             : Judge(plant, line, version, last, await SinceAsync(line.LineId, last, stop)) with { Changes = await ChangesAsync(plant, line, last, stop) };
-        _known[line.LineId] = (plant, fit);
+        _known[line.LineId] = (plant, logged, fit);
         return fit;
     }
 

@@ -44,6 +44,13 @@ public sealed class InstrumentLogStore(NpgsqlDataSource database, TimeProvider c
         return [.. rows.Select(row => row.ToEvent())];
     }
 
+    /// <summary>Grows with each event that is logged or withdrawn.</summary>
+    public async Task<long> VersionAsync(CancellationToken stop)
+    {
+        await using NpgsqlConnection connection = await database.OpenConnectionAsync(stop);
+        return await connection.ExecuteScalarAsync<long>(new CommandDefinition("SELECT count(*) + count(withdrawn_at) FROM instrument_event", cancellationToken: stop));
+    }
+
     /// <summary>Logs an event. The same request key never logs twice.</summary>
     /// <param name="logged">What is to be logged.</param>
     /// <param name="signal">Its signal.</param>

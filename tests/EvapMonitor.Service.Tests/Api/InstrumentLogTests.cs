@@ -2,6 +2,7 @@ using System.Net;
 using System.Net.Http.Json;
 using EvapMonitor.Service.Api.Wire;
 using EvapMonitor.Service.Tests.Support;
+using Npgsql;
 
 namespace EvapMonitor.Service.Tests.Api;
 
@@ -47,6 +48,28 @@ public sealed class InstrumentLogTests(ApiService api) : IClassFixture<ApiServic
     }
 
     [PostgreSqlFact]
+    public async Task InstrumentThatHasMovedAgainstTheOthers_IsTold_UntilItIsRecalibrated()
+    {
+        // Two months of hours in which the others wanted to take 0.4 % off the reading, and nothing any more from 15 February on; days scatter by 0.02 %.
+        await using (NpgsqlCommand past = api.Service.Database.CreateCommand(
+            """
+            INSERT INTO line_day (line_id, day, data_version, changed_at, shown_revision, model)
+                SELECT 1, d, 1, now(), (SELECT max(revision_id) FROM plant_revision), 5 FROM generate_series(date '2026-01-05', '2026-03-01', '1 day') d ON CONFLICT DO NOTHING;
+            INSERT INTO balance_hour (line_id, hour, revision_id, signal, n, difference)
+                SELECT 1, h, (SELECT max(revision_id) FROM plant_revision), ARRAY['N4.DT-2'], ARRAY[12::smallint],
+                    ARRAY[((CASE WHEN h < '2026-02-15Z' THEN -0.004 ELSE 0 END) + 0.0002 * sin(extract(doy FROM h) * 2.4))::real]
+                FROM generate_series(timestamptz '2026-01-05Z', '2026-03-01T23:00Z', '1 hour') h
+            """)) await past.ExecuteNonQueryAsync(Stop);
+        SignalWire told = await SignalAsync();
+        Assert.Matches(@"^reads 0\.\d+ % lower against the others than before$", told.Changed!.Words);
+        Assert.InRange(told.Changed.Change, 0.3, 0.5);
+        Assert.InRange(told.Changed.Since, new DateTimeOffset(2026, 2, 11, 0, 0, 0, TimeSpan.Zero), new DateTimeOffset(2026, 2, 17, 0, 0, 0, TimeSpan.Zero));
+
+        await LogAsync("""{"signal":"N4.DT-2","kind":"recalibration","start":"2026-03-02T00:00:00Z"}""", "recalibrated-n4");
+        Assert.Null((await SignalAsync()).Changed);
+    }
+
+    [PostgreSqlFact]
     public async Task SameKey_NeverLogsTwice_AndOverlapIsRefused()
     {
         string body = Body("instrument-excluded", Noon.AddHours(6), Noon.AddHours(7), "N2.FT-3");
@@ -67,6 +90,8 @@ public sealed class InstrumentLogTests(ApiService api) : IClassFixture<ApiServic
 
     private static string Body(string kind, DateTimeOffset start, DateTimeOffset? end, string signal = Signal) =>
         $$"""{"signal":"{{signal}}","kind":"{{kind}}","start":"{{start:O}}"{{(end is { } at ? $",\"end\":\"{at:O}\"" : "")}},"note":"span checked"}""";
+
+    private async Task<SignalWire> SignalAsync() => (await api.Service.GetAsync<SignalsWire>("/api/v1/signals")).Signals.Single(signal => signal.Name == "N4.DT-2");
 
     private static double? Reading(BalanceWire balance) => balance.Variables.Single(variable => variable.Signals.Contains(Signal)).Measured;
 
